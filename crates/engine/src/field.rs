@@ -1,0 +1,226 @@
+//! The inputs that a person can enter: name, unit and sensible range of each.
+//!
+//! A check that lacks an input names its field; the page shows a field by the same item. One list serves both.
+
+use crate::entry::Entry;
+use crate::quantity::Quantity;
+use crate::typed::{self, Reading, Refusal};
+use crate::unit::{Dimension, Unit};
+
+/// What kind of entry a field takes.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub enum Takes {
+    /// A number with a unit, from `least` to `most` of the dimension's base unit.
+    Number {
+        /// The unit that stands where none is typed.
+        unit: Unit,
+        /// The least that can be meant.
+        least: f64,
+        /// The most that can be meant.
+        most: f64,
+    },
+    /// A whole number from `least` to `most`.
+    Whole {
+        /// The least that can be meant.
+        least: u32,
+        /// The most that can be meant.
+        most: u32,
+    },
+    /// One of a short list: a key that is kept, and the words on screen.
+    Choice(&'static [(&'static str, &'static str)]),
+}
+
+macro_rules! fields {
+    ($($(#[$doc:meta])* $id:ident, $name:literal, $takes:expr;)*) => {
+        /// An input.
+        #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord, Hash)]
+        #[repr(u8)]
+        pub enum Field {
+            $($(#[$doc])* $id,)*
+        }
+
+        impl Field {
+            /// Every input.
+            pub const ALL: &'static [Self] = &[$(Self::$id),*];
+
+            /// Its full name, as screen readers and messages say it.
+            #[must_use]
+            pub const fn name(self) -> &'static str {
+                match self { $(Self::$id => $name,)* }
+            }
+
+            /// What it takes.
+            #[must_use]
+            pub const fn takes(self) -> Takes {
+                match self { $(Self::$id => $takes,)* }
+            }
+
+            /// The name it is kept under. Never changed once released.
+            #[must_use]
+            pub const fn key(self) -> &'static str {
+                match self { $(Self::$id => stringify!($id),)* }
+            }
+        }
+    };
+}
+
+const fn number(unit: Unit, least: f64, most: f64) -> Takes {
+    Takes::Number { unit, least, most }
+}
+
+const fn whole(least: u32, most: u32) -> Takes {
+    Takes::Whole { least, most }
+}
+
+fields! {
+    /// Module's open-circuit voltage at the rating conditions.
+    Voc, "Voc", number(Unit::Volt, 0.1, 500.0);
+    /// Module's voltage at greatest power, at the rating conditions.
+    Vmp, "Vmp", number(Unit::Volt, 0.1, 500.0);
+    /// Module's short-circuit current at the rating conditions.
+    Isc, "Isc", number(Unit::Amp, 0.01, 100.0);
+    /// Module's current at greatest power, at the rating conditions.
+    Imp, "Imp", number(Unit::Amp, 0.01, 100.0);
+    /// Change of the module's open-circuit voltage with temperature.
+    VocCoefficient, "Voc coefficient", number(Unit::PercentPerKelvin, -100.0, 100.0);
+    /// Change of the module's greatest power with temperature.
+    PmaxCoefficient, "Pmax coefficient", number(Unit::RelativePercentPerKelvin, -2.0, 2.0);
+    /// Change of the module's short-circuit current with temperature.
+    IscCoefficient, "Isc coefficient", number(Unit::CurrentPercentPerKelvin, -2.0, 2.0);
+    /// How far above its nameplate a module's open-circuit voltage may lie.
+    VocTolerance, "Voc tolerance", number(Unit::Percent, 0.0, 20.0);
+    /// Greatest fuse that the module's maker allows in series with it.
+    SeriesFuseRating, "Series fuse rating", number(Unit::Amp, 0.1, 200.0);
+    /// Greatest system voltage that the module's maker allows.
+    SystemVoltage, "System voltage", number(Unit::Volt, 10.0, 2000.0);
+    /// How much a light from behind adds to a two-sided module's current.
+    RearGain, "Rear gain", number(Unit::Percent, 0.0, 50.0);
+    /// Lowest air temperature on record where the array stands.
+    RecordLow, "Record low", number(Unit::DegreeCelsius, -90.0, 40.0);
+    /// Highest air temperature on record where the array stands.
+    RecordHigh, "Record high", number(Unit::DegreeCelsius, -20.0, 60.0);
+    /// How the modules are fixed, which decides how hot they run.
+    Mounting, "Mounting", Takes::Choice(&[
+        ("open", "open rack"),
+        ("stand-off", "stand-off on a roof"),
+        ("flush", "flush on a roof"),
+    ]);
+    /// Where the array stands, which decides the voltage that the code allows.
+    StandsOn, "Stands on", Takes::Choice(&[
+        ("dwelling", "one- or two-family dwelling"),
+        ("building", "other building"),
+        ("ground", "ground, no building"),
+    ]);
+    /// Greatest voltage that the controller's input survives.
+    InputLimit, "Input limit", number(Unit::Volt, 5.0, 2000.0);
+    /// Lowest voltage at which the controller tracks.
+    WindowLow, "Window low", number(Unit::Volt, 1.0, 2000.0);
+    /// Highest voltage at which the controller tracks.
+    WindowHigh, "Window high", number(Unit::Volt, 1.0, 2000.0);
+    /// Greatest short-circuit current that the controller's input survives.
+    PvCurrentLimit, "PV current limit", number(Unit::Amp, 0.1, 1000.0);
+    /// Whether the PV current limit is already lessened by the sunlight factor.
+    LimitHoldsFactor, "PV limit holds 1.25", Takes::Choice(&[
+        ("no", "no, it is the full rating"),
+        ("yes", "yes, it is for Isc as printed"),
+    ]);
+    /// Greatest current that the controller delivers to the bank.
+    OutputCurrent, "Output current", number(Unit::Amp, 0.1, 1000.0);
+    /// Highest voltage that the bank is charged at, warm.
+    HighestCharge, "Highest charge voltage", number(Unit::Volt, 1.0, 1000.0);
+    /// How the controller takes power from the array.
+    ControllerKind, "Controller kind", Takes::Choice(&[
+        ("mppt", "MPPT"),
+        ("pwm", "PWM"),
+    ]);
+    /// Fuse fitted in each string.
+    StringFuse, "String fuse", number(Unit::Amp, 0.1, 200.0);
+    /// Modules in one string.
+    Series, "Modules in series", whole(1, 100);
+    /// Strings in parallel.
+    Strings, "Strings", whole(1, 200);
+    /// Modules that there are.
+    ModulesAtHand, "Modules at hand", whole(1, 400);
+    /// Equal controllers that there are.
+    ControllersAtHand, "Controllers at hand", whole(1, 8);
+    /// Which family of codes the site is built to.
+    CodeFamily, "Code family", Takes::Choice(&[
+        ("iec", "IEC"),
+        ("north-america", "North America"),
+    ]);
+}
+
+impl Field {
+    /// The field that is kept under `key`.
+    #[must_use]
+    pub fn of_key(key: &str) -> Option<Self> {
+        Self::ALL.iter().copied().find(|field| field.key() == key)
+    }
+
+    /// The units that may stand in it; none for choices and whole numbers.
+    #[must_use]
+    pub fn units(self) -> Vec<Unit> {
+        match self.takes() {
+            Takes::Number { unit, .. } => {
+                Unit::ALL.iter().copied().filter(|other| other.dimension() == unit.dimension()).collect()
+            }
+            Takes::Whole { .. } | Takes::Choice(_) => Vec::new(),
+        }
+    }
+
+    /// Reads what was typed into it. `unit` is the unit that the person chose for the field, if any.
+    ///
+    /// `Ok(None)` where nothing was typed.
+    ///
+    /// # Errors
+    ///
+    /// A [`Refusal`] that says, for the person, what was not understood or what range is possible.
+    pub fn read(self, text: &str, unit: Option<Unit>) -> Result<Option<Reading>, Refusal> {
+        if text.trim().is_empty() {
+            return Ok(None);
+        }
+        match self.takes() {
+            Takes::Number { unit: usual, least, most } => {
+                let reading = typed::read(text, unit.unwrap_or(usual))?;
+                reading.within(least, most, usual).map(Some)
+            }
+            Takes::Whole { least, most } => {
+                let reading = typed::read(text, Unit::One)?;
+                reading.whole_within(least, most).map(Some)
+            }
+            Takes::Choice(_) => Err(Refusal::NotANumber { text: text.to_owned() }),
+        }
+    }
+
+    /// Reads what was typed as a quantity. A blank field is [`Entry::Blank`], a refused one [`Entry::Unread`].
+    #[must_use]
+    pub fn entry<Q: Quantity>(self, text: &str, unit: Option<Unit>) -> Entry<Q> {
+        match self.read(text, unit) {
+            Ok(None) => Entry::Blank,
+            Ok(Some(reading)) => Entry::Typed(Q::of(reading.base())),
+            Err(_) => Entry::Unread,
+        }
+    }
+
+    /// What it measures, where it takes a number with a unit.
+    #[must_use]
+    pub const fn dimension(self) -> Option<Dimension> {
+        match self.takes() {
+            Takes::Number { unit, .. } => Some(unit.dimension()),
+            Takes::Whole { .. } | Takes::Choice(_) => None,
+        }
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn keys_name_one_field_each() {
+        for field in Field::ALL {
+            assert_eq!(Field::of_key(field.key()), Some(*field));
+        }
+        assert!(Field::ALL.len() <= 128, "FieldSet holds 128");
+    }
+}

@@ -1,0 +1,14 @@
+//! What Linehut computes: quantities, tables, methods and checks for a stand-alone solar power room.
+//!
+//! Pure: no I/O, no clock, no DOM, no randomness, no stored layout. The same code runs natively and in wasm.
+//! A missing input is a value ([`check::Verdict::Asks`]), a broken limit is a verdict; neither is an error.
+
+#![warn(missing_docs)]
+
+pub mod check;
+pub mod entry;
+pub mod field;
+pub mod quantity;
+pub mod source;
+pub mod typed;
+pub mod unit;

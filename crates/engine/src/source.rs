@@ -1,0 +1,64 @@
+//! Every work that a table, a rule or a method is taken from, once each.
+//!
+//! Code, workings on screen and tests point to these same items. `seen` tells how far the figures were met:
+//! see the notes by each table.
+
+/// A publication.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct Work {
+    /// Short name as the trade says it, such as "IEC 62548".
+    pub name: &'static str,
+    /// Title.
+    pub title: &'static str,
+    /// Edition or year.
+    pub edition: &'static str,
+}
+
+/// A place in a publication.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct Clause {
+    /// The publication.
+    pub work: &'static Work,
+    /// Clause, table or chapter in it.
+    pub at: &'static str,
+}
+
+macro_rules! works {
+    ($($(#[$doc:meta])* $id:ident: $name:literal, $title:literal, $edition:literal;)*) => {
+        $($(#[$doc])* pub static $id: Work = Work { name: $name, title: $title, edition: $edition };)*
+
+        /// All of them, for the list of sources on the page.
+        pub static ALL: &[&Work] = &[$(&$id),*];
+    };
+}
+
+works! {
+    /// Wire gauge.
+    ASTM_B258: "ASTM B258", "Standard Nominal Diameters and Cross-Sectional Areas of AWG Sizes of Solid Round Wires", "2018";
+    /// North American code.
+    NEC: "NFPA 70", "National Electrical Code", "2023";
+    /// PV arrays, design.
+    IEC_62548: "IEC 62548", "Photovoltaic (PV) arrays: design requirements", "2016";
+    /// Fuse-links for PV.
+    IEC_60269_6: "IEC 60269-6", "Low-voltage fuses: fuse-links for the protection of solar photovoltaic energy systems", "2010";
+    /// Corrections of measured I-V curves for temperature and irradiance.
+    IEC_60891: "IEC 60891", "Photovoltaic devices: procedures for temperature and irradiance corrections to measured I-V characteristics", "2021";
+    /// Rating conditions of modules.
+    IEC_61215: "IEC 61215", "Terrestrial photovoltaic (PV) modules: design qualification and type approval", "2021";
+    /// Five-parameter model.
+    DE_SOTO: "De Soto et al. 2006", "Improvement and validation of a model for photovoltaic array performance, Solar Energy 80", "2006";
+    /// Efficiency weighting by power level for a dull climate.
+    EN_50530: "EN 50530", "Overall efficiency of grid connected photovoltaic inverters", "2010";
+    /// A fact every practitioner knows, with no one publication behind it.
+    COMMON_PRACTICE: "common practice", "what careful practitioners do", "";
+    /// A value of ours, with its reason given where it stands.
+    CHOSEN: "chosen", "a cautious value of ours, with its reason", "";
+}
+
+impl Work {
+    /// A clause of this work.
+    #[must_use]
+    pub const fn at(&'static self, at: &'static str) -> Clause {
+        Clause { work: self, at }
+    }
+}

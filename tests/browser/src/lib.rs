@@ -1,0 +1,1 @@
+//! Finding, acting and seeing on the page, over WebDriver.

@@ -1,0 +1,1 @@
+//! Reading the published tables kept in `data/`.
