@@ -7,6 +7,7 @@
 
 pub mod check;
 pub mod entry;
+pub mod family;
 pub mod field;
 pub mod quantity;
 pub mod source;
