@@ -133,6 +133,14 @@ fields! {
         ("mppt", "MPPT"),
         ("pwm", "PWM"),
     ]);
+    /// How far above the bank's voltage the array must stand for the controller to go on charging.
+    RunningHeadroom, "Running headroom", number(Unit::Volt, 0.0, 50.0);
+    /// How far above the bank's voltage the array must stand for the controller to begin charging.
+    StartingHeadroom, "Starting headroom", number(Unit::Volt, 0.0, 50.0);
+    /// Voltage lost between array and controller at full sun.
+    ArrayDrop, "Array drop", number(Unit::Percent, 0.0, 20.0);
+    /// Margin that is kept on the cold voltage of a string.
+    ColdReserve, "Cold reserve", number(Unit::Percent, 0.0, 50.0);
     /// Fuse fitted in each string.
     StringFuse, "String fuse", number(Unit::Amp, 0.1, 200.0);
     /// Modules in one string.

@@ -5,11 +5,18 @@
 
 #![warn(missing_docs)]
 
+pub mod assumed;
 pub mod check;
+pub mod choice;
+pub mod controller;
 pub mod entry;
 pub mod family;
 pub mod field;
+pub mod module;
+pub mod pad;
 pub mod quantity;
+pub mod show;
 pub mod source;
+pub mod string;
 pub mod typed;
 pub mod unit;

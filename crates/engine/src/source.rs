@@ -49,6 +49,8 @@ works! {
     DE_SOTO: "De Soto et al. 2006", "Improvement and validation of a model for photovoltaic array performance, Solar Energy 80", "2006";
     /// Efficiency weighting by power level for a dull climate.
     EN_50530: "EN 50530", "Overall efficiency of grid connected photovoltaic inverters", "2010";
+    /// Efficiency weighting by power level for a sunny climate.
+    CEC_WEIGHTS: "CEC weighting", "Performance test protocol for evaluating inverters, California Energy Commission", "2004";
     /// A fact every practitioner knows, with no one publication behind it.
     COMMON_PRACTICE: "common practice", "what careful practitioners do", "";
     /// A value of ours, with its reason given where it stands.
