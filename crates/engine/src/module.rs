@@ -26,6 +26,15 @@ pub const RATED_AT: Celsius = Celsius::new(25.0);
 pub const COEFFICIENT_SIZES: (PercentPerKelvin, PercentPerKelvin) =
     (PercentPerKelvin::new(0.2), PercentPerKelvin::new(0.4));
 
+/// The flattest and the steepest that the coefficient of greatest power can be, by size.
+///
+/// *Chosen* to hold every technology with room to spare: amorphous silicon 0.13, early crystalline 0.50 %/K.
+pub const POWER_COEFFICIENT_SIZES: (PercentPerKelvin, PercentPerKelvin) =
+    (PercentPerKelvin::new(0.1), PercentPerKelvin::new(0.7));
+
+/// The most that the coefficient of short-circuit current can be, by size. *Chosen*: twice the steepest known.
+pub const CURRENT_COEFFICIENT_SIZE: PercentPerKelvin = PercentPerKelvin::new(0.25);
+
 /// How a module's voltage changes with temperature, in the way its nameplate says it.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub enum VoltageCoefficient {
@@ -167,7 +176,8 @@ impl Module {
     /// Vmp(T) = Vmp · (1 + (γ − α) · (T − 25 °C))
     ///
     /// γ is the coefficient of greatest power and α that of short-circuit current: as Pmp = Vmp · Imp, and Imp follows
-    /// Isc, what is left of γ is the voltage's. Good to about 1 % of Vmp between 0 and 75 °C.
+    /// Isc, what is left of γ is the voltage's. Good to about 1 % of Vmp between 0 and 75 °C. A γ or an α of a size
+    /// that no module has is asked for again.
     ///
     /// # Source
     ///
@@ -188,6 +198,14 @@ impl Module {
             None => None,
         };
         let (vmp, gamma, alpha) = (vmp?, gamma?, alpha?);
+        if gamma.abs() < POWER_COEFFICIENT_SIZES.0 || gamma.abs() > POWER_COEFFICIENT_SIZES.1 {
+            basis.ask(Field::PmaxCoefficient);
+            return None;
+        }
+        if alpha.abs() > CURRENT_COEFFICIENT_SIZE {
+            basis.ask(Field::IscCoefficient);
+            return None;
+        }
         let from_assumption =
             [Field::PmaxCoefficient, Field::IscCoefficient].map(|field| basis.assumed().contains(field));
         let coefficient = steps.step("Coefficient of Vmp", gamma - alpha, || {

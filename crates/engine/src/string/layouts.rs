@@ -16,6 +16,7 @@ use core::cmp::Ordering;
 use super::{Ask, Requirement, longest};
 use crate::check::{Check, Cost, Verdict};
 use crate::controller::Controller;
+use crate::entry::Entry;
 use crate::quantity::{Amps, Percent, Watts};
 
 /// How many layouts of one number of modules are carried along while controllers are joined.
@@ -222,7 +223,9 @@ fn judge_groups(ask: &Ask, modules: u32, controller: usize, rejected: &mut Vec<R
 
 /// The judgement of one group, or the worst hazard that refuses it.
 fn judge_group(ask: &Ask, series: u32, strings: u32) -> Result<Judged, Check<Requirement>> {
-    let ask = ask.with_counts(series, strings);
+    let mut ask = ask.with_counts(series, strings);
+    // The fuse that is fitted now is not the fuse of another layout.
+    ask.string_fuse = Entry::Blank;
     let mut worst: Option<Check<Requirement>> = None;
     let mut margin = f64::INFINITY;
     let mut loss = false;
