@@ -9,6 +9,7 @@ pub mod check;
 pub mod entry;
 pub mod field;
 pub mod quantity;
+pub mod show;
 pub mod source;
 pub mod typed;
 pub mod unit;
