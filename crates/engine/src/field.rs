@@ -82,7 +82,7 @@ fields! {
     /// Module's current at greatest power, at the rating conditions.
     Imp, "Imp", number(Unit::Amp, 0.01, 100.0);
     /// Change of the module's open-circuit voltage with temperature.
-    VocCoefficient, "Voc coefficient", number(Unit::PercentPerKelvin, -100.0, 100.0);
+    VocCoefficient, "Voc coefficient", number(Unit::PercentPerKelvin, -2.0, 2.0);
     /// Change of the module's greatest power with temperature.
     PmaxCoefficient, "Pmax coefficient", number(Unit::RelativePercentPerKelvin, -2.0, 2.0);
     /// Change of the module's short-circuit current with temperature.
@@ -158,6 +158,15 @@ fields! {
     ]);
 }
 
+/// What a range in percent for each kelvin is multiplied by where volts or amps for each kelvin are typed:
+/// a hundredth of the greatest voltage (500 V) or current (100 A) that a module's field takes.
+const fn widest(unit: Unit) -> f64 {
+    match unit {
+        Unit::MillivoltPerKelvin | Unit::VoltPerKelvin => 5.0,
+        _ => 1.0,
+    }
+}
+
 impl Field {
     /// The field that is kept under `key`.
     #[must_use]
@@ -190,7 +199,8 @@ impl Field {
         match self.takes() {
             Takes::Number { unit: usual, least, most } => {
                 let reading = typed::read(text, unit.unwrap_or(usual))?;
-                reading.within(least, most, usual).map(Some)
+                let times = widest(reading.unit());
+                reading.within(least * times, most * times, usual).map(Some)
             }
             Takes::Whole { least, most } => {
                 let reading = typed::read(text, Unit::One)?;
@@ -200,12 +210,13 @@ impl Field {
         }
     }
 
-    /// Reads what was typed as a quantity. A blank field is [`Entry::Blank`], a refused one [`Entry::Unread`].
+    /// Reads what was typed as a quantity. A blank field is [`Entry::Blank`]; a refused one is [`Entry::Unread`], and
+    /// so is one whose unit does not turn into the quantity's, such as V/K where a percentage for each kelvin is asked.
     #[must_use]
     pub fn entry<Q: Quantity>(self, text: &str, unit: Option<Unit>) -> Entry<Q> {
         match self.read(text, unit) {
             Ok(None) => Entry::Blank,
-            Ok(Some(reading)) => Entry::Typed(Q::of(reading.base())),
+            Ok(Some(reading)) => reading.quantity().map_or(Entry::Unread, Entry::Typed),
             Err(_) => Entry::Unread,
         }
     }
@@ -223,6 +234,7 @@ impl Field {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::quantity::{Celsius, Count, PercentPerKelvin, Volts, VoltsPerKelvin};
 
     #[test]
     fn keys_name_one_field_each() {
@@ -230,5 +242,25 @@ mod tests {
             assert_eq!(Field::of_key(field.key()), Some(*field));
         }
         assert!(Field::ALL.len() <= 128, "FieldSet holds 128");
+    }
+
+    #[test]
+    fn an_entry_is_in_the_units_of_its_quantity() {
+        assert_eq!(Field::Voc.entry::<Volts>("49,3", None), Entry::of(49.3));
+        assert_eq!(Field::Voc.entry::<Volts>("49300 mV", None), Entry::of(49.3));
+        assert_eq!(Field::Voc.entry::<Volts>("", None), Entry::Blank);
+        assert_eq!(Field::Voc.entry::<Volts>("49,,3", None), Entry::Unread);
+        assert_eq!(Field::Series.entry::<Count>("3", None), Entry::of(3.0));
+        assert_eq!(Field::RecordLow.entry::<Celsius>("−40 F", None), Entry::of(-40.0));
+        assert_eq!(Field::PmaxCoefficient.entry::<PercentPerKelvin>("-0.35", None), Entry::of(-0.35));
+    }
+
+    #[test]
+    fn volts_for_each_kelvin_are_never_taken_for_percent() {
+        let field = Field::VocCoefficient;
+        assert_eq!(field.entry::<PercentPerKelvin>("-0.27", None), Entry::of(-0.27));
+        assert_eq!(field.entry::<VoltsPerKelvin>("-133 mV/K", None), Entry::of(-0.133));
+        assert_eq!(field.entry::<PercentPerKelvin>("-133 mV/K", None), Entry::Unread);
+        assert_eq!(field.entry::<VoltsPerKelvin>("-0.27", None), Entry::Unread);
     }
 }

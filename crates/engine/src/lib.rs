@@ -15,6 +15,7 @@ pub mod field;
 pub mod module;
 pub mod pad;
 pub mod quantity;
+pub mod show;
 pub mod source;
 pub mod string;
 pub mod typed;

@@ -51,16 +51,16 @@ macro_rules! quantity {
                 self.0
             }
 
-            /// The lesser of two.
+            /// The lesser of two; not a number where either is not.
             #[must_use]
             pub const fn min(self, other: Self) -> Self {
-                Self(self.0.min(other.0))
+                if self.0 <= other.0 || self.0.is_nan() { self } else { other }
             }
 
-            /// The greater of two.
+            /// The greater of two; not a number where either is not.
             #[must_use]
             pub const fn max(self, other: Self) -> Self {
-                Self(self.0.max(other.0))
+                if self.0 >= other.0 || self.0.is_nan() { self } else { other }
             }
 
             /// The size, whatever the sign.
@@ -145,9 +145,15 @@ macro_rules! extent {
     )*};
 }
 
-/// `A * B = C` writes the product both ways round and both quotients.
+/// `A * B = C` writes the product both ways round and both quotients, and puts the line into [`RELATIONS`].
 macro_rules! relation {
-    ($($a:ident * $b:ident = $c:ident;)*) => {$(
+    ($($a:ident * $b:ident = $c:ident;)*) => {
+        /// Every line of the relation table by name: two factors and their product.
+        pub const RELATIONS: &[[&str; 3]] = &[$([stringify!($a), stringify!($b), stringify!($c)]),*];
+
+        $(relation!(@line $a $b $c);)*
+    };
+    (@line $a:ident $b:ident $c:ident) => {
         impl core::ops::Mul<$b> for $a {
             type Output = $c;
             fn mul(self, other: $b) -> $c {
@@ -175,7 +181,7 @@ macro_rules! relation {
                 $a(self.0 / other.0)
             }
         }
-    )*};
+    };
 }
 
 quantity! {
@@ -193,7 +199,7 @@ quantity! {
     WattHours, WattHour;
     /// Time as charge and energy are counted.
     Hours, Hour;
-    /// Time as motors start and fuses melt.
+    /// Time as motors start and fuses melt. Never mixed with [`Hours`]; a field's entry converts.
     Seconds, Second;
     /// Electric resistance.
     Ohms, Ohm;
@@ -281,7 +287,7 @@ impl Percent {
 }
 
 impl Volts {
-    /// Watts per volt times volts: apparent power of an alternating current.
+    /// Apparent power of an alternating current: effective volts times effective amps.
     #[must_use]
     pub const fn times_alternating(self, current: Amps) -> VoltAmps {
         VoltAmps(self.0 * current.0)
@@ -301,5 +307,15 @@ mod tests {
     fn a_share_and_its_percent_are_one_thing() {
         assert_eq!(Percent::from_share(0.03), Percent::new(3.0));
         assert_eq!(Percent::new(3.0).more(), 1.03);
+    }
+
+    #[test]
+    fn a_lost_number_is_not_hidden_by_the_lesser_or_the_greater() {
+        let (lost, one) = (Volts::new(f64::NAN), Volts::new(1.0));
+        for found in [lost.min(one), one.min(lost), lost.max(one), one.max(lost)] {
+            assert!(found.get().is_nan());
+        }
+        assert_eq!(one.min(Volts::new(2.0)), one);
+        assert_eq!(one.max(Volts::new(2.0)), Volts::new(2.0));
     }
 }

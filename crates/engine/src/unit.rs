@@ -1,7 +1,8 @@
 //! Units that people type and that results are shown in.
 //!
 //! Every unit belongs to one [`Dimension`]; within it, a number in one unit turns into a number in another by
-//! [`Unit::to_base`] and [`Unit::from_base`]. The base is the unit of the quantity's newtype.
+//! [`Unit::convert`], by way of the [`Unit::base`]. The base is the unit of the quantity's newtype, but for time, which
+//! has two newtypes: hours are the base, and seconds convert.
 
 /// What a unit measures. Two units of one dimension can stand in the same field.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -64,7 +65,8 @@ macro_rules! units {
                 match self { $(Self::$name => $symbol,)* }
             }
 
-            /// Other ways people type it. Compared without regard to case, except where case tells units apart.
+            /// Other ways people type it. Compared without regard to case, except where case tells units apart;
+            /// spaces, hyphens and the ways to write °, Ω and ² are made one before comparing.
             #[must_use]
             pub const fn also_typed(self) -> &'static [&'static str] {
                 match self { $(Self::$name => &[$($also),*],)* }
@@ -86,7 +88,7 @@ macro_rules! units {
 
 units! {
     /// Volt.
-    Volt: Potential, "V", ["volt", "volts", "vdc", "v dc", "vac"], 1.0;
+    Volt: Potential, "V", ["volt", "volts", "vdc", "vac"], 1.0;
     /// Thousandth of a volt.
     Millivolt: Potential, "mV", ["millivolt", "millivolts"], 1e-3;
     /// Ampere.
@@ -102,15 +104,15 @@ units! {
     /// Mechanical horsepower of a motor's nameplate, 745.7 W.
     Horsepower: Power, "hp", ["horsepower"], 745.699_871_582_270_2;
     /// Volt-ampere.
-    VoltAmp: ApparentPower, "VA", ["volt-amp", "volt-amps"], 1.0;
+    VoltAmp: ApparentPower, "VA", ["voltamp", "voltamps"], 1.0;
     /// Thousand volt-amperes.
     KilovoltAmp: ApparentPower, "kVA", [], 1e3;
     /// Ampere-hour.
-    AmpHour: Charge, "Ah", ["amp-hour", "amp-hours", "amp hours"], 1.0;
+    AmpHour: Charge, "Ah", ["amphour", "amphours"], 1.0;
     /// Watt-hour.
-    WattHour: Energy, "Wh", ["watt-hour", "watt-hours", "watt hours"], 1.0;
+    WattHour: Energy, "Wh", ["watthour", "watthours"], 1.0;
     /// Thousand watt-hours.
-    KilowattHour: Energy, "kWh", ["kilowatt-hour", "kilowatt-hours"], 1e3;
+    KilowattHour: Energy, "kWh", ["kilowatthour", "kilowatthours"], 1e3;
     /// Hour.
     Hour: Time, "h", ["hr", "hrs", "hour", "hours"], 1.0;
     /// Minute.
@@ -138,15 +140,15 @@ units! {
     /// Inch, exactly 0.0254 m.
     Inch: Length, "in", ["inch", "inches", "\""], 0.0254;
     /// Square millimetre.
-    SquareMillimetre: ConductorSize, "mm²", ["mm2", "sqmm", "mm^2", "sq mm"], 1.0;
+    SquareMillimetre: ConductorSize, "mm²", ["sqmm"], 1.0;
     /// American wire gauge, ASTM B258; not a multiple, see [`awg_area`].
-    Awg: ConductorSize, "AWG", ["awg", "ga", "gauge"], 1.0;
+    Awg: ConductorSize, "AWG", ["ga", "gauge"], 1.0;
     /// Thousand circular mils, exactly 0.506 707 479 mm² (a circle of one mil across is π/4 mil²).
     Kcmil: ConductorSize, "kcmil", ["mcm"], 0.506_707_479_097_497_8;
     /// Degree Celsius.
-    DegreeCelsius: Temperature, "°C", ["c", "ºc", "deg c", "degc", "celsius", "°"], 1.0;
+    DegreeCelsius: Temperature, "°C", ["c", "celsius"], 1.0;
     /// Degree Fahrenheit.
-    DegreeFahrenheit: Temperature, "°F", ["f", "ºf", "deg f", "degf", "fahrenheit"], 1.0;
+    DegreeFahrenheit: Temperature, "°F", ["f", "fahrenheit"], 1.0;
     /// Kelvin, as a point above absolute zero.
     KelvinAbsolute: Temperature, "K", [], 1.0;
     /// Kelvin, as a difference.
@@ -154,66 +156,116 @@ units! {
     /// Degree Fahrenheit, as a difference: five ninths of a kelvin.
     FahrenheitDifference: TemperatureDifference, "°F", ["f"], 5.0 / 9.0;
     /// Percent for each kelvin, of a voltage.
-    PercentPerKelvin: VoltageCoefficient, "%/K", ["%/°c", "%/c", "%/ºc"], 1.0;
+    PercentPerKelvin: VoltageCoefficient, "%/K", ["%/°c", "%/c", "%"], 1.0;
     /// Thousandth of a volt for each kelvin, of a whole module.
-    MillivoltPerKelvin: VoltageCoefficient, "mV/K", ["mv/°c", "mv/c", "mv/ºc"], 1e-3;
+    MillivoltPerKelvin: VoltageCoefficient, "mV/K", ["mv/°c", "mv/c"], 1e-3;
     /// Volt for each kelvin, of a whole module.
-    VoltPerKelvin: VoltageCoefficient, "V/K", ["v/°c", "v/c", "v/ºc"], 1.0;
+    VoltPerKelvin: VoltageCoefficient, "V/K", ["v/°c", "v/c"], 1.0;
     /// Percent for each kelvin, of a current.
-    CurrentPercentPerKelvin: CurrentCoefficient, "%/K", ["%/°c", "%/c", "%/ºc"], 1.0;
+    CurrentPercentPerKelvin: CurrentCoefficient, "%/K", ["%/°c", "%/c", "%"], 1.0;
     /// Thousandth of an ampere for each kelvin.
-    MilliampPerKelvin: CurrentCoefficient, "mA/K", ["ma/°c", "ma/c", "ma/ºc"], 1e-3;
+    MilliampPerKelvin: CurrentCoefficient, "mA/K", ["ma/°c", "ma/c"], 1e-3;
     /// Ampere for each kelvin.
-    AmpPerKelvin: CurrentCoefficient, "A/K", ["a/°c", "a/c", "a/ºc"], 1.0;
+    AmpPerKelvin: CurrentCoefficient, "A/K", ["a/°c", "a/c"], 1.0;
     /// Percent for each kelvin, of a power.
-    RelativePercentPerKelvin: RelativeCoefficient, "%/K", ["%/°c", "%/c", "%/ºc"], 1.0;
+    RelativePercentPerKelvin: RelativeCoefficient, "%/K", ["%/°c", "%/c", "%"], 1.0;
     /// Hundredth part.
     Percent: Part, "%", ["percent", "pct"], 1.0;
     /// Watt for each square metre.
-    WattPerSquareMetre: Irradiance, "W/m²", ["w/m2"], 1.0;
+    WattPerSquareMetre: Irradiance, "W/m²", [], 1.0;
     /// A plain number.
     One: Number, "", ["×", "x", "pcs"], 1.0;
 }
 
 impl Unit {
-    /// A number of these as a number of the dimension's base units.
+    /// The unit that [`Unit::to_base`] turns numbers into. Two units turn into one another where their bases are one.
     ///
-    /// Coefficients have no single base: percent and volts for each kelvin turn into one another only with the
-    /// module's own volts, so each keeps its own scale (mV/K into V/K).
+    /// That is so within a dimension, except for the coefficients: percent and volts for each kelvin turn into one
+    /// another only with the module's own volts, so each keeps its own scale (mV/K into V/K). A percent for each
+    /// kelvin is the same scale whatever it is a percent of.
     #[must_use]
-    pub fn to_base(self, number: f64) -> f64 {
+    pub const fn base(self) -> Self {
         match self {
-            Self::DegreeFahrenheit => (number - 32.0) * 5.0 / 9.0,
-            Self::KelvinAbsolute => number - 273.15,
-            Self::Awg => awg_area(number),
-            // A division where the factor is a decimal fraction keeps 118 mV at 0.118 V to the last bit.
+            Self::Volt | Self::Millivolt => Self::Volt,
+            Self::Amp | Self::Milliamp | Self::Kiloamp => Self::Amp,
+            Self::Watt | Self::Kilowatt | Self::Horsepower => Self::Watt,
+            Self::VoltAmp | Self::KilovoltAmp => Self::VoltAmp,
+            Self::AmpHour => Self::AmpHour,
+            Self::WattHour | Self::KilowattHour => Self::WattHour,
+            Self::Hour | Self::Minute | Self::Second => Self::Hour,
+            Self::Ohm | Self::Milliohm => Self::Ohm,
+            Self::OhmPerMetre | Self::OhmPerKilometre | Self::OhmPerThousandFeet => Self::OhmPerMetre,
+            Self::Metre | Self::Centimetre | Self::Millimetre | Self::Foot | Self::Inch => Self::Metre,
+            Self::SquareMillimetre | Self::Awg | Self::Kcmil => Self::SquareMillimetre,
+            Self::DegreeCelsius | Self::DegreeFahrenheit | Self::KelvinAbsolute => Self::DegreeCelsius,
+            Self::Kelvin | Self::FahrenheitDifference => Self::Kelvin,
+            Self::PercentPerKelvin | Self::CurrentPercentPerKelvin | Self::RelativePercentPerKelvin => {
+                Self::PercentPerKelvin
+            }
+            Self::MillivoltPerKelvin | Self::VoltPerKelvin => Self::VoltPerKelvin,
+            Self::MilliampPerKelvin | Self::AmpPerKelvin => Self::AmpPerKelvin,
+            Self::Percent => Self::Percent,
+            Self::WattPerSquareMetre => Self::WattPerSquareMetre,
+            Self::One => Self::One,
+        }
+    }
+
+    /// A number of these as a number of `other`; `None` where they measure different things.
+    #[must_use]
+    pub fn convert(self, number: f64, other: Self) -> Option<f64> {
+        if self == other {
+            Some(number)
+        } else if self.base() == other.base() {
+            Some(other.from_base(self.to_base(number)))
+        } else {
+            None
+        }
+    }
+
+    /// How many to divide by, where a division is exact for decimal fractions and a product by the factor is not:
+    /// 118 mV is then 0.118 V to the last bit.
+    const fn parts(self) -> Option<f64> {
+        match self {
             Self::Millivolt
             | Self::Milliamp
             | Self::Milliohm
             | Self::MillivoltPerKelvin
             | Self::MilliampPerKelvin
             | Self::Millimetre
-            | Self::OhmPerKilometre => number / 1000.0,
-            Self::Centimetre => number / 100.0,
+            | Self::OhmPerKilometre => Some(1000.0),
+            Self::Centimetre => Some(100.0),
+            Self::Minute => Some(60.0),
+            Self::Second => Some(3600.0),
+            Self::OhmPerThousandFeet => Some(304.8),
+            _ => None,
+        }
+    }
+
+    /// A number of these as a number of [`Unit::base`].
+    ///
+    /// Not to be used where a quantity counts in another unit than the base: seconds are kept as
+    /// [`crate::quantity::Seconds`], whose unit is not the base of its dimension. [`Unit::convert`] serves for all.
+    #[must_use]
+    pub fn to_base(self, number: f64) -> f64 {
+        match (self, self.parts()) {
+            (Self::DegreeFahrenheit, _) => (number - 32.0) * 5.0 / 9.0,
+            (Self::KelvinAbsolute, _) => number - 273.15,
+            (Self::Awg, _) => awg_area(number),
+            (_, Some(parts)) => number / parts,
             _ => number * self.factor(),
         }
     }
 
     /// A number of base units as a number of these: the other way round from [`Unit::to_base`].
+    ///
+    /// A wire gauge comes out between two whole ones as a rule, and not as a number where there is no area.
     #[must_use]
     pub fn from_base(self, number: f64) -> f64 {
-        match self {
-            Self::DegreeFahrenheit => number * 9.0 / 5.0 + 32.0,
-            Self::KelvinAbsolute => number + 273.15,
-            Self::Awg => 36.0 - 39.0 * (diameter_of(number) / 0.127).ln() / 92f64.ln(),
-            Self::Millivolt
-            | Self::Milliamp
-            | Self::Milliohm
-            | Self::MillivoltPerKelvin
-            | Self::MilliampPerKelvin
-            | Self::Millimetre
-            | Self::OhmPerKilometre => number * 1000.0,
-            Self::Centimetre => number * 100.0,
+        match (self, self.parts()) {
+            (Self::DegreeFahrenheit, _) => number * 9.0 / 5.0 + 32.0,
+            (Self::KelvinAbsolute, _) => number + 273.15,
+            (Self::Awg, _) => 36.0 - 39.0 * (diameter_of(number) / 0.127).ln() / 92f64.ln(),
+            (_, Some(parts)) => number * parts,
             _ => number / self.factor(),
         }
     }
