@@ -44,6 +44,29 @@ pub fn given(amount: Amount) -> String {
     with_unit(&shortest(amount), amount.unit)
 }
 
+/// A value inside a working: two places more than [`computed`], so that the next step can be followed by hand, and no
+/// noughts at the end.
+///
+/// ```
+/// use engine::{quantity::{Quantity, Volts}, show};
+/// assert_eq!(show::step(Volts::new(56.75376).amount()), "56.754\u{202F}V");
+/// ```
+#[must_use]
+pub fn step(amount: Amount) -> String {
+    if amount.unit == Unit::Awg {
+        return computed(amount);
+    }
+    with_unit(&number(amount.number, places(amount) + 2), amount.unit)
+}
+
+/// A plain number with at most so many places, and no noughts at the end: 1.03, 1.1512, 3.
+#[must_use]
+pub fn number(number: f64, most_places: usize) -> String {
+    let plain = decimal(number, most_places);
+    let plain = if plain.contains('.') { plain.trim_end_matches('0').trim_end_matches('.') } else { &plain };
+    dressed(plain)
+}
+
 /// A computed value and the limit it is set against, in one unit, with so many digits that they differ where the
 /// values differ, and in the right order.
 ///
@@ -199,6 +222,17 @@ mod tests {
 
     fn plain(shown: String) -> String {
         shown.replace(NARROW, " ").replace(MINUS, "-")
+    }
+
+    #[test]
+    fn a_step_shows_what_the_next_one_is_made_of() {
+        let amount = |number, unit| Amount { number, unit };
+        assert_eq!(plain(step(amount(170.26128, Unit::Volt))), "170.261 V");
+        assert_eq!(plain(step(amount(56.0, Unit::Kelvin))), "56 K");
+        assert_eq!(plain(step(amount(15.12, Unit::Percent))), "15.12 %");
+        assert_eq!(number(1.03, 4), "1.03");
+        assert_eq!(number(-31.0, 4), "\u{2212}31");
+        assert_eq!(number(100.0, 0), "100");
     }
 
     #[test]

@@ -5,7 +5,8 @@
 //!
 //! Each group is judged by the same requirements as a string that was typed in. What breaks a hazard is rejected, with
 //! the check that refuses it. The rest are ranked: no loss first, then energy kept in a year, then fewest modules left
-//! over, then the margin in the cold.
+//! over, then the margin in the cold. Where it cannot be told yet whether a string is long enough to charge, fewer and
+//! longer strings go before the margin.
 //!
 //! Method: every (series, strings) of every kind of controller is judged once; groups are then joined controller by
 //! controller, keeping for each number of modules used the best few. As energy adds up over controllers and the least
@@ -103,6 +104,8 @@ struct Judged {
     strings: u32,
     loss: bool,
     kept: f64,
+    /// Strings in parallel, where it cannot be told yet whether they are long enough to charge; else 0.
+    doubtful: u32,
     margin: f64,
     fuse: Option<Amps>,
     worst: Option<Check<Requirement>>,
@@ -114,12 +117,17 @@ struct Partial {
     picks: Vec<Option<usize>>,
     loss: bool,
     kept: f64,
+    doubtful: u32,
     margin: f64,
 }
 
 impl Partial {
     fn better(&self, other: &Self) -> Ordering {
-        self.loss.cmp(&other.loss).then(other.kept.total_cmp(&self.kept)).then(other.margin.total_cmp(&self.margin))
+        self.loss
+            .cmp(&other.loss)
+            .then(other.kept.total_cmp(&self.kept))
+            .then(self.doubtful.cmp(&other.doubtful))
+            .then(other.margin.total_cmp(&self.margin))
     }
 }
 
@@ -140,8 +148,8 @@ impl Partial {
 /// ask.module.voc_tolerance = Entry::Typed(Percent::new(0.0));
 /// ask.record_low = Entry::Typed(Celsius::new(-15.0));          // each 44 V
 /// ask.controller.input_limit = Entry::Typed(Volts::new(100.0)); // two hold, three do not
-/// let found = string::layouts(&ask, 5, &[ask.controller]);
-/// assert_eq!((found.ranked[0].groups[0].series, found.ranked[0].used), (2, 4));
+/// let found = string::layouts(&ask, 6, &[ask.controller]);
+/// assert_eq!((found.ranked[0].groups[0].series, found.ranked[0].groups[0].strings), (2, 3));
 /// ```
 #[must_use]
 pub fn layouts(ask: &Ask, modules: u32, controllers: &[Controller]) -> Layouts {
@@ -163,6 +171,7 @@ pub fn layouts(ask: &Ask, modules: u32, controllers: &[Controller]) -> Layouts {
             .cmp(&b.loss)
             .then(b.kept.total_cmp(&a.kept))
             .then(used_b.cmp(used_a))
+            .then(a.doubtful.cmp(&b.doubtful))
             .then(b.margin.total_cmp(&a.margin))
             // Fewer controllers in use, where all else is equal.
             .then(in_use(a).cmp(&in_use(b)))
@@ -230,9 +239,13 @@ fn judge_group(ask: &Ask, series: u32, strings: u32) -> Result<Judged, Check<Req
     let mut margin = f64::INFINITY;
     let mut loss = false;
     let mut clipped = 0.0;
+    let mut doubtful = 0;
     for requirement in Requirement::ALL {
         let Some(check) = requirement.check(&ask) else { continue };
         if check.verdict == Verdict::Asks {
+            if requirement == Requirement::HotCharge {
+                doubtful = strings;
+            }
             continue;
         }
         if matches!(requirement, Requirement::ColdController | Requirement::ColdCircuit) {
@@ -259,7 +272,7 @@ fn judge_group(ask: &Ask, series: u32, strings: u32) -> Result<Judged, Check<Req
     };
     let fuse = super::string_fuses(&ask).filter(|fuses| fuses.needed).and_then(|fuses| fuses.advised);
     let kept = power * f64::from(series * strings) * (1.0 - clipped / 100.0);
-    Ok(Judged { series, strings, loss, kept, margin, fuse, worst })
+    Ok(Judged { series, strings, loss, kept, doubtful, margin, fuse, worst })
 }
 
 /// Joins groups controller by controller: for each number of modules used, the best few ways.
@@ -297,6 +310,7 @@ fn keep(list: &mut Vec<Partial>, partial: &Partial, pick: Option<usize>, group: 
         picks: Vec::new(),
         loss: partial.loss || group.is_some_and(|group| group.loss),
         kept: partial.kept + group.map_or(0.0, |group| group.kept),
+        doubtful: partial.doubtful + group.map_or(0, |group| group.doubtful),
         margin: partial.margin.min(group.map_or(f64::INFINITY, |group| group.margin)),
     };
     let rivals = list.iter().filter(|one| one.loss == made.loss).count();
