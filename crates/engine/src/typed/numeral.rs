@@ -25,7 +25,12 @@ const HALVES: [(char, f64); 3] = [('½', 0.5), ('¼', 0.25), ('¾', 0.75)];
 pub(super) fn read(text: &str) -> Result<(Numeral, &str), Refusal> {
     let unsigned = text.strip_prefix(is_sign).map_or(text, str::trim_start);
     let negative = text.starts_with(MINUS);
-    let (size, fraction, rest) = magnitude(unsigned, text)?;
+    let (size, fraction, rest) = magnitude(unsigned, text).map_err(|refusal| match refusal {
+        Refusal::TwoMeanings { decimal, whole } if negative => {
+            Refusal::TwoMeanings { decimal: format!("−{decimal}"), whole: format!("−{whole}") }
+        }
+        other => other,
+    })?;
     let number = if negative { -size } else { size };
     Ok((Numeral { number, negative, fraction }, rest))
 }

@@ -17,9 +17,9 @@ pub(super) fn read(rest: &str, usual: Unit) -> Result<Unit, Refusal> {
     if typed == "°" && usual.symbol().starts_with('°') {
         return Ok(usual);
     }
-    let (near, far): (Vec<Unit>, Vec<Unit>) =
-        Unit::ALL.iter().copied().partition(|unit| unit.dimension() == usual.dimension());
-    if let Some(found) = named(&near, &typed).or_else(|| named(&far, &typed)) {
+    let all = Unit::ALL.iter().copied();
+    let near = all.clone().filter(|unit| unit.dimension() == usual.dimension());
+    if let Some(found) = named(near, &typed).or_else(|| named(all, &typed)) {
         return Ok(found);
     }
     if holds_a_number(rest) {
@@ -56,9 +56,15 @@ fn plain(text: &str) -> String {
     plain
 }
 
-fn named(units: &[Unit], typed: &str) -> Option<Unit> {
-    let exactly = units.iter().find(|unit| plain(unit.symbol()) == typed);
-    exactly.or_else(|| units.iter().find(|unit| tolerates(**unit, typed))).copied()
+/// The one of `units` that `typed` names: by its symbol to the letter, else in any case that means the same.
+fn named(units: impl Iterator<Item = Unit> + Clone, typed: &str) -> Option<Unit> {
+    let exactly = units.clone().find(|unit| letters(unit.symbol()).eq(typed.chars()));
+    exactly.or_else(|| units.clone().find(|unit| tolerates(*unit, typed)))
+}
+
+/// A spelling of ours letter by letter, as [`plain`] would write it.
+fn letters(spelling: &str) -> impl Iterator<Item = char> + '_ {
+    spelling.chars().map(|letter| if letter == '²' { '2' } else { letter })
 }
 
 /// Whether `typed` is this unit in some other case, where case does not matter.
@@ -66,17 +72,17 @@ fn named(units: &[Unit], typed: &str) -> Option<Unit> {
 /// Two capitals mean something else than the small letter: M before a unit is a million, not a thousandth, and k alone
 /// is a thousand, not a kelvin.
 fn tolerates(unit: Unit, typed: &str) -> bool {
-    let symbol = plain(unit.symbol());
-    let (small, lower) = (symbol.to_lowercase(), typed.to_lowercase());
     let thousandth = matches!(
         unit,
         Unit::Millivolt | Unit::Milliamp | Unit::Milliohm | Unit::MillivoltPerKelvin | Unit::MilliampPerKelvin
     );
-    let spelled_out = lower.starts_with("milli");
-    if thousandth && typed.starts_with('M') && !spelled_out || symbol == "K" && typed == "k" {
+    let spelled_out = typed.get(..5).is_some_and(|head| head.eq_ignore_ascii_case("milli"));
+    if thousandth && typed.starts_with('M') && !spelled_out || typed == "k" {
         return false;
     }
-    !symbol.is_empty() && small == lower || unit.also_typed().iter().any(|also| plain(also).to_lowercase() == lower)
+    let alike =
+        |spelling: &str| letters(spelling).flat_map(char::to_lowercase).eq(typed.chars().flat_map(char::to_lowercase));
+    alike(unit.symbol()) || unit.also_typed().iter().any(|also| alike(also))
 }
 
 /// Whether another number begins somewhere in `rest`, rather than a digit that belongs to a unit.
@@ -102,13 +108,18 @@ pub(super) fn feet_then_inches(feet: Numeral, rest: &str) -> Result<Option<f64>,
             rest.split_at_checked(word.len()).filter(|(head, _)| head.eq_ignore_ascii_case(word)).map(|(_, tail)| tail)
         })
     };
-    let Some(after) = marked.or_else(spelled).map(str::trim_start) else {
+    let Some(tail) = marked.or_else(spelled) else {
         return Ok(None);
     };
+    let after = tail.trim_start();
     if !after.starts_with(|next: char| next.is_ascii_digit() || "½¼¾".contains(next)) {
         return Ok(None);
     }
     let (inches, end) = numeral::read(after)?;
+    if marked.is_none() && tail == after && end.trim().is_empty() {
+        // "ft2" is a square foot before it is two inches.
+        return Ok(None);
+    }
     let unit = read(end, Unit::Inch)?;
     if unit.dimension() != Dimension::Length {
         return Err(Refusal::TwoNumbers);
