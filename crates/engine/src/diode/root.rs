@@ -27,6 +27,15 @@ const ROUNDS: usize = 200;
 /// Two neighbours in a search count as one below this share of their size: some ulps, far inside the 1e-6 promised.
 const SAME: f64 = 8.0 * f64::EPSILON;
 
+/// Lets a finite number through: figures far out of any module's range may overflow on the way.
+pub(super) fn finite(what: &'static str, number: f64) -> Result<f64, NotConverged> {
+    if number.is_finite() {
+        Ok(number)
+    } else {
+        Err(NotConverged { what, low: f64::NEG_INFINITY, high: f64::INFINITY })
+    }
+}
+
 /// The root of a rising function between `low` and `high`, by Newton's step where it stays inside the bracket and
 /// shortens it, by halving where not.
 ///
@@ -42,7 +51,7 @@ pub(super) fn rising(
     let (mut low, mut high) = (low, high);
     let (at_low, at_high) = (f(low).0, f(high).0);
     // Written so that a NaN refuses.
-    if !(low <= high && at_low <= 0.0 && at_high >= 0.0) {
+    if !(low.is_finite() && high.is_finite() && low <= high && at_low <= 0.0 && at_high >= 0.0) {
         return Err(refused);
     }
     if at_low == 0.0 {

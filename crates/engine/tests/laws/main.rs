@@ -1,0 +1,4 @@
+//! What must hold whatever the figures: one module for each subject, cases drawn at random.
+
+mod diode;
+mod draw;
