@@ -4,48 +4,15 @@
 //! sun takes minutes to warm the glass. At dawn the cells are as cold as the air, or colder under a clear sky.
 
 use crate::quantity::{Celsius, Kelvins, WattsPerSquareMetre};
-use crate::source::{self, Clause};
 
-/// Irradiance at which NOCT is measured. Source: [`IEC_61215`](source::IEC_61215), nominal operating cell temperature.
+/// Irradiance at which NOCT is measured. Source: [`IEC_61215`](crate::source::IEC_61215), nominal operating cell temperature.
 pub const NOCT_IRRADIANCE: WattsPerSquareMetre = WattsPerSquareMetre::new(800.0);
 
 /// Air temperature at which NOCT is measured. Source: as [`NOCT_IRRADIANCE`].
 pub const NOCT_AIR: Celsius = Celsius::new(20.0);
 
-/// Irradiance that the rise of a [`Mounting`] is given for: full sun.
+/// Irradiance that a rise over the air is told for: full sun, as in [`module::rise`](crate::module::rise).
 pub const FULL_SUN: WattsPerSquareMetre = WattsPerSquareMetre::new(1000.0);
-
-/// How air gets at a module's back.
-#[derive(Clone, Copy, Debug, PartialEq, Eq)]
-pub enum Mounting {
-    /// On a rack or pole, air all round.
-    OpenRack,
-    /// Above a roof, with a hand's breadth of air or more.
-    StandOff,
-    /// Close on a roof or wall, hardly any air behind.
-    Flush,
-}
-
-impl Mounting {
-    /// All of them, coolest first.
-    pub const ALL: &'static [Self] = &[Self::OpenRack, Self::StandOff, Self::Flush];
-
-    /// Where [`Mounting::rise_at_full_sun`] is from.
-    pub const SOURCE: Clause = source::CHOSEN.at("cells over the air at full sun, by mounting");
-
-    /// How far the cells stand over the air at [`FULL_SUN`].
-    ///
-    /// *Chosen*: 30 K on an open rack, as a NOCT of 45 °C gives (31 K), 35 K and 45 K where less air gets behind. A NOCT
-    /// from the nameplate, or a reading on the module's back, would change it.
-    #[must_use]
-    pub const fn rise_at_full_sun(self) -> Kelvins {
-        match self {
-            Self::OpenRack => Kelvins::new(30.0),
-            Self::StandOff => Kelvins::new(35.0),
-            Self::Flush => Kelvins::new(45.0),
-        }
-    }
-}
 
 /// Cell temperature from the nameplate's nominal operating cell temperature: Tc = Ta + (NOCT − 20 °C) / 800 W/m² · G.
 ///
@@ -53,7 +20,7 @@ impl Mounting {
 ///
 /// # Source
 ///
-/// [`source::DUFFIE_BECKMAN`], chapter 23; conditions from [`source::IEC_61215`].
+/// [`source::DUFFIE_BECKMAN`](crate::source::DUFFIE_BECKMAN), chapter 23; conditions from [`source::IEC_61215`](crate::source::IEC_61215).
 ///
 /// ```
 /// use engine::cell_temperature::by_noct;
@@ -69,11 +36,11 @@ pub fn by_noct(air: Celsius, noct: Celsius, irradiance: WattsPerSquareMetre) -> 
 
 /// Cell temperature from the rise over the air at full sun: Tc = Ta + ΔT · G / 1000 W/m².
 ///
-/// The rise is a [`Mounting`]'s, or one measured.
+/// The rise is that of a mounting, [`module::rise`](crate::module::rise), or one measured.
 ///
 /// # Source
 ///
-/// [`source::COMMON_PRACTICE`]; the same line as [`by_noct`], named by another point of it.
+/// [`source::COMMON_PRACTICE`](crate::source::COMMON_PRACTICE); the same line as [`by_noct`], named by another point of it.
 #[must_use]
 pub fn by_rise(air: Celsius, at_full_sun: Kelvins, irradiance: WattsPerSquareMetre) -> Celsius {
     air + at_full_sun * (irradiance / FULL_SUN)
@@ -82,12 +49,14 @@ pub fn by_rise(air: Celsius, at_full_sun: Kelvins, irradiance: WattsPerSquareMet
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::choice::Mounting;
+    use crate::module::rise;
 
     #[test]
     fn without_sun_the_cells_are_as_cold_as_the_air() {
         let (air, dark) = (Celsius::new(-31.0), WattsPerSquareMetre::new(0.0));
         assert_eq!(by_noct(air, Celsius::new(45.0), dark), air);
-        assert_eq!(by_rise(air, Mounting::Flush.rise_at_full_sun(), dark), air);
+        assert_eq!(by_rise(air, rise(Mounting::Flush), dark), air);
     }
 
     #[test]
@@ -97,7 +66,7 @@ mod tests {
 
     #[test]
     fn the_rise_follows_the_sun() {
-        let rise = Mounting::OpenRack.rise_at_full_sun();
+        let rise = rise(Mounting::OpenRack);
         assert_eq!(by_rise(Celsius::new(30.0), rise, FULL_SUN), Celsius::new(60.0));
         assert_eq!(by_rise(Celsius::new(30.0), rise, WattsPerSquareMetre::new(500.0)), Celsius::new(45.0));
     }
@@ -105,14 +74,13 @@ mod tests {
     #[test]
     fn an_open_rack_agrees_with_a_usual_noct_to_two_kelvins() {
         let by_plate = by_noct(Celsius::new(0.0), Celsius::new(45.0), FULL_SUN);
-        let by_mounting = by_rise(Celsius::new(0.0), Mounting::OpenRack.rise_at_full_sun(), FULL_SUN);
+        let by_mounting = by_rise(Celsius::new(0.0), rise(Mounting::OpenRack), FULL_SUN);
         assert!((by_plate - by_mounting).get().abs() <= 2.0);
     }
 
     #[test]
     fn less_air_behind_is_warmer() {
-        for pair in Mounting::ALL.windows(2) {
-            assert!(pair[0].rise_at_full_sun() < pair[1].rise_at_full_sun());
-        }
+        assert!(rise(Mounting::OpenRack) < rise(Mounting::StandOff));
+        assert!(rise(Mounting::StandOff) < rise(Mounting::Flush));
     }
 }

@@ -105,8 +105,7 @@ pub(super) fn between(
             return Ok(x);
         }
     }
-    // A NaN has no sign to be opposite: it refuses.
-    if !(fa * fb < 0.0 || (fa < 0.0) != (fb < 0.0) && !fa.is_nan() && !fb.is_nan()) {
+    if fa.is_nan() || fb.is_nan() || (fa < 0.0) == (fb < 0.0) {
         return Err(NotConverged { what, low, high });
     }
     let mut part = 0.5;
