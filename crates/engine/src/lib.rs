@@ -6,9 +6,11 @@
 #![warn(missing_docs)]
 
 pub mod assumed;
+pub mod cell_temperature;
 pub mod check;
 pub mod choice;
 pub mod controller;
+pub mod diode;
 pub mod entry;
 pub mod family;
 pub mod field;

@@ -47,6 +47,10 @@ works! {
     IEC_61215: "IEC 61215", "Terrestrial photovoltaic (PV) modules: design qualification and type approval", "2021";
     /// Five-parameter model.
     DE_SOTO: "De Soto et al. 2006", "Improvement and validation of a model for photovoltaic array performance, Solar Energy 80", "2006";
+    /// Solar textbook: cell temperature, geometry, monthly means.
+    DUFFIE_BECKMAN: "Duffie and Beckman", "Solar Engineering of Thermal Processes", "4th, 2013";
+    /// Constants of nature.
+    CODATA: "CODATA", "Recommended values of the fundamental physical constants", "2018";
     /// Efficiency weighting by power level for a dull climate.
     EN_50530: "EN 50530", "Overall efficiency of grid connected photovoltaic inverters", "2010";
     /// Efficiency weighting by power level for a sunny climate.

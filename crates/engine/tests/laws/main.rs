@@ -1,0 +1,5 @@
+//! What must hold whatever the figures: one module for each subject, cases drawn at random.
+
+mod diode;
+mod draw;
+mod string;
