@@ -1,8 +1,69 @@
-//! The Linehut page.
+//! The Linehut page: what is typed is kept and shown; what is computed is the engine's.
+//!
+//! - [`tools`] lists the tools there are; each has a module of its own and a page.
+//! - [`draft`] is the one store; [`pads`] is what it holds, pure; [`keep`] writes it to this phone.
+//! - [`shell`] stands around every view; [`route`] says which is open.
+//! - The other modules are components, one noun each. Views hold no formulas.
+
+pub mod caution;
+pub mod check_row;
+mod clock;
+pub mod draft;
+pub mod field;
+pub mod figure;
+pub mod file;
+pub mod first_visit;
+pub mod fold;
+pub mod icon;
+pub mod keep;
+pub mod notice;
+pub mod offline;
+pub mod pads;
+pub mod route;
+pub mod sheet;
+pub mod shell;
+pub mod span_bar;
+pub mod string;
+pub mod theme;
+pub mod tools;
+pub mod verdict;
+pub mod working;
+
+use std::cell::Cell;
+use std::rc::Rc;
 
 use leptos::prelude::*;
+use wasm_bindgen_futures::spawn_local;
 
-/// Puts the page into the document.
+use draft::Draft;
+use keep::Keeper;
+use shell::Shell;
+
+/// Reads what was kept, then puts the page up. Storage that does not answer is not waited for.
 pub fn start() {
-    mount_to_body(|| view! { <main><h1>"Linehut"</h1></main> });
+    // The store outlives the page's views: it is made before them.
+    let owner = Owner::new();
+    let draft = owner.with(|| Draft::new(Keeper::new()));
+    std::mem::forget(owner);
+
+    let up = Rc::new(Cell::new(false));
+    let put_up = move || {
+        if !up.replace(true) {
+            mount_to_body(move || view! { <Shell draft=draft/> });
+        }
+    };
+    let waited = put_up.clone();
+    set_timeout(
+        move || {
+            draft.keeper().give_up_waiting();
+            waited();
+        },
+        keep::PATIENCE,
+    );
+    spawn_local(async move {
+        if let Some(kept) = draft.keeper().open().await {
+            draft.adopt(&kept);
+        }
+        put_up();
+    });
 }

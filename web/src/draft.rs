@@ -1,0 +1,120 @@
+//! The one store: what was typed, the chosen light, and whether it is kept.
+//!
+//! All writing goes through [`Draft::edit`]; keeping and undo hang there and nowhere else.
+
+use bridge::Kept;
+use leptos::prelude::*;
+
+use crate::clock;
+use crate::keep::Keeper;
+use crate::pads::{Edit, Pads, Place, Typed, What};
+use crate::theme::Theme;
+
+/// The store. A handle: copying it copies nothing.
+#[derive(Clone, Copy)]
+pub struct Draft {
+    pads: RwSignal<Pads>,
+    theme: RwSignal<Theme>,
+    keeper: Keeper,
+}
+
+/// The store of this page.
+///
+/// # Panics
+///
+/// Where no store was provided: [`Draft::provide`] is called once, before the page is put up.
+pub fn use_draft() -> Draft {
+    expect_context()
+}
+
+impl Draft {
+    /// An empty store, kept by `keeper`.
+    pub fn new(keeper: Keeper) -> Self {
+        Self { pads: RwSignal::new(Pads::default()), theme: RwSignal::new(Theme::default()), keeper }
+    }
+
+    /// Gives the store to everything below.
+    pub fn provide(self) {
+        provide_context(self);
+    }
+
+    /// Makes a change: the only way to write.
+    pub fn edit(self, edit: Edit) {
+        let changed = self.pads.try_update(|pads| pads.edit(edit, clock::now())).unwrap_or(false);
+        if changed {
+            self.keep();
+        }
+    }
+
+    /// The field that was typed into was left.
+    pub fn leave(self) {
+        self.pads.update_untracked(Pads::leave);
+    }
+
+    /// Chooses the light.
+    pub fn set_theme(self, theme: Theme) {
+        self.theme.set(theme);
+        theme.show();
+        self.keep();
+    }
+
+    /// The chosen light.
+    pub fn theme(self) -> Theme {
+        self.theme.get()
+    }
+
+    /// What stands in a field; tells only when that field changes.
+    pub fn typed(self, place: Place) -> Memo<Typed> {
+        Memo::new(move |_| self.pads.with(|pads| pads.typed(place)))
+    }
+
+    /// Computes something from all that was typed, again at each change.
+    pub fn with<T>(self, compute: impl FnOnce(&Pads) -> T) -> T {
+        self.pads.with(compute)
+    }
+
+    /// The same, once.
+    pub fn with_now<T>(self, compute: impl FnOnce(&Pads) -> T) -> T {
+        self.pads.with_untracked(compute)
+    }
+
+    /// What an undo would take back.
+    pub fn undoes(self) -> Memo<Option<What>> {
+        Memo::new(move |_| self.pads.with(Pads::undoes))
+    }
+
+    /// What a redo would make again.
+    pub fn redoes(self) -> Memo<Option<What>> {
+        Memo::new(move |_| self.pads.with(Pads::redoes))
+    }
+
+    /// Whether, and where, it is kept.
+    pub fn keeper(self) -> Keeper {
+        self.keeper
+    }
+
+    /// All of it, as it is kept and saved.
+    pub fn kept(self) -> Kept {
+        let mut kept = self.pads.with_untracked(Pads::kept);
+        kept.theme = Some(self.theme.get_untracked().key().to_owned());
+        kept
+    }
+
+    /// Takes over what was kept before. What was typed since the page came up stays, and is kept.
+    pub fn adopt(self, before: &Kept) {
+        let typed = self.pads.with_untracked(Pads::kept);
+        let joined = before.clone().with_changes(&Kept::default(), &typed);
+        self.pads.update(|pads| pads.load(&joined));
+        if let Some(theme) = before.theme.as_deref().and_then(Theme::of_key) {
+            self.theme.set(theme);
+            theme.show();
+        }
+        if !typed.is_empty() {
+            self.keep();
+        }
+    }
+
+    fn keep(self) {
+        self.keeper.keep(self.kept());
+    }
+}

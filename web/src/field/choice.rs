@@ -1,0 +1,157 @@
+//! A field that takes one of a short list.
+
+use engine::field::{Field, Takes};
+use engine::typed::Refusal;
+use leptos::prelude::*;
+
+use super::{Parts, Said, StandIn, Stands, State};
+use crate::pads::Edit;
+use crate::tools::Tool;
+
+/// How the choices are laid out.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
+pub enum Shape {
+    /// A list that opens.
+    #[default]
+    List,
+    /// Side by side: for two or three short ones.
+    Pick,
+}
+
+/// A field that takes one of a short list.
+#[component]
+pub fn ChoiceField(
+    /// The tool it stands in.
+    tool: Tool,
+    /// The input.
+    field: Field,
+    /// The word above it, where it is shorter than the field's name. Contained in that name.
+    #[prop(optional)]
+    label: Option<&'static str>,
+    /// How the choices are laid out.
+    #[prop(optional)]
+    shape: Shape,
+    /// What stands in while nothing is chosen: the key of a choice.
+    #[prop(into, optional)]
+    assumed: Signal<Option<StandIn>>,
+    /// What waits for it, while nothing is chosen.
+    #[prop(into, optional)]
+    asks: Signal<Option<String>>,
+    /// What else is said under it.
+    #[prop(into, optional)]
+    note: Signal<Option<String>>,
+) -> impl IntoView {
+    let choices = match field.takes() {
+        Takes::Choice(choices) => choices,
+        Takes::Number { .. } | Takes::Whole { .. } => &[],
+    };
+    let known = move |text: &str| choices.iter().any(|(key, _)| *key == text);
+    let parts = Parts::new((tool, field), Said { assumed, asks, note }, move |typed| {
+        if typed.text.is_empty() || known(&typed.text) {
+            Ok(None)
+        } else {
+            Err(Refusal::NotANumber { text: typed.text.clone() })
+        }
+    });
+    let stand_in = Memo::new(move |_| {
+        assumed.with(|stand_in| match stand_in.as_ref()?.stands {
+            Stands::Choice(key) => Some(key),
+            Stands::Amount(_) | Stands::Depends => None,
+        })
+    });
+    let choose = move |key: String| parts.draft.edit(Edit::Type(parts.place, key));
+    match shape {
+        Shape::List => list(parts, label.unwrap_or(field.name()), choices, stand_in, choose).into_any(),
+        Shape::Pick => pick(parts, label.unwrap_or(field.name()), choices, stand_in, choose).into_any(),
+    }
+}
+
+type Choices = &'static [(&'static str, &'static str)];
+
+fn list(
+    parts: Parts,
+    label: &'static str,
+    choices: Choices,
+    stand_in: Memo<Option<&'static str>>,
+    choose: impl Fn(String) + Copy + 'static,
+) -> impl IntoView {
+    let text = move || parts.typed.with(|typed| typed.text.clone());
+    // What no choice is chosen means: what stands in, by its words.
+    let none = move || {
+        let words = choices.iter().find(|(key, _)| Some(*key) == stand_in.get()).map(|choice| choice.1);
+        words.unwrap_or("not chosen")
+    };
+    // A choice of another release is shown as it is, and nothing is put in its place.
+    let strange = move || Some(text()).filter(|text| parts.state.get() == State::Unread && !text.is_empty());
+    view! {
+        <div class=move || parts.class()>
+            {parts.head(label)}
+            <div class="field-box">
+                <select
+                    id=parts.id()
+                    aria-label=parts.field().name()
+                    aria-describedby=move || parts.described_by()
+                    aria-invalid=move || parts.invalid()
+                    prop:value=text
+                    on:change=move |event| choose(event_target_value(&event))
+                >
+                    <option value="" selected=move || text().is_empty()>{none}</option>
+                    {choices
+                        .iter()
+                        .map(|(key, words)| {
+                            view! { <option value=*key selected=move || text() == *key>{*words}</option> }
+                        })
+                        .collect_view()}
+                    {move || strange().map(|text| view! { <option value=text.clone() selected=true>{text.clone()}</option> })}
+                </select>
+            </div>
+            {parts.foot()}
+        </div>
+    }
+}
+
+fn pick(
+    parts: Parts,
+    label: &'static str,
+    choices: Choices,
+    stand_in: Memo<Option<&'static str>>,
+    choose: impl Fn(String) + Copy + 'static,
+) -> impl IntoView {
+    let text = move || parts.typed.with(|typed| typed.text.clone());
+    view! {
+        <div class=move || format!("{} wide", parts.class())>
+            <div class="label">
+                <span>{label}</span>
+                <Show when=move || parts.state.get() == State::Assumed><span class="tag">"assumed"</span></Show>
+            </div>
+            <div
+                class="pick"
+                id=parts.id()
+                role="radiogroup"
+                aria-label=parts.field().name()
+                aria-describedby=move || parts.described_by()
+            >
+                {choices
+                    .iter()
+                    .map(|(key, words)| {
+                        let stands_in = move || {
+                            (text().is_empty() && stand_in.get() == Some(*key)).then_some("")
+                        };
+                        view! {
+                            <label data-assumed=stands_in>
+                                <input
+                                    type="radio"
+                                    name=format!("{}-pick", parts.id())
+                                    prop:checked=move || text() == *key
+                                    on:change=move |_| choose((*key).to_owned())
+                                />
+                                {*words}
+                            </label>
+                        }
+                    })
+                    .collect_view()}
+            </div>
+            {parts.foot()}
+        </div>
+    }
+}

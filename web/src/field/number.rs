@@ -1,0 +1,83 @@
+//! A field that takes a number with a unit.
+
+use engine::field::{Field, Takes};
+use engine::unit::Dimension;
+use leptos::prelude::*;
+
+use super::units::{UnitChip, UnitList, unit};
+use super::{Parts, Said, StandIn};
+use crate::figure::figure;
+use crate::pads::Edit;
+use crate::tools::Tool;
+
+/// A field that takes a number with a unit.
+#[component]
+pub fn NumberField(
+    /// The tool it stands in.
+    tool: Tool,
+    /// The input.
+    field: Field,
+    /// The word above it, where it is shorter than the field's name. Contained in that name.
+    #[prop(optional)]
+    label: Option<&'static str>,
+    /// What stands in while it is blank.
+    #[prop(into, optional)]
+    assumed: Signal<Option<StandIn>>,
+    /// What waits for it, while it is blank.
+    #[prop(into, optional)]
+    asks: Signal<Option<String>>,
+    /// What else is said under it.
+    #[prop(into, optional)]
+    note: Signal<Option<String>>,
+) -> impl IntoView {
+    let said = Said { assumed, asks, note };
+    let parts = Parts::new((tool, field), said, move |typed| field.read(&typed.text, typed.unit));
+    let open = RwSignal::new(false);
+    let usual = match field.takes() {
+        Takes::Number { unit, .. } => unit,
+        Takes::Whole { .. } | Takes::Choice(_) => engine::unit::Unit::One,
+    };
+    let stand_in = move || parts.stand_in(said, unit(parts, usual)).map(figure);
+    view! {
+        <div class=move || parts.class()>
+            {parts.head(label.unwrap_or(field.name()))}
+            <div class="field-box">
+                <input
+                    id=parts.id()
+                    type="text"
+                    aria-label=field.name()
+                    inputmode=keypad(field)
+                    autocomplete="off"
+                    autocapitalize="off"
+                    spellcheck="false"
+                    placeholder=stand_in
+                    aria-describedby=move || parts.described_by()
+                    aria-invalid=move || parts.invalid()
+                    prop:value=move || parts.typed.with(|typed| typed.text.clone())
+                    on:input=move |event| {
+                        parts.patience.begin();
+                        parts.draft.edit(Edit::Type(parts.place, event_target_value(&event)));
+                    }
+                    on:blur=move |_| {
+                        parts.patience.end();
+                        parts.draft.leave();
+                    }
+                />
+                <UnitChip parts=parts usual=usual open=open/>
+            </div>
+            {parts.foot()}
+            <Show when=move || open.get()><UnitList parts=parts usual=usual open=open/></Show>
+        </div>
+    }
+}
+
+/// Some phones' decimal keypads have no minus and no slash: where one can be typed, the whole keyboard comes up.
+fn keypad(field: Field) -> &'static str {
+    match field.takes() {
+        Takes::Number { least, .. } if least < 0.0 => "text",
+        Takes::Number { unit, .. } if unit.dimension() == Dimension::ConductorSize => "text",
+        Takes::Number { .. } => "decimal",
+        Takes::Whole { .. } => "numeric",
+        Takes::Choice(_) => "text",
+    }
+}

@@ -1,0 +1,50 @@
+//! The first page: what can be asked.
+
+use leptos::prelude::*;
+
+use crate::icon::Icon;
+use crate::offline::{self, Offline};
+use crate::route::Route;
+use crate::tools::Tool;
+
+/// The first page: one line of what this is, and the tools there are.
+#[component]
+pub fn FirstVisit() -> impl IntoView {
+    view! {
+        <div class="first">
+            <section class="hello">
+                <h1 tabindex="-1">"Settle it before you close a breaker."</h1>
+                <p>"For stand-alone solar power rooms. " {move || signal_words(offline::state())}</p>
+            </section>
+            <section>
+                <h2 class="sub">"Ask one thing" <span>"no site needed"</span></h2>
+                <ul class="quick">
+                    {Tool::ALL
+                        .iter()
+                        .map(|tool| {
+                            view! {
+                                <li>
+                                    <a href=Route::Tool(*tool).href()>
+                                        <Icon class="sym" name=tool.symbol()/>
+                                        <span>
+                                            <span class="ask">{tool.question()}</span>
+                                            <span class="name">{tool.name()}</span>
+                                        </span>
+                                    </a>
+                                </li>
+                            }
+                        })
+                        .collect_view()}
+                </ul>
+            </section>
+        </div>
+    }
+}
+
+const fn signal_words(offline: Offline) -> &'static str {
+    match offline {
+        Offline::Ready => "The whole tool is now on this phone and works with no signal.",
+        Offline::Copying { .. } => "A copy for no signal is being kept: stay in signal a minute.",
+        Offline::Unknown => "",
+    }
+}

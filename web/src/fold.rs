@@ -1,0 +1,86 @@
+//! Folds: unfold in place, and stay as they were left.
+
+use std::collections::BTreeSet;
+
+use leptos::prelude::*;
+
+use crate::icon::Icon;
+
+/// Which folds are open, while the page is.
+#[derive(Clone, Copy)]
+pub struct Folds(RwSignal<BTreeSet<String>>);
+
+impl Folds {
+    /// All closed.
+    pub fn new() -> Self {
+        Self(RwSignal::new(BTreeSet::new()))
+    }
+
+    /// Whether the fold `id` is open.
+    pub fn is_open(self, id: &str) -> bool {
+        self.0.with(|open| open.contains(id))
+    }
+
+    /// Opens or closes it.
+    pub fn turn(self, id: &str) {
+        self.0.update(|open| {
+            if !open.remove(id) {
+                open.insert(id.to_owned());
+            }
+        });
+    }
+
+    /// Opens it.
+    pub fn open(self, id: &str) {
+        self.0.update(|open| {
+            open.insert(id.to_owned());
+        });
+    }
+}
+
+impl Default for Folds {
+    fn default() -> Self {
+        Self::new()
+    }
+}
+
+/// A fold. What is in it is made when it is opened, not before.
+#[component]
+pub fn Fold(
+    /// What it is remembered by; one of its own on the page.
+    #[prop(into)]
+    id: String,
+    /// Its head.
+    title: &'static str,
+    /// What lies in it, in a few words.
+    #[prop(into, optional)]
+    says: MaybeProp<String>,
+    /// A symbol before the head.
+    #[prop(optional)]
+    icon: Option<&'static str>,
+    /// What unfolds.
+    children: ChildrenFn,
+) -> impl IntoView {
+    let folds = expect_context::<Folds>();
+    let id = StoredValue::new(id);
+    let open = Memo::new(move |_| id.with_value(|id| folds.is_open(id)));
+    let body = move || format!("fold-{}", id.get_value().replace('/', "-"));
+    view! {
+        <div class="fold" data-open=move || open.get().then_some("")>
+            <button
+                class="fold-head"
+                type="button"
+                aria-expanded=move || open.get().to_string()
+                aria-controls=move || open.get().then(body)
+                on:click=move |_| id.with_value(|id| folds.turn(id))
+            >
+                {icon.map(|name| view! { <Icon name=name/> })}
+                {title}
+                <span>{move || says.get()}</span>
+            </button>
+            <Show when=move || open.get()>
+                <div class="fold-body" id=body>{children()}</div>
+            </Show>
+        </div>
+    }
+}

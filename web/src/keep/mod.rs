@@ -1,0 +1,230 @@
+//! Keeping on this phone: written at each change, read before the page is put up.
+//!
+//! Writes of one tab follow one another; while one is under way only the latest change waits. A write puts in only
+//! what this tab changed, so two tabs never undo each other's work.
+
+#[cfg(target_arch = "wasm32")]
+mod browser;
+#[cfg(target_arch = "wasm32")]
+use browser as storage;
+#[cfg(not(target_arch = "wasm32"))]
+mod nowhere;
+#[cfg(not(target_arch = "wasm32"))]
+use nowhere as storage;
+
+use std::time::Duration;
+
+use bridge::Kept;
+use leptos::prelude::*;
+use wasm_bindgen_futures::spawn_local;
+
+use storage::{Storage, Tabs};
+
+/// How long the browser's storage may take to answer before the page is put up without it.
+pub const PATIENCE: Duration = Duration::from_secs(2);
+
+/// Whether what was typed is kept.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Keeping {
+    /// The storage has not answered yet.
+    Waiting,
+    /// A write takes longer than a second.
+    Busy,
+    /// Everything is kept.
+    Kept,
+    /// It is not kept, and why.
+    Not(Why),
+}
+
+/// Why something is not kept.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Why {
+    /// The storage does not answer.
+    NoAnswer,
+    /// The browser has no storage for this page, or refuses it.
+    Refused,
+    /// The phone is full.
+    Full,
+    /// A newer release wrote there, in another tab.
+    Newer,
+}
+
+impl Why {
+    /// In words, to follow "not kept on this phone".
+    pub const fn words(self) -> &'static str {
+        match self {
+            Self::NoAnswer => "the browser’s storage does not answer",
+            Self::Refused => "the browser keeps nothing for this page",
+            Self::Full => "the phone is full",
+            Self::Newer => "a newer Linehut is open in another tab: reload this one",
+        }
+    }
+}
+
+/// Keeps what was typed. A handle: copying it copies nothing.
+#[derive(Clone, Copy)]
+pub struct Keeper {
+    state: RwSignal<Keeping>,
+    lasting: RwSignal<Option<bool>>,
+    elsewhere: RwSignal<bool>,
+    damaged: RwSignal<bool>,
+    work: StoredValue<Work, LocalStorage>,
+}
+
+#[derive(Default)]
+struct Work {
+    storage: Option<Storage>,
+    tabs: Option<Tabs>,
+    /// What this tab last read or wrote: the next write puts in only what differs from it.
+    base: Kept,
+    next: Option<Kept>,
+    busy: bool,
+    asked_to_last: bool,
+}
+
+impl Keeper {
+    /// A keeper that has opened no storage yet.
+    pub fn new() -> Self {
+        Self {
+            state: RwSignal::new(Keeping::Waiting),
+            lasting: RwSignal::new(None),
+            elsewhere: RwSignal::new(false),
+            damaged: RwSignal::new(false),
+            work: StoredValue::new_local(Work::default()),
+        }
+    }
+
+    /// Whether what was typed is kept.
+    pub fn state(self) -> Keeping {
+        self.state.get()
+    }
+
+    /// Whether the browser promised never to clear it by itself. `None` while that is not known.
+    pub fn lasting(self) -> Option<bool> {
+        self.lasting.get()
+    }
+
+    /// Whether another tab changed what is kept.
+    pub fn elsewhere(self) -> RwSignal<bool> {
+        self.elsewhere
+    }
+
+    /// Whether what was kept could not be read. It was laid aside, not thrown away.
+    pub fn damaged(self) -> RwSignal<bool> {
+        self.damaged
+    }
+
+    /// The storage did not answer in time.
+    pub fn give_up_waiting(self) {
+        if self.state.get_untracked() == Keeping::Waiting {
+            self.state.set(Keeping::Not(Why::NoAnswer));
+        }
+    }
+
+    /// Opens the storage and reads what was kept.
+    pub async fn open(self) -> Option<Kept> {
+        let storage = match Storage::open().await {
+            Ok(storage) => storage,
+            Err(why) => {
+                self.state.set(Keeping::Not(why));
+                return None;
+            }
+        };
+        let found = storage.read().await;
+        self.lasting.set(storage::is_lasting().await);
+        let elsewhere = self.elsewhere;
+        self.work.update_value(|work| {
+            work.storage = Some(storage);
+            work.tabs = Tabs::listen(move || elsewhere.set(true));
+        });
+        match found {
+            Ok(found) => {
+                self.state.set(Keeping::Kept);
+                self.damaged.set(found.damaged);
+                self.work.update_value(|work| work.base = found.kept.clone());
+                self.go_on();
+                Some(found.kept)
+            }
+            Err(why) => {
+                self.state.set(Keeping::Not(why));
+                None
+            }
+        }
+    }
+
+    /// Keeps `kept`, as soon as the write before it is done.
+    pub fn keep(self, kept: Kept) {
+        self.work.update_value(|work| work.next = Some(kept));
+        self.go_on();
+    }
+
+    fn go_on(self) {
+        let idle = self
+            .work
+            .try_update_value(|work| {
+                work.storage.is_some() && work.next.is_some() && !std::mem::replace(&mut work.busy, true)
+            })
+            .unwrap_or(false);
+        if !idle {
+            return;
+        }
+        set_timeout(
+            move || {
+                if self.work.try_with_value(|work| work.busy) == Some(true) {
+                    self.state.set(Keeping::Busy);
+                }
+            },
+            Duration::from_secs(1),
+        );
+        spawn_local(async move {
+            while let Some((storage, base, next)) = self.take() {
+                match storage.write(&base, &next).await {
+                    Ok(()) => {
+                        self.work.update_value(|work| {
+                            work.base = next;
+                            if let Some(tabs) = &work.tabs {
+                                tabs.tell();
+                            }
+                        });
+                        self.state.set(Keeping::Kept);
+                        self.ask_to_last().await;
+                    }
+                    Err(why) => {
+                        self.state.set(Keeping::Not(why));
+                        // Not lost: it goes along with the next change.
+                        self.work.update_value(|work| {
+                            work.next.get_or_insert(next);
+                            work.busy = false;
+                        });
+                        return;
+                    }
+                }
+            }
+        });
+    }
+
+    /// What to write next; ends the work where there is nothing.
+    fn take(self) -> Option<(Storage, Kept, Kept)> {
+        self.work
+            .try_update_value(|work| {
+                let next = work.next.take().filter(|next| *next != work.base);
+                work.busy = next.is_some();
+                Some((work.storage.clone()?, work.base.clone(), next?))
+            })
+            .flatten()
+    }
+
+    /// Asks the browser, once, not to clear what is kept: after the first entry, when it means something.
+    async fn ask_to_last(self) {
+        let asked = self.work.try_update_value(|work| std::mem::replace(&mut work.asked_to_last, true));
+        if asked == Some(false) && self.lasting.get_untracked() != Some(true) {
+            self.lasting.set(storage::ask_to_last().await);
+        }
+    }
+}
+
+impl Default for Keeper {
+    fn default() -> Self {
+        Self::new()
+    }
+}

@@ -1,0 +1,420 @@
+//! Scratch pads: what was typed into each tool, and the way back. Pure: no browser, no clock.
+
+use std::collections::BTreeMap;
+
+use bridge::{Kept, KeptEntry};
+use engine::entry::Entry;
+use engine::field::{Field, Takes};
+use engine::quantity::Quantity;
+use engine::typed::{Reading, Refusal};
+use engine::unit::Unit;
+
+use crate::tools::Tool;
+
+/// How long a pause in typing ends one step of undo, in milliseconds.
+pub const PAUSE: f64 = 1000.0;
+
+/// What stands in one field.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Typed {
+    /// The text, to the letter.
+    pub text: String,
+    /// The unit that was chosen for the field, where one was.
+    pub unit: Option<Unit>,
+}
+
+/// A field of a tool.
+pub type Place = (Tool, Field);
+
+/// A change that a person makes.
+#[derive(Clone, Debug, PartialEq)]
+pub enum Edit {
+    /// The text of a field is now this. Keystrokes in one field join into one step of undo.
+    Type(Place, String),
+    /// The unit of a field is now this.
+    Unit(Place, Unit),
+    /// Several fields at once, as when a layout is taken over.
+    Fill(Vec<(Place, Typed)>),
+    /// Everything is replaced by what was in a file.
+    Open(Kept),
+    /// Everything is forgotten.
+    Forget,
+    /// The last change is taken back.
+    Undo,
+    /// The last change taken back is made again.
+    Redo,
+}
+
+/// What a step of undo would take back.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum What {
+    /// What was typed into one field.
+    Field(Field),
+    /// Several fields at once.
+    Several,
+    /// A file that was opened.
+    Opened,
+    /// Everything having been forgotten.
+    Forgotten,
+}
+
+/// Entries that this release does not know: kept, and never looked into.
+type Unknown = BTreeMap<(String, String), KeptEntry>;
+
+#[derive(Clone, Debug)]
+struct Change {
+    what: What,
+    fields: Vec<(Place, Typed, Typed)>,
+    unknown: Option<(Unknown, Unknown)>,
+}
+
+/// All scratch pads, and the way back through the session.
+#[derive(Clone, Debug, Default)]
+pub struct Pads {
+    typed: BTreeMap<Place, Typed>,
+    unknown: Unknown,
+    past: Vec<Change>,
+    future: Vec<Change>,
+    /// The field that is being typed into, and when last.
+    typing: Option<(Place, f64)>,
+}
+
+impl What {
+    /// In words, as in "Undo: Voc".
+    pub const fn words(self) -> &'static str {
+        match self {
+            Self::Field(field) => field.name(),
+            Self::Several => "several fields",
+            Self::Opened => "the opened file",
+            Self::Forgotten => "forgetting all",
+        }
+    }
+}
+
+impl Pads {
+    /// What stands in a field.
+    pub fn typed(&self, place: Place) -> Typed {
+        self.typed.get(&place).cloned().unwrap_or_default()
+    }
+
+    /// What stands in a field, read. `Ok(None)` where it is blank.
+    ///
+    /// # Errors
+    ///
+    /// A [`Refusal`] in words for the person.
+    pub fn read(&self, (tool, field): Place) -> Result<Option<Reading>, Refusal> {
+        self.typed.get(&(tool, field)).map_or(Ok(None), |typed| field.read(&typed.text, typed.unit))
+    }
+
+    /// A field that takes a number, as the engine wants it.
+    pub fn entry<Q: Quantity>(&self, (tool, field): Place) -> Entry<Q> {
+        self.typed.get(&(tool, field)).map_or(Entry::Blank, |typed| field.entry(&typed.text, typed.unit))
+    }
+
+    /// A field that takes a whole number, as the engine wants it.
+    pub fn count(&self, place: Place) -> Entry<u32> {
+        match self.read(place) {
+            Ok(None) => Entry::Blank,
+            // Within a field's range by its reading, so it fits.
+            #[allow(clippy::cast_possible_truncation, clippy::cast_sign_loss)]
+            Ok(Some(reading)) => Entry::Typed(reading.number() as u32),
+            Err(_) => Entry::Unread,
+        }
+    }
+
+    /// The key of the choice in a field, as the engine wants it.
+    pub fn choice(&self, (tool, field): Place) -> Entry<&'static str> {
+        let Some(typed) = self.typed.get(&(tool, field)).filter(|typed| !typed.text.is_empty()) else {
+            return Entry::Blank;
+        };
+        let Takes::Choice(choices) = field.takes() else { return Entry::Unread };
+        choices.iter().find(|(key, _)| *key == typed.text).map_or(Entry::Unread, |(key, _)| Entry::Typed(key))
+    }
+
+    /// How many fields hold something.
+    pub fn len(&self) -> usize {
+        self.typed.values().filter(|typed| !typed.text.is_empty()).count() + self.unknown.len()
+    }
+
+    /// Whether nothing was typed.
+    pub fn is_empty(&self) -> bool {
+        self.len() == 0
+    }
+
+    /// What an undo would take back.
+    pub fn undoes(&self) -> Option<What> {
+        self.past.last().map(|change| change.what)
+    }
+
+    /// What a redo would make again.
+    pub fn redoes(&self) -> Option<What> {
+        self.future.last().map(|change| change.what)
+    }
+
+    /// Makes a change at the time `now`, in milliseconds. Says whether anything is different.
+    pub fn edit(&mut self, edit: Edit, now: f64) -> bool {
+        match edit {
+            Edit::Type(place, text) => {
+                let unit = self.typed(place).unit;
+                let going_on = self.typing.is_some_and(|(at, last)| at == place && now - last <= PAUSE);
+                let changed = self.make(vec![(place, Typed { text, unit })], None, What::Field(place.1), going_on);
+                if changed {
+                    self.typing = Some((place, now));
+                }
+                changed
+            }
+            Edit::Unit(place, unit) => {
+                self.typing = None;
+                let text = in_unit(&self.typed(place).text, unit);
+                self.make(vec![(place, Typed { text, unit: Some(unit) })], None, What::Field(place.1), false)
+            }
+            Edit::Fill(fields) => {
+                self.typing = None;
+                self.make(fields, None, What::Several, false)
+            }
+            Edit::Open(kept) => self.replace(&kept, What::Opened),
+            Edit::Forget => self.replace(&Kept::default(), What::Forgotten),
+            Edit::Undo => self.step(true),
+            Edit::Redo => self.step(false),
+        }
+    }
+
+    /// The field that was typed into was left: the next keystroke begins a new step of undo.
+    pub fn leave(&mut self) {
+        self.typing = None;
+    }
+
+    /// Takes over what is kept, with no way back: it is what was there before.
+    pub fn load(&mut self, kept: &Kept) {
+        let (typed, unknown) = split(kept);
+        self.typed = typed;
+        self.unknown = unknown;
+    }
+
+    /// All of it, to be kept.
+    pub fn kept(&self) -> Kept {
+        let mut kept = Kept::default();
+        for ((tool, field), typed) in &self.typed {
+            let entry = KeptEntry::new(&typed.text, typed.unit);
+            kept.tools.entry(tool.key().to_owned()).or_default().insert(field.key().to_owned(), entry);
+        }
+        for ((tool, field), entry) in &self.unknown {
+            kept.tools.entry(tool.clone()).or_default().insert(field.clone(), entry.clone());
+        }
+        kept
+    }
+
+    fn replace(&mut self, kept: &Kept, what: What) -> bool {
+        self.typing = None;
+        let (typed, unknown) = split(kept);
+        let mut fields: Vec<(Place, Typed)> = typed.clone().into_iter().collect();
+        fields.extend(
+            self.typed.keys().filter(|place| !typed.contains_key(place)).map(|place| (*place, Typed::default())),
+        );
+        self.make(fields, Some(unknown), what, false)
+    }
+
+    /// Puts `fields` in and remembers the way back. `join` adds to the step before, where that was in the same field.
+    fn make(&mut self, fields: Vec<(Place, Typed)>, unknown: Option<Unknown>, what: What, join: bool) -> bool {
+        let fields: Vec<_> = fields
+            .into_iter()
+            .map(|(place, after)| (place, self.typed(place), after))
+            .filter(|(_, before, after)| before != after)
+            .collect();
+        let unknown = unknown.filter(|after| *after != self.unknown).map(|after| (self.unknown.clone(), after));
+        if fields.is_empty() && unknown.is_none() {
+            return false;
+        }
+        let mut change = Change { what, fields, unknown };
+        if join && let Some(earlier) = self.past.pop_if(|earlier| earlier.what == what && earlier.fields.len() == 1) {
+            change.fields[0].1 = earlier.fields[0].1.clone();
+        }
+        self.put(&change, false);
+        self.future.clear();
+        if change.unknown.is_some() || change.fields.iter().any(|(_, before, after)| before != after) {
+            self.past.push(change);
+        }
+        true
+    }
+
+    fn step(&mut self, back: bool) -> bool {
+        self.typing = None;
+        let Some(change) = (if back { self.past.pop() } else { self.future.pop() }) else { return false };
+        self.put(&change, back);
+        if back {
+            self.future.push(change)
+        } else {
+            self.past.push(change)
+        }
+        true
+    }
+
+    fn put(&mut self, change: &Change, back: bool) {
+        for (place, before, after) in &change.fields {
+            let typed = if back { before } else { after };
+            if *typed == Typed::default() {
+                self.typed.remove(place);
+            } else {
+                self.typed.insert(*place, typed.clone());
+            }
+        }
+        if let Some((before, after)) = &change.unknown {
+            self.unknown = if back { before.clone() } else { after.clone() };
+        }
+    }
+}
+
+/// `text` without the unit that was typed behind its number, so that `unit`, now chosen, is the one that counts.
+///
+/// Text that is no number is left as it is.
+fn in_unit(text: &str, unit: Unit) -> String {
+    let Ok(whole) = engine::typed::read(text, unit) else { return text.to_owned() };
+    if whole.unit() == unit {
+        return text.to_owned();
+    }
+    text.char_indices()
+        .rev()
+        .map(|(end, _)| text[..end].trim_end())
+        .find(|part| {
+            engine::typed::read(part, unit)
+                .is_ok_and(|part| part.unit() == unit && part.number().total_cmp(&whole.number()).is_eq())
+        })
+        .unwrap_or(text)
+        .to_owned()
+}
+
+fn split(kept: &Kept) -> (BTreeMap<Place, Typed>, Unknown) {
+    let mut typed = BTreeMap::new();
+    let mut unknown = Unknown::new();
+    for (tool_key, entries) in &kept.tools {
+        for (field_key, entry) in entries {
+            match (Tool::of_key(tool_key), Field::of_key(field_key)) {
+                (Some(tool), Some(field)) => {
+                    let (text, unit) = entry.typed(field);
+                    typed.insert((tool, field), Typed { text, unit });
+                }
+                _ => {
+                    unknown.insert((tool_key.clone(), field_key.clone()), entry.clone());
+                }
+            }
+        }
+    }
+    (typed, unknown)
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use engine::quantity::{Celsius, Volts};
+
+    const VOC: Place = (Tool::String, Field::Voc);
+    const LOW: Place = (Tool::String, Field::RecordLow);
+
+    fn type_in(pads: &mut Pads, place: Place, text: &str, now: f64) {
+        for end in 1..=text.len() {
+            pads.edit(Edit::Type(place, text[..end].to_owned()), now);
+        }
+    }
+
+    fn text(pads: &Pads, place: Place) -> String {
+        pads.typed(place).text
+    }
+
+    #[test]
+    fn keystrokes_without_a_pause_are_one_step() {
+        let mut pads = Pads::default();
+        type_in(&mut pads, VOC, "49.3", 0.0);
+        pads.edit(Edit::Type(VOC, "49.31".into()), 2000.0);
+        assert!(pads.edit(Edit::Undo, 2001.0));
+        assert_eq!(text(&pads, VOC), "49.3");
+        assert!(pads.edit(Edit::Undo, 2002.0));
+        assert_eq!(text(&pads, VOC), "");
+        assert!(!pads.edit(Edit::Undo, 2003.0));
+        assert!(pads.edit(Edit::Redo, 2004.0));
+        assert!(pads.edit(Edit::Redo, 2005.0));
+        assert_eq!(text(&pads, VOC), "49.31");
+    }
+
+    #[test]
+    fn leaving_a_field_ends_the_step() {
+        let mut pads = Pads::default();
+        type_in(&mut pads, VOC, "49", 0.0);
+        pads.leave();
+        type_in(&mut pads, VOC, "48", 10.0);
+        pads.edit(Edit::Undo, 20.0);
+        assert_eq!(text(&pads, VOC), "49");
+    }
+
+    #[test]
+    fn another_field_ends_the_step_and_a_new_change_ends_redo() {
+        let mut pads = Pads::default();
+        type_in(&mut pads, VOC, "49", 0.0);
+        type_in(&mut pads, LOW, "-31", 0.0);
+        pads.edit(Edit::Undo, 1.0);
+        assert_eq!((text(&pads, VOC), text(&pads, LOW)), ("49".into(), String::new()));
+        assert_eq!(pads.redoes(), Some(What::Field(Field::RecordLow)));
+        type_in(&mut pads, VOC, "5", 5000.0);
+        assert_eq!(pads.redoes(), None);
+    }
+
+    #[test]
+    fn typing_and_taking_it_out_again_leaves_no_step() {
+        let mut pads = Pads::default();
+        type_in(&mut pads, VOC, "4", 0.0);
+        pads.edit(Edit::Type(VOC, String::new()), 10.0);
+        assert_eq!(pads.undoes(), None);
+    }
+
+    #[test]
+    fn forgetting_and_opening_can_be_undone() {
+        let mut kept = Kept::default();
+        for (tool, field, text) in [("string", "Voc", "49.3"), ("later", "X", "7")] {
+            kept.tools.entry(tool.into()).or_default().insert(field.into(), KeptEntry::new(text, None));
+        }
+        let mut pads = Pads::default();
+        type_in(&mut pads, LOW, "-31", 0.0);
+        let before = pads.kept();
+        assert!(pads.edit(Edit::Open(kept.clone()), 1.0));
+        assert_eq!(pads.kept(), kept, "what is not known here is kept too");
+        assert!(pads.edit(Edit::Forget, 2.0));
+        assert!(pads.is_empty());
+        pads.edit(Edit::Undo, 3.0);
+        assert_eq!(pads.kept(), kept);
+        pads.edit(Edit::Undo, 4.0);
+        assert_eq!(pads.kept(), before);
+    }
+
+    #[test]
+    fn a_chosen_unit_is_the_one_that_is_read() {
+        let mut pads = Pads::default();
+        type_in(&mut pads, LOW, "-24", 0.0);
+        assert_eq!(pads.entry::<Celsius>(LOW), Entry::Typed(Celsius::new(-24.0)));
+        pads.edit(Edit::Unit(LOW, Unit::DegreeFahrenheit), 1.0);
+        assert_eq!(text(&pads, LOW), "-24");
+        let Entry::Typed(low) = pads.entry::<Celsius>(LOW) else { panic!("reads") };
+        assert!((low.get() - -31.111).abs() < 0.001);
+    }
+
+    #[test]
+    fn what_is_not_understood_is_kept_and_unread() {
+        let mut pads = Pads::default();
+        type_in(&mut pads, VOC, "12,,4", 0.0);
+        assert_eq!(pads.entry::<Volts>(VOC), Entry::Unread);
+        assert_eq!(text(&pads, VOC), "12,,4");
+        pads.edit(Edit::Unit(VOC, Unit::Millivolt), 1.0);
+        assert_eq!(text(&pads, VOC), "12,,4");
+    }
+
+    #[test]
+    fn counts_and_choices_are_read_for_the_engine() {
+        let mut pads = Pads::default();
+        let (series, family) = ((Tool::String, Field::Series), (Tool::String, Field::CodeFamily));
+        assert_eq!((pads.count(series), pads.choice(family)), (Entry::Blank, Entry::Blank));
+        pads.edit(Edit::Type(series, "3".into()), 0.0);
+        pads.edit(Edit::Type(family, "iec".into()), 0.0);
+        assert_eq!((pads.count(series), pads.choice(family)), (Entry::Typed(3), Entry::Typed("iec")));
+        pads.edit(Edit::Type(series, "3.5".into()), 0.0);
+        pads.edit(Edit::Type(family, "martian".into()), 0.0);
+        assert_eq!((pads.count(series), pads.choice(family)), (Entry::Unread, Entry::Unread));
+    }
+}

@@ -1,0 +1,255 @@
+//! What stands around every view: the top line, the notices and the bottom bar.
+
+use leptos::ev::{self, KeyboardEvent};
+use leptos::prelude::*;
+
+use crate::draft::{Draft, use_draft};
+use crate::first_visit::FirstVisit;
+use crate::fold::Folds;
+use crate::icon::Icon;
+use crate::keep::Keeping;
+use crate::notice::Notice;
+use crate::offline::{self, Offline};
+use crate::pads::{Edit, What};
+use crate::route::{self, Route};
+use crate::sheet::Sheet;
+
+/// The page.
+#[component]
+pub fn Shell(
+    /// The store.
+    draft: Draft,
+) -> impl IntoView {
+    draft.provide();
+    provide_context(Folds::new());
+    offline::provide();
+    let route = route::follow();
+    let keys = window_event_listener(ev::keydown, move |event| undo_keys(draft, &event));
+    on_cleanup(move || keys.remove());
+    arrive(route);
+    let view = move || match route.get() {
+        Route::Tools => view! { <FirstVisit/> }.into_any(),
+        Route::Tool(tool) => tool.page(),
+        Route::Sheet => view! { <Sheet/> }.into_any(),
+    };
+    view! {
+        <Top route=route/>
+        <main>{view}</main>
+        <Notices/>
+        <BottomBar route=route/>
+    }
+}
+
+/// Going to a view sets its title, and puts the reader at its head; the first one is left as the browser opened it.
+fn arrive(route: ReadSignal<Route>) {
+    Effect::new(move |before: Option<Route>| {
+        let now = route.get();
+        document().set_title(&now.title());
+        if before.is_some_and(|before| before != now) {
+            request_animation_frame(|| {
+                window().scroll_to_with_x_and_y(0.0, 0.0);
+                use wasm_bindgen::JsCast;
+                let head = document().query_selector("main h1").ok().flatten();
+                if let Some(head) = head.and_then(|head| head.dyn_into::<web_sys::HtmlElement>().ok()) {
+                    // Where it cannot be focused the reader is at the top all the same.
+                    let _ = head.focus();
+                }
+            });
+        }
+        now
+    });
+}
+
+fn undo_keys(draft: Draft, event: &KeyboardEvent) {
+    if !(event.ctrl_key() || event.meta_key()) || event.alt_key() {
+        return;
+    }
+    let edit = match (event.key().as_str(), event.shift_key()) {
+        ("z", false) => Edit::Undo,
+        ("Z" | "z", true) | ("y", false) => Edit::Redo,
+        _ => return,
+    };
+    event.prevent_default();
+    draft.edit(edit);
+}
+
+#[component]
+fn Top(route: ReadSignal<Route>) -> impl IntoView {
+    let home = move || route.get() == Route::Tools;
+    view! {
+        <header class="top">
+            <Icon class="top-mark" name="mark"/>
+            <div class="top-name">
+                <p class="h1">
+                    <Show when=home fallback=|| view! { <a href=Route::Tools.href()>"Linehut"</a> }>"Linehut"</Show>
+                </p>
+                <KeptBadge/>
+            </div>
+            <UndoButtons/>
+            <LightButton/>
+        </header>
+    }
+}
+
+/// Whether what was typed is kept, and whether the page works with no signal.
+#[component]
+fn KeptBadge() -> impl IntoView {
+    let keeper = use_draft().keeper();
+    let badge = Memo::new(move |_| badge(keeper.state(), keeper.lasting(), offline::state()));
+    view! {
+        <div class="kept" data-state=move || badge.get().state aria-live="polite">
+            <Icon name="i-kept"/>
+            {move || {
+                let Badge { words, leads, .. } = badge.get();
+                if leads {
+                    view! { <a href=Route::Sheet.href()>{words}</a> }.into_any()
+                } else {
+                    view! { <span>{words}</span> }.into_any()
+                }
+            }}
+        </div>
+    }
+}
+
+#[derive(Clone, Debug, PartialEq, Eq)]
+struct Badge {
+    state: &'static str,
+    words: String,
+    /// Whether it leads to where the file is saved.
+    leads: bool,
+}
+
+fn badge(keeping: Keeping, lasting: Option<bool>, offline: Offline) -> Badge {
+    let (state, words, leads) = match (keeping, offline) {
+        (Keeping::Not(_), _) => ("not-yet", "not kept on this phone: save the file".to_owned(), true),
+        (Keeping::Waiting, _) => ("keeping", "looking for what was kept here".to_owned(), false),
+        (Keeping::Busy, _) => ("keeping", "keeping what you typed".to_owned(), false),
+        (Keeping::Kept, Offline::Copying { done, of }) => {
+            ("keeping", format!("keeping a copy for no signal, {done} of {of}"), false)
+        }
+        (Keeping::Kept, _) if lasting == Some(false) => {
+            ("kept", "kept here, but the browser may clear it".to_owned(), true)
+        }
+        (Keeping::Kept, Offline::Ready) => ("kept", "kept on this phone, works with no signal".to_owned(), false),
+        (Keeping::Kept, Offline::Unknown) => ("kept", "kept on this phone".to_owned(), false),
+    };
+    Badge { state, words, leads }
+}
+
+#[component]
+fn UndoButtons() -> impl IntoView {
+    let draft = use_draft();
+    let said = RwSignal::new(String::new());
+    let make = move |edit: Edit, word: &str, what: Option<What>| {
+        said.set(what.map_or_else(String::new, |what| format!("{word}: {}", what.words())));
+        draft.edit(edit);
+    };
+    let (undoes, redoes) = (draft.undoes(), draft.redoes());
+    let name = |word: &str, what: Option<What>| {
+        what.map_or_else(|| word.to_owned(), |what| format!("{word}: {}", what.words()))
+    };
+    view! {
+        <Show when=move || redoes.get().is_some()>
+            <button
+                class="icon-btn redo"
+                type="button"
+                aria-label=move || name("Redo", redoes.get())
+                on:click=move |_| make(Edit::Redo, "Made again", redoes.get_untracked())
+            >
+                <Icon name="i-undo"/>
+            </button>
+        </Show>
+        <Show when=move || undoes.get().is_some() || redoes.get().is_some()>
+            <button
+                class="icon-btn"
+                type="button"
+                aria-label=move || name("Undo", undoes.get())
+                aria-disabled=move || undoes.get().is_none().then_some("true")
+                on:click=move |_| make(Edit::Undo, "Undone", undoes.get_untracked())
+            >
+                <Icon name="i-undo"/>
+            </button>
+        </Show>
+        <p class="vh" aria-live="polite">{said}</p>
+    }
+}
+
+#[component]
+fn LightButton() -> impl IntoView {
+    let draft = use_draft();
+    view! {
+        <button
+            class="icon-btn"
+            type="button"
+            aria-label=move || format!("Light: {}. Change to {}", draft.theme().name(), draft.theme().next().name())
+            on:click=move |_| draft.set_theme(untrack(|| draft.theme().next()))
+        >
+            <Icon name="i-light"/>
+        </button>
+    }
+}
+
+/// The notices, one below the other. The region is there before its words are, or screen readers would not tell of them.
+#[component]
+fn Notices() -> impl IntoView {
+    let keeper = use_draft().keeper();
+    // A page that cannot load itself again stays as it is, with its notice up.
+    let reload = move |()| drop(window().location().reload());
+    view! {
+        <aside class="notices" aria-label="Notices" aria-live="polite">
+            <Notice
+                says="Changed in another tab: reload to see it. Nothing you typed here is lost."
+                up=keeper.elsewhere()
+                act="Reload"
+                on_act=Callback::new(reload)
+            />
+            <Notice
+                says="What was kept here could not be read. It was laid aside, and this page begins empty."
+                up=keeper.damaged()
+                close="Close"
+            />
+        </aside>
+    }
+}
+
+#[component]
+fn BottomBar(route: ReadSignal<Route>) -> impl IntoView {
+    let tap = move |to: Route, icon: &'static str, word: &'static str| {
+        let open = move || {
+            let here = match route.get() {
+                Route::Tools | Route::Tool(_) => Route::Tools,
+                Route::Sheet => Route::Sheet,
+            };
+            (here == to).then_some("page")
+        };
+        view! { <li><a href=to.href() aria-current=open><Icon name=icon/>{word}</a></li> }
+    };
+    view! {
+        <nav class="bar" aria-label="Views">
+            <ul>{tap(Route::Tools, "i-tools", "Tools")} {tap(Route::Sheet, "i-sheet", "Sheet")}</ul>
+        </nav>
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::keep::Why;
+
+    #[test]
+    fn the_badge_never_says_kept_when_it_is_not() {
+        for why in [Why::NoAnswer, Why::Refused, Why::Full, Why::Newer] {
+            for offline in [Offline::Unknown, Offline::Ready, Offline::Copying { done: 1, of: 9 }] {
+                let badge = badge(Keeping::Not(why), Some(true), offline);
+                assert_eq!((badge.state, badge.leads), ("not-yet", true));
+                assert_eq!(badge.words, "not kept on this phone: save the file");
+            }
+        }
+    }
+
+    #[test]
+    fn a_browser_that_may_clear_it_is_named() {
+        assert!(badge(Keeping::Kept, Some(false), Offline::Ready).leads);
+        assert_eq!(badge(Keeping::Kept, Some(true), Offline::Ready).words, "kept on this phone, works with no signal");
+    }
+}
