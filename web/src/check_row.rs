@@ -1,10 +1,11 @@
 //! A check in a list: verdict, value, limit and margin, a slim bar, and the working behind a fold.
 
 use engine::check::{Check, Sense, Step, Verdict};
-use engine::quantity::Amount;
+use engine::field::Field;
+use engine::quantity::{Amount, Quantity};
+use engine::show;
 use leptos::prelude::*;
 
-use crate::figure;
 use crate::fold::Folds;
 use crate::span_bar::geometry::{From, Post, Ruler};
 use crate::span_bar::{Bar, SlimBar};
@@ -28,6 +29,8 @@ pub fn CheckRow<Id>(
     /// What else there is to say, under the figures.
     #[prop(into, optional)]
     note: MaybeProp<String>,
+    /// Leads to a field that is missing.
+    on_ask: Callback<Field>,
 ) -> impl IntoView
 where
     Id: Clone + Send + Sync + 'static,
@@ -39,10 +42,12 @@ where
     let cost = Signal::derive(move || check.with(|check| check.cost));
     let figures = move || {
         check.with(|check| {
-            let shown = |amount: Option<Amount>| amount.map_or_else(|| "—".to_owned(), figure::amount);
-            let margin =
-                check.margin.map_or_else(|| "—".to_owned(), |margin| format!("{} %", figure::figure(margin.get())));
-            (shown(check.value), shown(check.limit.map(|limit| limit.amount)), margin)
+            let (value, limit) = check.value.zip(check.limit).map_or_else(
+                || (show::NONE.to_owned(), show::NONE.to_owned()),
+                |(value, limit)| show::apart(value, limit.amount),
+            );
+            let margin = check.margin.map_or_else(|| show::NONE.to_owned(), |margin| show::room(margin.amount()));
+            (value, limit, margin)
         })
     };
     let bar = Memo::new(move |_| check.with(|check| bar(name, check)));
@@ -79,6 +84,7 @@ where
             <Show when=move || open.get()>
                 <div class="check-body">
                     {move || note.get().map(|note| view! { <p class="note">{note}</p> })}
+                    {move || check.with(|check| missing(check.asks, on_ask))}
                     {move || check.with(assumed).map(|assumed| view! { <p class="note">{assumed}</p> })}
                     // Read with the check, so that the working follows what is typed.
                     {move || check.with(|_| view! { <Working steps=working.run(())/> })}
@@ -91,6 +97,20 @@ where
 /// "asks: Voc, Record low", where it asks.
 pub fn asks_for<Id>(check: &Check<Id>) -> Option<String> {
     (check.verdict == Verdict::Asks).then(|| format!("asks: {}", names(check.asks)))
+}
+
+/// A button for each field that is missing.
+fn missing(fields: engine::check::FieldSet, on_ask: Callback<Field>) -> Option<AnyView> {
+    (!fields.is_empty()).then(|| {
+        let buttons = fields.iter().map(|field| {
+            view! {
+                <button class="btn small" type="button" on:click=move |_| on_ask.run(field)>
+                    {format!("Enter {}", field.name())}
+                </button>
+            }
+        });
+        view! { <div class="btns">{buttons.collect_view()}</div> }.into_any()
+    })
 }
 
 fn assumed<Id>(check: &Check<Id>) -> Option<String> {
@@ -108,19 +128,20 @@ pub fn bar<Id>(name: &str, check: &Check<Id>) -> Option<Bar> {
         at: limit.amount.number,
         reserve: limit.amount.number.abs() * check.reserve.get() / 100.0,
         name: String::new(),
-        shown: figure::amount(limit.amount),
+        shown: show::given(limit.amount),
     };
     let (low, high) = match limit.sense {
         Sense::AtMost => (None, Some(post)),
         Sense::AtLeast => (Some(post), None),
     };
     let at_most = limit.sense == Sense::AtMost;
-    let distance = figure::amount(Amount { number: room.number.abs(), ..room });
+    let distance = show::room(Amount { number: room.number.abs(), ..room });
+    let (value_shown, limit_shown) = show::apart(value, limit.amount);
     let says = format!(
         "{name}: {}, {} {}, {distance} {}.",
-        figure::amount(value),
+        value_shown,
         if at_most { "at most" } else { "at least" },
-        figure::amount(limit.amount),
+        limit_shown,
         match (room.number < 0.0, at_most) {
             (false, _) => "left",
             (true, true) => "over",

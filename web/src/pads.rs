@@ -26,6 +26,19 @@ pub struct Typed {
 /// A field of a tool.
 pub type Place = (Tool, Field);
 
+/// The fields of one tool, as the engine reads them.
+#[derive(Clone, Copy)]
+pub struct ToolPad<'a> {
+    pads: &'a Pads,
+    tool: Tool,
+}
+
+impl engine::pad::Pad for ToolPad<'_> {
+    fn typed(&self, field: Field) -> (&str, Option<Unit>) {
+        self.pads.typed.get(&(self.tool, field)).map_or(("", None), |typed| (&typed.text, typed.unit))
+    }
+}
+
 /// A change that a person makes.
 #[derive(Clone, Debug, PartialEq)]
 pub enum Edit {
@@ -95,6 +108,11 @@ impl Pads {
     /// What stands in a field.
     pub fn typed(&self, place: Place) -> Typed {
         self.typed.get(&place).cloned().unwrap_or_default()
+    }
+
+    /// The fields of one tool, as the engine reads them.
+    pub const fn of(&self, tool: Tool) -> ToolPad<'_> {
+        ToolPad { pads: self, tool }
     }
 
     /// What stands in a field, read. `Ok(None)` where it is blank.

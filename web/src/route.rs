@@ -21,7 +21,7 @@ impl Route {
     pub fn of_hash(hash: &str) -> Self {
         match hash.trim_start_matches('#').trim_matches('/') {
             "sheet" => Self::Sheet,
-            key => Tool::of_key(key).map_or(Self::Tools, Self::Tool),
+            key => Tool::with_page(key).map_or(Self::Tools, Self::Tool),
         }
     }
 

@@ -9,35 +9,51 @@ use crate::string::StringTool;
 pub enum Tool {
     /// How many modules in series.
     String,
+    /// A second kind of controller, for the layouts of the String tool. A pad of its own, but no page.
+    SecondController,
+    /// A third kind.
+    ThirdController,
 }
 
 impl Tool {
     /// Every tool, in the order of the first page.
     pub const ALL: &'static [Self] = &[Self::String];
 
+    /// Everything that keeps entries under a key of its own: the tools, and the pads that belong to one.
+    const PADS: &'static [Self] = &[Self::String, Self::SecondController, Self::ThirdController];
+
     /// The word it is kept and linked under. Never changed once released.
     pub const fn key(self) -> &'static str {
         match self {
             Self::String => "string",
+            Self::SecondController => "string-second-controller",
+            Self::ThirdController => "string-third-controller",
         }
     }
 
-    /// The tool of that key.
+    /// What keeps its entries under that key.
     pub fn of_key(key: &str) -> Option<Self> {
-        Self::ALL.iter().copied().find(|tool| tool.key() == key)
+        Self::PADS.iter().copied().find(|tool| tool.key() == key)
+    }
+
+    /// The tool whose page has that key.
+    pub fn with_page(key: &str) -> Option<Self> {
+        Self::of_key(key).filter(|tool| Self::ALL.contains(tool))
     }
 
     /// Its name on screen.
     pub const fn name(self) -> &'static str {
         match self {
             Self::String => "String",
+            Self::SecondController => "Second controller",
+            Self::ThirdController => "Third controller",
         }
     }
 
     /// The question it answers.
     pub const fn question(self) -> &'static str {
         match self {
-            Self::String => "How many in series?",
+            Self::String | Self::SecondController | Self::ThirdController => "How many in series?",
         }
     }
 
@@ -45,13 +61,14 @@ impl Tool {
     pub const fn symbol(self) -> &'static str {
         match self {
             Self::String => "s-string",
+            Self::SecondController | Self::ThirdController => "s-conv",
         }
     }
 
     /// Its page.
     pub fn page(self) -> AnyView {
         match self {
-            Self::String => view! { <StringTool/> }.into_any(),
+            Self::String | Self::SecondController | Self::ThirdController => view! { <StringTool/> }.into_any(),
         }
     }
 }

@@ -35,22 +35,48 @@ pub const COLD_RESERVE: Percent = Percent::new(2.0);
 /// What stands in for `field`, where one value does for every site.
 #[must_use]
 pub fn of(field: Field) -> Option<Assumption> {
+    let choice = match field {
+        Field::Mounting => Some("open"),
+        Field::StandsOn => Some("dwelling"),
+        Field::LimitHoldsFactor => Some("no"),
+        Field::ControllerKind => Some("mppt"),
+        Field::CodeFamily => Some("iec"),
+        _ => None,
+    };
     let (amount, why) = match field {
         Field::VocTolerance => (Some(VOC_TOLERANCE.amount()), "upper end of the usual nameplate band"),
         Field::VocCoefficient => (None, "the code family's cold table stands in, crystalline only"),
         Field::PmaxCoefficient => (Some(PMAX_COEFFICIENT.amount()), "steep end of recent crystalline modules"),
         Field::IscCoefficient => (Some(ISC_COEFFICIENT.amount()), "middle of crystalline modules"),
         Field::RearGain => (Some(REAR_GAIN.amount()), "one-sided module"),
-        Field::Mounting => (None, "open rack: cells 30 K over air"),
-        Field::StandsOn => (None, "dwelling: the lowest limit"),
-        Field::LimitHoldsFactor => (None, "no: the limit is set against 1.25 × Isc"),
-        Field::ControllerKind => (None, "MPPT"),
-        Field::CodeFamily => (None, "IEC"),
+        Field::Mounting => (None, "cells 30 K over air"),
+        Field::StandsOn => (None, "the lowest limit"),
+        Field::LimitHoldsFactor => (None, "set against 1.25 × Isc"),
+        Field::ControllerKind => (None, "most are"),
+        Field::CodeFamily => (None, "decides fuses and limits"),
         Field::RunningHeadroom => (Some(RUNNING_HEADROOM.amount()), "usual for MPPT controllers"),
         Field::StartingHeadroom => (Some(STARTING_HEADROOM.amount()), "usual for MPPT controllers"),
         Field::ArrayDrop => (Some(ARRAY_DROP.amount()), "what array cables are sized to"),
         Field::ColdReserve => (Some(COLD_RESERVE.amount()), "kept by a careful hand"),
         _ => return None,
     };
-    Some(Assumption { amount, why, source: source::CHOSEN.at("") })
+    Some(Assumption { amount, choice, why, source: source::CHOSEN.at("") })
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::choice::{Choice, ControllerKind, LimitHoldsFactor, Mounting};
+    use crate::family::{CodeFamily, Stands};
+
+    /// What is shown as assumed is what the checks assume: the first of each kind.
+    #[test]
+    fn the_assumed_choices_are_the_defaults() {
+        let key = |field| of(field).and_then(|assumption| assumption.choice).expect("a choice");
+        assert_eq!(Mounting::of_key(key(Field::Mounting)), Some(Mounting::default()));
+        assert_eq!(Stands::of_key(key(Field::StandsOn)), Some(Stands::default()));
+        assert_eq!(LimitHoldsFactor::of_key(key(Field::LimitHoldsFactor)), Some(LimitHoldsFactor::default()));
+        assert_eq!(ControllerKind::of_key(key(Field::ControllerKind)), Some(ControllerKind::default()));
+        assert_eq!(CodeFamily::of_key(key(Field::CodeFamily)), Some(CodeFamily::default()));
+    }
 }

@@ -31,6 +31,9 @@ pub fn ChoiceField(
     /// How the choices are laid out.
     #[prop(optional)]
     shape: Shape,
+    /// What it is a choice of, where a page has the same one twice. Goes before its name.
+    #[prop(optional)]
+    of: Option<&'static str>,
     /// What stands in while nothing is chosen: the key of a choice.
     #[prop(into, optional)]
     assumed: Signal<Option<StandIn>>,
@@ -61,8 +64,14 @@ pub fn ChoiceField(
     });
     let choose = move |key: String| parts.draft.edit(Edit::Type(parts.place, key));
     match shape {
-        Shape::List => list(parts, label.unwrap_or(field.name()), choices, stand_in, choose).into_any(),
-        Shape::Pick => pick(parts, label.unwrap_or(field.name()), choices, stand_in, choose).into_any(),
+        Shape::List => {
+            list(parts, super::full_name(of, field), label.unwrap_or(field.name()), choices, stand_in, choose)
+                .into_any()
+        }
+        Shape::Pick => {
+            pick(parts, super::full_name(of, field), label.unwrap_or(field.name()), choices, stand_in, choose)
+                .into_any()
+        }
     }
 }
 
@@ -70,6 +79,7 @@ type Choices = &'static [(&'static str, &'static str)];
 
 fn list(
     parts: Parts,
+    name: String,
     label: &'static str,
     choices: Choices,
     stand_in: Memo<Option<&'static str>>,
@@ -89,7 +99,7 @@ fn list(
             <div class="field-box">
                 <select
                     id=parts.id()
-                    aria-label=parts.field().name()
+                    aria-label=name
                     aria-describedby=move || parts.described_by()
                     aria-invalid=move || parts.invalid()
                     prop:value=text
@@ -112,6 +122,7 @@ fn list(
 
 fn pick(
     parts: Parts,
+    name: String,
     label: &'static str,
     choices: Choices,
     stand_in: Memo<Option<&'static str>>,
@@ -128,7 +139,7 @@ fn pick(
                 class="pick"
                 id=parts.id()
                 role="radiogroup"
-                aria-label=parts.field().name()
+                aria-label=name
                 aria-describedby=move || parts.described_by()
             >
                 {choices

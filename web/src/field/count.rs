@@ -24,6 +24,9 @@ pub fn CountField(
     /// The word above it, where it is shorter than the field's name. Contained in that name.
     #[prop(optional)]
     label: Option<&'static str>,
+    /// What it is a figure of, where a page has the same input twice. Goes before its name.
+    #[prop(optional)]
+    of: Option<&'static str>,
     /// What stands in while it is blank.
     #[prop(into, optional)]
     assumed: Signal<Option<StandIn>>,
@@ -59,11 +62,11 @@ pub fn CountField(
         <div class=move || parts.class()>
             {parts.head(label.unwrap_or(field.name()))}
             <div class="field-box count">
-                <StepButton name=format!("{}: one fewer", field.name()) sign="−" step=Callback::new(move |()| step(-1.0))/>
+                <StepButton name=format!("{}: one fewer", super::full_name(of, field)) sign="−" step=Callback::new(move |()| step(-1.0))/>
                 <input
                     id=parts.id()
                     type="text"
-                    aria-label=field.name()
+                    aria-label=super::full_name(of, field)
                     inputmode="numeric"
                     autocomplete="off"
                     placeholder=move || stand_in().map(|number| number.to_string())
@@ -88,7 +91,7 @@ pub fn CountField(
                         parts.draft.leave();
                     }
                 />
-                <StepButton name=format!("{}: one more", field.name()) sign="+" step=Callback::new(move |()| step(1.0))/>
+                <StepButton name=format!("{}: one more", super::full_name(of, field)) sign="+" step=Callback::new(move |()| step(1.0))/>
             </div>
             {parts.foot()}
         </div>

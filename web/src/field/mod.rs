@@ -51,7 +51,11 @@ impl StandIn {
     /// What the engine assumed.
     pub fn of(assumption: &Assumption) -> Self {
         Self {
-            stands: assumption.amount.map_or(Stands::Depends, Stands::Amount),
+            stands: match (assumption.amount, assumption.choice) {
+                (Some(amount), _) => Stands::Amount(amount),
+                (None, Some(key)) => Stands::Choice(key),
+                (None, None) => Stands::Depends,
+            },
             why: assumption.why.to_owned(),
             source: working::cited(assumption.source),
         }
@@ -233,6 +237,11 @@ impl Parts {
         }
         .into_any()
     }
+}
+
+/// The accessible name of a field.
+fn full_name(of: Option<&'static str>, field: Field) -> String {
+    of.map_or_else(|| field.name().to_owned(), |of| format!("{of}: {}", field.name()))
 }
 
 /// Puts the caret into a field.

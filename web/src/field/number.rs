@@ -6,7 +6,6 @@ use leptos::prelude::*;
 
 use super::units::{UnitChip, UnitList, unit};
 use super::{Parts, Said, StandIn};
-use crate::figure::figure;
 use crate::pads::Edit;
 use crate::tools::Tool;
 
@@ -20,6 +19,9 @@ pub fn NumberField(
     /// The word above it, where it is shorter than the field's name. Contained in that name.
     #[prop(optional)]
     label: Option<&'static str>,
+    /// What it is a figure of, where a page has the same input twice. Goes before its name.
+    #[prop(optional)]
+    of: Option<&'static str>,
     /// What stands in while it is blank.
     #[prop(into, optional)]
     assumed: Signal<Option<StandIn>>,
@@ -37,7 +39,7 @@ pub fn NumberField(
         Takes::Number { unit, .. } => unit,
         Takes::Whole { .. } | Takes::Choice(_) => engine::unit::Unit::One,
     };
-    let stand_in = move || parts.stand_in(said, unit(parts, usual)).map(figure);
+    let stand_in = move || parts.stand_in(said, unit(parts, usual)).map(|number| engine::show::number(number, 6));
     view! {
         <div class=move || parts.class()>
             {parts.head(label.unwrap_or(field.name()))}
@@ -45,7 +47,7 @@ pub fn NumberField(
                 <input
                     id=parts.id()
                     type="text"
-                    aria-label=field.name()
+                    aria-label=super::full_name(of, field)
                     inputmode=keypad(field)
                     autocomplete="off"
                     autocapitalize="off"

@@ -50,6 +50,8 @@ impl FieldSet {
 pub struct Assumption {
     /// The value, or none where it depends on other inputs.
     pub amount: Option<Amount>,
+    /// The key of the choice, where it is one of a list.
+    pub choice: Option<&'static str>,
     /// Why this value, in a few words.
     pub why: &'static str,
     /// Where it is from.

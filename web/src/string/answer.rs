@@ -1,0 +1,420 @@
+//! The answer of the String tool, worded and drawn. Pure: from what was typed to what is shown.
+
+use engine::check::{Check, FieldSet, Verdict};
+use engine::field::Field;
+use engine::pad::Pad;
+use engine::quantity::{Amount, Count, Quantity, Volts};
+use engine::show;
+use engine::string::{self, Ask, Requirement};
+
+use crate::span_bar::Bar;
+use crate::span_bar::geometry::{From, Mark, Post, Ruler};
+
+/// Everything that stands on top.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Answer {
+    /// For what the number is.
+    pub of: String,
+    /// The number, without its unit; a dash where it cannot be told.
+    pub number: String,
+    /// The judgement.
+    pub check: Check<Requirement>,
+    /// What it means, in a sentence or two.
+    pub says: String,
+    /// The longest safe string, where it can be told.
+    pub longest: Option<String>,
+    /// What other checks break, where some do.
+    pub besides: Option<String>,
+    /// The picture of it; none before a limit or a voltage is known.
+    pub bar: Option<Bar>,
+}
+
+impl Answer {
+    /// What a screen reader is told: verdict, value and distance.
+    pub fn told(&self) -> String {
+        let cost = if crate::verdict::tells_cost(self.check.verdict) {
+            format!(", {}", self.check.cost.word())
+        } else {
+            String::new()
+        };
+        let volts = if self.number == show::NONE { String::new() } else { format!(" {} volts.", self.number) };
+        let longest = self.longest.as_ref().map_or_else(String::new, |longest| format!(" {longest}."));
+        format!("{}{cost}.{volts} {}{longest}", self.check.verdict.word(), self.says)
+    }
+
+    /// Whether nothing but the assumed tolerance stands between the string and its verdict's last word.
+    pub fn rests_on_tolerance(&self) -> bool {
+        self.check.verdict != Verdict::Asks && self.check.assumed.contains(Field::VocTolerance)
+    }
+}
+
+/// The answer to what was typed into `pad`, all of whose checks are `checks`.
+///
+/// `None` only where no cold check was made, which `assess` always makes.
+pub fn answer(pad: &impl Pad, ask: &Ask, checks: &[Check<Requirement>]) -> Option<Answer> {
+    let check = *checks.iter().find(|check| check.id == Requirement::ColdController)?;
+    let longest = string::longest(ask);
+    let volts = string::cold_voltage(ask);
+    Some(Answer {
+        of: of(pad, ask),
+        number: number(&check, volts),
+        says: says(&check, ask, longest),
+        longest: longest.map(longest_words),
+        besides: besides(checks),
+        bar: bar(pad, ask, &check, volts),
+        check,
+    })
+}
+
+fn of(pad: &impl Pad, ask: &Ask) -> String {
+    let series = match ask.series.typed() {
+        Some(series) => format!("{} in series", series.get()),
+        None => "A string".to_owned(),
+    };
+    match typed(pad, Field::RecordLow) {
+        Some(low) => format!("{series} at {low}, the record low"),
+        None => format!("{series} at the record low"),
+    }
+}
+
+/// A field as it was entered, in the unit the person chose.
+fn typed(pad: &impl Pad, field: Field) -> Option<String> {
+    let (text, unit) = pad.typed(field);
+    let reading = field.read(text, unit).ok()??;
+    Some(show::given(Amount { number: reading.number(), unit: reading.unit() }))
+}
+
+fn number(check: &Check<Requirement>, volts: Option<Volts>) -> String {
+    let shown = match (check.value, check.limit, volts) {
+        (Some(value), Some(limit), _) => show::apart(value, limit.amount).0,
+        (_, _, Some(volts)) => show::computed(volts.amount()),
+        _ => return show::NONE.to_owned(),
+    };
+    without_unit(&shown).to_owned()
+}
+
+/// The figure alone: its unit is set smaller beside it.
+fn without_unit(shown: &str) -> &str {
+    shown.rsplit_once(show::NARROW).map_or(shown, |(number, _)| number)
+}
+
+fn says(check: &Check<Requirement>, ask: &Ask, longest: Option<u32>) -> String {
+    let Some((room, limit)) = check.room().zip(check.limit) else { return asks(check, longest) };
+    let size = show::room(Amount { number: room.number.abs(), ..room });
+    let share = check.margin.map_or_else(String::new, |margin| show::room(margin.abs().amount()));
+    let limit = show::given(limit.amount);
+    let mut says = match check.verdict {
+        Verdict::Breaks => {
+            format!(
+                "{size} ({share}) over the controller’s input limit of {limit}. The first cold morning can destroy it."
+            )
+        }
+        Verdict::Close if check.margin.is_some_and(|margin| margin < check.reserve) => {
+            format!(
+                "{size} ({share}) under the controller’s input limit of {limit}, inside the {} kept in reserve.",
+                show::given(check.reserve.amount())
+            )
+        }
+        _ => format!("{size} ({share}) under the controller’s input limit of {limit}."),
+    };
+    if check.assumed.contains(Field::VocTolerance)
+        && let Some(plain) = string::without_tolerance(ask)
+    {
+        says += &format!(
+            " {} by the nameplate; the +{} that nameplates allow is assumed on top.",
+            show::computed(plain.amount()),
+            show::given(engine::assumed::VOC_TOLERANCE.amount())
+        );
+    }
+    if check.assumed.contains(Field::VocCoefficient) {
+        says += " No coefficient was entered: the code’s cold table for crystalline modules stands in.";
+    }
+    if check.verdict == Verdict::Close && check.margin.is_some_and(|margin| margin >= check.reserve) {
+        says += &format!(" It holds if what is assumed is right: {}.", names(check.assumed));
+    }
+    says
+}
+
+fn asks(check: &Check<Requirement>, longest: Option<u32>) -> String {
+    if check.asks.len() == 1 && check.asks.contains(Field::VocCoefficient) {
+        return "That Voc coefficient is outside 0.2 to 0.4 %/K of the module’s Voc, where every module lies. Is it the \
+                figure of one cell, or another unit?"
+            .to_owned();
+    }
+    let waits = names(check.asks);
+    match longest {
+        Some(_) => format!("Enter {waits} to judge a string."),
+        None => format!("Waits for {waits}."),
+    }
+}
+
+/// Names of fields, as in "Voc, Record low and Input limit".
+pub fn names(fields: FieldSet) -> String {
+    let names: Vec<&str> = fields.iter().map(Field::name).collect();
+    match names.split_last() {
+        None => String::new(),
+        Some((one, [])) => (*one).to_owned(),
+        Some((last, before)) => format!("{} and {last}", before.join(", ")),
+    }
+}
+
+fn longest_words(longest: u32) -> String {
+    match longest {
+        0 => "Longest safe string: none. A single module is over the limit.".to_owned(),
+        count => format!("Longest safe string: {count}"),
+    }
+}
+
+fn besides(checks: &[Check<Requirement>]) -> Option<String> {
+    let broken: Vec<&str> = checks
+        .iter()
+        .filter(|check| check.verdict == Verdict::Breaks && check.id != Requirement::ColdController)
+        .map(|check| check.id.name())
+        .collect();
+    (!broken.is_empty()).then(|| format!("Breaks as well: {}.", broken.join("; ")))
+}
+
+fn bar(pad: &impl Pad, ask: &Ask, check: &Check<Requirement>, cold: Option<Volts>) -> Option<Bar> {
+    let limit = ask.controller.input_limit.typed();
+    if limit.is_none() && cold.is_none() {
+        return None;
+    }
+    let hot = string::hottest_working(ask);
+    let low = low_post(ask);
+    let high = limit.map(|limit| Post {
+        at: limit.get(),
+        reserve: limit.get() * check.reserve.share(),
+        name: "input limit".to_owned(),
+        shown: show::given(limit.amount()),
+    });
+    let shown = |volts: Volts| match limit {
+        Some(limit) => show::apart(volts.amount(), limit.amount()).0,
+        None => show::computed(volts.amount()),
+    };
+    let mut marks = Vec::new();
+    if let Some(hot) = hot {
+        let name = typed(pad, Field::RecordHigh).map_or_else(|| "hot".to_owned(), |high| format!("hot {high}"));
+        marks.push(Mark { at: hot.get(), name, shown: shown(hot) });
+    }
+    if let (Some(cold), Some(voc), Some(series)) = (cold, ask.module.voc.typed(), ask.series.typed()) {
+        let rated = voc * series.get();
+        if rated < cold {
+            marks.push(Mark { at: rated.get(), name: "open, 25 °C".to_owned(), shown: shown(rated) });
+        }
+        let name = typed(pad, Field::RecordLow).map_or_else(|| "cold".to_owned(), |low| format!("cold {low}"));
+        marks.push(Mark { at: cold.get(), name, shown: shown(cold) });
+    }
+    let room = check.room().map(|room| show::room(Amount { number: room.number.abs(), ..room }));
+    let says = sentence(low.as_ref(), high.as_ref(), hot, cold, check, room.as_deref(), ask.series.typed());
+    Some(Bar {
+        ruler: Ruler {
+            low,
+            high,
+            covered: cold.map(|cold| (hot.map_or(From::Start, |hot| From::Value(hot.get())), cold.get())),
+            marks,
+        },
+        verdict: check.verdict,
+        room,
+        says,
+    })
+}
+
+/// The lower post: what charging needs, or where tracking begins, whichever is higher.
+fn low_post(ask: &Ask) -> Option<Post> {
+    let charging = string::charging_voltage(ask).map(|volts| (volts, "charging needs"));
+    let tracking = ask.controller.window_low.typed().map(|volts| (volts, "tracks from"));
+    let (at, name) = match (charging, tracking) {
+        (Some(charging), Some(tracking)) if tracking.0 > charging.0 => tracking,
+        (Some(charging), _) => charging,
+        (None, tracking) => tracking?,
+    };
+    Some(Post { at: at.get(), reserve: 0.0, name: name.to_owned(), shown: show::given(at.amount()) })
+}
+
+fn sentence(
+    low: Option<&Post>,
+    high: Option<&Post>,
+    hot: Option<Volts>,
+    cold: Option<Volts>,
+    check: &Check<Requirement>,
+    room: Option<&str>,
+    series: Option<Count>,
+) -> String {
+    let allowed = match (low, high) {
+        (Some(low), Some(high)) => format!("Allowed {} to {}.", low.shown, high.shown),
+        (Some(low), None) => format!("Needs {}.", low.shown),
+        (None, Some(high)) => format!("Allowed up to {}.", high.shown),
+        (None, None) => String::new(),
+    };
+    let series = series.map_or_else(|| "The string".to_owned(), |series| format!("{} in series", series.get()));
+    let covers = match (hot, cold) {
+        (Some(hot), Some(cold)) => format!(
+            "{series} cover {} at the hottest to {} at record cold.",
+            show::computed(hot.amount()),
+            show::computed(cold.amount())
+        ),
+        (None, Some(cold)) => format!("{series} reach {} at record cold.", show::computed(cold.amount())),
+        _ => "What the string covers is not known yet.".to_owned(),
+    };
+    let end = match (check.verdict, room) {
+        (Verdict::Breaks, Some(room)) => format!(" {room} past the limit."),
+        (Verdict::Close | Verdict::Clears, Some(room)) => format!(" {room} left."),
+        _ => String::new(),
+    };
+    format!("String volts. {allowed} {covers}{end}")
+}
+
+/// What else there is to say of a check, under its name.
+pub fn note(ask: &Ask, requirement: Requirement) -> Option<String> {
+    match requirement {
+        Requirement::Fuse => fuse_note(ask),
+        Requirement::ColdCircuit => Some(
+            "Breakers, fuses, cables and arresters of this circuit must be rated for the same volts, d.c.".to_owned(),
+        ),
+        Requirement::PwmMatch => Some(
+            "Some PWM controllers join the positives. With an earthed negative that is a short circuit: read yours."
+                .to_owned(),
+        ),
+        Requirement::Clip => Some(
+            "Six power levels stand for a year, as long as the site’s own sun is not known; good to a few percent."
+                .to_owned(),
+        ),
+        _ => None,
+    }
+}
+
+fn fuse_note(ask: &Ask) -> Option<String> {
+    let fuses = string::string_fuses(ask)?;
+    let back = show::computed(fuses.backfeed.amount());
+    let most = show::given(fuses.module_most.amount());
+    if !fuses.needed {
+        return Some(format!("The others can feed back {back}; the module allows {most}. No string fuses needed."));
+    }
+    let Some(advised) = fuses.advised else {
+        return Some(format!(
+            "The others can feed back {back}, the module allows {most}, and no made fuse lies from {} up to that: fewer \
+             strings, or another module.",
+            show::computed(fuses.least.amount())
+        ));
+    };
+    let fitting: Vec<String> = fuses.fitting.iter().map(|amps| show::number(amps.get(), 1)).collect();
+    Some(format!(
+        "The others can feed back {back}; the module allows {most}. Fuse every string: {} A fits by the rule; {} where \
+         the box stands in heat. Class gPV, rated for the cold volts, in both poles where neither is earthed.",
+        fitting.join(" or "),
+        show::given(advised.amount())
+    ))
+}
+
+/// The text with plain spaces.
+#[cfg(test)]
+fn plain(text: &str) -> String {
+    text.replace([show::NARROW, '\u{a0}'], " ")
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use engine::unit::Unit;
+
+    struct Rows<'a>(&'a [(Field, &'a str)]);
+
+    impl Pad for Rows<'_> {
+        fn typed(&self, field: Field) -> (&str, Option<Unit>) {
+            (self.0.iter().rev().find(|(one, _)| *one == field).map_or("", |(_, text)| text), None)
+        }
+    }
+
+    #[track_caller]
+    fn of_rows(rows: &[(Field, &str)]) -> Answer {
+        let ask = Ask::read(&Rows(rows));
+        answer(&Rows(rows), &ask, &string::assess(&ask)).expect("there is always an answer")
+    }
+
+    const RIDGE: &[(Field, &str)] = &[
+        (Field::Voc, "49.3"),
+        (Field::VocCoefficient, "-0.27"),
+        (Field::RecordLow, "-31"),
+        (Field::InputLimit, "150"),
+        (Field::Series, "3"),
+    ];
+
+    #[test]
+    fn three_in_series_break_and_the_sentence_says_by_how_much_and_which_tolerance() {
+        let answer = of_rows(RIDGE);
+        assert_eq!(plain(&answer.of), "3 in series at −31 °C, the record low");
+        assert_eq!(answer.number, "175.4");
+        assert_eq!(answer.check.verdict, Verdict::Breaks);
+        assert_eq!(
+            plain(&answer.says),
+            "25.4 V (16.9 %) over the controller’s input limit of 150 V. The first cold morning can destroy it. \
+             170.3 V by the nameplate; the +3 % that nameplates allow is assumed on top."
+        );
+        assert_eq!(answer.longest.as_deref(), Some("Longest safe string: 2"));
+    }
+
+    #[test]
+    fn with_its_tolerance_entered_the_number_is_the_nameplates() {
+        let answer = of_rows(&[RIDGE, &[(Field::VocTolerance, "0")]].concat());
+        assert_eq!(answer.number, "170.3");
+        assert!(plain(&answer.says).starts_with("20.3 V (13.5 %) over"));
+        assert!(!answer.says.contains("nameplate"));
+    }
+
+    #[test]
+    fn an_assumption_keeps_it_close_and_is_named() {
+        let answer = of_rows(&[RIDGE, &[(Field::Series, "2")]].concat());
+        assert_eq!(answer.check.verdict, Verdict::Close);
+        assert!(answer.says.ends_with("It holds if what is assumed is right: Voc tolerance."), "{}", answer.says);
+    }
+
+    #[test]
+    fn what_is_missing_is_named() {
+        let answer = of_rows(&[]);
+        assert_eq!(answer.number, show::NONE);
+        assert_eq!(answer.says, "Waits for Voc, Record low, Input limit and Modules in series.");
+        assert_eq!(answer.bar, None);
+        let no_count = of_rows(&RIDGE[..4]);
+        assert_eq!(no_count.says, "Enter Modules in series to judge a string.");
+        assert_eq!(no_count.longest.as_deref(), Some("Longest safe string: 2"));
+    }
+
+    #[test]
+    fn a_record_low_in_fahrenheit_is_said_in_fahrenheit() {
+        let answer = of_rows(&[RIDGE, &[(Field::RecordLow, "-24 F")]].concat());
+        assert_eq!(plain(&answer.of), "3 in series at −24 °F, the record low");
+    }
+
+    #[test]
+    fn the_bar_runs_from_hot_to_cold_between_what_charging_needs_and_the_limit() {
+        let rows = [
+            RIDGE,
+            &[
+                (Field::Vmp, "41.1"),
+                (Field::PmaxCoefficient, "-0.30"),
+                (Field::RecordHigh, "34"),
+                (Field::HighestCharge, "56"),
+                (Field::VocTolerance, "0"),
+            ],
+        ]
+        .concat();
+        let bar = of_rows(&rows).bar.expect("a picture");
+        assert_eq!(bar.ruler.low.as_ref().map(|post| (post.at, post.name.as_str())), Some((57.0, "charging needs")));
+        assert_eq!(bar.ruler.high.as_ref().map(|post| post.at), Some(150.0));
+        let shown: Vec<String> = bar.ruler.marks.iter().map(|mark| plain(&mark.shown)).collect();
+        assert_eq!(shown, ["106.5 V", "147.9 V", "170.3 V"]);
+        assert_eq!(
+            plain(&bar.says),
+            "String volts. Allowed 57 V to 150 V. 3 in series cover 106.5 V at the hottest to 170.3 V at record cold. \
+             20.3 V past the limit."
+        );
+    }
+
+    #[test]
+    fn the_fuse_note_names_what_fits() {
+        let rows =
+            [(Field::Isc, "10.6"), (Field::SeriesFuseRating, "20"), (Field::Strings, "4"), (Field::CodeFamily, "iec")];
+        let note = note(&Ask::read(&Rows(&rows)), Requirement::Fuse).expect("a note");
+        assert!(plain(&note).contains("Fuse every string: 16 or 20 A fits by the rule; 20 A where"), "{note}");
+    }
+}

@@ -1,0 +1,179 @@
+//! The String tool: how many modules in series, and what else holds.
+
+mod answer;
+mod checks;
+mod fields;
+mod layouts;
+mod question;
+
+use engine::field::Field;
+use leptos::prelude::*;
+
+use answer::Answer;
+use checks::Checks;
+use fields::Fields;
+use layouts::LayoutList;
+use question::Question;
+
+use crate::caution::Caution;
+use crate::draft::use_draft;
+use crate::fold::Fold;
+use crate::pads::{Edit, Typed};
+use crate::route::Route;
+use crate::span_bar::{SlimBar, SpanBar};
+use crate::tools::Tool;
+use crate::verdict::{CostMark, VerdictMark, tells_cost};
+use crate::working::Working;
+
+const TOOL: Tool = Tool::String;
+
+/// The String tool.
+#[component]
+pub fn StringTool() -> impl IntoView {
+    let draft = use_draft();
+    // Read once for each change; whatever hangs on it is told only where it differs.
+    let question = Memo::new(move |_| draft.with(Question::read));
+    let checks = Memo::new(move |_| question.with(Question::checks));
+    let answer = Memo::new(move |_| {
+        draft.with(|pads| {
+            question.with(|question| checks.with(|checks| answer::answer(&pads.of(TOOL), &question.ask, checks)))
+        })
+    });
+    view! {
+        <div class="tool">
+            <div class="page-head">
+                <h1 tabindex="-1">"String"</h1>
+                <a class="aside" href=Route::Tools.href()>"All tools"</a>
+            </div>
+            <div class="tool-left">
+                <AnswerView answer=answer/>
+                <Fold
+                    id="string/working"
+                    title="Working"
+                    icon="i-work"
+                    says=Signal::derive(|| "how this number is made".to_owned())
+                >
+                    {move || {
+                        let steps = question
+                            .with(|question| engine::string::working(&question.ask, engine::string::Requirement::ColdController));
+                        view! { <Working steps=steps/> }
+                    }}
+                </Fold>
+            </div>
+            <div class="tool-right">
+                <Ride answer=answer/>
+                <Fields checks=checks/>
+                <Checks question=question checks=checks/>
+                <LayoutList question=question/>
+                <Caution>
+                    <p>
+                        "A string is live in any light. Cover or darken the array before you touch its terminals. "
+                        "Above 60 V d.c. (30 V wet) it shocks, and its arc does not go out. Use a meter and leads \
+                         rated for the string’s cold volts."
+                    </p>
+                    <p>"Local code and a licensed electrician rule; this page decides nothing for them."</p>
+                </Caution>
+            </div>
+        </div>
+    }
+}
+
+/// The number, its verdict, and what it means. The one region of the page with the role of a status.
+#[component]
+fn AnswerView(answer: Memo<Option<Answer>>) -> impl IntoView {
+    let of = move || answer.with(|answer| answer.as_ref().map(|answer| answer.of.clone()));
+    let number = Memo::new(move |_| answer.with(|answer| answer.as_ref().map(|answer| answer.number.clone())));
+    let check = move || answer.with(|answer| answer.as_ref().map(|answer| answer.check));
+    let verdict = Memo::new(move |_| check().map(|check| check.verdict));
+    let cost = Memo::new(move |_| check().map(|check| check.cost));
+    let says = move || answer.with(|answer| answer.as_ref().map(|answer| answer.says.clone()));
+    let longest = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.longest.clone()));
+    let besides = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.besides.clone()));
+    let bar = Memo::new(move |_| answer.with(|answer| answer.as_ref().and_then(|answer| answer.bar.clone())));
+    view! {
+        <section class="answer" aria-label="Answer">
+            // A reader is told by the line below, once typing rests: not by every keystroke.
+            <div role="status" aria-live="off">
+                <p class="answer-for">{of}</p>
+                <div class="answer-row">
+                    <p class="answer-num">{number}<small>" V"</small></p>
+                    <p class="answer-tags">
+                        {move || verdict.get().map(|verdict| view! { <VerdictMark verdict=Signal::stored(verdict) big=true/> })}
+                        {move || {
+                            let told = verdict.get().is_some_and(tells_cost);
+                            cost.get().filter(|_| told).map(|cost| view! { <CostMark cost=Signal::stored(cost)/> })
+                        }}
+                    </p>
+                </div>
+                <p class="answer-say">{says}</p>
+                <p class="answer-most">{longest}</p>
+                {move || besides().map(|besides| view! { <p class="answer-besides">{besides}</p> })}
+            </div>
+            <Confirm answer=answer/>
+            {move || bar.get().map(|bar| view! { <SpanBar bar=Signal::stored(bar)/> })}
+            <Told answer=answer/>
+        </section>
+    }
+}
+
+/// What a screen reader says once typing has rested.
+#[component]
+fn Told(answer: Memo<Option<Answer>>) -> impl IntoView {
+    let said = RwSignal::new(String::new());
+    let waiting = StoredValue::new(None::<leptos::leptos_dom::helpers::TimeoutHandle>);
+    let stop = move || {
+        if let Some(timer) = waiting.try_update_value(Option::take).flatten() {
+            timer.clear();
+        }
+    };
+    on_cleanup(stop);
+    Effect::new(move |before: Option<Option<String>>| {
+        let now = answer.with(|answer| answer.as_ref().map(Answer::told));
+        if let Some(before) = before
+            && before != now
+            && let Some(words) = now.clone()
+        {
+            stop();
+            let rest = std::time::Duration::from_millis(600);
+            waiting.set_value(set_timeout_with_handle(move || said.set(words.clone()), rest).ok());
+        }
+        now
+    });
+    view! { <p class="vh" aria-live="polite">{said}</p> }
+}
+
+/// One tap turns what was assumed into what is entered.
+#[component]
+fn Confirm(answer: Memo<Option<Answer>>) -> impl IntoView {
+    let draft = use_draft();
+    let rests = Memo::new(move |_| answer.with(|answer| answer.as_ref().is_some_and(Answer::rests_on_tolerance)));
+    let confirm = move |_| {
+        let typed = Typed { text: engine::assumed::VOC_TOLERANCE.get().to_string(), unit: None };
+        draft.edit(Edit::Fill(vec![((TOOL, Field::VocTolerance), typed)]));
+    };
+    view! {
+        <Show when=move || rests.get()>
+            <div class="btns">
+                <button class="btn small" type="button" on:click=confirm>"The nameplate says +3 %"</button>
+            </div>
+        </Show>
+    }
+}
+
+/// The answer once more, at the top while the inputs are under the thumb.
+#[component]
+fn Ride(answer: Memo<Option<Answer>>) -> impl IntoView {
+    move || {
+        answer.get().map(|answer| {
+            let Answer { number, check, bar, .. } = answer;
+            view! {
+                <div class="ride" aria-hidden="true">
+                    <span class="num">{number}<small>" V"</small></span>
+                    <VerdictMark verdict=Signal::stored(check.verdict)/>
+                    {tells_cost(check.verdict).then(|| view! { <CostMark cost=Signal::stored(check.cost)/> })}
+                    {bar.map(|bar| view! { <SlimBar bar=Signal::stored(bar)/> })}
+                </div>
+            }
+        })
+    }
+}
