@@ -30,6 +30,7 @@
 
 mod curve;
 mod fit;
+mod nameplate;
 mod root;
 
 use core::fmt;
@@ -40,7 +41,8 @@ use crate::quantity::{
 use curve::Kernel;
 
 pub use curve::{Curve, PowerPoint};
-pub use fit::{Figure, FitError, GaveWay, Nameplate, Nearest, Resistance, fit, fit_nearest};
+pub use fit::{GaveWay, Nearest, fit, fit_nearest};
+pub use nameplate::{Figure, FitError, Nameplate, Resistance};
 pub use root::NotConverged;
 
 /// Irradiance of the reference conditions. Source: [`IEC_61215`](crate::source::IEC_61215), standard test conditions.
