@@ -27,6 +27,7 @@ pub struct Folder {
 
 struct Shared {
     root: Mutex<PathBuf>,
+    missed: Mutex<Vec<String>>,
     stopped: AtomicBool,
 }
 
@@ -39,7 +40,8 @@ impl Folder {
     pub fn serve(root: PathBuf, port: u16) -> io::Result<Self> {
         let listener = TcpListener::bind((Ipv4Addr::LOCALHOST, port))?;
         let at = listener.local_addr()?;
-        let shared = Arc::new(Shared { root: Mutex::new(root), stopped: AtomicBool::new(false) });
+        let shared =
+            Arc::new(Shared { root: Mutex::new(root), missed: Mutex::default(), stopped: AtomicBool::new(false) });
         let accepting = thread::spawn({
             let shared = Arc::clone(&shared);
             move || {
@@ -71,6 +73,11 @@ impl Folder {
     pub fn show(&self, root: PathBuf) {
         *self.shared.root.lock().unwrap_or_else(PoisonError::into_inner) = root;
     }
+
+    /// What it was asked for and does not have.
+    pub fn missed(&self) -> Vec<String> {
+        self.shared.missed.lock().unwrap_or_else(PoisonError::into_inner).clone()
+    }
 }
 
 impl Drop for Folder {
@@ -96,6 +103,9 @@ fn answer(mut stream: TcpStream, shared: &Shared) -> io::Result<()> {
         "GET" | "HEAD" => file(&root, &target),
         _ => None,
     };
+    if found.is_none() {
+        shared.missed.lock().unwrap_or_else(PoisonError::into_inner).push(target);
+    }
     let (status, kind, body) = match found {
         Some((path, content)) => ("200 OK", mime(&path), content),
         None => ("404 Not Found", "text/plain; charset=utf-8", b"not here\n".to_vec()),
