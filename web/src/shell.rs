@@ -127,7 +127,9 @@ fn badge(keeping: Keeping, lasting: Option<bool>, copy: Copy) -> Badge {
         (Keeping::Kept, Copy::Keeping { done, of }) => {
             ("keeping", format!("keeping a copy for no signal, {done} of {of}"), false)
         }
-        (Keeping::Kept, Copy::NotYet) => ("not-yet", "not yet on this phone: stay in signal a minute".to_owned(), false),
+        (Keeping::Kept, Copy::NotYet) => {
+            ("not-yet", "not yet on this phone: stay in signal a minute".to_owned(), false)
+        }
         (Keeping::Kept, _) if lasting == Some(false) => {
             ("kept", "kept here, but the browser may clear it".to_owned(), true)
         }

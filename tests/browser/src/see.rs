@@ -54,7 +54,7 @@ impl Site {
 
     /// Waits until a whole copy is kept: safe to lose the signal.
     pub async fn is_kept(&self) -> Result<()> {
-        self.element(r#".kept[data-state="kept"]"#).await.map(drop).context("no copy is kept")
+        self.element("[data-copy=kept]").await.map(drop).context("no copy is kept")
     }
 
     /// Inner width and height of the page, as it sees itself.

@@ -5,10 +5,13 @@ use std::fs;
 use browser::{Kind, Result, Screen, Site, ensure, visit};
 use xtask::{one_file, root, stamp};
 
+/// What stands at the head of the first page.
+const HEAD: &str = "Settle it before you close a breaker.";
+
 #[test]
 fn starts_with_nothing_to_complain_of() {
     visit(Screen::PHONE, async |site| {
-        site.heading("Linehut").await?;
+        site.heading(HEAD).await?;
         site.is_kept().await?;
         let complaints = site.console_errors().await?;
         ensure!(complaints.is_empty(), "{complaints:#?}");
@@ -34,7 +37,7 @@ fn asks_nothing_of_anybody_else() {
     visit(Screen::PHONE, async |site| {
         site.is_kept().await?;
         site.reload().await?;
-        site.heading("Linehut").await?;
+        site.heading(HEAD).await?;
         let asked = site.requests().await?;
         ensure!(asked.iter().any(|it| it.ends_with(".wasm")), "the log misses what was surely asked for: {asked:#?}");
         let elsewhere: Vec<_> =
@@ -73,7 +76,7 @@ fn opens_again_with_the_server_stopped() {
         site.stop_server();
         ensure!(!site.server_answers(), "the server still answers");
         site.reload().await?;
-        site.heading("Linehut").await?;
+        site.heading(HEAD).await?;
         site.is_kept().await?;
         // As a home-screen icon or a kept link may name it.
         site.run("location.href = 'index.html?from=home'", &[]).await?;
@@ -81,7 +84,7 @@ fn opens_again_with_the_server_stopped() {
             Ok(site.run("return location.search", &[]).await?.as_str().filter(|it| *it == "?from=home").map(drop))
         })
         .await?;
-        site.heading("Linehut").await?;
+        site.heading(HEAD).await?;
         Ok(())
     });
 }
@@ -117,7 +120,7 @@ fn a_newer_version_waits_until_it_is_let_in() {
         site.reload().await?;
         site.press("Reload").await?;
         site.element("html[data-trial=newer]").await?;
-        site.heading("Linehut").await?;
+        site.heading(HEAD).await?;
         site.is_kept().await?;
         let after = ours(site).await?;
         ensure!(after.len() == 1 && after != before, "{before:?} became {after:?}");
@@ -155,7 +158,7 @@ fn a_copy_with_a_hole_in_it_is_not_kept() {
         ensure!(!site.has_button("Reload").await?, "a version with a hole is offered");
         site.stop_server();
         site.reload().await?;
-        site.heading("Linehut").await?;
+        site.heading(HEAD).await?;
         ensure!(site.attribute("html", "data-trial").await?.is_none(), "the version with a hole took over");
         Ok(())
     });
@@ -174,8 +177,8 @@ fn the_one_file_opens_from_the_file_system() {
         let file = folder.join(one_file::NAME);
         fs::copy(root::dist().join(one_file::NAME), &file)?;
         site.open_file(&file).await?;
-        site.heading("Linehut").await?;
-        site.is_kept().await?;
+        site.heading(HEAD).await?;
+        site.element("[data-copy=one-file]").await?;
         let complaints = site.console_errors().await?;
         ensure!(complaints.is_empty(), "{complaints:#?}");
         let asked = site.requests().await?;
