@@ -3,7 +3,7 @@
 use leptos::prelude::*;
 
 use crate::icon::Icon;
-use crate::offline::{self, Offline};
+use crate::offline::{self, Copy};
 use crate::route::Route;
 use crate::tools::Tool;
 
@@ -14,7 +14,7 @@ pub fn FirstVisit() -> impl IntoView {
         <div class="first">
             <section class="hello">
                 <h1 tabindex="-1">"Settle it before you close a breaker."</h1>
-                <p>"For stand-alone solar power rooms. " {move || signal_words(offline::state())}</p>
+                <p>"For stand-alone solar power rooms. " {move || signal_words(offline::copy())}</p>
             </section>
             <section>
                 <h2 class="sub">"Ask one thing" <span>"no site needed"</span></h2>
@@ -41,10 +41,12 @@ pub fn FirstVisit() -> impl IntoView {
     }
 }
 
-const fn signal_words(offline: Offline) -> &'static str {
-    match offline {
-        Offline::Ready => "The whole tool is now on this phone and works with no signal.",
-        Offline::Copying { .. } => "A copy for no signal is being kept: stay in signal a minute.",
-        Offline::Unknown => "",
+const fn signal_words(copy: Copy) -> &'static str {
+    match copy {
+        Copy::Kept => "The whole tool is now on this phone and works with no signal.",
+        Copy::OneFile => "The whole tool is in this one file and works with no signal.",
+        Copy::Keeping { .. } => "A copy for no signal is being kept: stay in signal a minute.",
+        Copy::NotYet => "Not yet on this phone: stay in signal a minute.",
+        Copy::NotPossible => "This browser keeps no copy of it here: with no signal, use the one file.",
     }
 }

@@ -7,7 +7,7 @@ use web_sys::HtmlInputElement;
 use crate::draft::use_draft;
 use crate::file;
 use crate::keep::Keeping;
-use crate::offline::{self, Offline};
+use crate::offline::{self, Copy};
 use crate::pads::{Edit, Pads};
 use crate::tools::Tool;
 
@@ -37,7 +37,7 @@ pub fn Sheet() -> impl IntoView {
             <ul class="signal">
                 {Tool::ALL
                     .iter()
-                    .map(|tool| view! { <li><span>{tool.name()}</span><b>{move || works(offline::state())}</b></li> })
+                    .map(|tool| view! { <li><span>{tool.name()}</span><b>{move || works(offline::copy())}</b></li> })
                     .collect_view()}
             </ul>
             <h2 class="sub">"Forget"</h2>
@@ -133,10 +133,11 @@ fn keeping(state: Keeping, lasting: Option<bool>) -> String {
     }
 }
 
-const fn works(offline: Offline) -> &'static str {
-    match offline {
-        Offline::Ready => "works",
-        Offline::Copying { .. } => "being copied",
-        Offline::Unknown => "not known here",
+const fn works(copy: Copy) -> &'static str {
+    match copy {
+        Copy::Kept | Copy::OneFile => "works",
+        Copy::Keeping { .. } => "being copied",
+        Copy::NotYet => "not yet",
+        Copy::NotPossible => "only in the one file",
     }
 }

@@ -9,7 +9,7 @@ use crate::fold::Folds;
 use crate::icon::Icon;
 use crate::keep::Keeping;
 use crate::notice::Notice;
-use crate::offline::{self, Offline};
+use crate::offline::{self, Copy};
 use crate::pads::{Edit, What};
 use crate::route::{self, Route};
 use crate::sheet::Sheet;
@@ -22,7 +22,7 @@ pub fn Shell(
 ) -> impl IntoView {
     draft.provide();
     provide_context(Folds::new());
-    offline::provide();
+    let offline = offline::provide();
     let route = route::follow();
     let keys = window_event_listener(ev::keydown, move |event| undo_keys(draft, &event));
     on_cleanup(move || keys.remove());
@@ -35,7 +35,7 @@ pub fn Shell(
     view! {
         <Top route=route/>
         <main>{view}</main>
-        <Notices/>
+        <Notices update=offline.update_ready/>
         <BottomBar route=route/>
     }
 }
@@ -95,9 +95,9 @@ fn Top(route: ReadSignal<Route>) -> impl IntoView {
 #[component]
 fn KeptBadge() -> impl IntoView {
     let keeper = use_draft().keeper();
-    let badge = Memo::new(move |_| badge(keeper.state(), keeper.lasting(), offline::state()));
+    let badge = Memo::new(move |_| badge(keeper.state(), keeper.lasting(), offline::copy()));
     view! {
-        <div class="kept" data-state=move || badge.get().state aria-live="polite">
+        <div class="kept" data-state=move || badge.get().state data-copy=move || offline::copy().name() aria-live="polite">
             <Icon name="i-kept"/>
             {move || {
                 let Badge { words, leads, .. } = badge.get();
@@ -119,19 +119,24 @@ struct Badge {
     leads: bool,
 }
 
-fn badge(keeping: Keeping, lasting: Option<bool>, offline: Offline) -> Badge {
-    let (state, words, leads) = match (keeping, offline) {
+fn badge(keeping: Keeping, lasting: Option<bool>, copy: Copy) -> Badge {
+    let (state, words, leads) = match (keeping, copy) {
         (Keeping::Not(_), _) => ("not-yet", "not kept on this phone: save the file".to_owned(), true),
         (Keeping::Waiting, _) => ("keeping", "looking for what was kept here".to_owned(), false),
         (Keeping::Busy, _) => ("keeping", "keeping what you typed".to_owned(), false),
-        (Keeping::Kept, Offline::Copying { done, of }) => {
+        (Keeping::Kept, Copy::Keeping { done, of }) => {
             ("keeping", format!("keeping a copy for no signal, {done} of {of}"), false)
+        }
+        (Keeping::Kept, Copy::NotYet) => {
+            ("not-yet", "not yet on this phone: stay in signal a minute".to_owned(), false)
         }
         (Keeping::Kept, _) if lasting == Some(false) => {
             ("kept", "kept here, but the browser may clear it".to_owned(), true)
         }
-        (Keeping::Kept, Offline::Ready) => ("kept", "kept on this phone, works with no signal".to_owned(), false),
-        (Keeping::Kept, Offline::Unknown) => ("kept", "kept on this phone".to_owned(), false),
+        (Keeping::Kept, Copy::Kept | Copy::OneFile) => {
+            ("kept", "kept on this phone, works with no signal".to_owned(), false)
+        }
+        (Keeping::Kept, Copy::NotPossible) => ("kept", "kept on this phone".to_owned(), false),
     };
     Badge { state, words, leads }
 }
@@ -191,12 +196,21 @@ fn LightButton() -> impl IntoView {
 
 /// The notices, one below the other. The region is there before its words are, or screen readers would not tell of them.
 #[component]
-fn Notices() -> impl IntoView {
+fn Notices(
+    /// Whether a newer version waits.
+    update: RwSignal<bool>,
+) -> impl IntoView {
     let keeper = use_draft().keeper();
     // A page that cannot load itself again stays as it is, with its notice up.
     let reload = move |()| drop(window().location().reload());
     view! {
         <aside class="notices" aria-label="Notices" aria-live="polite">
+            <Notice
+                says="Update ready. Nothing you typed is touched."
+                up=update
+                act="Reload"
+                on_act=Callback::new(|()| offline::take_over())
+            />
             <Notice
                 says="Changed in another tab: reload to see it. Nothing you typed here is lost."
                 up=keeper.elsewhere()
@@ -239,8 +253,8 @@ mod tests {
     #[test]
     fn the_badge_never_says_kept_when_it_is_not() {
         for why in [Why::NoAnswer, Why::Refused, Why::Full, Why::Newer] {
-            for offline in [Offline::Unknown, Offline::Ready, Offline::Copying { done: 1, of: 9 }] {
-                let badge = badge(Keeping::Not(why), Some(true), offline);
+            for copy in [Copy::NotPossible, Copy::Kept, Copy::Keeping { done: 1, of: 9 }] {
+                let badge = badge(Keeping::Not(why), Some(true), copy);
                 assert_eq!((badge.state, badge.leads), ("not-yet", true));
                 assert_eq!(badge.words, "not kept on this phone: save the file");
             }
@@ -249,7 +263,7 @@ mod tests {
 
     #[test]
     fn a_browser_that_may_clear_it_is_named() {
-        assert!(badge(Keeping::Kept, Some(false), Offline::Ready).leads);
-        assert_eq!(badge(Keeping::Kept, Some(true), Offline::Ready).words, "kept on this phone, works with no signal");
+        assert!(badge(Keeping::Kept, Some(false), Copy::Kept).leads);
+        assert_eq!(badge(Keeping::Kept, Some(true), Copy::Kept).words, "kept on this phone, works with no signal");
     }
 }

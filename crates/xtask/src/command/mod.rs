@@ -1,0 +1,7 @@
+//! One file per command.
+
+pub mod bench;
+pub mod pack;
+pub mod serve;
+pub mod stamp;
+pub mod test;
