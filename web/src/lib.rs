@@ -10,7 +10,6 @@ pub mod check_row;
 mod clock;
 pub mod draft;
 pub mod field;
-pub mod figure;
 pub mod file;
 pub mod first_visit;
 pub mod fold;

@@ -1,9 +1,8 @@
 //! The working: how a value came about, step by step, as the code that computed it wrote it down.
 
 use engine::check::{Origin, Step};
+use engine::show;
 use leptos::prelude::*;
-
-use crate::figure;
 
 /// A working. The last step is the margin.
 #[component]
@@ -21,7 +20,7 @@ pub fn Working(
         view! {
             <li class:last=place == last>
                 <span class="what">{step.what}</span>
-                <span class="out">{figure::amount(step.result)}</span>
+                <span class="out">{show::step(step.result)}</span>
                 {(!how.is_empty()).then(|| view! { <span class="how">{how}</span> })}
                 {source(step.origin).map(|source| view! { <span class="src">{source}</span> })}
             </li>

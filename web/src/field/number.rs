@@ -1,12 +1,12 @@
 //! A field that takes a number with a unit.
 
 use engine::field::{Field, Takes};
+use engine::show;
 use engine::unit::Dimension;
 use leptos::prelude::*;
 
 use super::units::{UnitChip, UnitList, unit};
 use super::{Parts, Said, StandIn};
-use crate::figure::figure;
 use crate::pads::Edit;
 use crate::tools::Tool;
 
@@ -37,7 +37,7 @@ pub fn NumberField(
         Takes::Number { unit, .. } => unit,
         Takes::Whole { .. } | Takes::Choice(_) => engine::unit::Unit::One,
     };
-    let stand_in = move || parts.stand_in(said, unit(parts, usual)).map(figure);
+    let stand_in = move || parts.stand_in(said, unit(parts, usual)).map(|number| show::number(number, 6));
     view! {
         <div class=move || parts.class()>
             {parts.head(label.unwrap_or(field.name()))}
