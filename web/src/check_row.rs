@@ -42,12 +42,8 @@ where
     let cost = Signal::derive(move || check.with(|check| check.cost));
     let figures = move || {
         check.with(|check| {
-            let (value, limit) = check.value.zip(check.limit).map_or_else(
-                || (show::NONE.to_owned(), show::NONE.to_owned()),
-                |(value, limit)| show::apart(value, limit.amount),
-            );
             let margin = check.margin.map_or_else(|| show::NONE.to_owned(), |margin| show::room(margin.amount()));
-            (value, limit, margin)
+            (apart(check), margin)
         })
     };
     let bar = Memo::new(move |_| check.with(|check| bar(name, check)));
@@ -68,7 +64,7 @@ where
                 {move || match asks() {
                     Some(asks) => view! { <span class="asks-for">{asks}</span> }.into_any(),
                     None => {
-                        let (value, limit, margin) = figures();
+                        let ((value, limit), margin) = figures();
                         view! {
                             <span class="figs">
                                 <span><small>"value"</small>" "<b>{value}</b></span>
@@ -121,37 +117,77 @@ fn names(fields: engine::check::FieldSet) -> String {
     fields.iter().map(engine::field::Field::name).collect::<Vec<_>>().join(", ")
 }
 
+/// A check's value and limit, with so many digits that they differ where the values do.
+pub fn apart<Id>(check: &Check<Id>) -> (String, String) {
+    match (check.value, check.limit) {
+        (Some(value), Some(limit)) => show::apart(value, limit.amount),
+        (value, limit) => {
+            let none = || show::NONE.to_owned();
+            (value.map_or_else(none, show::computed), limit.map_or_else(none, |limit| show::given(limit.amount)))
+        }
+    }
+}
+
 /// The slim bar of a check; none where it asks.
 pub fn bar<Id>(name: &str, check: &Check<Id>) -> Option<Bar> {
     let (value, limit, room) = (check.value?, check.limit?, check.room()?);
+    let (shown, limit_shown) = apart(check);
+    let at_most = limit.sense == Sense::AtMost;
+    let distance = show::room(Amount { number: room.number.abs(), ..room });
+    let (bound, side) = match (at_most, room.number < 0.0) {
+        (true, false) => ("at most", "left"),
+        (true, true) => ("at most", "over"),
+        (false, false) => ("at least", "left"),
+        (false, true) => ("at least", "under"),
+    };
+    let says = format!("{name}: {shown}, {bound} {limit_shown}, {distance} {side}.");
     let post = Post {
         at: limit.amount.number,
         reserve: limit.amount.number.abs() * check.reserve.get() / 100.0,
         name: String::new(),
-        shown: show::given(limit.amount),
+        shown: limit_shown,
     };
-    let (low, high) = match limit.sense {
-        Sense::AtMost => (None, Some(post)),
-        Sense::AtLeast => (Some(post), None),
-    };
-    let at_most = limit.sense == Sense::AtMost;
-    let distance = show::room(Amount { number: room.number.abs(), ..room });
-    let (value_shown, limit_shown) = show::apart(value, limit.amount);
-    let says = format!(
-        "{name}: {}, {} {}, {distance} {}.",
-        value_shown,
-        if at_most { "at most" } else { "at least" },
-        limit_shown,
-        match (room.number < 0.0, at_most) {
-            (false, _) => "left",
-            (true, true) => "over",
-            (true, false) => "under",
-        },
-    );
+    let (low, high) = if at_most { (None, Some(post)) } else { (Some(post), None) };
     Some(Bar {
         ruler: Ruler { low, high, covered: Some((From::Start, value.number)), marks: Vec::new() },
         verdict: check.verdict,
         room: Some(distance),
         says,
     })
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use engine::check::{Basis, Cost, FieldSet, Limit, Outcome, judge};
+    use engine::quantity::{Percent, Volts};
+
+    fn check(value: f64, limit: Limit) -> Check<()> {
+        let outcome = Outcome::Held { value: Volts::new(value).amount(), limit };
+        judge((), Cost::Hazard, Percent::new(2.0), outcome, &Basis::default()).unwrap()
+    }
+
+    fn says(check: &Check<()>) -> String {
+        bar("Cold volts", check).unwrap().says.replace(show::NARROW, " ")
+    }
+
+    #[test]
+    fn the_bar_says_what_it_shows() {
+        let high = Limit::at_most(Volts::new(150.0));
+        assert_eq!(says(&check(170.26, high)), "Cold volts: 170.3 V, at most 150 V, 20.3 V over.");
+        assert_eq!(says(&check(140.0, high)), "Cold volts: 140.0 V, at most 150 V, 10.00 V left.");
+        let low = Limit::at_least(Volts::new(61.0));
+        assert_eq!(says(&check(35.49, low)), "Cold volts: 35.5 V, at least 61 V, 25.5 V under.");
+    }
+
+    #[test]
+    fn where_it_asks_there_is_no_bar_but_the_fields_that_are_missing() {
+        let mut basis = Basis::default();
+        basis.ask(engine::field::Field::RecordLow);
+        basis.ask(engine::field::Field::Voc);
+        let asks = judge((), Cost::Hazard, Percent::new(2.0), Outcome::Asks, &basis).unwrap();
+        assert_eq!(bar("Cold volts", &asks), None);
+        assert_eq!(asks_for(&asks).as_deref(), Some("asks: Voc, Record low"));
+        assert_eq!(asks.assumed, FieldSet::default());
+    }
 }

@@ -3,10 +3,8 @@
 use std::collections::BTreeMap;
 
 use bridge::{Kept, KeptEntry};
-use engine::entry::Entry;
-use engine::field::{Field, Takes};
-use engine::quantity::Quantity;
-use engine::typed::{Reading, Refusal};
+use engine::field::Field;
+use engine::pad::Pad;
 use engine::unit::Unit;
 
 use crate::tools::Tool;
@@ -25,19 +23,6 @@ pub struct Typed {
 
 /// A field of a tool.
 pub type Place = (Tool, Field);
-
-/// The fields of one tool, as the engine reads them.
-#[derive(Clone, Copy)]
-pub struct ToolPad<'a> {
-    pads: &'a Pads,
-    tool: Tool,
-}
-
-impl engine::pad::Pad for ToolPad<'_> {
-    fn typed(&self, field: Field) -> (&str, Option<Unit>) {
-        self.pads.typed.get(&(self.tool, field)).map_or(("", None), |typed| (&typed.text, typed.unit))
-    }
-}
 
 /// A change that a person makes.
 #[derive(Clone, Debug, PartialEq)]
@@ -92,6 +77,19 @@ pub struct Pads {
     typing: Option<(Place, f64)>,
 }
 
+/// What was typed into one tool.
+#[derive(Clone, Copy, Debug)]
+pub struct ToolPad<'a> {
+    pads: &'a Pads,
+    tool: Tool,
+}
+
+impl Pad for ToolPad<'_> {
+    fn typed(&self, field: Field) -> (&str, Option<Unit>) {
+        self.pads.typed.get(&(self.tool, field)).map_or(("", None), |typed| (&typed.text, typed.unit))
+    }
+}
+
 impl What {
     /// In words, as in "Undo: Voc".
     pub const fn words(self) -> &'static str {
@@ -110,43 +108,9 @@ impl Pads {
         self.typed.get(&place).cloned().unwrap_or_default()
     }
 
-    /// The fields of one tool, as the engine reads them.
-    pub const fn of(&self, tool: Tool) -> ToolPad<'_> {
+    /// What was typed into one tool, as the engine reads it.
+    pub fn of(&self, tool: Tool) -> ToolPad<'_> {
         ToolPad { pads: self, tool }
-    }
-
-    /// What stands in a field, read. `Ok(None)` where it is blank.
-    ///
-    /// # Errors
-    ///
-    /// A [`Refusal`] in words for the person.
-    pub fn read(&self, (tool, field): Place) -> Result<Option<Reading>, Refusal> {
-        self.typed.get(&(tool, field)).map_or(Ok(None), |typed| field.read(&typed.text, typed.unit))
-    }
-
-    /// A field that takes a number, as the engine wants it.
-    pub fn entry<Q: Quantity>(&self, (tool, field): Place) -> Entry<Q> {
-        self.typed.get(&(tool, field)).map_or(Entry::Blank, |typed| field.entry(&typed.text, typed.unit))
-    }
-
-    /// A field that takes a whole number, as the engine wants it.
-    pub fn count(&self, place: Place) -> Entry<u32> {
-        match self.read(place) {
-            Ok(None) => Entry::Blank,
-            // Within a field's range by its reading, so it fits.
-            #[allow(clippy::cast_possible_truncation, clippy::cast_sign_loss)]
-            Ok(Some(reading)) => Entry::Typed(reading.number() as u32),
-            Err(_) => Entry::Unread,
-        }
-    }
-
-    /// The key of the choice in a field, as the engine wants it.
-    pub fn choice(&self, (tool, field): Place) -> Entry<&'static str> {
-        let Some(typed) = self.typed.get(&(tool, field)).filter(|typed| !typed.text.is_empty()) else {
-            return Entry::Blank;
-        };
-        let Takes::Choice(choices) = field.takes() else { return Entry::Unread };
-        choices.iter().find(|(key, _)| *key == typed.text).map_or(Entry::Unread, |(key, _)| Entry::Typed(key))
     }
 
     /// How many fields hold something.
@@ -323,7 +287,9 @@ fn split(kept: &Kept) -> (BTreeMap<Place, Typed>, Unknown) {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use engine::quantity::{Celsius, Volts};
+    use engine::entry::Entry;
+    use engine::family::CodeFamily;
+    use engine::quantity::{Celsius, Count, Volts};
 
     const VOC: Place = (Tool::String, Field::Voc);
     const LOW: Place = (Tool::String, Field::RecordLow);
@@ -406,10 +372,10 @@ mod tests {
     fn a_chosen_unit_is_the_one_that_is_read() {
         let mut pads = Pads::default();
         type_in(&mut pads, LOW, "-24", 0.0);
-        assert_eq!(pads.entry::<Celsius>(LOW), Entry::Typed(Celsius::new(-24.0)));
+        assert_eq!(pads.of(Tool::String).entry::<Celsius>(Field::RecordLow), Entry::Typed(Celsius::new(-24.0)));
         pads.edit(Edit::Unit(LOW, Unit::DegreeFahrenheit), 1.0);
         assert_eq!(text(&pads, LOW), "-24");
-        let Entry::Typed(low) = pads.entry::<Celsius>(LOW) else { panic!("reads") };
+        let Entry::Typed(low) = pads.of(Tool::String).entry::<Celsius>(Field::RecordLow) else { panic!("reads") };
         assert!((low.get() - -31.111).abs() < 0.001);
     }
 
@@ -417,22 +383,21 @@ mod tests {
     fn what_is_not_understood_is_kept_and_unread() {
         let mut pads = Pads::default();
         type_in(&mut pads, VOC, "12,,4", 0.0);
-        assert_eq!(pads.entry::<Volts>(VOC), Entry::Unread);
+        assert_eq!(pads.of(Tool::String).entry::<Volts>(Field::Voc), Entry::Unread);
         assert_eq!(text(&pads, VOC), "12,,4");
         pads.edit(Edit::Unit(VOC, Unit::Millivolt), 1.0);
         assert_eq!(text(&pads, VOC), "12,,4");
     }
 
     #[test]
-    fn counts_and_choices_are_read_for_the_engine() {
+    fn the_engine_reads_one_tool() {
         let mut pads = Pads::default();
         let (series, family) = ((Tool::String, Field::Series), (Tool::String, Field::CodeFamily));
-        assert_eq!((pads.count(series), pads.choice(family)), (Entry::Blank, Entry::Blank));
         pads.edit(Edit::Type(series, "3".into()), 0.0);
         pads.edit(Edit::Type(family, "iec".into()), 0.0);
-        assert_eq!((pads.count(series), pads.choice(family)), (Entry::Typed(3), Entry::Typed("iec")));
-        pads.edit(Edit::Type(series, "3.5".into()), 0.0);
-        pads.edit(Edit::Type(family, "martian".into()), 0.0);
-        assert_eq!((pads.count(series), pads.choice(family)), (Entry::Unread, Entry::Unread));
+        let pad = pads.of(Tool::String);
+        assert_eq!(pad.entry::<Count>(Field::Series), Entry::of(3.0));
+        assert_eq!(pad.choice::<CodeFamily>(Field::CodeFamily), Entry::Typed(CodeFamily::Iec));
+        assert_eq!(pad.entry::<Volts>(Field::Voc), Entry::Blank);
     }
 }

@@ -89,7 +89,7 @@ fn list(
     // What no choice is chosen means: what stands in, by its words.
     let none = move || {
         let words = choices.iter().find(|(key, _)| Some(*key) == stand_in.get()).map(|choice| choice.1);
-        words.unwrap_or("not chosen")
+        words.unwrap_or(if parts.state.get() == State::Assumed { "as assumed" } else { "not chosen" })
     };
     // A choice of another release is shown as it is, and nothing is put in its place.
     let strange = move || Some(text()).filter(|text| parts.state.get() == State::Unread && !text.is_empty());

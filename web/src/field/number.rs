@@ -1,6 +1,7 @@
 //! A field that takes a number with a unit.
 
 use engine::field::{Field, Takes};
+use engine::show;
 use engine::unit::Dimension;
 use leptos::prelude::*;
 
@@ -39,7 +40,7 @@ pub fn NumberField(
         Takes::Number { unit, .. } => unit,
         Takes::Whole { .. } | Takes::Choice(_) => engine::unit::Unit::One,
     };
-    let stand_in = move || parts.stand_in(said, unit(parts, usual)).map(|number| engine::show::number(number, 6));
+    let stand_in = move || parts.stand_in(said, unit(parts, usual)).map(|number| show::number(number, 6));
     view! {
         <div class=move || parts.class()>
             {parts.head(label.unwrap_or(field.name()))}

@@ -99,6 +99,11 @@ impl Keeper {
         self.state.get()
     }
 
+    /// Whether nothing waits to be written.
+    pub fn is_done(self) -> bool {
+        self.work.try_with_value(|work| !work.busy && work.next.is_none()).unwrap_or(true)
+    }
+
     /// Whether the browser promised never to clear it by itself. `None` while that is not known.
     pub fn lasting(self) -> Option<bool> {
         self.lasting.get()

@@ -190,7 +190,10 @@ fn asks(field: Field, checks: &[Check<Requirement>]) -> Option<String> {
 fn note(field: Field) -> Signal<Option<String>> {
     let draft = use_draft();
     Signal::derive(move || {
-        let reading = draft.with(|pads| pads.read((TOOL, field)).ok().flatten())?;
+        let reading = draft.with(|pads| {
+            let typed = pads.typed((TOOL, field));
+            field.read(&typed.text, typed.unit).ok().flatten()
+        })?;
         let taken_as_falling =
             matches!(field, Field::VocCoefficient | Field::PmaxCoefficient) && reading.number() > 0.0;
         taken_as_falling.then(|| "taken as falling: minus".to_owned())

@@ -1,0 +1,249 @@
+//! Fields, as a person meets them in a browser.
+#![cfg(target_arch = "wasm32")]
+#![allow(clippy::future_not_send, reason = "a browser has one thread")]
+
+use engine::field::Field;
+use leptos::mount::{UnmountHandle, mount_to};
+use leptos::prelude::*;
+use leptos::task::tick;
+use wasm_bindgen::prelude::*;
+use wasm_bindgen_futures::JsFuture;
+use wasm_bindgen_test::{wasm_bindgen_test, wasm_bindgen_test_configure};
+use web::draft::Draft;
+use web::field::{CountField, NumberField, StandIn};
+use web::fold::{Fold, Folds};
+use web::keep::Keeper;
+use web::pads::Edit;
+use web::tools::Tool;
+use web_sys::{Element, Event, EventInit, HtmlElement, HtmlInputElement};
+
+wasm_bindgen_test_configure!(run_in_browser);
+
+/// A part of the page, with a store that no storage stands behind.
+struct Stage<M: Mountable> {
+    root: Element,
+    draft: Draft,
+    _up: UnmountHandle<M>,
+}
+
+fn stage<V: IntoView + 'static>(show: impl FnOnce() -> V + 'static) -> Stage<impl Mountable> {
+    let root = document().create_element("div").unwrap();
+    document().body().unwrap().append_child(&root).unwrap();
+    let owner = Owner::new();
+    let draft = owner.with(|| Draft::new(Keeper::new()));
+    std::mem::forget(owner);
+    let up = mount_to(root.clone().unchecked_into(), move || {
+        draft.provide();
+        provide_context(Folds::new());
+        show()
+    });
+    Stage { root, draft, _up: up }
+}
+
+impl<M: Mountable> Stage<M> {
+    fn find(&self, selector: &str) -> Option<Element> {
+        self.root.query_selector(selector).unwrap()
+    }
+
+    /// The input of that accessible name.
+    fn input(&self, name: &str) -> HtmlInputElement {
+        self.find(&format!("input[aria-label='{name}']")).expect("an input of that name").unchecked_into()
+    }
+
+    fn button(&self, name: &str) -> HtmlElement {
+        let buttons = self.root.query_selector_all("button").unwrap();
+        (0..buttons.length())
+            .filter_map(|index| buttons.item(index)?.dyn_into::<HtmlElement>().ok())
+            .find(|button| {
+                let said = button.get_attribute("aria-label").or_else(|| button.text_content());
+                said.as_deref() == Some(name)
+            })
+            .unwrap_or_else(|| panic!("a button named {name}"))
+    }
+
+    async fn press(&self, name: &str) {
+        self.button(name).click();
+        tick().await;
+    }
+
+    async fn type_into(&self, name: &str, text: &str) {
+        let input = self.input(name);
+        input.set_value(text);
+        input.dispatch_event(&event("input")).unwrap();
+        tick().await;
+    }
+
+    async fn leave(&self, name: &str) {
+        self.input(name).dispatch_event(&event("blur")).unwrap();
+        tick().await;
+    }
+
+    fn state(&self) -> String {
+        self.find(".field").unwrap().class_name()
+    }
+
+    fn note(&self) -> Option<String> {
+        self.find(".field-note")?.text_content()
+    }
+}
+
+fn event(name: &str) -> Event {
+    let bubbles = EventInit::new();
+    bubbles.set_bubbles(true);
+    Event::new_with_event_init_dict(name, &bubbles).unwrap()
+}
+
+async fn pause(milliseconds: i32) {
+    let promise = js_sys::Promise::new(&mut |done, _| {
+        window().set_timeout_with_callback_and_timeout_and_arguments_0(&done, milliseconds).unwrap();
+    });
+    JsFuture::from(promise).await.unwrap();
+    tick().await;
+}
+
+#[wasm_bindgen_test]
+async fn what_is_typed_stays_to_the_letter() {
+    let stage = stage(|| view! { <NumberField tool=Tool::String field=Field::Voc/> });
+    for text in ["49,30", " 49.3 ", "49.3 V", "12,,4", "-", "forty"] {
+        stage.type_into("Voc", text).await;
+        stage.leave("Voc").await;
+        assert_eq!(stage.input("Voc").value(), text);
+    }
+}
+
+#[wasm_bindgen_test]
+async fn half_typed_is_not_scolded_until_a_pause() {
+    let stage = stage(|| view! { <NumberField tool=Tool::String field=Field::RecordLow/> });
+    stage.type_into("Record low", "-").await;
+    assert_eq!((stage.state().as_str(), stage.note()), ("field", None));
+    pause(400).await;
+    stage.type_into("Record low", "-x").await;
+    pause(800).await;
+    assert_eq!(stage.state(), "field", "the pause begins again with each key");
+    pause(400).await;
+    assert_eq!(stage.state(), "field unread");
+    let input = stage.input("Record low");
+    assert_eq!(input.get_attribute("aria-invalid").as_deref(), Some("true"));
+    let note = input.get_attribute("aria-describedby").expect("its note");
+    assert_eq!(stage.find(&format!("#{note}")).unwrap().text_content(), stage.note());
+    stage.type_into("Record low", "-3").await;
+    assert_eq!((stage.state().as_str(), stage.note()), ("field", None));
+    assert_eq!(stage.input("Record low").get_attribute("aria-invalid"), None);
+}
+
+#[wasm_bindgen_test]
+async fn leaving_a_field_says_at_once_what_is_not_understood() {
+    let stage = stage(|| view! { <NumberField tool=Tool::String field=Field::Isc/> });
+    stage.type_into("Isc", "12,,4").await;
+    assert_eq!(stage.state(), "field");
+    stage.leave("Isc").await;
+    assert_eq!(stage.state(), "field unread");
+}
+
+#[wasm_bindgen_test]
+async fn a_unit_is_chosen_from_a_plain_list() {
+    let stage = stage(|| view! { <NumberField tool=Tool::String field=Field::RecordLow/> });
+    stage.type_into("Record low", "-24").await;
+    stage.press("Record low, unit °C. Change unit").await;
+    stage.press("°F").await;
+    assert_eq!(stage.button("Record low, unit °F. Change unit").text_content().as_deref(), Some("°F"));
+    assert_eq!(stage.input("Record low").value(), "-24");
+    assert!(stage.find(".units").is_none(), "the list is closed again");
+}
+
+#[wasm_bindgen_test]
+async fn a_typed_unit_is_the_one_on_the_chip_until_another_is_chosen() {
+    let stage = stage(|| view! { <NumberField tool=Tool::String field=Field::RecordLow/> });
+    stage.type_into("Record low", "-24 F").await;
+    stage.press("Record low, unit °F. Change unit").await;
+    stage.press("°C").await;
+    stage.button("Record low, unit °C. Change unit");
+    assert_eq!(stage.input("Record low").value(), "-24");
+}
+
+#[wasm_bindgen_test]
+async fn undo_brings_back_what_was_typed() {
+    let stage = stage(|| view! { <NumberField tool=Tool::String field=Field::Voc/> });
+    for text in ["4", "49", "49.3"] {
+        stage.type_into("Voc", text).await;
+    }
+    stage.leave("Voc").await;
+    stage.type_into("Voc", "50").await;
+    stage.draft.edit(Edit::Undo);
+    tick().await;
+    assert_eq!(stage.input("Voc").value(), "49.3");
+    stage.draft.edit(Edit::Undo);
+    tick().await;
+    assert_eq!(stage.input("Voc").value(), "");
+    stage.draft.edit(Edit::Redo);
+    tick().await;
+    assert_eq!(stage.input("Voc").value(), "49.3");
+}
+
+#[wasm_bindgen_test]
+async fn what_is_assumed_is_shown_with_its_reason_and_source() {
+    let stage = stage(|| {
+        let stand_in = engine::assumed::of(Field::VocTolerance).map(|assumption| StandIn::of(&assumption));
+        view! { <NumberField tool=Tool::String field=Field::VocTolerance assumed=Signal::stored(stand_in)/> }
+    });
+    tick().await;
+    assert_eq!(stage.state(), "field is-assumed");
+    assert_eq!(stage.input("Voc tolerance").placeholder(), "3");
+    let why = stage.note().expect("why");
+    stage.press("Voc tolerance: assumed. Say why").await;
+    assert!(stage.note().expect("why").starts_with(&format!("{why}. Source: ")));
+    assert!(document().active_element().is_some_and(|at| at.id() == stage.input("Voc tolerance").id()));
+    stage.type_into("Voc tolerance", "0").await;
+    assert_eq!((stage.state().as_str(), stage.note()), ("field", None));
+}
+
+#[wasm_bindgen_test]
+async fn a_missing_field_says_what_waits_for_it() {
+    let stage = stage(|| {
+        let asks = Signal::stored(Some("asks: the cold volts wait for this".to_owned()));
+        view! { <NumberField tool=Tool::String field=Field::InputLimit asks=asks/> }
+    });
+    tick().await;
+    assert_eq!(stage.state(), "field asks");
+    assert_eq!(stage.note().as_deref(), Some("asks: the cold volts wait for this"));
+}
+
+#[wasm_bindgen_test]
+async fn a_count_steps_within_its_range() {
+    let stage = stage(|| view! { <CountField tool=Tool::String field=Field::Series label="In series"/> });
+    stage.press("Modules in series: one more").await;
+    assert_eq!(stage.input("Modules in series").value(), "1");
+    stage.press("Modules in series: one more").await;
+    stage.press("Modules in series: one more").await;
+    assert_eq!(stage.input("Modules in series").value(), "3");
+    for _ in 0..4 {
+        stage.press("Modules in series: one fewer").await;
+    }
+    assert_eq!(stage.input("Modules in series").value(), "1");
+}
+
+#[wasm_bindgen_test]
+async fn holding_a_step_repeats_and_letting_go_ends_it() {
+    let stage = stage(|| view! { <CountField tool=Tool::String field=Field::Series/> });
+    let more = stage.button("Modules in series: one more");
+    more.dispatch_event(&event("pointerdown")).unwrap();
+    pause(1000).await;
+    more.dispatch_event(&event("pointerup")).unwrap();
+    more.click();
+    tick().await;
+    let held: u32 = stage.input("Modules in series").value().parse().unwrap();
+    assert!(held >= 3, "{held}");
+    pause(400).await;
+    assert_eq!(stage.input("Modules in series").value(), held.to_string());
+}
+
+#[wasm_bindgen_test]
+async fn a_fold_makes_its_inside_only_when_it_is_opened() {
+    let stage = stage(|| view! { <Fold id="test/more" title="More"><p class="inside">"here"</p></Fold> });
+    assert!(stage.find(".inside").is_none());
+    let head: HtmlElement = stage.find(".fold-head").unwrap().unchecked_into();
+    head.click();
+    tick().await;
+    assert!(stage.find(".inside").is_some());
+    assert_eq!(head.get_attribute("aria-expanded").as_deref(), Some("true"));
+}
