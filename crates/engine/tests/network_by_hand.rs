@@ -296,3 +296,20 @@ fn when_charging_the_hardest_string_takes_most() {
     assert!((found.greatest_over_even.unwrap() - 1.5).abs() < 1e-9);
     assert_eq!(Some(written.0.last().unwrap().result.number), found.greatest_over_even);
 }
+
+/// What rounding leaves across two posts that ought to be equal is not a voltage to draw from.
+#[test]
+fn a_draw_across_equal_posts_is_unfed_whichever_way_the_rounding_falls() {
+    for turned in [false, true] {
+        let (mut network, plus, back) = pair();
+        let (left, right) = (network.node("left"), network.node("right"));
+        network.source(plus, back, source(13.3, 0.007));
+        for post in [left, right] {
+            network.resistor(plus, post, Ohms::new(0.3));
+            network.resistor(post, back, Ohms::new(0.7));
+        }
+        let (a, b) = if turned { (right, left) } else { (left, right) };
+        let draw = network.draw_power(a, b, Watts::new(10.0));
+        assert_eq!(network.solve(), Err(NetworkError::Unfed { element: draw }));
+    }
+}

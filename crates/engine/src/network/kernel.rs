@@ -156,6 +156,13 @@ impl Linear {
         if right.iter().all(|value| value.is_finite()) { Ok(right) } else { Err(NetworkError::Singular) }
     }
 
+    /// The highest of all sources' forces and nodes' volts in the first column of an answer.
+    fn highest(&self, found: &DMatrix<f64>) -> f64 {
+        let forces = self.branches.iter().map(|branch| branch.emf_volts);
+        let volts = (0..self.nodes).map(|row| found[(row, 0)]);
+        forces.chain(volts).fold(0.0, |highest, volts| highest.max(volts.abs()))
+    }
+
     /// Volts of `from` over `to` in a column of an answer. The reference stands at 0.
     fn across(&self, found: &DMatrix<f64>, column: usize, from: usize, to: usize) -> f64 {
         let at = |node: usize| self.rows[node].map_or(0.0, |row| found[(row, column)]);
@@ -206,8 +213,8 @@ pub(super) fn solve(parts: &[Part], reference: usize, tied: &[bool]) -> Result<O
         let at_rest: Vec<f64> = (0..powered.len()).map(|draw| port(0, draw)).collect();
         let drag = DMatrix::from_fn(powered.len(), powered.len(), |row, column| -port(column + 1, row));
         let watts: Vec<f64> = powered.iter().map(|(_, watts)| *watts).collect();
-        let volts =
-            ports::settle(&at_rest, &drag, &watts).map_err(|stall| stall.of(|draw| Element(powered[draw].0)))?;
+        let volts = ports::settle(&at_rest, linear.highest(&found), &drag, &watts)
+            .map_err(|stall| stall.of(|draw| Element(powered[draw].0)))?;
         watts.iter().zip(&volts).map(|(watts, volts)| watts / volts).collect()
     };
     let unknown = |row: usize| {

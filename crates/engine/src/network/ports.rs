@@ -19,7 +19,7 @@ const MOST_ROUNDS: u32 = 100;
 /// What counts as settled, as a part of the volts at rest. *Chosen*: a few times the rounding of a double.
 const SETTLED: f64 = 1e-14;
 
-/// Below this part of the highest volts at rest, a draw counts as having none.
+/// Below this part of the highest volts anywhere in the network at rest, a draw counts as having none: it may be rounding.
 const UNFED: f64 = 1e-9;
 
 /// The smallest part of the draws by which they are turned up. Closer to collapse than this counts as collapse.
@@ -45,9 +45,8 @@ impl Stall {
     }
 }
 
-/// The volts across each draw at the operating point reached from rest.
-pub(super) fn settle(at_rest: &[f64], drag: &DMatrix<f64>, watts: &[f64]) -> Result<Vec<f64>, Stall> {
-    let highest = at_rest.iter().fold(0.0f64, |highest, volts| highest.max(volts.abs()));
+/// The volts across each draw at the operating point reached from rest. `highest`: of all volts in the network at rest.
+pub(super) fn settle(at_rest: &[f64], highest: f64, drag: &DMatrix<f64>, watts: &[f64]) -> Result<Vec<f64>, Stall> {
     if let Some(draw) = at_rest.iter().position(|volts| *volts <= UNFED * highest || *volts <= 0.0) {
         return Err(Stall::Unfed { draw });
     }
