@@ -4,7 +4,8 @@ use core::fmt;
 
 use crate::check::{Origin, Steps};
 use crate::network::Behind;
-use crate::quantity::{Amps, Ohms, Seconds, SquareMillimetres, Volts};
+use crate::quantity::{Amps, Ohms, Quantity, Seconds, SquareMillimetres, Volts};
+use crate::show;
 use crate::source::{self, Clause};
 
 /// The least and the greatest that a value may be.
@@ -110,7 +111,8 @@ pub fn prospective(
             return Err(FaultError::NoResistance);
         }
         Ok(steps.step(what, current, || {
-            let put_in = format!("{} V / ({:.6} Ω + {:.6} Ω)", emf.get(), bank.get(), way.get());
+            let [bank, way] = [bank, way].map(|ohms: Ohms| show::step(ohms.amount()));
+            let put_in = format!("{} / ({bank} + {way})", show::step(emf.amount()));
             ("E / (R + way)", put_in, Origin::Before)
         }))
     };
@@ -210,14 +212,14 @@ pub fn longest(
     current: Amps,
     steps: &mut impl Steps,
 ) -> Result<Seconds, FaultError> {
-    let (k, area, amps) = (HeatConstant::of(core, area).get(), area.get(), current.get());
-    work_with([area, amps])?;
-    let time = (k * area / amps).powi(2);
+    let (k, size, amps) = (HeatConstant::of(core, area).get(), area.get(), current.get());
+    work_with([size, amps])?;
+    let time = (k * size / amps).powi(2);
     if !time.is_finite() {
         return Err(FaultError::Nothing);
     }
     Ok(steps.step("Longest time in the short circuit", Seconds::new(time), || {
-        let put_in = format!("({k} A·√s/mm² · {area} mm² / {amps:.1} A)²");
+        let put_in = format!("({k} A·√s/mm² × {} / {})²", show::given(area.amount()), show::step(current.amount()));
         ("t = (k · S / I)²", put_in, Origin::Published(HeatConstant::SOURCE))
     }))
 }
@@ -271,7 +273,8 @@ pub fn least_area(
         return Err(FaultError::NotPossible);
     }
     Ok(steps.step("Least cross-section for the short circuit", SquareMillimetres::new(area), || {
-        let put_in = format!("{amps:.1} A · √({seconds} s) / {} A·√s/mm²", k.get());
+        let put_in =
+            format!("{} × √({}) / {} A·√s/mm²", show::step(current.amount()), show::given(time.amount()), k.get());
         ("S = I · √t / k", put_in, Origin::Published(HeatConstant::SOURCE))
     }))
 }

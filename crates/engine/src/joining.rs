@@ -4,7 +4,8 @@ use core::fmt;
 
 use crate::check::{Origin, Steps};
 use crate::network::Behind;
-use crate::quantity::{Amps, Ohms, Volts};
+use crate::quantity::{Amps, Ohms, Quantity, Volts};
+use crate::show;
 
 /// Why there is no joining current to speak of.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -80,11 +81,11 @@ pub fn join(from: Behind, into: Behind, link: Ohms, steps: &mut impl Steps) -> R
         return Err(JoiningError::NotPossible);
     }
     let difference = steps.step("Volts apart", from.emf - into.emf, || {
-        ("E₁ − E₂", format!("{} V − {} V", from.emf.get(), into.emf.get()), Origin::Before)
+        ("E₁ − E₂", format!("{} − {}", show::step(from.emf.amount()), show::step(into.emf.amount())), Origin::Before)
     });
     let way = steps.step("Resistance between them", way, || {
-        let ohms = [from.resistance, into.resistance, link].map(Ohms::get);
-        ("R₁ + R₂ + R", format!("{:.6} Ω + {:.6} Ω + {:.6} Ω", ohms[0], ohms[1], ohms[2]), Origin::Before)
+        let ohms = [from.resistance, into.resistance, link].map(|one| show::step(one.amount()));
+        ("R₁ + R₂ + R", ohms.join(" + "), Origin::Before)
     });
     if difference.get() == 0.0 {
         return Ok(Amps::default());
@@ -94,7 +95,7 @@ pub fn join(from: Behind, into: Behind, link: Ohms, steps: &mut impl Steps) -> R
         return Err(JoiningError::NoResistance { difference: difference.abs() });
     }
     Ok(steps.step("Joining current", rush, || {
-        ("ΔV / R", format!("{:.4} V / {:.6} Ω", difference.get(), way.get()), Origin::Before)
+        ("ΔV / R", format!("{} / {}", show::step(difference.amount()), show::step(way.amount())), Origin::Before)
     }))
 }
 

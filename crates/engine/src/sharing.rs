@@ -7,7 +7,8 @@ use core::fmt;
 
 use crate::check::{Origin, Steps};
 use crate::network::{Behind, Network, NetworkError};
-use crate::quantity::{Amps, Count, Ohms, Volts};
+use crate::quantity::{Amps, Count, Ohms, Quantity, Volts};
+use crate::show;
 
 /// The most strings that are solved. *Chosen*: with both bars and both take-offs they stay within the network's nodes.
 pub const MOST_STRINGS: usize = 96;
@@ -43,7 +44,7 @@ impl Arrangement {
         match self {
             Self::SameEnd => (TakeOff::At(0), TakeOff::At(0)),
             Self::OppositeEnds => (TakeOff::At(0), TakeOff::At(last)),
-            Self::Middle if last % 2 == 0 => (TakeOff::At(last / 2), TakeOff::At(last / 2)),
+            Self::Middle if last.is_multiple_of(2) => (TakeOff::At(last / 2), TakeOff::At(last / 2)),
             Self::Middle => (TakeOff::After(last / 2), TakeOff::After(last / 2)),
         }
     }
@@ -199,7 +200,7 @@ pub fn share(bank: Paralleled<'_>, current: Amps, steps: &mut impl Steps) -> Res
     let volts = found.across(plus_post, minus_post).unwrap_or_default();
 
     let even = steps.step("Even share", current / count as f64, || {
-        ("I / n", format!("{} A / {count}", current.get()), Origin::Before)
+        ("I / n", format!("{} / {count}", show::step(current.amount())), Origin::Before)
     });
     for one in &currents {
         steps.step("Current of the next string along the bars", *one, || {
@@ -212,7 +213,7 @@ pub fn share(bank: Paralleled<'_>, current: Amps, steps: &mut impl Steps) -> Res
     let greatest_over_even = (current.get() != 0.0).then(|| {
         let share = Count::new(currents[hardest] / even);
         let word = || {
-            let put_in = format!("{:.4} A / {:.4} A", currents[hardest].get(), even.get());
+            let put_in = format!("{} / {}", show::step(currents[hardest].amount()), show::step(even.amount()));
             ("greatest Iₖ / (I / n)", put_in, Origin::Before)
         };
         steps.step("Greatest share over the even share", share, word).get()

@@ -3,7 +3,8 @@
 use core::fmt;
 
 use crate::check::{Origin, Steps};
-use crate::quantity::{Amps, Ohms, Volts, Watts};
+use crate::quantity::{Amps, Ohms, Quantity, Volts, Watts};
+use crate::show;
 
 /// A source: electromotive force behind a resistance. A cell, a string, a bank, or a bank with its cables.
 #[derive(Clone, Copy, Debug, Default, PartialEq)]
@@ -140,11 +141,12 @@ impl Behind {
             return Err(not_possible);
         }
         let volts = steps.step("Volts under the draw", Volts::new(root), || {
-            let put_in = format!("({emf} V + √(({emf} V)² − 4 · {ohms:.6} Ω · {watts:.1} W)) / 2");
+            let [emf, ohms, watts] = [self.emf.amount(), self.resistance.amount(), draw.amount()].map(show::step);
+            let put_in = format!("({emf} + √(({emf})² − 4 × {ohms} × {watts})) / 2");
             ("V = (E + √(E² − 4RP)) / 2", put_in, Origin::Before)
         });
         let current = steps.step("Current under the draw", draw / volts, || {
-            ("I = P / V", format!("{watts:.1} W / {:.4} V", volts.get()), Origin::Before)
+            ("I = P / V", format!("{} / {}", show::step(draw.amount()), show::step(volts.amount())), Origin::Before)
         });
         Ok(Loaded { volts, current })
     }
@@ -198,5 +200,7 @@ mod tests {
         let found = source.under(Watts::new(7491.5), &mut written).unwrap();
         let results: Vec<f64> = written.0.iter().map(|step| step.result.number).collect();
         assert_eq!(results, [found.volts.get(), found.current.get()]);
+        let put_in = &written.0[0].put_in;
+        assert!(put_in.contains("52\u{202F}V") && put_in.contains("7491.5\u{202F}W"), "{put_in}");
     }
 }

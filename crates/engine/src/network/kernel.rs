@@ -121,21 +121,14 @@ impl Linear {
         for branch in &self.branches {
             if branch.conducts() {
                 let amps = branch.emf_volts / branch.ohms;
-                self.inject(&mut right, 0, branch.from, -amps);
-                self.inject(&mut right, 0, branch.to, amps);
+                inject(&mut right, 0, branch.from, -amps);
+                inject(&mut right, 0, branch.to, amps);
             } else {
                 right[(bare, 0)] = -branch.emf_volts;
                 bare += 1;
             }
         }
         right
-    }
-
-    #[expect(clippy::unused_self, reason = "reads as a sentence at its calls")]
-    fn inject(&self, right: &mut DMatrix<f64>, column: usize, row: Option<usize>, amps: f64) {
-        if let Some(row) = row {
-            right[(row, column)] += amps;
-        }
     }
 
     /// Solves for every column of `right`.
@@ -170,6 +163,13 @@ impl Linear {
     }
 }
 
+/// Adds to what flows into a node; nothing is kept of what flows into the reference.
+fn inject(right: &mut DMatrix<f64>, column: usize, row: Option<usize>, amps: f64) {
+    if let Some(row) = row {
+        right[(row, column)] += amps;
+    }
+}
+
 impl Branch {
     fn conducts(&self) -> bool {
         self.ohms >= LEAST_CONDUCTING_OHMS
@@ -187,8 +187,8 @@ pub(super) fn solve(parts: &[Part], reference: usize, tied: &[bool]) -> Result<O
     for (index, part) in parts.iter().enumerate().filter(|(_, part)| live(part)) {
         match part.kind {
             Kind::Current { amps } => {
-                linear.inject(&mut rest, 0, linear.rows[part.from], -amps);
-                linear.inject(&mut rest, 0, linear.rows[part.to], amps);
+                inject(&mut rest, 0, linear.rows[part.from], -amps);
+                inject(&mut rest, 0, linear.rows[part.to], amps);
             }
             Kind::Power { watts } if watts != 0.0 => powered.push((index, watts)),
             Kind::Power { .. } | Kind::Source { .. } | Kind::Resistor { .. } => {}
@@ -198,8 +198,8 @@ pub(super) fn solve(parts: &[Part], reference: usize, tied: &[bool]) -> Result<O
     let mut right = rest.resize_horizontally(columns, 0.0);
     for (column, (index, _)) in (1..).zip(&powered) {
         let part = &parts[*index];
-        linear.inject(&mut right, column, linear.rows[part.from], -1.0);
-        linear.inject(&mut right, column, linear.rows[part.to], 1.0);
+        inject(&mut right, column, linear.rows[part.from], -1.0);
+        inject(&mut right, column, linear.rows[part.to], 1.0);
     }
     let found = linear.solve(right)?;
 
@@ -279,12 +279,12 @@ pub(super) fn seen_from(
     let mut right = linear.sources().resize_horizontally(2, 0.0);
     for part in parts.iter().filter(|part| !part.open && tied[part.from] && tied[part.to]) {
         if let Kind::Current { amps } = part.kind {
-            linear.inject(&mut right, 0, linear.rows[part.from], -amps);
-            linear.inject(&mut right, 0, linear.rows[part.to], amps);
+            inject(&mut right, 0, linear.rows[part.from], -amps);
+            inject(&mut right, 0, linear.rows[part.to], amps);
         }
     }
-    linear.inject(&mut right, 1, linear.rows[plus], -1.0);
-    linear.inject(&mut right, 1, linear.rows[minus], 1.0);
+    inject(&mut right, 1, linear.rows[plus], -1.0);
+    inject(&mut right, 1, linear.rows[minus], 1.0);
     let found = linear.solve(right)?;
     // Rounding may leave a resistance of nothing a hair below nothing.
     Ok((linear.across(&found, 0, plus, minus), (-linear.across(&found, 1, plus, minus)).max(0.0)))

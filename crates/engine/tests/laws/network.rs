@@ -1,4 +1,4 @@
-//! What holds for every network, whatever its numbers.
+//! What must hold of every network, whatever its numbers.
 
 use arbtest::arbitrary::{Result, Unstructured};
 use arbtest::arbtest;
@@ -207,8 +207,8 @@ fn without_draws_of_power_the_causes_add_up() {
         let together = volts(&network.solve().unwrap(), &at);
         let mut sum = vec![0.0; nodes];
         let mut size = 60.0;
-        for cause in 0..things.len() {
-            if matches!(things[cause], Thing::Source(..) | Thing::Current(..)) {
+        for (cause, thing) in things.iter().enumerate() {
+            if matches!(thing, Thing::Source(..) | Thing::Current(..)) {
                 let (network, at, _) = put(nodes, &alone(cause));
                 for (sum, one) in sum.iter_mut().zip(volts(&network.solve().unwrap(), &at)) {
                     *sum += one;
