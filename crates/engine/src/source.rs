@@ -55,6 +55,14 @@ works! {
     EN_50530: "EN 50530", "Overall efficiency of grid connected photovoltaic inverters", "2010";
     /// Efficiency weighting by power level for a sunny climate.
     CEC_WEIGHTS: "CEC weighting", "Performance test protocol for evaluating inverters, California Energy Commission", "2004";
+    /// Nodal analysis with currents of ideal sources among the unknowns.
+    MODIFIED_NODAL: "Ho, Ruehli and Brennan 1975", "The modified nodal approach to network analysis, IEEE Transactions on Circuits and Systems 22", "1975";
+    /// When Newton's iteration falls steadily toward a solution, chapter 13. From memory.
+    MONOTONE_NEWTON: "Ortega and Rheinboldt 1970", "Iterative solution of nonlinear equations in several variables", "1970";
+    /// Protection of cables against overload and short circuit.
+    IEC_60364_4_43: "IEC 60364-4-43", "Low-voltage electrical installations: protection against overcurrent", "2008";
+    /// Earthing and protective conductors; annex A gives the heating of a conductor that loses no heat.
+    IEC_60364_5_54: "IEC 60364-5-54", "Low-voltage electrical installations: earthing arrangements and protective conductors", "2011";
     /// A fact every practitioner knows, with no one publication behind it.
     COMMON_PRACTICE: "common practice", "what careful practitioners do", "";
     /// A value of ours, with its reason given where it stands.

@@ -2,4 +2,5 @@
 
 mod diode;
 mod draw;
+mod network;
 mod string;
