@@ -2,9 +2,12 @@
 
 use core::hint::black_box;
 
+#[cfg(not(target_family = "wasm"))]
 use criterion::{Criterion, criterion_group, criterion_main};
 use engine::diode::{Nameplate, fit, fit_nearest};
 use engine::quantity::{Amps, AmpsPerKelvin, Celsius, Volts, VoltsPerKelvin, WattsPerSquareMetre};
+#[cfg(target_family = "wasm")]
+use wasm_bindgen_test::{Criterion, wasm_bindgen_bench};
 
 /// An invented module of 72 cells.
 const PLATE: Nameplate = Nameplate {
@@ -16,6 +19,7 @@ const PLATE: Nameplate = Nameplate {
     isc_coefficient: AmpsPerKelvin::new(0.0048),
 };
 
+#[cfg_attr(target_family = "wasm", wasm_bindgen_bench)]
 fn diode(criterion: &mut Criterion) {
     criterion.bench_function("diode/fit", |bench| bench.iter(|| fit(black_box(&PLATE))));
 
@@ -39,5 +43,11 @@ fn diode(criterion: &mut Criterion) {
     });
 }
 
+#[cfg(not(target_family = "wasm"))]
 criterion_group!(benches, diode);
+#[cfg(not(target_family = "wasm"))]
 criterion_main!(benches);
+
+/// The runner calls the benches by itself.
+#[cfg(target_family = "wasm")]
+fn main() {}

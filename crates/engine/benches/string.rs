@@ -1,5 +1,6 @@
 //! How long strings and layouts take.
 
+#[cfg(not(target_family = "wasm"))]
 use criterion::{Criterion, criterion_group, criterion_main};
 use engine::controller::Controller;
 use engine::entry::Entry;
@@ -7,6 +8,8 @@ use engine::field::Field;
 use engine::pad::Pad;
 use engine::string::{Ask, assess, change, layouts};
 use engine::unit::Unit;
+#[cfg(target_family = "wasm")]
+use wasm_bindgen_test::{Criterion, wasm_bindgen_bench};
 
 struct Ridge;
 
@@ -36,6 +39,7 @@ impl Pad for Ridge {
     }
 }
 
+#[cfg_attr(target_family = "wasm", wasm_bindgen_bench)]
 fn strings(c: &mut Criterion) {
     let ask = Ask::read(&Ridge);
     c.bench_function("read the fields of a string", |b| b.iter(|| Ask::read(&Ridge)));
@@ -53,5 +57,11 @@ fn strings(c: &mut Criterion) {
     });
 }
 
+#[cfg(not(target_family = "wasm"))]
 criterion_group!(benches, strings);
+#[cfg(not(target_family = "wasm"))]
 criterion_main!(benches);
+
+/// The runner calls the benches by itself.
+#[cfg(target_family = "wasm")]
+fn main() {}
