@@ -5,7 +5,6 @@
 use engine::field::Field;
 use leptos::mount::{UnmountHandle, mount_to};
 use leptos::prelude::*;
-use leptos::task::tick;
 use wasm_bindgen::prelude::*;
 use wasm_bindgen_futures::JsFuture;
 use wasm_bindgen_test::{wasm_bindgen_test, wasm_bindgen_test_configure};
@@ -15,7 +14,7 @@ use web::fold::{Fold, Folds};
 use web::keep::Keeper;
 use web::pads::Edit;
 use web::tools::Tool;
-use web_sys::{Element, Event, EventInit, HtmlElement, HtmlInputElement};
+use web_sys::{Element, Event, HtmlElement, HtmlInputElement};
 
 wasm_bindgen_test_configure!(run_in_browser);
 
@@ -50,32 +49,26 @@ impl<M: Mountable> Stage<M> {
         self.find(&format!("input[aria-label='{name}']")).expect("an input of that name").unchecked_into()
     }
 
+    /// The button of that accessible name.
     fn button(&self, name: &str) -> HtmlElement {
-        let buttons = self.root.query_selector_all("button").unwrap();
-        (0..buttons.length())
-            .filter_map(|index| buttons.item(index)?.dyn_into::<HtmlElement>().ok())
-            .find(|button| {
-                let said = button.get_attribute("aria-label").or_else(|| button.text_content());
-                said.as_deref() == Some(name)
-            })
-            .unwrap_or_else(|| panic!("a button named {name}"))
+        button_in(&self.root, name).unwrap_or_else(|| panic!("a button named {name}"))
     }
 
     async fn press(&self, name: &str) {
         self.button(name).click();
-        tick().await;
+        settle().await;
     }
 
     async fn type_into(&self, name: &str, text: &str) {
         let input = self.input(name);
         input.set_value(text);
         input.dispatch_event(&event("input")).unwrap();
-        tick().await;
+        settle().await;
     }
 
     async fn leave(&self, name: &str) {
         self.input(name).dispatch_event(&event("blur")).unwrap();
-        tick().await;
+        settle().await;
     }
 
     fn state(&self) -> String {
@@ -87,10 +80,22 @@ impl<M: Mountable> Stage<M> {
     }
 }
 
+fn button_in(element: &Element, name: &str) -> Option<HtmlElement> {
+    let said = element.get_attribute("aria-label").or_else(|| element.text_content());
+    if element.tag_name() == "BUTTON" && said.as_deref() == Some(name) {
+        return element.clone().dyn_into().ok();
+    }
+    let children = std::iter::successors(element.first_element_child(), Element::next_element_sibling);
+    children.into_iter().find_map(|child| button_in(&child, name))
+}
+
 fn event(name: &str) -> Event {
-    let bubbles = EventInit::new();
-    bubbles.set_bubbles(true);
-    Event::new_with_event_init_dict(name, &bubbles).unwrap()
+    Event::new(name).unwrap()
+}
+
+/// Lets everything that follows from a change happen: effects run as tasks of their own, one after another.
+async fn settle() {
+    pause(0).await;
 }
 
 async fn pause(milliseconds: i32) {
@@ -98,7 +103,6 @@ async fn pause(milliseconds: i32) {
         window().set_timeout_with_callback_and_timeout_and_arguments_0(&done, milliseconds).unwrap();
     });
     JsFuture::from(promise).await.unwrap();
-    tick().await;
 }
 
 #[wasm_bindgen_test]
@@ -170,13 +174,13 @@ async fn undo_brings_back_what_was_typed() {
     stage.leave("Voc").await;
     stage.type_into("Voc", "50").await;
     stage.draft.edit(Edit::Undo);
-    tick().await;
+    settle().await;
     assert_eq!(stage.input("Voc").value(), "49.3");
     stage.draft.edit(Edit::Undo);
-    tick().await;
+    settle().await;
     assert_eq!(stage.input("Voc").value(), "");
     stage.draft.edit(Edit::Redo);
-    tick().await;
+    settle().await;
     assert_eq!(stage.input("Voc").value(), "49.3");
 }
 
@@ -186,7 +190,7 @@ async fn what_is_assumed_is_shown_with_its_reason_and_source() {
         let stand_in = engine::assumed::of(Field::VocTolerance).map(|assumption| StandIn::of(&assumption));
         view! { <NumberField tool=Tool::String field=Field::VocTolerance assumed=Signal::stored(stand_in)/> }
     });
-    tick().await;
+    settle().await;
     assert_eq!(stage.state(), "field is-assumed");
     assert_eq!(stage.input("Voc tolerance").placeholder(), "3");
     let why = stage.note().expect("why");
@@ -203,7 +207,7 @@ async fn a_missing_field_says_what_waits_for_it() {
         let asks = Signal::stored(Some("asks: the cold volts wait for this".to_owned()));
         view! { <NumberField tool=Tool::String field=Field::InputLimit asks=asks/> }
     });
-    tick().await;
+    settle().await;
     assert_eq!(stage.state(), "field asks");
     assert_eq!(stage.note().as_deref(), Some("asks: the cold volts wait for this"));
 }
@@ -230,7 +234,7 @@ async fn holding_a_step_repeats_and_letting_go_ends_it() {
     pause(1000).await;
     more.dispatch_event(&event("pointerup")).unwrap();
     more.click();
-    tick().await;
+    settle().await;
     let held: u32 = stage.input("Modules in series").value().parse().unwrap();
     assert!(held >= 3, "{held}");
     pause(400).await;
@@ -243,7 +247,7 @@ async fn a_fold_makes_its_inside_only_when_it_is_opened() {
     assert!(stage.find(".inside").is_none());
     let head: HtmlElement = stage.find(".fold-head").unwrap().unchecked_into();
     head.click();
-    tick().await;
+    settle().await;
     assert!(stage.find(".inside").is_some());
     assert_eq!(head.get_attribute("aria-expanded").as_deref(), Some("true"));
 }
