@@ -77,9 +77,10 @@ where
                 }}
                 {move || bar.get().map(|bar| view! { <SlimBar bar=bar/> })}
             </button>
+            // What to do about it stands there at once where the check waits; else with the working.
+            {move || note.get().filter(|_| open.get() || verdict.get() == Verdict::Asks).map(|note| view! { <p class="note">{note}</p> })}
             <Show when=move || open.get()>
                 <div class="check-body">
-                    {move || note.get().map(|note| view! { <p class="note">{note}</p> })}
                     {move || check.with(|check| missing(check.asks, on_ask))}
                     {move || check.with(assumed).map(|assumed| view! { <p class="note">{assumed}</p> })}
                     // Read with the check, so that the working follows what is typed.

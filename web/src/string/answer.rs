@@ -19,14 +19,16 @@ pub struct Answer {
     pub number: String,
     /// The judgement.
     pub check: Check<Requirement>,
-    /// What it means, in a sentence or two.
+    /// What it means, in a sentence.
     pub says: String,
+    /// What it rests on, where something was assumed.
+    pub rests: Option<String>,
     /// The longest safe string, where it can be told.
     pub longest: Option<String>,
     /// What other checks break, where some do.
     pub besides: Option<String>,
-    /// The picture of it; none before a limit or a voltage is known.
-    pub bar: Option<Bar>,
+    /// The picture of it: an empty ruler before a limit or a voltage is known.
+    pub bar: Bar,
 }
 
 impl Answer {
@@ -58,7 +60,8 @@ pub fn answer(pad: &impl Pad, ask: &Ask, checks: &[Check<Requirement>]) -> Optio
     Some(Answer {
         of: of(pad, ask),
         number: number(&check, volts),
-        says: says(&check, ask, longest),
+        says: says(&check, longest),
+        rests: rests(&check, ask),
         longest: longest.map(longest_words),
         besides: besides(checks),
         bar: bar(pad, ask, &check, volts),
@@ -98,41 +101,45 @@ fn without_unit(shown: &str) -> &str {
     shown.rsplit_once(show::NARROW).map_or(shown, |(number, _)| number)
 }
 
-fn says(check: &Check<Requirement>, ask: &Ask, longest: Option<u32>) -> String {
+fn says(check: &Check<Requirement>, longest: Option<u32>) -> String {
     let Some((room, limit)) = check.room().zip(check.limit) else { return asks(check, longest) };
     let size = show::room(Amount { number: room.number.abs(), ..room });
     let share = check.margin.map_or_else(String::new, |margin| show::room(margin.abs().amount()));
     let limit = show::given(limit.amount);
-    let mut says = match check.verdict {
-        Verdict::Breaks => {
-            format!(
-                "{size} ({share}) over the controller’s input limit of {limit}. The first cold morning can destroy it."
-            )
+    match check.verdict {
+        Verdict::Breaks => format!("{size} ({share}) over the input limit of {limit}: a cold morning can destroy it."),
+        Verdict::Close if inside_reserve(check) => {
+            let reserve = show::given(check.reserve.amount());
+            format!("{size} ({share}) under the input limit of {limit}, inside the {reserve} kept in reserve.")
         }
-        Verdict::Close if check.margin.is_some_and(|margin| margin < check.reserve) => {
-            format!(
-                "{size} ({share}) under the controller’s input limit of {limit}, inside the {} kept in reserve.",
-                show::given(check.reserve.amount())
-            )
-        }
-        _ => format!("{size} ({share}) under the controller’s input limit of {limit}."),
-    };
+        _ => format!("{size} ({share}) under the input limit of {limit}."),
+    }
+}
+
+fn inside_reserve(check: &Check<Requirement>) -> bool {
+    check.margin.is_some_and(|margin| margin < check.reserve)
+}
+
+/// What was assumed, and what the number would be without it.
+fn rests(check: &Check<Requirement>, ask: &Ask) -> Option<String> {
+    check.value?;
+    let mut parts = Vec::new();
+    if check.assumed.contains(Field::VocCoefficient) {
+        parts.push("No coefficient entered: the code’s cold table for crystalline modules stands in.".to_owned());
+    }
     if check.assumed.contains(Field::VocTolerance)
         && let Some(plain) = string::without_tolerance(ask)
     {
-        says += &format!(
-            " {} by the nameplate; the +{} that nameplates allow is assumed on top.",
+        parts.push(format!(
+            "{} by the nameplate; a tolerance of +{} is assumed on top.",
             show::computed(plain.amount()),
             show::given(engine::assumed::VOC_TOLERANCE.amount())
-        );
+        ));
     }
-    if check.assumed.contains(Field::VocCoefficient) {
-        says += " No coefficient was entered: the code’s cold table for crystalline modules stands in.";
+    if check.verdict == Verdict::Close && !inside_reserve(check) && !check.assumed.is_empty() {
+        parts.push(format!("Close until that is confirmed: {}.", names(check.assumed)));
     }
-    if check.verdict == Verdict::Close && check.margin.is_some_and(|margin| margin >= check.reserve) {
-        says += &format!(" It holds if what is assumed is right: {}.", names(check.assumed));
-    }
-    says
+    (!parts.is_empty()).then(|| parts.join(" "))
 }
 
 fn asks(check: &Check<Requirement>, longest: Option<u32>) -> String {
@@ -174,11 +181,8 @@ fn besides(checks: &[Check<Requirement>]) -> Option<String> {
     (!broken.is_empty()).then(|| format!("Breaks as well: {}.", broken.join("; ")))
 }
 
-fn bar(pad: &impl Pad, ask: &Ask, check: &Check<Requirement>, cold: Option<Volts>) -> Option<Bar> {
+fn bar(pad: &impl Pad, ask: &Ask, check: &Check<Requirement>, cold: Option<Volts>) -> Bar {
     let limit = ask.controller.input_limit.typed();
-    if limit.is_none() && cold.is_none() {
-        return None;
-    }
     let hot = string::hottest_working(ask);
     let low = low_post(ask);
     let high = limit.map(|limit| Post {
@@ -206,7 +210,7 @@ fn bar(pad: &impl Pad, ask: &Ask, check: &Check<Requirement>, cold: Option<Volts
     }
     let room = check.room().map(|room| show::room(Amount { number: room.number.abs(), ..room }));
     let says = sentence(low.as_ref(), high.as_ref(), hot, cold, check, room.as_deref(), ask.series.typed());
-    Some(Bar {
+    Bar {
         ruler: Ruler {
             low,
             high,
@@ -216,7 +220,7 @@ fn bar(pad: &impl Pad, ask: &Ask, check: &Check<Requirement>, cold: Option<Volts
         verdict: check.verdict,
         room,
         says,
-    })
+    }
 }
 
 /// The lower post: what charging needs, or where tracking begins, whichever is higher.
@@ -347,8 +351,11 @@ mod tests {
         assert_eq!(answer.check.verdict, Verdict::Breaks);
         assert_eq!(
             plain(&answer.says),
-            "25.4 V (16.9 %) over the controller’s input limit of 150 V. The first cold morning can destroy it. \
-             170.3 V by the nameplate; the +3 % that nameplates allow is assumed on top."
+            "25.4 V (16.9 %) over the input limit of 150 V: a cold morning can destroy it."
+        );
+        assert_eq!(
+            answer.rests.as_deref().map(plain).as_deref(),
+            Some("170.3 V by the nameplate; a tolerance of +3 % is assumed on top.")
         );
         assert_eq!(answer.longest.as_deref(), Some("Longest safe string: 2"));
     }
@@ -358,14 +365,14 @@ mod tests {
         let answer = of_rows(&[RIDGE, &[(Field::VocTolerance, "0")]].concat());
         assert_eq!(answer.number, "170.3");
         assert!(plain(&answer.says).starts_with("20.3 V (13.5 %) over"));
-        assert!(!answer.says.contains("nameplate"));
+        assert_eq!(answer.rests, None);
     }
 
     #[test]
     fn an_assumption_keeps_it_close_and_is_named() {
         let answer = of_rows(&[RIDGE, &[(Field::Series, "2")]].concat());
         assert_eq!(answer.check.verdict, Verdict::Close);
-        assert!(answer.says.ends_with("It holds if what is assumed is right: Voc tolerance."), "{}", answer.says);
+        assert!(answer.rests.is_some_and(|rests| rests.ends_with("Close until that is confirmed: Voc tolerance.")));
     }
 
     #[test]
@@ -373,7 +380,7 @@ mod tests {
         let answer = of_rows(&[]);
         assert_eq!(answer.number, show::NONE);
         assert_eq!(answer.says, "Waits for Voc, Record low, Input limit and Modules in series.");
-        assert_eq!(answer.bar, None);
+        assert_eq!(answer.bar.ruler.covered, None);
         let no_count = of_rows(&RIDGE[..4]);
         assert_eq!(no_count.says, "Enter Modules in series to judge a string.");
         assert_eq!(no_count.longest.as_deref(), Some("Longest safe string: 2"));
@@ -398,7 +405,7 @@ mod tests {
             ],
         ]
         .concat();
-        let bar = of_rows(&rows).bar.expect("a picture");
+        let bar = of_rows(&rows).bar;
         assert_eq!(bar.ruler.low.as_ref().map(|post| (post.at, post.name.as_str())), Some((57.0, "charging needs")));
         assert_eq!(bar.ruler.high.as_ref().map(|post| post.at), Some(150.0));
         let shown: Vec<String> = bar.ruler.marks.iter().map(|mark| plain(&mark.shown)).collect();

@@ -158,16 +158,12 @@ fn of_another(other: Tool, field: Field) -> AnyView {
 /// The word above a field: at most twelve letters or so, contained in the field's name.
 const fn short(field: Field) -> &'static str {
     match field {
-        Field::Series => "in series",
+        Field::Series => "In series",
         Field::SeriesFuseRating => "Series fuse",
         Field::PvCurrentLimit => "PV current",
         Field::HighestCharge => "Highest charge",
         Field::ControllerKind => "Controller",
         Field::ControllersAtHand => "Controllers",
-        Field::ModulesAtHand => "at hand",
-        Field::RunningHeadroom => "Running",
-        Field::StartingHeadroom => "Starting",
-        Field::LimitHoldsFactor => "limit holds 1.25",
         other => other.name(),
     }
 }

@@ -20,7 +20,7 @@ use crate::span_bar::SlimBar;
 use crate::verdict::VerdictMark;
 
 /// How many ranked layouts are shown.
-const SHOWN: usize = 6;
+const SHOWN: usize = 4;
 
 /// The layouts of the modules at hand.
 #[component]

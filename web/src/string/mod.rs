@@ -89,7 +89,8 @@ fn AnswerView(answer: Memo<Option<Answer>>) -> impl IntoView {
     let says = move || answer.with(|answer| answer.as_ref().map(|answer| answer.says.clone()));
     let longest = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.longest.clone()));
     let besides = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.besides.clone()));
-    let bar = Memo::new(move |_| answer.with(|answer| answer.as_ref().and_then(|answer| answer.bar.clone())));
+    let rests = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.rests.clone()));
+    let bar = Memo::new(move |_| answer.with(|answer| answer.as_ref().map(|answer| answer.bar.clone())));
     view! {
         <section class="answer" aria-label="Answer">
             // A reader is told by the line below, once typing rests: not by every keystroke.
@@ -107,10 +108,11 @@ fn AnswerView(answer: Memo<Option<Answer>>) -> impl IntoView {
                 </div>
                 <p class="answer-say">{says}</p>
                 <p class="answer-most">{longest}</p>
+                {move || rests().map(|rests| view! { <p class="answer-note">{rests}</p> })}
                 {move || besides().map(|besides| view! { <p class="answer-besides">{besides}</p> })}
             </div>
-            <Confirm answer=answer/>
             {move || bar.get().map(|bar| view! { <SpanBar bar=Signal::stored(bar)/> })}
+            <Confirm answer=answer/>
             <Told answer=answer/>
         </section>
     }
@@ -160,20 +162,33 @@ fn Confirm(answer: Memo<Option<Answer>>) -> impl IntoView {
     }
 }
 
-/// The answer once more, at the top while the inputs are under the thumb.
+/// The answer once more, at the top of the screen, once the answer itself has been scrolled out of it.
 #[component]
 fn Ride(answer: Memo<Option<Answer>>) -> impl IntoView {
-    move || {
+    let away = RwSignal::new(false);
+    let look = move |_: ()| away.set(answer_is_away());
+    let scrolled = window_event_listener_untyped("scroll", move |_| look(()));
+    let resized = window_event_listener_untyped("resize", move |_| look(()));
+    on_cleanup(move || {
+        scrolled.remove();
+        resized.remove();
+    });
+    let shown = move || {
         answer.get().map(|answer| {
             let Answer { number, check, bar, .. } = answer;
             view! {
-                <div class="ride" aria-hidden="true">
-                    <span class="num">{number}<small>" V"</small></span>
-                    <VerdictMark verdict=Signal::stored(check.verdict)/>
-                    {tells_cost(check.verdict).then(|| view! { <CostMark cost=Signal::stored(check.cost)/> })}
-                    {bar.map(|bar| view! { <SlimBar bar=Signal::stored(bar)/> })}
-                </div>
+                <span class="num">{number}<small>" V"</small></span>
+                <VerdictMark verdict=Signal::stored(check.verdict)/>
+                {tells_cost(check.verdict).then(|| view! { <CostMark cost=Signal::stored(check.cost)/> })}
+                <SlimBar bar=Signal::stored(bar)/>
             }
         })
-    }
+    };
+    view! { <div class="ride" aria-hidden="true" hidden=move || !away.get()>{shown}</div> }
+}
+
+/// Whether the verdict on top has left the screen.
+fn answer_is_away() -> bool {
+    let row = document().query_selector(".answer-row").ok().flatten();
+    row.is_some_and(|row| row.get_bounding_client_rect().bottom() < 0.0)
 }
