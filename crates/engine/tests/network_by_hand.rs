@@ -313,3 +313,19 @@ fn a_draw_across_equal_posts_is_unfed_whichever_way_the_rounding_falls() {
         assert_eq!(network.solve(), Err(NetworkError::Unfed { element: draw }));
     }
 }
+
+/// A feed across next to nothing lifts its volts far above those at rest; that is no collapse.
+#[test]
+fn a_feed_may_lift_its_volts_far_above_rest() {
+    let (mut network, plus, back) = pair();
+    let far = network.node("far");
+    // 12 µV at rest across 1 µΩ of a circuit of 1 Ω in all.
+    network.source(plus, back, source(12.0, 0.999_999));
+    network.resistor(plus, far, Ohms::new(1e-6));
+    network.resistor(far, back, Ohms::new(1e-9));
+    network.draw_power(plus, far, Watts::new(-100.0));
+    let found = network.solve().unwrap();
+    // u² = Z · 100 W, but for the volts at rest: 10 mV.
+    assert!((found.across(plus, far).unwrap().get() - 0.010_006).abs() < 1e-7, "{found:?}");
+    assert!(found.imbalance().get().abs() < 1e-6);
+}

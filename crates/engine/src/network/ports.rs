@@ -16,14 +16,18 @@ use crate::quantity::Volts;
 /// round, and 30 reach the rounding.
 const MOST_ROUNDS: u32 = 100;
 
-/// What counts as settled, as a part of the volts at rest. *Chosen*: a few times the rounding of a double.
+/// What counts as settled, as a part of the volts at hand. *Chosen*: a few times the rounding of a double.
 const SETTLED: f64 = 1e-14;
 
 /// Below this part of the highest volts anywhere in the network at rest, a draw counts as having none: it may be rounding.
 const UNFED: f64 = 1e-9;
 
 /// The smallest part of the draws by which they are turned up. Closer to collapse than this counts as collapse.
-const LEAST_TURN: f64 = 1e-7;
+const LEAST_TURN: f64 = 1e-9;
+
+/// The determinant of the tangent, 1 with nothing drawn, below which it is all but flat. *Chosen*: one draw that stands
+/// [`LEAST_TURN`] short of its collapse has 0.000 06, and each feed beside it doubles that at most.
+const ALL_BUT_FLAT: f64 = 0.02;
 
 /// Why the draws did not settle; draws by their place in the list.
 pub(super) enum Stall {
@@ -68,14 +72,15 @@ struct Draws<'a> {
 
 /// One round of Newton's iteration.
 struct Round {
-    /// By how much the equation is off, worst draw, as a part of its volts at rest.
+    /// By how much the equation is off, worst draw, as a part of its volts.
     miss: f64,
     /// The same in volts.
     miss_volts: f64,
     /// The change of volts that the tangent asks for; none where the tangent is flat.
     change: Option<DVector<f64>>,
-    /// Whether the determinant of the tangent is above nothing: the operating point is on the side of rest.
-    on_the_side_of_rest: bool,
+    /// The determinant of the tangent: above nothing on the side of rest, nothing at collapse, and the same in
+    /// whatever order the draws are listed.
+    determinant: f64,
 }
 
 impl Draws<'_> {
@@ -86,15 +91,24 @@ impl Draws<'_> {
         let off = DVector::from_fn(count, |draw, _| volts[draw] - self.at_rest[draw] + dragged[draw]);
         // `max` would pass over what is no number.
         let worst = |worst: f64, off: f64| if off.is_nan() { f64::INFINITY } else { worst.max(off.abs()) };
-        let miss = off.iter().zip(self.at_rest).map(|(off, rest)| off / rest).fold(0.0, worst);
+        let miss = (0..count).map(|draw| off[draw] / self.size(volts, draw)).fold(0.0, worst);
         let miss_volts = off.iter().copied().fold(0.0, worst);
         let tangent = DMatrix::from_fn(count, count, |row, column| {
             let one = if row == column { 1.0 } else { 0.0 };
             one - self.drag[(row, column)] * part * self.watts[column] / (volts[column] * volts[column])
         });
         let lu = tangent.lu();
-        let on_the_side_of_rest = lu.determinant() > 0.0;
-        Round { miss, miss_volts, change: lu.solve(&-off), on_the_side_of_rest }
+        let determinant = lu.determinant();
+        Round { miss, miss_volts, change: lu.solve(&-off), determinant }
+    }
+
+    /// The greatest of the volts that a draw's equation adds up: what its rounding is a part of.
+    fn size(&self, volts: &[f64], draw: usize) -> f64 {
+        self.at_rest[draw].max(volts[draw])
+    }
+
+    fn is_still(&self, volts: &[f64], change: &DVector<f64>) -> bool {
+        (0..volts.len()).all(|draw| change[draw].abs() <= SETTLED * self.size(volts, draw))
     }
 
     /// The draw that lost the greatest part of its volts.
@@ -120,9 +134,8 @@ impl Draws<'_> {
             if (0..next.len()).any(|draw| rises(draw) || next[draw].is_nan() || next[draw] <= 0.0) {
                 return Err(Stall::Collapse { draw: self.lowest(&volts) });
             }
-            let still = change.iter().zip(self.at_rest).all(|(change, rest)| change.abs() <= SETTLED * rest);
             volts = next;
-            if still {
+            if self.is_still(&volts, &change) {
                 return Ok(volts);
             }
         }
@@ -143,7 +156,13 @@ impl Draws<'_> {
                 None => turn /= 2.0,
             }
             if turn < LEAST_TURN {
-                return Err(Stall::Collapse { draw: self.lowest(&volts) });
+                // Where the tangent is not all but flat, the iteration failed and not the network.
+                let here = self.round(&volts, part);
+                return Err(if here.determinant < ALL_BUT_FLAT {
+                    Stall::Collapse { draw: self.lowest(&volts) }
+                } else {
+                    Stall::NotConverged { rounds: MOST_ROUNDS, miss_volts: self.round(&volts, 1.0).miss_volts }
+                });
             }
         }
         Ok(volts)
@@ -152,19 +171,18 @@ impl Draws<'_> {
     /// The operating point nearest `from` when `part` of each draw is on, if it is still on the side of rest.
     fn near(&self, from: &[f64], part: f64) -> Option<Vec<f64>> {
         let mut volts = from.to_vec();
-        for _ in 0..20 {
+        for _ in 0..60 {
             let round = self.round(&volts, part);
             if round.miss <= SETTLED {
-                return round.on_the_side_of_rest.then_some(volts);
+                return (round.determinant > 0.0).then_some(volts);
             }
             let change = round.change?;
             volts.iter_mut().zip(change.iter()).for_each(|(volts, change)| *volts += change);
             if volts.iter().any(|volts| volts.is_nan() || *volts <= 0.0) {
                 return None;
             }
-            let still = change.iter().zip(self.at_rest).all(|(change, rest)| change.abs() <= SETTLED * rest);
-            if still {
-                return round.on_the_side_of_rest.then_some(volts);
+            if self.is_still(&volts, &change) {
+                return (round.determinant > 0.0).then_some(volts);
             }
         }
         None

@@ -174,14 +174,18 @@ fn the_order_of_the_elements_does_not_matter() {
         let (other, other_at, _) = put(nodes, &turned);
         match (network.solve(), other.solve()) {
             (Ok(one), Ok(two)) => {
-                // Near collapse a hair of rounding moves the volts by its root.
-                let hair = if things.iter().any(|thing| matches!(thing, Thing::Power(..))) { 1e-6 } else { 1e-9 };
+                // Seven decades of resistance cost as many of sixteen digits, and the elimination some more; near
+                // collapse a hair of rounding moves the volts by its root.
+                let hair = if things.iter().any(|thing| matches!(thing, Thing::Power(..))) { 1e-6 } else { 1e-7 };
                 let scale = 60.0 + volts(&one, &at).iter().fold(0.0, |high: f64, volts| high.max(volts.abs()));
                 for (one, two) in volts(&one, &at).iter().zip(volts(&two, &other_at)) {
                     assert!((one - two).abs() <= hair * scale, "{one} V and {two} V, {} elements", elements.len());
                 }
             }
-            (Err(one), Err(two)) => assert_eq!(core::mem::discriminant(&one), core::mem::discriminant(&two)),
+            (Err(one), Err(two)) => {
+                let kind = core::mem::discriminant::<NetworkError>;
+                assert_eq!(kind(&one), kind(&two), "one order: {one:?}, the other: {two:?} of {things:?}");
+            }
             (one, two) => panic!("one order: {:?}, the other: {:?} of {things:?}", one.err(), two.err()),
         }
         Ok(())
@@ -217,7 +221,7 @@ fn without_draws_of_power_the_causes_add_up() {
             }
         }
         for (sum, together) in sum.iter().zip(&together) {
-            assert!((sum - together).abs() <= 1e-8 * size, "{sum} V against {together} V in {things:?}");
+            assert!((sum - together).abs() <= 1e-7 * size, "{sum} V against {together} V in {things:?}");
         }
         Ok(())
     });
