@@ -12,3 +12,4 @@ pub mod page;
 pub mod root;
 pub mod stages;
 pub mod stamp;
+pub mod styles;

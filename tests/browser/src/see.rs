@@ -97,6 +97,8 @@ impl Site {
                 }
             }
         }
+        // The browser's own first page is not ours.
+        asked.retain(|it| !it.starts_with("chrome://") && !it.starts_with("about:"));
         Ok(asked)
     }
 

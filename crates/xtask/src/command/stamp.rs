@@ -4,7 +4,7 @@ use std::path::PathBuf;
 
 use anyhow::{Result, bail};
 
-use crate::{root, stamp};
+use crate::{root, stamp, styles};
 
 /// Stamps the named folder, else the one Trunk is staging, else `dist/`.
 ///
@@ -17,6 +17,7 @@ pub fn run(arguments: &[String]) -> Result<()> {
         [folder] => PathBuf::from(folder),
         _ => bail!("stamp takes one folder"),
     };
+    styles::bundle(&folder)?;
     let stamped = stamp::stamp(&folder)?;
     println!("Version {}, {} files", stamped.version, stamped.files);
     Ok(())
