@@ -22,6 +22,7 @@ pub mod pad;
 pub mod quantity;
 pub mod sharing;
 pub mod show;
+pub mod shelf;
 pub mod source;
 pub mod string;
 pub mod typed;
