@@ -19,6 +19,7 @@ pub mod joining;
 pub mod module;
 pub mod network;
 pub mod pad;
+pub mod matching;
 pub mod quantity;
 pub mod sharing;
 pub mod show;

@@ -32,10 +32,10 @@ use ground::Ground;
 use turns::{Walk, Walked};
 
 /// How much the exact search may do, in partly turned layouts looked at. *Chosen*: a tenth of a second natively.
-const EXACT_WORK: u64 = 3_000_000;
+const EXACT_WORK: u64 = 2_000_000;
 
 /// How much the local search may do, in the same measure. *Chosen*: a fifth of a second natively.
-const LOCAL_WORK: u64 = 3_000_000;
+const LOCAL_WORK: u64 = 1_000_000;
 
 /// How far the search for a layout went.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]

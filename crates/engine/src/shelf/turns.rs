@@ -83,12 +83,15 @@ impl<'a> Walk<'a> {
         self.missed.last().map_or(0, |&[one, other]| one.min(other))
     }
 
-    /// Takes one place more and drops the parts that `hopeless` says cannot win. The caller sees to it that the place
-    /// is a neighbour where the joint asks for one. `false` where no part is left; it is then taken back.
+    /// Takes one place more and drops the parts that `hopeless` says cannot win. `false`, and nothing taken, where no
+    /// part is left or where the place is no neighbour of the last one and the joint asks for one.
     pub(super) fn push(&mut self, place: usize, hopeless: impl Fn(&Partial, u32) -> bool) -> bool {
         let ground = self.ground;
         let i = self.places.len();
         let joint = ground.joints[i];
+        if joint != Joint::Apart && self.places.last().is_none_or(|&last| ground.way(last, place).is_none()) {
+            return false;
+        }
         let mut layer = self.spare.pop().unwrap_or_default();
         layer.clear();
 
@@ -184,7 +187,9 @@ impl<'a> Walk<'a> {
     pub(super) fn through(&mut self, places: &[usize]) -> Option<Walked> {
         self.clear();
         for &place in places {
-            self.push(place, |_, _| false);
+            if !self.push(place, |_, _| false) {
+                return None;
+            }
         }
         self.finish()
     }

@@ -17,6 +17,7 @@
 
 mod gauge;
 mod numeral;
+pub mod list;
 mod refusal;
 mod suffix;
 mod trade;
