@@ -35,7 +35,7 @@ use turns::{Walk, Walked};
 const EXACT_WORK: u64 = 2_000_000;
 
 /// How much the local search may do, in the same measure. *Chosen*: a fifth of a second natively.
-const LOCAL_WORK: u64 = 1_000_000;
+const LOCAL_WORK: u64 = 2_500_000;
 
 /// How far the search for a layout went.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
