@@ -2,8 +2,8 @@
 
 use engine::quantity::{Metres, Volts};
 use engine::shelf::{
-    Caution, Cell, CellVolts, Layout, LinkKind, Parallel, PlusOn, Pole, Posts, Proof, Remark, Shelf, ShelfError, Stand,
-    TakeOff, Touch, Turn, Wiring, Wish, lay_out, steps,
+    Caution, Cell, CellVolts, Layout, LinkKind, Parallel, PlusOn, Posts, Proof, Remark, Shelf, ShelfError, Stand,
+    TakeOff, Touch, Wiring, Wish, lay_out, steps,
 };
 
 fn mm(number: f64) -> Metres {
@@ -217,54 +217,4 @@ fn a_shelf_too_large_to_search_through_is_never_worse_than_plain_and_the_same_ea
     assert_eq!(once, lithium(8, 9, (72, 1, ONE), TakeOff::OppositeEnds));
     assert_eq!(once.proof, Proof::Found);
     assert!(once.cost < once.plain);
-}
-
-/// The least length over every way over neighbours and every turn, by trying them all.
-fn by_trying_everything(shelf: &Shelf, cells: usize, way: &mut Vec<(u32, u32, Turn)>, sum: f64, least: &mut f64) {
-    if way.len() == cells {
-        *least = least.min(sum);
-        return;
-    }
-    let post = |(row, column, turn): (u32, u32, Turn), pole| {
-        let (middle, post) = (shelf.middle(row, column), shelf.cell().post(pole, turn));
-        ((middle.across + post.across).get(), (middle.forward + post.forward).get())
-    };
-    for (row, column) in (0..shelf.rows()).flat_map(|r| (0..shelf.columns()).map(move |c| (r, c))) {
-        let taken = way.iter().any(|&(r, c, _)| (r, c) == (row, column));
-        let far = way.last().is_some_and(|&(r, c, _)| r.abs_diff(row) + c.abs_diff(column) != 1);
-        if taken || far {
-            continue;
-        }
-        for &turn in shelf.stand().turns() {
-            let link = way.last().map_or(0.0, |&last| {
-                let (a, b) = (post(last, Pole::Plus), post((row, column, turn), Pole::Minus));
-                (a.0 - b.0).hypot(a.1 - b.1)
-            });
-            way.push((row, column, turn));
-            by_trying_everything(shelf, cells, way, sum + link, least);
-            way.pop();
-        }
-    }
-}
-
-// Rows of one: nothing but the length decides there, so the search must meet the least of all.
-// Elsewhere it may be longer, for the sake of posts apart and fewer lengths, but never shorter.
-#[test]
-fn the_exact_search_agrees_with_trying_everything() {
-    let corner = Posts::Diagonal(PlusOn::Right);
-    for (posts, stand) in [(Posts::Ends, Stand::SideBySide), (corner, Stand::EitherWay), (corner, Stand::EndToEnd)] {
-        for (rows, columns, cells) in [(1, 4, 4), (4, 1, 4), (2, 2, 4), (2, 3, 5)] {
-            let cell = Cell::new(mm(300.0), mm(280.0), posts, mm(60.0)).unwrap();
-            let shelf = Shelf::new(rows, columns, cell, stand, mm(5.0), mm(40.0)).unwrap();
-            let wiring = Wiring::new(cells, 1, ONE).unwrap();
-            let layout = lay_out(&shelf, &wiring, lithium_volts(), Wish::default()).unwrap();
-            assert_eq!(layout.proof, Proof::Least);
-            let mut least = f64::INFINITY;
-            by_trying_everything(&shelf, cells as usize, &mut Vec::new(), 0.0, &mut least);
-            let found = layout.hole_to_hole().get();
-            assert!(found >= least - 1e-9, "{rows} × {columns}: {found} m is below {least} m");
-            let one_length = layout.cuts.len() == 1;
-            assert!(!(one_length && (rows == 1 || columns == 1)) || found <= least + 1e-9, "{found} m, {least} m");
-        }
-    }
 }

@@ -28,7 +28,7 @@ fn any_shelf(u: &mut Unstructured) -> Result<Shelf> {
     let inset = length.min(width) * u.int_in_range(10..=40)? / 100;
     let cell = Cell::new(mm(length), mm(width), posts, mm(inset)).expect("inset below half of each side");
     let stand = *u.choose(&[Stand::SideBySide, Stand::EndToEnd, Stand::EitherWay])?;
-    let (rows, columns) = (u.int_in_range(1..=4)?, u.int_in_range(1..=5)?);
+    let (rows, columns) = (u.int_in_range(1..=3)?, u.int_in_range(1..=4)?);
     let (beside, between) = (mm(u.int_in_range(0..=80)?), mm(u.int_in_range(0..=80)?));
     Ok(Shelf::new(rows, columns, cell, stand, beside, between).expect("a shelf"))
 }
@@ -140,5 +140,5 @@ fn every_layout_keeps_the_laws() {
         assert!(layout.cost <= layout.plain, "worse than plain");
         Ok(())
     })
-    .budget_ms(6_000);
+    .budget_ms(2_000);
 }

@@ -4,8 +4,12 @@
 //! link can cross one of another string. [`lay_out`] looks for the way and the turns of least [`Cost`], and never
 //! returns one that costs more than the plain back-and-forth along the rows with its cells turned as well as can be.
 //!
-//! Up to 64 places a branch-and-bound search is tried first; where it comes to its end the layout is [`Proof::Least`]. That holds for one string on 6 × 6 places and commonly up to 4 × 10, less for many
-//! strings: the measured cases stand in `tests/shelf.rs`. Above, a local search works from the best plain way.
+//! Up to 64 places a branch-and-bound search is tried first; where it comes to its end the layout is
+//! [`Proof::Least`], and says so. Measured with its share of work: one string, two turns, every wish of the take-off,
+//! up to 6 × 6 and 4 × 10; two strings up to 4 × 8; all four turns up to 4 × 6, and not always at 6 × 6. Five strings on
+//! 4 × 10 are too many. Beyond, a local search works from the best way known.
+//!
+//! A one-row shelf cannot bring both take-off posts to one side, as no link skips a cell.
 
 mod board;
 mod cell;
@@ -31,10 +35,12 @@ use crate::quantity::Metres;
 use ground::Ground;
 use turns::{Walk, Walked};
 
-/// How much the exact search may do, in partly turned layouts looked at. *Chosen*: a tenth of a second natively.
+/// How much the exact search may do, in partly turned layouts looked at. *Chosen*: a tenth to
+/// half of a second natively.
 const EXACT_WORK: u64 = 2_000_000;
 
-/// How much the local search may do, in the same measure. *Chosen*: a fifth of a second natively.
+/// How much the local search may do, in the same measure. *Chosen*: about a fifth of a second
+/// natively.
 const LOCAL_WORK: u64 = 2_500_000;
 
 /// How far the search for a layout went.
