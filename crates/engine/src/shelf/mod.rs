@@ -84,13 +84,13 @@ impl Default for Wish {
 ///
 /// let mm = |mm: f64| Metres::new(mm / 1000.0);
 /// let cell = Cell::new(mm(174.0), mm(72.0), Posts::Ends, mm(26.0))?;
-/// let shelf = Shelf::new(1, 4, cell, Stand::SideBySide, mm(2.0), mm(60.0))?;
-/// let wiring = Wiring::new(4, 1, Parallel::SeparateStrings)?;
+/// let shelf = Shelf::new(1, 5, cell, Stand::SideBySide, mm(2.0), mm(60.0))?;
+/// let wiring = Wiring::new(5, 1, Parallel::SeparateStrings)?;
 /// let volts = CellVolts::new(Volts::new(3.2), Volts::new(3.3), Volts::new(3.35))?;
 ///
 /// let layout = lay_out(&shelf, &wiring, volts, Wish::default())?;
-/// assert_eq!(layout.links.len(), 3);
-/// assert!((layout.hole_to_hole().get() - 3.0 * 0.074).abs() < 1e-9);
+/// assert_eq!(layout.links.len(), 4);
+/// assert!((layout.hole_to_hole().get() - 4.0 * 0.074).abs() < 1e-9);
 /// # Ok::<(), engine::shelf::ShelfError>(())
 /// ```
 pub fn lay_out(shelf: &Shelf, wiring: &Wiring, volts: CellVolts, wish: Wish) -> Result<Layout, ShelfError> {

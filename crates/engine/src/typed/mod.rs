@@ -16,8 +16,8 @@
 //! Nothing is guessed: what has two meanings is asked about, and what is not understood is kept as typed.
 
 mod gauge;
-mod numeral;
 pub mod list;
+mod numeral;
 mod refusal;
 mod suffix;
 mod trade;
