@@ -63,6 +63,10 @@ works! {
     IEC_60364_4_43: "IEC 60364-4-43", "Low-voltage electrical installations: protection against overcurrent", "2008";
     /// Earthing and protective conductors; annex A gives the heating of a conductor that loses no heat.
     IEC_60364_5_54: "IEC 60364-5-54", "Low-voltage electrical installations: earthing arrangements and protective conductors", "2011";
+    /// Protection against electric shock.
+    IEC_60364_4_41: "IEC 60364-4-41", "Low-voltage electrical installations: protection against electric shock", "2005+A1:2017";
+    /// Dealing numbers to sets of nearly equal sums.
+    KARMARKAR_KARP: "Karmarkar and Karp 1982", "The differencing method of set partitioning, University of California report", "1982";
     /// A fact every practitioner knows, with no one publication behind it.
     COMMON_PRACTICE: "common practice", "what careful practitioners do", "";
     /// A value of ours, with its reason given where it stands.

@@ -16,6 +16,7 @@
 //! Nothing is guessed: what has two meanings is asked about, and what is not understood is kept as typed.
 
 mod gauge;
+pub mod list;
 mod numeral;
 mod refusal;
 mod suffix;
