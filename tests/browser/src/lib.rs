@@ -13,6 +13,6 @@ mod find;
 mod runner;
 mod see;
 
-pub use anyhow::{Result, ensure};
+pub use anyhow::{Result, bail, ensure};
 pub use driver::{Kind, Screen};
 pub use runner::{Site, visit};
