@@ -8,87 +8,70 @@ use leptos::prelude::*;
 
 use crate::fold::Folds;
 use crate::span_bar::geometry::{From, Post, Ruler};
-use crate::span_bar::{Bar, SlimBar};
+use crate::span_bar::{Bar, slim_bar};
 use crate::verdict::{CostMark, VerdictMark, tells_cost};
 use crate::working::Working;
 
-/// A check in a list.
-#[component]
-pub fn CheckRow<Id>(
-    /// What it is remembered by when unfolded; one of its own on the page.
-    #[prop(into)]
+/// A check in a list. Read within whatever renders the list: it is drawn anew at each change, in place.
+///
+/// `id` is what it is remembered by when unfolded; `working` is made only when it is; `note` is what else there is to
+/// say, shown at once where the check waits for something; `on_ask` leads to a field that is missing.
+pub fn check_row<Id>(
     id: String,
-    /// What is required, in a few words.
     name: &'static str,
-    /// The check as it was judged.
-    #[prop(into)]
-    check: Signal<Check<Id>>,
-    /// Makes the working. Called when it is unfolded, and again at each change while it is.
-    #[prop(into)]
-    working: Callback<(), Vec<Step>>,
-    /// What else there is to say, under the figures.
-    #[prop(into, optional)]
-    note: MaybeProp<String>,
-    /// Leads to a field that is missing.
+    check: &Check<Id>,
+    note: Option<String>,
+    working: impl FnOnce() -> Vec<Step>,
     on_ask: Callback<Field>,
-) -> impl IntoView
-where
-    Id: Clone + Send + Sync + 'static,
-{
+) -> AnyView {
     let folds = expect_context::<Folds>();
-    let id = StoredValue::new(id);
-    let open = Memo::new(move |_| id.with_value(|id| folds.is_open(id)));
-    let verdict = Signal::derive(move || check.with(|check| check.verdict));
-    let cost = Signal::derive(move || check.with(|check| check.cost));
-    let figures = move || {
-        check.with(|check| {
+    let open = folds.is_open(&id);
+    let verdict = check.verdict;
+    let figures = match asks_for(check) {
+        Some(asks) => view! { <span class="asks-for">{asks}</span> }.into_any(),
+        None => {
+            let (value, limit) = apart(check);
             let margin = check.margin.map_or_else(|| show::NONE.to_owned(), |margin| show::room(margin.amount()));
-            (apart(check), margin)
-        })
+            view! {
+                <span class="figs">
+                    <span><small>"value"</small>" "<b>{value}</b></span>
+                    <span><small>"limit"</small>" "<b>{limit}</b></span>
+                    <span><small>"margin"</small>" "<b>{margin}</b></span>
+                </span>
+            }
+            .into_any()
+        }
     };
-    let bar = Memo::new(move |_| check.with(|check| bar(name, check)));
-    let asks = move || check.with(asks_for);
+    let note =
+        note.filter(|_| open || verdict == Verdict::Asks).map(|note| view! { <p class="note">{note}</p> }.into_any());
+    let body = open.then(|| {
+        let assumed = assumed(check).map(|assumed| view! { <p class="note">{assumed}</p> }.into_any());
+        view! {
+            <div class="check-body">
+                {missing(check.asks, on_ask)}
+                {assumed}
+                <Working steps=working()/>
+            </div>
+        }
+        .into_any()
+    });
+    let slim = bar(name, check).map(slim_bar);
     view! {
-        <li class="check" data-open=move || open.get().then_some("") data-v=move || verdict.get().word()>
-            <button
-                class="check-head"
-                type="button"
-                aria-expanded=move || open.get().to_string()
-                on:click=move |_| id.with_value(|id| folds.turn(id))
-            >
+        <li class="check" data-open=open.then_some("") data-v=verdict.word()>
+            <button class="check-head" type="button" aria-expanded=open.to_string() on:click=move |_| folds.turn(&id)>
                 <span class="name">{name}</span>
                 <span class="tags">
                     <VerdictMark verdict=verdict/>
-                    <Show when=move || tells_cost(verdict.get())><CostMark cost=cost/></Show>
+                    {tells_cost(verdict).then(|| view! { <CostMark cost=check.cost/> })}
                 </span>
-                {move || match asks() {
-                    Some(asks) => view! { <span class="asks-for">{asks}</span> }.into_any(),
-                    None => {
-                        let ((value, limit), margin) = figures();
-                        view! {
-                            <span class="figs">
-                                <span><small>"value"</small>" "<b>{value}</b></span>
-                                <span><small>"limit"</small>" "<b>{limit}</b></span>
-                                <span><small>"margin"</small>" "<b>{margin}</b></span>
-                            </span>
-                        }
-                            .into_any()
-                    }
-                }}
-                {move || bar.get().map(|bar| view! { <SlimBar bar=bar/> })}
+                {figures}
+                {slim}
             </button>
-            // What to do about it stands there at once where the check waits; else with the working.
-            {move || note.get().filter(|_| open.get() || verdict.get() == Verdict::Asks).map(|note| view! { <p class="note">{note}</p> })}
-            <Show when=move || open.get()>
-                <div class="check-body">
-                    {move || check.with(|check| missing(check.asks, on_ask))}
-                    {move || check.with(assumed).map(|assumed| view! { <p class="note">{assumed}</p> })}
-                    // Read with the check, so that the working follows what is typed.
-                    {move || check.with(|_| view! { <Working steps=working.run(())/> })}
-                </div>
-            </Show>
+            {note}
+            {body}
         </li>
     }
+    .into_any()
 }
 
 /// "asks: Voc, Record low", where it asks.

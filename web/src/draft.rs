@@ -2,6 +2,7 @@
 //!
 //! All writing goes through [`Draft::edit`]; keeping and undo hang there and nowhere else.
 
+use crate::derived::memo;
 use bridge::Kept;
 use leptos::prelude::*;
 
@@ -65,7 +66,7 @@ impl Draft {
 
     /// What stands in a field; tells only when that field changes.
     pub fn typed(self, place: Place) -> Memo<Typed> {
-        Memo::new(move |_| self.pads.with(|pads| pads.typed(place)))
+        memo(move || self.pads.with(|pads| pads.typed(place)))
     }
 
     /// Computes something from all that was typed, again at each change.
@@ -80,12 +81,12 @@ impl Draft {
 
     /// What an undo would take back.
     pub fn undoes(self) -> Memo<Option<What>> {
-        Memo::new(move |_| self.pads.with(Pads::undoes))
+        memo(move || self.pads.with(Pads::undoes))
     }
 
     /// What a redo would make again.
     pub fn redoes(self) -> Memo<Option<What>> {
-        Memo::new(move |_| self.pads.with(Pads::redoes))
+        memo(move || self.pads.with(Pads::redoes))
     }
 
     /// Whether, and where, it is kept.

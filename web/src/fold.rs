@@ -1,31 +1,32 @@
 //! Folds: unfold in place, and stay as they were left.
 
-use std::collections::BTreeSet;
-
+use crate::derived::{derived, memo, when};
 use leptos::prelude::*;
 
 use crate::icon::Icon;
 
 /// Which folds are open, while the page is.
 #[derive(Clone, Copy)]
-pub struct Folds(RwSignal<BTreeSet<String>>);
+pub struct Folds(RwSignal<Vec<String>>);
 
 impl Folds {
     /// All closed.
     pub fn new() -> Self {
-        Self(RwSignal::new(BTreeSet::new()))
+        Self(RwSignal::new(Vec::new()))
     }
 
     /// Whether the fold `id` is open.
     pub fn is_open(self, id: &str) -> bool {
-        self.0.with(|open| open.contains(id))
+        self.0.with(|open| open.iter().any(|one| one == id))
     }
 
     /// Opens or closes it.
     pub fn turn(self, id: &str) {
         self.0.update(|open| {
-            if !open.remove(id) {
-                open.insert(id.to_owned());
+            let before = open.len();
+            open.retain(|one| one != id);
+            if open.len() == before {
+                open.push(id.to_owned());
             }
         });
     }
@@ -33,7 +34,9 @@ impl Folds {
     /// Opens it.
     pub fn open(self, id: &str) {
         self.0.update(|open| {
-            open.insert(id.to_owned());
+            if !open.iter().any(|one| one == id) {
+                open.push(id.to_owned());
+            }
         });
     }
 }
@@ -63,24 +66,22 @@ pub fn Fold(
 ) -> impl IntoView {
     let folds = expect_context::<Folds>();
     let id = StoredValue::new(id);
-    let open = Memo::new(move |_| id.with_value(|id| folds.is_open(id)));
+    let open = memo(move || id.with_value(|id| folds.is_open(id)));
     let body = move || format!("fold-{}", id.get_value().replace('/', "-"));
     view! {
         <div class="fold" data-open=move || open.get().then_some("")>
             <button
                 class="fold-head"
                 type="button"
-                aria-expanded=move || open.get().to_string()
-                aria-controls=move || open.get().then(body)
+                aria-expanded=derived(move || open.get().to_string())
+                aria-controls=derived(move || open.get().then(body))
                 on:click=move |_| id.with_value(|id| folds.turn(id))
             >
                 {icon.map(|name| view! { <Icon name=name/> })}
                 {title}
                 <span>{move || says.get()}</span>
             </button>
-            <Show when=move || open.get()>
-                <div class="fold-body" id=body>{children()}</div>
-            </Show>
+            {when(move || open.get(), move || view! { <div class="fold-body" id=body>{children()}</div> }.into_any())}
         </div>
     }
 }

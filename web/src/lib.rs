@@ -8,6 +8,7 @@
 pub mod caution;
 pub mod check_row;
 mod clock;
+pub mod derived;
 pub mod draft;
 pub mod field;
 pub mod file;

@@ -1,5 +1,6 @@
 //! Notices: above the bottom bar, with what can be done about them. Never over a field in use.
 
+use crate::derived::when;
 use leptos::prelude::*;
 
 /// A notice.
@@ -21,14 +22,12 @@ pub fn Notice(
     close: &'static str,
 ) -> impl IntoView {
     view! {
-        <Show when=move || up.get()>
-            <div class="notice">
+        {when(move || up.get(), move || view! { <div class="notice">
                 <p>{move || says.get()}</p>
                 <div class="notice-acts">
                     <button type="button" class="quiet" on:click=move |_| up.set(false)>{close}</button>
                     {on_act.map(|on_act| view! { <button type="button" on:click=move |_| on_act.run(())>{act}</button> })}
                 </div>
-            </div>
-        </Show>
+            </div> }.into_any())}
     }
 }

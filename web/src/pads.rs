@@ -57,7 +57,26 @@ pub enum What {
 }
 
 /// Entries that this release does not know: kept, and never looked into.
-type Unknown = BTreeMap<(String, String), KeptEntry>;
+type Unknown = BTreeMap<String, BTreeMap<String, KeptEntry>>;
+
+/// What stands where. A list, as there are some dozens at most.
+#[derive(Clone, Debug, Default)]
+struct Slots(Vec<(Place, Typed)>);
+
+impl Slots {
+    fn get(&self, place: Place) -> Option<&Typed> {
+        self.0.iter().find(|(one, _)| *one == place).map(|(_, typed)| typed)
+    }
+
+    fn remove(&mut self, place: Place) {
+        self.0.retain(|(one, _)| *one != place);
+    }
+
+    fn insert(&mut self, place: Place, typed: Typed) {
+        self.remove(place);
+        self.0.push((place, typed));
+    }
+}
 
 #[derive(Clone, Debug)]
 struct Change {
@@ -69,7 +88,7 @@ struct Change {
 /// All scratch pads, and the way back through the session.
 #[derive(Clone, Debug, Default)]
 pub struct Pads {
-    typed: BTreeMap<Place, Typed>,
+    typed: Slots,
     unknown: Unknown,
     past: Vec<Change>,
     future: Vec<Change>,
@@ -86,7 +105,7 @@ pub struct ToolPad<'a> {
 
 impl Pad for ToolPad<'_> {
     fn typed(&self, field: Field) -> (&str, Option<Unit>) {
-        self.pads.typed.get(&(self.tool, field)).map_or(("", None), |typed| (&typed.text, typed.unit))
+        self.pads.typed.get((self.tool, field)).map_or(("", None), |typed| (&typed.text, typed.unit))
     }
 }
 
@@ -105,7 +124,7 @@ impl What {
 impl Pads {
     /// What stands in a field.
     pub fn typed(&self, place: Place) -> Typed {
-        self.typed.get(&place).cloned().unwrap_or_default()
+        self.typed.get(place).cloned().unwrap_or_default()
     }
 
     /// What was typed into one tool, as the engine reads it.
@@ -115,7 +134,8 @@ impl Pads {
 
     /// How many fields hold something.
     pub fn len(&self) -> usize {
-        self.typed.values().filter(|typed| !typed.text.is_empty()).count() + self.unknown.len()
+        self.typed.0.iter().filter(|(_, typed)| !typed.text.is_empty()).count()
+            + self.unknown.values().map(BTreeMap::len).sum::<usize>()
     }
 
     /// Whether nothing was typed.
@@ -176,12 +196,14 @@ impl Pads {
     /// All of it, to be kept.
     pub fn kept(&self) -> Kept {
         let mut kept = Kept::default();
-        for ((tool, field), typed) in &self.typed {
+        for ((tool, field), typed) in &self.typed.0 {
             let entry = KeptEntry::new(&typed.text, typed.unit);
             kept.tools.entry(tool.key().to_owned()).or_default().insert(field.key().to_owned(), entry);
         }
-        for ((tool, field), entry) in &self.unknown {
-            kept.tools.entry(tool.clone()).or_default().insert(field.clone(), entry.clone());
+        for (tool, entries) in &self.unknown {
+            for (field, entry) in entries {
+                kept.tools.entry(tool.clone()).or_default().insert(field.clone(), entry.clone());
+            }
         }
         kept
     }
@@ -189,9 +211,13 @@ impl Pads {
     fn replace(&mut self, kept: &Kept, what: What) -> bool {
         self.typing = None;
         let (typed, unknown) = split(kept);
-        let mut fields: Vec<(Place, Typed)> = typed.clone().into_iter().collect();
+        let mut fields = typed.0.clone();
         fields.extend(
-            self.typed.keys().filter(|place| !typed.contains_key(place)).map(|place| (*place, Typed::default())),
+            self.typed
+                .0
+                .iter()
+                .filter(|(place, _)| typed.get(*place).is_none())
+                .map(|(place, _)| (*place, Typed::default())),
         );
         self.make(fields, Some(unknown), what, false)
     }
@@ -235,7 +261,7 @@ impl Pads {
         for (place, before, after) in &change.fields {
             let typed = if back { before } else { after };
             if *typed == Typed::default() {
-                self.typed.remove(place);
+                self.typed.remove(*place);
             } else {
                 self.typed.insert(*place, typed.clone());
             }
@@ -265,8 +291,8 @@ fn in_unit(text: &str, unit: Unit) -> String {
         .to_owned()
 }
 
-fn split(kept: &Kept) -> (BTreeMap<Place, Typed>, Unknown) {
-    let mut typed = BTreeMap::new();
+fn split(kept: &Kept) -> (Slots, Unknown) {
+    let mut typed = Slots::default();
     let mut unknown = Unknown::new();
     for (tool_key, entries) in &kept.tools {
         for (field_key, entry) in entries {
@@ -276,7 +302,7 @@ fn split(kept: &Kept) -> (BTreeMap<Place, Typed>, Unknown) {
                     typed.insert((tool, field), Typed { text, unit });
                 }
                 _ => {
-                    unknown.insert((tool_key.clone(), field_key.clone()), entry.clone());
+                    unknown.entry(tool_key.clone()).or_default().insert(field_key.clone(), entry.clone());
                 }
             }
         }

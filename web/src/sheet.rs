@@ -1,5 +1,6 @@
 //! The Sheet view: what is kept on this phone, saved to a file, opened from one, or forgotten.
 
+use crate::derived::memo;
 use leptos::prelude::*;
 use wasm_bindgen_futures::spawn_local;
 use web_sys::HtmlInputElement;
@@ -22,7 +23,7 @@ pub fn Sheet() -> impl IntoView {
             Err(_) => "Not saved: the browser makes no files here.".to_owned(),
         });
     };
-    let count = Memo::new(move |_| draft.with(Pads::len));
+    let count = memo(move || draft.with(Pads::len));
     view! {
         <div class="one-column">
             <div class="page-head"><h1 tabindex="-1">"Sheet"</h1><span class="aside">"on this phone"</span></div>
@@ -86,26 +87,25 @@ fn Forget(said: RwSignal<String>, count: Memo<usize>) -> impl IntoView {
         said.set("Forgotten. Undo brings it back until the page is closed.".to_owned());
     };
     view! {
-        <Show
-            when=move || asked.get()
-            fallback=move || {
+        {move || {
+            if asked.get() {
+                view! { <p class="say">
+                {move || format!("Forget {} on this phone? A file that was saved stays.", entries(count.get()))}
+            </p>
+            <div class="btns">
+                <button class="btn solid" type="button" on:click=forget>"Forget all"</button>
+                <button class="btn plain" type="button" on:click=move |_| asked.set(false)>"Keep it"</button>
+            </div> }.into_any()
+            } else {
                 view! {
                     <div class="btns">
                         <button class="btn plain" type="button" on:click=move |_| asked.set(true)>
                             "Forget all that was typed"
                         </button>
                     </div>
-                }
+                }.into_any()
             }
-        >
-            <p class="say">
-                {move || format!("Forget {} on this phone? A file that was saved stays.", entries(count.get()))}
-            </p>
-            <div class="btns">
-                <button class="btn solid" type="button" on:click=forget>"Forget all"</button>
-                <button class="btn plain" type="button" on:click=move |_| asked.set(false)>"Keep it"</button>
-            </div>
-        </Show>
+        }}
     }
 }
 

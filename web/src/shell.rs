@@ -1,5 +1,6 @@
 //! What stands around every view: the top line, the notices and the bottom bar.
 
+use crate::derived::{derived, memo, when};
 use leptos::ev::{self, KeyboardEvent};
 use leptos::prelude::*;
 
@@ -81,7 +82,13 @@ fn Top(route: ReadSignal<Route>) -> impl IntoView {
             <Icon class="top-mark" name="mark"/>
             <div class="top-name">
                 <p class="h1">
-                    <Show when=home fallback=|| view! { <a href=Route::Tools.href()>"Linehut"</a> }>"Linehut"</Show>
+                    {move || {
+                        if home() {
+                            view! { "Linehut" }.into_any()
+                        } else {
+                            view! { <a href=Route::Tools.href()>"Linehut"</a> }.into_any()
+                        }
+                    }}
                 </p>
                 <KeptBadge/>
             </div>
@@ -95,7 +102,7 @@ fn Top(route: ReadSignal<Route>) -> impl IntoView {
 #[component]
 fn KeptBadge() -> impl IntoView {
     let keeper = use_draft().keeper();
-    let badge = Memo::new(move |_| badge(keeper.state(), keeper.lasting(), offline::copy()));
+    let badge = memo(move || badge(keeper.state(), keeper.lasting(), offline::copy()));
     view! {
         <div class="kept" data-state=move || badge.get().state data-copy=move || offline::copy().name() aria-live="polite">
             <Icon name="i-kept"/>
@@ -154,27 +161,23 @@ fn UndoButtons() -> impl IntoView {
         what.map_or_else(|| word.to_owned(), |what| format!("{word}: {}", what.words()))
     };
     view! {
-        <Show when=move || redoes.get().is_some()>
-            <button
+        {when(move || redoes.get().is_some(), move || view! { <button
                 class="icon-btn redo"
                 type="button"
-                aria-label=move || name("Redo", redoes.get())
+                aria-label=derived(move || name("Redo", redoes.get()))
                 on:click=move |_| make(Edit::Redo, "Made again", redoes.get_untracked())
             >
                 <Icon name="i-undo"/>
-            </button>
-        </Show>
-        <Show when=move || undoes.get().is_some() || redoes.get().is_some()>
-            <button
+            </button> }.into_any())}
+        {when(move || undoes.get().is_some() || redoes.get().is_some(), move || view! { <button
                 class="icon-btn"
                 type="button"
-                aria-label=move || name("Undo", undoes.get())
-                aria-disabled=move || undoes.get().is_none().then_some("true")
+                aria-label=derived(move || name("Undo", undoes.get()))
+                aria-disabled=derived(move || undoes.get().is_none().then_some("true"))
                 on:click=move |_| make(Edit::Undo, "Undone", undoes.get_untracked())
             >
                 <Icon name="i-undo"/>
-            </button>
-        </Show>
+            </button> }.into_any())}
         <p class="vh" aria-live="polite">{said}</p>
     }
 }
@@ -186,7 +189,7 @@ fn LightButton() -> impl IntoView {
         <button
             class="icon-btn"
             type="button"
-            aria-label=move || format!("Light: {}. Change to {}", draft.theme().name(), draft.theme().next().name())
+            aria-label=derived(move || format!("Light: {}. Change to {}", draft.theme().name(), draft.theme().next().name()))
             on:click=move |_| draft.set_theme(untrack(|| draft.theme().next()))
         >
             <Icon name="i-light"/>

@@ -9,44 +9,36 @@ use crate::icon::Icon;
 #[component]
 pub fn VerdictMark(
     /// The verdict.
-    #[prop(into)]
-    verdict: Signal<Verdict>,
+    verdict: Verdict,
     /// Whether it stands beside the answer.
     #[prop(optional)]
     big: bool,
 ) -> impl IntoView {
-    let mark = move || match verdict.get() {
+    let mark = match verdict {
         Verdict::Breaks => "v-breaks",
         Verdict::Asks => "v-asks",
         Verdict::Close => "v-close",
         Verdict::Clears => "v-clears",
     };
-    view! {
-        <span class="verdict" class:big=big data-v=move || verdict.get().word()>
-            {move || view! { <Icon name=mark()/> }}
-            {move || verdict.get().word()}
-        </span>
-    }
+    view! { <span class=if big { "verdict big" } else { "verdict" } data-v=verdict.word()><Icon name=mark/>{verdict.word()}</span> }
+        .into_any()
 }
 
 /// What a broken or close check costs. Shown after the verdict, and only then.
 #[component]
 pub fn CostMark(
     /// The cost.
-    #[prop(into)]
-    cost: Signal<Cost>,
+    cost: Cost,
 ) -> impl IntoView {
-    move || {
-        let cost = cost.get();
-        let triangle = (cost == Cost::Hazard).then(|| {
-            view! {
-                <svg viewBox="0 0 18 17" aria-hidden="true">
-                    <path fill-rule="evenodd" d="M9 0l9 17H0zM8 6v5.500h2V6zM8 13v2h2v-2z"/>
-                </svg>
-            }
-        });
-        view! { <span class="cost" data-cost=cost.word()>{triangle}{cost.word()}</span> }
-    }
+    let triangle = (cost == Cost::Hazard).then(|| {
+        view! {
+            <svg viewBox="0 0 18 17" aria-hidden="true">
+                <path fill-rule="evenodd" d="M9 0l9 17H0zM8 6v5.500h2V6zM8 13v2h2v-2z"/>
+            </svg>
+        }
+        .into_any()
+    });
+    view! { <span class="cost" data-cost=cost.word()>{triangle}{cost.word()}</span> }.into_any()
 }
 
 /// Whether the cost is told beside this verdict.

@@ -19,6 +19,7 @@ pub mod joining;
 pub mod matching;
 pub mod module;
 pub mod network;
+pub mod order;
 pub mod pad;
 pub mod quantity;
 pub mod sharing;

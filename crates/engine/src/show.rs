@@ -110,7 +110,7 @@ pub fn room(amount: Amount) -> String {
 
 /// `number` to the twelve digits that are kept.
 pub(crate) fn tidy(number: f64) -> f64 {
-    if number.is_finite() { format!("{number:.*e}", KEPT - 1).parse().unwrap_or(number) } else { number }
+    if number.is_finite() { typed::nearest(&format!("{number:.*e}", KEPT - 1)).unwrap_or(number) } else { number }
 }
 
 /// How many digits a unit deserves.
@@ -163,7 +163,7 @@ fn places(amount: Amount) -> usize {
 }
 
 fn rounded(number: f64, places: usize) -> f64 {
-    decimal(number, places).parse().unwrap_or(number)
+    typed::nearest(&decimal(number, places)).unwrap_or(number)
 }
 
 /// Rounded as on paper: halves go away from nought, also 13.85 whose last bit lies below.

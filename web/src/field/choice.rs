@@ -1,5 +1,6 @@
 //! A field that takes one of a short list.
 
+use crate::derived::{derived, memo, when};
 use engine::field::{Field, Takes};
 use engine::typed::Refusal;
 use leptos::prelude::*;
@@ -56,7 +57,7 @@ pub fn ChoiceField(
             Err(Refusal::NotANumber { text: typed.text.clone() })
         }
     });
-    let stand_in = Memo::new(move |_| {
+    let stand_in = memo(move || {
         assumed.with(|stand_in| match stand_in.as_ref()?.stands {
             Stands::Choice(key) => Some(key),
             Stands::Amount(_) | Stands::Depends => None,
@@ -100,8 +101,8 @@ fn list(
                 <select
                     id=parts.id()
                     aria-label=name
-                    aria-describedby=move || parts.described_by()
-                    aria-invalid=move || parts.invalid()
+                    aria-describedby=derived(move || parts.described_by())
+                    aria-invalid=derived(move || parts.invalid())
                     prop:value=text
                     on:change=move |event| choose(event_target_value(&event))
                 >
@@ -133,14 +134,14 @@ fn pick(
         <div class=move || format!("{} wide", parts.class())>
             <div class="label">
                 <span>{label}</span>
-                <Show when=move || parts.state.get() == State::Assumed><span class="tag">"assumed"</span></Show>
+                {when(move || parts.state.get() == State::Assumed, move || view! { <span class="tag">"assumed"</span> }.into_any())}
             </div>
             <div
                 class="pick"
                 id=parts.id()
                 role="radiogroup"
                 aria-label=name
-                aria-describedby=move || parts.described_by()
+                aria-describedby=derived(move || parts.described_by())
             >
                 {choices
                     .iter()
@@ -153,7 +154,7 @@ fn pick(
                                 <input
                                     type="radio"
                                     name=format!("{}-pick", parts.id())
-                                    prop:checked=move || text() == *key
+                                    prop:checked=derived(move || text() == *key)
                                     on:change=move |_| choose((*key).to_owned())
                                 />
                                 {*words}

@@ -2,6 +2,7 @@
 
 use std::time::Duration;
 
+use crate::derived::derived;
 use engine::field::{Field, Takes};
 use engine::unit::Unit;
 use leptos::prelude::*;
@@ -69,10 +70,10 @@ pub fn CountField(
                     aria-label=super::full_name(of, field)
                     inputmode="numeric"
                     autocomplete="off"
-                    placeholder=move || stand_in().map(|number| number.to_string())
-                    aria-describedby=move || parts.described_by()
-                    aria-invalid=move || parts.invalid()
-                    prop:value=move || parts.typed.with(|typed| typed.text.clone())
+                    placeholder=derived(move || stand_in().map(|number| number.to_string()))
+                    aria-describedby=derived(move || parts.described_by())
+                    aria-invalid=derived(move || parts.invalid())
+                    prop:value=derived(move || parts.typed.with(|typed| typed.text.clone()))
                     on:input=move |event| {
                         parts.patience.begin();
                         parts.draft.edit(Edit::Type(parts.place, event_target_value(&event)));

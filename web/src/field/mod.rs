@@ -13,6 +13,7 @@ pub use number::NumberField;
 
 use std::time::Duration;
 
+use crate::derived::{memo, when};
 use engine::check::Assumption;
 use engine::field::Field;
 use engine::quantity::Amount;
@@ -151,17 +152,16 @@ impl Parts {
         let typed = draft.typed(place);
         let patience = Patience::new();
         let told = RwSignal::new(false);
-        let reading = Memo::new(move |_| typed.with(&read));
-        let state = Memo::new(move |_| {
-            match (typed.with(|typed| typed.text.trim().is_empty()), reading.with(Result::is_err)) {
+        let reading = memo(move || typed.with(&read));
+        let state =
+            memo(move || match (typed.with(|typed| typed.text.trim().is_empty()), reading.with(Result::is_err)) {
                 (true, _) if said.asks.with(Option::is_some) => State::Asks,
                 (true, _) if said.assumed.with(Option::is_some) => State::Assumed,
                 (true, _) => State::Blank,
                 (false, true) if patience.over.get() => State::Unread,
                 (false, _) => State::Entered,
-            }
-        });
-        let note = Memo::new(move |_| match state.get() {
+            });
+        let note = memo(move || match state.get() {
             State::Unread => reading.with(|reading| reading.as_ref().err().map(ToString::to_string)),
             State::Asks => said.asks.get(),
             State::Assumed => said.assumed.get().map(|stand_in| {
@@ -216,16 +216,14 @@ impl Parts {
         view! {
             <div class="label">
                 <label for=self.id()>{label}</label>
-                <Show when=move || self.state.get() == State::Assumed>
-                    <button
+                {when(move || self.state.get() == State::Assumed, move || view! { <button
                         class="tag"
                         type="button"
                         aria-label=format!("{}: assumed. Say why", self.field().name())
                         on:click=focus
                     >
                         "assumed"
-                    </button>
-                </Show>
+                    </button> }.into_any())}
             </div>
         }
         .into_any()

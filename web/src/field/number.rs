@@ -1,5 +1,6 @@
 //! A field that takes a number with a unit.
 
+use crate::derived::{derived, when};
 use engine::field::{Field, Takes};
 use engine::show;
 use engine::unit::Dimension;
@@ -54,9 +55,9 @@ pub fn NumberField(
                     autocapitalize="off"
                     spellcheck="false"
                     placeholder=stand_in
-                    aria-describedby=move || parts.described_by()
-                    aria-invalid=move || parts.invalid()
-                    prop:value=move || parts.typed.with(|typed| typed.text.clone())
+                    aria-describedby=derived(move || parts.described_by())
+                    aria-invalid=derived(move || parts.invalid())
+                    prop:value=derived(move || parts.typed.with(|typed| typed.text.clone()))
                     on:input=move |event| {
                         parts.patience.begin();
                         parts.draft.edit(Edit::Type(parts.place, event_target_value(&event)));
@@ -69,7 +70,7 @@ pub fn NumberField(
                 <UnitChip parts=parts usual=usual open=open/>
             </div>
             {parts.foot()}
-            <Show when=move || open.get()><UnitList parts=parts usual=usual open=open/></Show>
+            {when(move || open.get(), move || view! { <UnitList parts=parts usual=usual open=open/> }.into_any())}
         </div>
     }
 }

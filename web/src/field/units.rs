@@ -1,5 +1,6 @@
 //! The unit chip: the unit that counts, and the plain list of the others.
 
+use crate::derived::derived;
 use engine::unit::Unit;
 use leptos::ev::{FocusEvent, KeyboardEvent};
 use leptos::prelude::*;
@@ -26,8 +27,8 @@ pub fn UnitChip(parts: Parts, usual: Unit, open: RwSignal<bool>) -> impl IntoVie
             class="unit"
             type="button"
             id=format!("{}-unit", parts.id())
-            aria-label=move || format!("{}, unit {}. Change unit", parts.field().name(), symbol())
-            aria-expanded=move || open.get().to_string()
+            aria-label=derived(move || format!("{}, unit {}. Change unit", parts.field().name(), symbol()))
+            aria-expanded=derived(move || open.get().to_string())
             on:click=move |_| open.update(|open| *open = !*open)
         >
             {symbol}

@@ -310,7 +310,7 @@ impl Geometry {
     /// Of labels that would lie on one another, drops every other one: the outer ones stay where they can.
     fn unclash(&mut self) {
         let mut order: Vec<usize> = (0..self.marks.len()).collect();
-        order.sort_by(|a, b| self.marks[*a].0.total_cmp(&self.marks[*b].0));
+        engine::order::sort_short(&mut order, |a, b| self.marks[*a].0.total_cmp(&self.marks[*b].0));
         let place = |marks: &[(f64, TickKind, Hang)], index: usize| marks[order[index]].0;
         let mut dropped_before = false;
         for index in 0..order.len() {

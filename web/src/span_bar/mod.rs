@@ -21,45 +21,38 @@ pub struct Bar {
 }
 
 /// The full span bar, with labels above and below.
-#[component]
-pub fn SpanBar(#[prop(into)] bar: Signal<Bar>) -> impl IntoView {
-    move || {
-        let Bar { ruler, verdict, room, says } = bar.get();
-        let drawn = ruler.geometry();
-        let flag = room.and_then(|room| flag(&drawn, room));
-        let mut above = Vec::new();
-        if let (Some(at), Some(post)) = (drawn.lo, &ruler.low) {
-            above.push(label(at, Hang::Start, view! { {post.name.clone()}<b>{post.shown.clone()}</b> }.into_any()));
-        }
-        if let (Some(at), Some(post)) = (drawn.hi, &ruler.high) {
-            above.push(label(at, Hang::End, view! { {post.name.clone()}<b>{post.shown.clone()}</b> }.into_any()));
-        }
-        let below = ruler
-            .marks
-            .iter()
-            .zip(&drawn.marks)
-            .map(|(mark, (at, _, hang))| {
-                label(*at, *hang, view! { <b>{mark.shown.clone()}</b>{mark.name.clone()} }.into_any())
-            })
-            .collect_view();
-        view! {
-            <figure class="span" data-v=verdict.word() role="img" aria-label=says>
-                <div class="span-top" aria-hidden="true">{above}{flag}</div>
-                {rule(&drawn)}
-                <div class="span-bot" aria-hidden="true">{below}</div>
-            </figure>
-        }
+pub fn span_bar(Bar { ruler, verdict, room, says }: Bar) -> AnyView {
+    let drawn = ruler.geometry();
+    let flag = room.and_then(|room| flag(&drawn, room));
+    let mut above = Vec::new();
+    if let (Some(at), Some(post)) = (drawn.lo, &ruler.low) {
+        above.push(label(at, Hang::Start, view! { {post.name.clone()}<b>{post.shown.clone()}</b> }.into_any()));
     }
+    if let (Some(at), Some(post)) = (drawn.hi, &ruler.high) {
+        above.push(label(at, Hang::End, view! { {post.name.clone()}<b>{post.shown.clone()}</b> }.into_any()));
+    }
+    let below: Vec<AnyView> = ruler
+        .marks
+        .iter()
+        .zip(&drawn.marks)
+        .map(|(mark, (at, _, hang))| {
+            label(*at, *hang, view! { <b>{mark.shown.clone()}</b>{mark.name.clone()} }.into_any())
+        })
+        .collect();
+    view! {
+        <figure class="span" data-v=verdict.word() role="img" aria-label=says>
+            <div class="span-top" aria-hidden="true">{above}{flag}</div>
+            {rule(&drawn)}
+            <div class="span-bot" aria-hidden="true">{below}</div>
+        </figure>
+    }
+    .into_any()
 }
 
 /// The span bar of a row: one line, no labels on the ruler.
-#[component]
-pub fn SlimBar(#[prop(into)] bar: Signal<Bar>) -> impl IntoView {
-    move || {
-        let Bar { ruler, verdict, says, .. } = bar.get();
-        let drawn = Ruler { marks: Vec::new(), ..ruler }.geometry();
-        view! { <span class="slim" data-v=verdict.word() role="img" aria-label=says>{rule(&drawn)}</span> }
-    }
+pub fn slim_bar(Bar { ruler, verdict, says, .. }: Bar) -> AnyView {
+    let drawn = Ruler { marks: Vec::new(), ..ruler }.geometry();
+    view! { <span class="slim" data-v=verdict.word() role="img" aria-label=says>{rule(&drawn)}</span> }.into_any()
 }
 
 fn percent(value: f64) -> String {

@@ -1,5 +1,6 @@
 //! The inputs of the String tool: what the first verdict needs, and more in groups.
 
+use crate::derived::derived;
 use engine::assumed;
 use engine::check::{Check, Verdict};
 use engine::field::{Field, Takes};
@@ -82,7 +83,7 @@ const OF_A_CONTROLLER: [Field; 7] = [
 #[component]
 pub fn Fields(checks: Memo<Vec<Check<Requirement>>>) -> impl IntoView {
     let draft = use_draft();
-    let says = Signal::derive(move || {
+    let says = derived(move || {
         let blank = |field: &&Field| draft.with(|pads| pads.typed((TOOL, **field)).text.is_empty());
         let rest = || GROUPS.iter().flat_map(|(_, fields)| fields.iter());
         let entered = rest().count() - rest().filter(blank).count();
@@ -108,7 +109,7 @@ pub fn Fields(checks: Memo<Vec<Check<Requirement>>>) -> impl IntoView {
         <Fold
             id=OTHER_CONTROLLERS
             title="Other controllers"
-            says=Signal::derive(|| "for layouts over unequal ones".to_owned())
+            says=derived(|| "for layouts over unequal ones".to_owned())
         >
             {OTHERS
                 .iter()
@@ -134,8 +135,8 @@ pub fn go_to(folds: Folds, field: Field) {
 
 fn one(field: Field, checks: Memo<Vec<Check<Requirement>>>) -> AnyView {
     let label = short(field);
-    let stand_in = Signal::derive(move || assumed::of(field).map(|assumption| StandIn::of(&assumption)));
-    let asks = Signal::derive(move || checks.with(|checks| asks(field, checks)));
+    let stand_in = derived(move || assumed::of(field).map(|assumption| StandIn::of(&assumption)));
+    let asks = derived(move || checks.with(|checks| asks(field, checks)));
     match field.takes() {
         Takes::Number { .. } => {
             view! { <NumberField tool=TOOL field=field label=label assumed=stand_in asks=asks note=note(field)/> }
@@ -185,7 +186,7 @@ fn asks(field: Field, checks: &[Check<Requirement>]) -> Option<String> {
 /// What is said under a field that holds a value.
 fn note(field: Field) -> Signal<Option<String>> {
     let draft = use_draft();
-    Signal::derive(move || {
+    derived(move || {
         let reading = draft.with(|pads| {
             let typed = pads.typed((TOOL, field));
             field.read(&typed.text, typed.unit).ok().flatten()

@@ -1,5 +1,6 @@
 //! The layouts of the modules at hand, ranked; what was rejected; and what single change would use them all.
 
+use crate::derived::{derived, memo, when};
 use engine::check::Verdict;
 use engine::controller::Controller;
 use engine::field::Field;
@@ -16,7 +17,7 @@ use crate::check_row::bar;
 use crate::draft::use_draft;
 use crate::fold::Fold;
 use crate::pads::{Edit, Typed};
-use crate::span_bar::SlimBar;
+use crate::span_bar::slim_bar;
 use crate::verdict::VerdictMark;
 
 /// How many ranked layouts are shown.
@@ -25,11 +26,9 @@ const SHOWN: usize = 4;
 /// The layouts of the modules at hand.
 #[component]
 pub fn LayoutList(question: Memo<Question>) -> impl IntoView {
-    let asked = Memo::new(move |_| question.with(|question| question.modules.is_some()));
+    let asked = memo(move || question.with(|question| question.modules.is_some()));
     view! {
-        <Show when=move || asked.get()>
-            <Laid question=question/>
-        </Show>
+        {when(move || asked.get(), move || view! { <Laid question=question/> }.into_any())}
     }
 }
 
@@ -51,7 +50,7 @@ fn Laid(question: Memo<Question>) -> impl IntoView {
             timer.clear();
         }
     });
-    let found = Memo::new(move |_| settled.with(find));
+    let found = memo(move || settled.with(find));
     let modules = move || settled.with(|question| question.modules.unwrap_or(0));
     let on = move || {
         settled.with(|question| match question.controllers.len() {
@@ -81,15 +80,13 @@ fn Laid(question: Memo<Question>) -> impl IntoView {
                             })
                     })
             }}
-            <Show when=move || found.with(|found| wants_change(found))>
-                <Fold
+            {when(move || found.with(|found| wants_change(found)), move || view! { <Fold
                     id="string/change"
                     title="What would use them all"
-                    says=Signal::derive(|| "one change".to_owned())
+                    says=derived(|| "one change".to_owned())
                 >
                     {move || settled.with(|question| change_list(question))}
-                </Fold>
-            </Show>
+                </Fold> }.into_any())}
         </section>
     }
 }
@@ -131,9 +128,9 @@ fn ranked(layout: &Layout, question: &Question) -> AnyView {
         <li class:is-now=now data-v=verdict.word()>
             {picture(&layout.groups, layout.left_over)}
             <span class="name">{shape(&layout.groups)}</span>
-            <VerdictMark verdict=Signal::stored(verdict)/>
+            <VerdictMark verdict=verdict/>
             <p class="why">{why(layout, question, now)}</p>
-            {slim.map(|slim| view! { <SlimBar bar=Signal::stored(slim)/> })}
+            {slim.map(slim_bar)}
             {take.map(|group| {
                 view! {
                     <button
@@ -159,9 +156,9 @@ fn rejected(one: &Rejected, question: &Question) -> AnyView {
         <li class="refused" data-v=one.check.verdict.word()>
             {picture(&[one.group], 0)}
             <span class="name">{shape(&[one.group])}</span>
-            <VerdictMark verdict=Signal::stored(one.check.verdict)/>
+            <VerdictMark verdict=one.check.verdict/>
             <p class="why">{format!("{}{where_on}: {}", one.check.id.name(), against(&one.check))}</p>
-            {slim.map(|slim| view! { <SlimBar bar=Signal::stored(slim)/> })}
+            {slim.map(slim_bar)}
         </li>
     }
     .into_any()
@@ -257,7 +254,7 @@ fn change_row(change: &Change, controllers: &[Controller]) -> AnyView {
     view! {
         <li>
             <b>{words}</b>
-            <p>{format!("then {}: ", shape(&change.layout.groups))}<VerdictMark verdict=Signal::stored(change.layout.verdict())/></p>
+            <p>{format!("then {}: ", shape(&change.layout.groups))}<VerdictMark verdict=change.layout.verdict()/></p>
         </li>
     }
     .into_any()

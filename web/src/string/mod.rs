@@ -6,6 +6,7 @@ mod fields;
 mod layouts;
 mod question;
 
+use crate::derived::{derived, memo, when};
 use engine::field::Field;
 use leptos::prelude::*;
 
@@ -20,7 +21,7 @@ use crate::draft::use_draft;
 use crate::fold::Fold;
 use crate::pads::{Edit, Typed};
 use crate::route::Route;
-use crate::span_bar::{SlimBar, SpanBar};
+use crate::span_bar::{slim_bar, span_bar};
 use crate::tools::Tool;
 use crate::verdict::{CostMark, VerdictMark, tells_cost};
 use crate::working::Working;
@@ -32,9 +33,9 @@ const TOOL: Tool = Tool::String;
 pub fn StringTool() -> impl IntoView {
     let draft = use_draft();
     // Read once for each change; whatever hangs on it is told only where it differs.
-    let question = Memo::new(move |_| draft.with(Question::read));
-    let checks = Memo::new(move |_| question.with(Question::checks));
-    let answer = Memo::new(move |_| {
+    let question = memo(move || draft.with(Question::read));
+    let checks = memo(move || question.with(Question::checks));
+    let answer = memo(move || {
         draft.with(|pads| {
             question.with(|question| checks.with(|checks| answer::answer(&pads.of(TOOL), &question.ask, checks)))
         })
@@ -51,7 +52,7 @@ pub fn StringTool() -> impl IntoView {
                     id="string/working"
                     title="Working"
                     icon="i-work"
-                    says=Signal::derive(|| "how this number is made".to_owned())
+                    says=derived(|| "how this number is made".to_owned())
                 >
                     {move || {
                         let steps = question
@@ -81,37 +82,32 @@ pub fn StringTool() -> impl IntoView {
 /// The number, its verdict, and what it means. The one region of the page with the role of a status.
 #[component]
 fn AnswerView(answer: Memo<Option<Answer>>) -> impl IntoView {
-    let of = move || answer.with(|answer| answer.as_ref().map(|answer| answer.of.clone()));
-    let number = Memo::new(move |_| answer.with(|answer| answer.as_ref().map(|answer| answer.number.clone())));
-    let check = move || answer.with(|answer| answer.as_ref().map(|answer| answer.check));
-    let verdict = Memo::new(move |_| check().map(|check| check.verdict));
-    let cost = Memo::new(move |_| check().map(|check| check.cost));
-    let says = move || answer.with(|answer| answer.as_ref().map(|answer| answer.says.clone()));
-    let longest = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.longest.clone()));
-    let besides = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.besides.clone()));
-    let rests = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.rests.clone()));
-    let bar = Memo::new(move |_| answer.with(|answer| answer.as_ref().map(|answer| answer.bar.clone())));
-    view! {
-        <section class="answer" aria-label="Answer">
-            // A reader is told by the line below, once typing rests: not by every keystroke.
-            <div role="status" aria-live="off">
+    let words = move || {
+        answer.get().map(|answer| {
+            let Answer { of, number, check, says, rests, longest, besides, .. } = answer;
+            view! {
                 <p class="answer-for">{of}</p>
                 <div class="answer-row">
                     <p class="answer-num">{number}<small>" V"</small></p>
                     <p class="answer-tags">
-                        {move || verdict.get().map(|verdict| view! { <VerdictMark verdict=Signal::stored(verdict) big=true/> })}
-                        {move || {
-                            let told = verdict.get().is_some_and(tells_cost);
-                            cost.get().filter(|_| told).map(|cost| view! { <CostMark cost=Signal::stored(cost)/> })
-                        }}
+                        <VerdictMark verdict=check.verdict big=true/>
+                        {tells_cost(check.verdict).then(|| view! { <CostMark cost=check.cost/> })}
                     </p>
                 </div>
                 <p class="answer-say">{says}</p>
                 <p class="answer-most">{longest}</p>
-                {move || rests().map(|rests| view! { <p class="answer-note">{rests}</p> })}
-                {move || besides().map(|besides| view! { <p class="answer-besides">{besides}</p> })}
-            </div>
-            {move || bar.get().map(|bar| view! { <SpanBar bar=Signal::stored(bar)/> })}
+                {rests.map(|rests| view! { <p class="answer-note">{rests}</p> })}
+                {besides.map(|besides| view! { <p class="answer-besides">{besides}</p> })}
+            }
+            .into_any()
+        })
+    };
+    let bar = move || answer.with(|answer| answer.as_ref().map(|answer| span_bar(answer.bar.clone())));
+    view! {
+        <section class="answer" aria-label="Answer">
+            // A reader is told by the line below, once typing rests: not by every keystroke.
+            <div role="status" aria-live="off">{words}</div>
+            {bar}
             <Confirm answer=answer/>
             <Told answer=answer/>
         </section>
@@ -148,17 +144,15 @@ fn Told(answer: Memo<Option<Answer>>) -> impl IntoView {
 #[component]
 fn Confirm(answer: Memo<Option<Answer>>) -> impl IntoView {
     let draft = use_draft();
-    let rests = Memo::new(move |_| answer.with(|answer| answer.as_ref().is_some_and(Answer::rests_on_tolerance)));
+    let rests = memo(move || answer.with(|answer| answer.as_ref().is_some_and(Answer::rests_on_tolerance)));
     let confirm = move |_| {
         let typed = Typed { text: engine::assumed::VOC_TOLERANCE.get().to_string(), unit: None };
         draft.edit(Edit::Fill(vec![((TOOL, Field::VocTolerance), typed)]));
     };
     view! {
-        <Show when=move || rests.get()>
-            <div class="btns">
+        {when(move || rests.get(), move || view! { <div class="btns">
                 <button class="btn small" type="button" on:click=confirm>"The nameplate says +3 %"</button>
-            </div>
-        </Show>
+            </div> }.into_any())}
     }
 }
 
@@ -178,10 +172,11 @@ fn Ride(answer: Memo<Option<Answer>>) -> impl IntoView {
             let Answer { number, check, bar, .. } = answer;
             view! {
                 <span class="num">{number}<small>" V"</small></span>
-                <VerdictMark verdict=Signal::stored(check.verdict)/>
-                {tells_cost(check.verdict).then(|| view! { <CostMark cost=Signal::stored(check.cost)/> })}
-                <SlimBar bar=Signal::stored(bar)/>
+                <VerdictMark verdict=check.verdict/>
+                {tells_cost(check.verdict).then(|| view! { <CostMark cost=check.cost/> })}
+                {slim_bar(bar)}
             }
+            .into_any()
         })
     };
     view! { <div class="ride" aria-hidden="true" hidden=move || !away.get()>{shown}</div> }

@@ -18,6 +18,7 @@ use super::{Ask, Requirement, longest};
 use crate::check::{Check, Cost, Verdict};
 use crate::controller::Controller;
 use crate::entry::Entry;
+use crate::order::first_of;
 use crate::quantity::{Amps, Percent, Watts};
 
 /// How many layouts of one number of modules are carried along while controllers are joined.
@@ -160,13 +161,12 @@ pub fn layouts(ask: &Ask, modules: u32, controllers: &[Controller]) -> Layouts {
     let kind_of: Vec<usize> =
         controllers.iter().map(|one| kinds.iter().position(|kind| controllers[*kind] == *one).unwrap_or(0)).collect();
     let joined = join(&judged, &kind_of, modules as usize);
-    let mut ranked: Vec<(usize, Partial)> = joined
+    let all = joined
         .into_iter()
         .enumerate()
         .skip(1)
-        .flat_map(|(used, partials)| partials.into_iter().map(move |partial| (used, partial)))
-        .collect();
-    ranked.sort_by(|(used_a, a), (used_b, b)| {
+        .flat_map(|(used, partials)| partials.into_iter().map(move |partial| (used, partial)));
+    let ranked = first_of(all, RANKED, |(used_a, a), (used_b, b)| {
         a.loss
             .cmp(&b.loss)
             .then(b.kept.total_cmp(&a.kept))
@@ -176,9 +176,8 @@ pub fn layouts(ask: &Ask, modules: u32, controllers: &[Controller]) -> Layouts {
             // Fewer controllers in use, where all else is equal.
             .then(in_use(a).cmp(&in_use(b)))
     });
-    ranked.truncate(RANKED);
-    rejected.sort_by_key(|one: &Rejected| (one.group.controller, one.group.series, one.group.strings));
-    rejected.truncate(REJECTED);
+    let place = |one: &Rejected| (one.group.controller, one.group.series, one.group.strings);
+    let rejected = first_of(rejected.into_iter(), REJECTED, |a, b| place(a).cmp(&place(b)));
     Layouts {
         ranked: ranked
             .into_iter()

@@ -2,6 +2,7 @@
 
 use super::{Ask, clip, cold, current, fuse, hot};
 use crate::check::{Basis, Check, Cost, Outcome, Sense, Silent, Step, Steps, Written, judge};
+use crate::order::sort_short;
 use crate::quantity::{Percent, Quantity};
 use crate::show;
 
@@ -129,7 +130,7 @@ impl Requirement {
 #[must_use]
 pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
     let mut checks: Vec<_> = Requirement::ALL.iter().filter_map(|requirement| requirement.check(ask)).collect();
-    checks.sort_by(|a, b| {
+    sort_short(&mut checks, |a, b| {
         let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
         group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
     });

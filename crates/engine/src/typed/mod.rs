@@ -15,6 +15,7 @@
 //!
 //! Nothing is guessed: what has two meanings is asked about, and what is not understood is kept as typed.
 
+mod decimal;
 mod gauge;
 pub mod list;
 mod numeral;
@@ -22,6 +23,7 @@ mod refusal;
 mod suffix;
 mod trade;
 
+pub use decimal::nearest;
 pub use refusal::Refusal;
 pub use trade::trade_size;
 

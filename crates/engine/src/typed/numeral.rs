@@ -1,5 +1,6 @@
 //! Numbers as people write them: signs, decimal marks, groups of digits, powers of ten, fractions.
 
+use super::decimal::nearest;
 use super::refusal::Refusal;
 
 /// A number at the head of a text.
@@ -194,9 +195,11 @@ fn vulgar(text: &str) -> Option<(f64, &str)> {
 }
 
 fn parse(decimal: &str) -> Result<f64, Refusal> {
-    match decimal.parse::<f64>() {
-        Ok(number) if number.is_finite() => Ok(number),
-        Ok(_) => Err(Refusal::TooLarge),
-        Err(_) => Err(Refusal::NotANumber { text: decimal.to_owned() }),
+    match nearest(decimal) {
+        Some(number) if number.is_finite() => Ok(number),
+        // Its digits were looked at before; what is left to go wrong is a power of ten that nobody means.
+        Some(_) => Err(Refusal::TooLarge),
+        None if decimal.contains('e') => Err(Refusal::TooLarge),
+        None => Err(Refusal::NotANumber { text: decimal.to_owned() }),
     }
 }

@@ -80,8 +80,7 @@ fn tolerates(unit: Unit, typed: &str) -> bool {
     if thousandth && typed.starts_with('M') && !spelled_out || typed == "k" {
         return false;
     }
-    let alike =
-        |spelling: &str| letters(spelling).flat_map(char::to_lowercase).eq(typed.chars().flat_map(char::to_lowercase));
+    let alike = |spelling: &str| letters(spelling).map(small).eq(typed.chars().map(small));
     alike(unit.symbol()) || unit.also_typed().iter().any(|also| alike(also))
 }
 
@@ -129,4 +128,13 @@ pub(super) fn feet_then_inches(feet: Numeral, rest: &str) -> Result<Option<f64>,
     }
     let size = feet.number.abs() + inches.number / 12.0;
     Ok(Some(if feet.negative { -size } else { size }))
+}
+
+/// The small letter of a Latin capital. Of other letters only ohm and kelvin have a sign of their own that units use.
+fn small(letter: char) -> char {
+    match letter {
+        '\u{212A}' => 'k',
+        '\u{2126}' | 'ω' => 'Ω',
+        other => other.to_ascii_lowercase(),
+    }
 }
