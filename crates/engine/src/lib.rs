@@ -8,6 +8,7 @@
 pub mod assumed;
 pub mod cell_temperature;
 pub mod check;
+pub mod chemistry;
 pub mod choice;
 pub mod controller;
 pub mod diode;
