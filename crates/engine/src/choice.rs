@@ -78,6 +78,8 @@ keys!(Stands: "dwelling" => Self::Dwelling, "building" => Self::Building, "groun
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::bank::YesNo;
+    use crate::chemistry::Chemistry;
 
     fn all_known<C: Choice>(field: Field) {
         let Takes::Choice(list) = field.takes() else { panic!("{field:?} is no choice") };
@@ -93,5 +95,9 @@ mod tests {
         all_known::<LimitHoldsFactor>(Field::LimitHoldsFactor);
         all_known::<CodeFamily>(Field::CodeFamily);
         all_known::<Stands>(Field::StandsOn);
+        all_known::<Chemistry>(Field::Chemistry);
+        for field in [Field::OwnProtection, Field::PostsCovered, Field::WetRoom, Field::SleepingRoom] {
+            all_known::<YesNo>(field);
+        }
     }
 }

@@ -6,6 +6,7 @@
 #![warn(missing_docs)]
 
 pub mod assumed;
+pub mod bank;
 pub mod cell_temperature;
 pub mod check;
 pub mod chemistry;

@@ -27,7 +27,7 @@ const ACID: &[(f64, f64)] = &[
 const GRAVITY: &[(f64, f64)] = &[(0.0, 1.120), (25.0, 1.155), (50.0, 1.190), (75.0, 1.225), (100.0, 1.265)];
 
 /// Where the freezing figures are from.
-pub(crate) const SOURCE: Clause = source::ACID_FREEZING.at("freezing point by specific gravity");
+const SOURCE: Clause = source::ACID_FREEZING.at("freezing point by specific gravity");
 
 /// Specific gravity of a vented lead cell's acid at 26.7 °C, by its charge: a plain number, 1 for water.
 #[must_use]

@@ -39,7 +39,7 @@ const IEEE_485_FACTORS: &[(Celsius, f64)] = &[
 
 /// A typical discharge of lead at the rated rate: chosen, from the general shape of makers' curves.
 const ON_LOAD: &[(Percent, Volts)] =
-    &[at(0.0, 1.80), at(10.0, 1.88), at(20.0, 1.93), at(50.0, 2.00), at(90.0, 2.08), at(100.0, 2.11)];
+    &[at(0.0, 1.80), at(10.0, 1.88), at(20.0, 1.93), at(50.0, 2.00), at(90.0, 2.07), at(100.0, 2.10)];
 
 const END: Figure<Volts> =
     volts(1.75, 1.90, 1.80, "10.8 V of a 12 V battery: below it there is little charge and much sulphate");

@@ -26,7 +26,11 @@ pub use gas::{
 pub use odd::{OddCell, OddCells, odd_cells};
 pub use rate::{hours_at, share_at};
 pub use rest::{ChargeReading, charge_at_rest, rested, rested_at_reference};
-pub use table::Figures;
+pub use table::{Figures, Freezing, Temperatures};
+
+pub(crate) use freezing::freezing_source;
+
+use crate::choice::Choice;
 
 /// Temperature at which charge voltages and capacities are stated.
 pub const RATED_AT: crate::quantity::Celsius = crate::quantity::Celsius::new(25.0);
@@ -91,12 +95,6 @@ impl Chemistry {
         }
     }
 
-    /// The chemistry that is kept under `key`.
-    #[must_use]
-    pub fn of_key(key: &str) -> Option<Self> {
-        Self::ALL.iter().copied().find(|one| one.key() == key)
-    }
-
     /// Its name in the middle of a sentence.
     #[must_use]
     pub const fn word(self) -> &'static str {
@@ -135,6 +133,12 @@ impl Chemistry {
             Self::Nmc => &lithium::NMC,
             Self::SodiumIon => &lithium::SODIUM,
         }
+    }
+}
+
+impl Choice for Chemistry {
+    fn of_key(key: &str) -> Option<Self> {
+        Self::ALL.iter().copied().find(|one| one.key() == key)
     }
 }
 

@@ -2,7 +2,7 @@
 
 use super::figure::{Figure, Span};
 use super::gas::Gas;
-use crate::quantity::{Celsius, Hours, Kelvins, Ohms, Percent, Volts, VoltsPerKelvin};
+use crate::quantity::{Celsius, Hours, Ohms, Percent, Volts, VoltsPerKelvin};
 use crate::source::{self, Clause};
 
 /// The figures of a chemistry, for one cell at 25 °C unless said otherwise.
@@ -185,10 +185,4 @@ pub(super) const fn at(charge: f64, volts: f64) -> (Percent, Volts) {
 /// A point of a curve of size factors.
 pub(super) const fn degrees(celsius: f64, factor: f64) -> (Celsius, f64) {
     (Celsius::new(celsius), factor)
-}
-
-/// How far a temperature stands above the one that voltages are stated at.
-#[must_use]
-pub(crate) fn above_rated(at: Celsius) -> Kelvins {
-    at - super::RATED_AT
 }
