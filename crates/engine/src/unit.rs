@@ -224,6 +224,10 @@ impl Unit {
             Self::MilliampPerKelvin | Self::AmpPerKelvin => Self::AmpPerKelvin,
             Self::Percent => Self::Percent,
             Self::WattPerSquareMetre => Self::WattPerSquareMetre,
+            Self::Litre => Self::Litre,
+            Self::CubicMetrePerHour => Self::CubicMetrePerHour,
+            Self::SquareCentimetre | Self::SquareInch => Self::SquareCentimetre,
+            Self::MilliampPerAmpHour => Self::MilliampPerAmpHour,
             Self::One => Self::One,
         }
     }

@@ -1,6 +1,6 @@
 //! Cells: charge and voltage, frost, cold, rate, gas and water, and the ranges of eight chemistries.
 
-use engine::bank::{Ask, Requirement, air_and_water, energy, layouts};
+use engine::bank::{Advice, Ask, Requirement, advice, air_and_water, energy, layouts};
 use engine::chemistry::{
     Chemistry, Family, Figure, Freezing, Gas, HYDROGEN_PER_AMP_HOUR, Span, WATER_GRAMS_PER_AMP_HOUR, acid_freezing,
     acid_gravity, air_flow, charge_at_rest, freezing_point, gas_current, hours_at, keep_clear, natural_opening, rested,
@@ -418,6 +418,6 @@ mod common_practice {
         let twelve = found.with_series(12).unwrap();
         assert_eq!(twelve.refused_by().unwrap().id, Requirement::WindowHigh);
         assert_eq!(found.best().unwrap().series, 9);
-        assert!(engine::bank::advice(&ask)[0].to_string().contains("12 cells are not 12 V"));
+        assert!(matches!(advice(&ask)[0], Advice::CellsAreNotVolts { .. }));
     }
 }

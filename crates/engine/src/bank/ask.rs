@@ -8,7 +8,7 @@ use crate::entry::Entry;
 use crate::field::Field;
 use crate::pad::Pad;
 use crate::quantity::{
-    AmpHours, Amps, Celsius, Count, Hours, Percent, Quantity, SquareCentimetres, Volts, VoltsPerKelvin, WattHours,
+    AmpHours, Amps, Celsius, Count, Percent, Quantity, Seconds, SquareCentimetres, Volts, VoltsPerKelvin, WattHours,
     Watts,
 };
 
@@ -32,8 +32,6 @@ impl Choice for YesNo {
 }
 
 /// A bank of equal cells, blocks or packs, with what stands on its bus.
-///
-/// Times are in hours, as the field of a time reads them.
 #[derive(Clone, Copy, Debug, Default, PartialEq)]
 pub struct Ask {
     /// What the cells are made of.
@@ -87,7 +85,7 @@ pub struct Ask {
     /// Greatest power drawn while something starts. Nothing starts where nothing was entered.
     pub starting_load: Entry<Watts>,
     /// How long that start lasts.
-    pub starting_time: Entry<Hours>,
+    pub starting_time: Entry<Seconds>,
     /// Whether each block is a pack that guards itself.
     pub own_protection: Entry<YesNo>,
     /// Greatest charge current that one pack lets pass.
@@ -97,7 +95,7 @@ pub struct Ask {
     /// Greatest short current that one pack lets pass.
     pub pack_peak: Entry<Amps>,
     /// How long one pack lets it pass.
-    pub pack_peak_time: Entry<Hours>,
+    pub pack_peak_time: Entry<Seconds>,
     /// Cell temperature below which a pack refuses charge. It does not where nothing was entered.
     pub pack_cold_lock: Entry<Celsius>,
     /// Whether live posts are covered.

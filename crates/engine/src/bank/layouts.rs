@@ -11,7 +11,7 @@ use super::ask::positive;
 use super::requirement::worst_first;
 use super::{Ask, Energy, Requirement, Window, energy, window};
 use crate::check::{Basis, Check, Cost, Sense, Verdict};
-use crate::quantity::{Amps, Hours};
+use crate::quantity::{Amps, Hours, Quantity};
 use crate::show;
 
 /// A way to make a bank.
@@ -129,9 +129,10 @@ pub(super) fn said(check: &Check<Requirement>) -> String {
         Sense::AtMost => "at most",
         Sense::AtLeast => "at least",
     };
-    let by = show::number(margin.get().abs(), 1);
-    let by = if margin.get() < 0.0 { format!("{by} % past it") } else { format!("{by} % in hand") };
-    format!("{}: {}, {side} {}, {by}", check.id.name(), show::computed(value), show::given(limit.amount))
+    let by = show::room(margin.abs().amount());
+    let by = if margin.get() < 0.0 { format!("{by} past it") } else { format!("{by} in hand") };
+    let (value, limit) = show::apart(value, limit.amount);
+    format!("{}: {value}, {side} {limit}, {by}", check.id.name())
 }
 
 /// What the cells at hand can become.
