@@ -15,17 +15,27 @@ const USUAL_FOR_12_V: (f64, f64) = (10.5, 16.0);
 
 /// Highest voltage that the inverter tolerates: entered, or usual for the class of the bus.
 fn inverter_high(ask: &Ask, basis: &mut Basis) -> Option<Volts> {
-    usual(ask, Field::InverterHigh, ask.inverter_high, USUAL_FOR_12_V.1, basis)
+    usual(ask, Field::InverterHigh, ask.inverter_high, basis)
 }
 
 /// Lowest voltage at which the inverter runs: entered, or usual for the class of the bus.
 fn inverter_low(ask: &Ask, basis: &mut Basis) -> Option<Volts> {
-    usual(ask, Field::InverterLow, ask.inverter_low, USUAL_FOR_12_V.0, basis)
+    usual(ask, Field::InverterLow, ask.inverter_low, basis)
 }
 
-fn usual(ask: &Ask, field: Field, entry: Entry<Volts>, for_12: f64, basis: &mut Basis) -> Option<Volts> {
-    match (positive(entry), positive(ask.bus_voltage)) {
-        (Entry::Blank, Entry::Typed(bus)) => basis.assume(field, Entry::Blank, bus * (for_12 / 12.0)),
+/// What an inverter of the bus's class usually runs between, at the end that `field` asks for.
+pub(super) fn usual_for(ask: &Ask, field: Field) -> Option<Volts> {
+    let for_12 = match field {
+        Field::InverterLow => USUAL_FOR_12_V.0,
+        Field::InverterHigh => USUAL_FOR_12_V.1,
+        _ => return None,
+    };
+    Some(positive(ask.bus_voltage).typed()? * (for_12 / 12.0))
+}
+
+fn usual(ask: &Ask, field: Field, entry: Entry<Volts>, basis: &mut Basis) -> Option<Volts> {
+    match (positive(entry), usual_for(ask, field)) {
+        (Entry::Blank, Some(usual)) => basis.assume(field, Entry::Blank, usual),
         (entry, _) => basis.need(field, entry),
     }
 }

@@ -6,6 +6,7 @@
 mod advice;
 mod air;
 mod ask;
+mod assumption;
 mod block;
 mod cold;
 mod devices;
@@ -23,6 +24,7 @@ mod worked;
 pub use advice::{Advice, advice};
 pub use air::{AirAndWater, air_and_water};
 pub use ask::{Ask, YesNo};
+pub use assumption::assumption;
 pub use block::cells_in_block;
 pub use energy::{Energy, energy, energy_working};
 pub use layouts::{Layout, Layouts, layouts, settled};
