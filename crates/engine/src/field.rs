@@ -273,6 +273,10 @@ fields! {
     ]);
     /// Lowest charge that the bank reaches.
     LowestCharge, "Lowest charge", number(Unit::Percent, 0.0, 100.0);
+    /// Resistance of one tie between neighbouring strings, lugs counted.
+    TieResistance, "Tie resistance", number(Unit::Milliohm, 0.0, 1.0);
+    /// Greatest difference of rest voltage between strings or packs that are to be joined.
+    VoltsApart, "Volts apart", number(Unit::Volt, 0.0, 1000.0);
     /// Energy drawn from the bank on a usual day.
     UsedADay, "Used a day", number(Unit::WattHour, 0.0, 10_000_000.0);
 }

@@ -188,9 +188,9 @@ units! {
     /// Cubic metre for each hour.
     CubicMetrePerHour: AirFlow, "m³/h", ["m3/h"], 1.0;
     /// Square centimetre.
-    SquareCentimetre: Opening, "cm²", ["cm2", "cm^2", "sq cm"], 1.0;
+    SquareCentimetre: Opening, "cm²", ["cm2", "sqcm"], 1.0;
     /// Square inch, exactly 6.4516 cm².
-    SquareInch: Opening, "in²", ["in2", "in^2", "sq in"], 6.4516;
+    SquareInch: Opening, "in²", ["in2", "sqin"], 6.4516;
     /// Thousandth of an ampere for each ampere-hour.
     MilliampPerAmpHour: GasCurrent, "mA/Ah", ["ma/ah"], 1.0;
 }

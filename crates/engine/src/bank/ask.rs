@@ -8,9 +8,10 @@ use crate::entry::Entry;
 use crate::field::Field;
 use crate::pad::Pad;
 use crate::quantity::{
-    AmpHours, Amps, Celsius, Count, Percent, Quantity, Seconds, SquareCentimetres, Volts, VoltsPerKelvin, WattHours,
-    Watts,
+    AmpHours, Amps, Celsius, Count, Ohms, Percent, Quantity, Seconds, SquareCentimetres, Volts, VoltsPerKelvin,
+    WattHours, Watts,
 };
+use crate::sharing::Arrangement;
 
 /// An answer to a plain question.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -108,6 +109,12 @@ pub struct Ask {
     pub sleeping_room: Entry<YesNo>,
     /// Lowest charge that the bank reaches.
     pub lowest_charge: Entry<Percent>,
+    /// Where the bank's two leads leave a bank of several strings.
+    pub take_off: Entry<Arrangement>,
+    /// Resistance of one tie between neighbouring strings.
+    pub tie: Entry<Ohms>,
+    /// Greatest difference of rest voltage between strings that are to be joined.
+    pub volts_apart: Entry<Volts>,
     /// Energy drawn on a usual day.
     pub used_a_day: Entry<WattHours>,
 }
@@ -154,6 +161,9 @@ impl Ask {
             air_opening: pad.entry(Field::AirOpening),
             sleeping_room: pad.choice(Field::SleepingRoom),
             lowest_charge: pad.entry(Field::LowestCharge),
+            take_off: pad.choice(Field::TakeOff),
+            tie: pad.entry(Field::TieResistance),
+            volts_apart: pad.entry(Field::VoltsApart),
             used_a_day: pad.entry(Field::UsedADay),
         }
     }

@@ -9,11 +9,11 @@ use crate::quantity::{Percent, Quantity};
 use crate::source::{self, Clause};
 
 fn figure<Q: Quantity>(figure: Figure<Q>) -> Assumption {
-    Assumption { amount: Some(figure.chosen.amount()), why: figure.why, source: figure.source }
+    Assumption { amount: Some(figure.chosen.amount()), choice: None, why: figure.why, source: figure.source }
 }
 
-fn chosen(why: &'static str) -> Assumption {
-    Assumption { amount: None, why, source: CHOSEN }
+fn chosen(choice: Option<&'static str>, why: &'static str) -> Assumption {
+    Assumption { amount: None, choice, why, source: CHOSEN }
 }
 
 const CHOSEN: Clause = source::CHOSEN.at("");
@@ -27,6 +27,7 @@ pub fn assumption(ask: &Ask, field: Field) -> Option<Assumption> {
     Some(match field {
         Field::ColdestInTheRoom => Assumption {
             amount: Some(RATED_AT.amount()),
+            choice: None,
             why: "as rated: neither compensation nor cold is counted until the room's coldest is entered",
             source: CHOSEN,
         },
@@ -40,27 +41,31 @@ pub fn assumption(ask: &Ask, field: Field) -> Option<Assumption> {
         Field::DepthUsed => figure(figures()?.depth_used),
         Field::LowestCharge => Assumption {
             amount: Some(ask.lowest_charge(figures()?, basis)?.amount()),
+            choice: None,
             why: "what the depth used leaves; a dull fortnight may take more",
             source: CHOSEN,
         },
         Field::InverterLow | Field::InverterHigh => Assumption {
             amount: Some(super::devices::usual_for(ask, field)?.amount()),
+            choice: None,
             why: "usual for the class of the bus: read the nameplate",
             source: source::COMMON_PRACTICE.at("10.5 to 16 V for each 12 V of the bus"),
         },
         Field::CellsInABlock => Assumption {
             amount: Some(ask.block_cells(basis)?.amount()),
+            choice: None,
             why: "by the block's voltage, which is the name of a class: confirm on its nameplate",
             source: CHOSEN,
         },
-        Field::GreatestLoad => chosen("no faster than the capacity is rated for"),
-        Field::PostsCovered => chosen("bare posts within reach"),
-        Field::WetRoom => chosen("dry"),
-        Field::SleepingRoom => chosen("nobody sleeps there: confirm"),
+        Field::GreatestLoad => chosen(None, "no faster than the capacity is rated for"),
+        Field::PostsCovered => chosen(Some("no"), "bare posts within reach"),
+        Field::WetRoom => chosen(Some("no"), "dry"),
+        Field::SleepingRoom => chosen(Some("no"), "nobody sleeps there: confirm"),
         Field::ChargeCurrent => {
             let capacity = super::rates::bank_capacity(&settled(ask), basis, &mut crate::check::Silent)?;
             Assumption {
                 amount: Some((capacity / figures()?.greatest_charge.chosen).amount()),
+                choice: None,
                 why: "the greatest that the cells take",
                 source: figures()?.greatest_charge.source,
             }
@@ -71,10 +76,20 @@ pub fn assumption(ask: &Ask, field: Field) -> Option<Assumption> {
             let volts = window(&settled(ask))?.nominal;
             Assumption {
                 amount: Some((volts * full.capacity * depth.share()).amount()),
+                choice: None,
                 why: "the whole depth used, every day: the thirsty end",
                 source: CHOSEN,
             }
         }
+        Field::TakeOff => {
+            chosen(Some("same-end"), "both leads at one end, as most banks are first wired: the worst of the three")
+        }
+        Field::TieResistance => Assumption {
+            amount: Some(super::parallel::TIE.amount()),
+            choice: None,
+            why: "half a metre of 1/0 AWG and two lugs",
+            source: CHOSEN,
+        },
         field => return assumed::of(field),
     })
 }

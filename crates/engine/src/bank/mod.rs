@@ -12,6 +12,7 @@ mod cold;
 mod devices;
 mod energy;
 mod layouts;
+mod parallel;
 mod protection;
 mod rates;
 mod requirement;

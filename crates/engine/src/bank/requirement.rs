@@ -1,7 +1,7 @@
 //! The requirements of a bank, each by its id, judged and worked.
 
 use super::protection::{self, Packs};
-use super::{Ask, air, cold, devices, rates, settled, touch};
+use super::{Ask, air, cold, devices, parallel, rates, settled, touch};
 use crate::check::{Basis, Check, Cost, Limit, Outcome, Sense, Silent, Step, Steps, Written, judge};
 use crate::quantity::{Amount, Percent, Quantity};
 use crate::show;
@@ -42,6 +42,10 @@ pub enum Requirement {
     ChargeRateLeast,
     /// Greatest steady draw against what the chemistry gives.
     DischargeRate,
+    /// How strings side by side share.
+    Sharing,
+    /// The rush when strings are joined.
+    Join,
     /// Highest voltage against what may be touched.
     Touch,
     /// Openings for air.
@@ -58,7 +62,7 @@ pub enum Requirement {
 
 impl Requirement {
     /// Every requirement, in the order of the page where nothing is worse than another.
-    pub const ALL: [Self; 22] = [
+    pub const ALL: [Self; 24] = [
         Self::WindowHigh,
         Self::WindowHighAbsorb,
         Self::WindowHighLoads,
@@ -66,6 +70,7 @@ impl Requirement {
         Self::ChargeCap,
         Self::WindowLow,
         Self::Orphan,
+        Self::Join,
         Self::Touch,
         Self::Cold,
         Self::ColdCharge,
@@ -75,6 +80,7 @@ impl Requirement {
         Self::ChargeRate,
         Self::ChargeRateLeast,
         Self::DischargeRate,
+        Self::Sharing,
         Self::Hold,
         Self::HoldOneOut,
         Self::HoldStart,
@@ -103,6 +109,8 @@ impl Requirement {
             Self::ChargeRate => "bank-charge-rate",
             Self::ChargeRateLeast => "bank-charge-rate-least",
             Self::DischargeRate => "bank-discharge-rate",
+            Self::Sharing => "bank-sharing",
+            Self::Join => "bank-join",
             Self::Touch => "bank-touch",
             Self::Air => "bank-air",
             Self::AirSleeping => "bank-air-sleeping",
@@ -138,6 +146,8 @@ impl Requirement {
             Self::ChargeRate => "Charge current the cells take",
             Self::ChargeRateLeast => "Charge current the cells need",
             Self::DischargeRate => "Steady draw the cells give",
+            Self::Sharing => "Strings share alike",
+            Self::Join => "Joining the strings",
             Self::Touch => "Touching the posts",
             Self::Air => "Air for the room",
             Self::AirSleeping => "Nobody sleeps beside it",
@@ -161,6 +171,7 @@ impl Requirement {
             | Self::HoldCharge
             | Self::HoldChargeOneOut
             | Self::ChargeRate
+            | Self::Join
             | Self::Touch
             | Self::Air
             | Self::AirSleeping
@@ -174,6 +185,7 @@ impl Requirement {
             | Self::HoldStartOneOut
             | Self::ChargeRateLeast
             | Self::DischargeRate
+            | Self::Sharing
             | Self::ColdLock => Cost::Loss,
         }
     }
@@ -205,6 +217,8 @@ impl Requirement {
             Self::ChargeRate => rates::charge(ask, basis, steps),
             Self::ChargeRateLeast => rates::charge_least(ask, basis, steps),
             Self::DischargeRate => rates::discharge(ask, basis, steps),
+            Self::Sharing => parallel::sharing(ask, basis, steps),
+            Self::Join => parallel::join(ask, basis, steps),
             Self::Touch => touch::touch(ask, basis, steps),
             Self::Air => air::openings(ask, basis, steps),
             Self::AirSleeping => air::sleeping(ask, basis, steps),

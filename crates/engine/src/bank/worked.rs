@@ -372,3 +372,30 @@ fn forty_lithium_cells_on_a_48_volt_bus_make_strings_that_fit() {
     assert_eq!(found.with_series(4).unwrap().refused_by().unwrap().id, Requirement::WindowLow);
     assert_eq!(found.ranked.len() + found.rejected.len(), 40);
 }
+
+/// Three strings of sixteen LiFePO4 cells of 100 Ah, 0.2 mΩ each at the least: 3.2 mΩ a string; ties of 0.265 mΩ.
+/// Same end, by hand: with b = 2 · 0.265 = 0.53 mΩ a step, R = 3.2: strings 2 and 3 from the far end carry
+/// 1 and 1 + b/R = 1.165625; the first 1.165625 + (2.165625) · b/R = 1.524306; even share 1.229977.
+#[test]
+fn strings_taken_off_at_one_end_do_not_share_alike() {
+    let ask = Ask { strings: Entry::of(3.0), count: Entry::of(3.0), ..packs() };
+    let worst = check(&ask, Requirement::Sharing);
+    assert!((worst.value.unwrap().number - 100.0 * 1.524_306 / 1.229_977).abs() < 0.001, "{worst:?}");
+    assert_eq!(worst.verdict, Verdict::Breaks);
+    let across = Ask { take_off: Entry::Typed(crate::sharing::Arrangement::OppositeEnds), ..ask };
+    assert_eq!(check(&across, Requirement::Sharing).verdict, Verdict::Clears);
+    assert_eq!(Requirement::Sharing.check(&lead()), None);
+}
+
+#[test]
+fn packs_half_a_volt_apart_rush_into_each_other() {
+    // 0.5 V over 3.2 + 3.2 + 2 · 0.265 = 6.93 mΩ is 72.2 A, into a pack that takes 50 A.
+    let ask = Ask { volts_apart: Entry::of(0.5), ..packs() };
+    let rush = check(&ask, Requirement::Join);
+    assert!((rush.value.unwrap().number - 72.15).abs() < 0.01, "{rush:?}");
+    assert_eq!(rush.verdict, Verdict::Breaks);
+    let asks = check(&packs(), Requirement::Join);
+    assert!(asks.verdict == Verdict::Asks && asks.asks.contains(Field::VoltsApart));
+    let alike = Ask { volts_apart: Entry::of(0.0), ..packs() };
+    assert_eq!(check(&alike, Requirement::Join).verdict, Verdict::Close, "rests on the assumed tie");
+}

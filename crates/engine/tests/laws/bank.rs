@@ -10,6 +10,7 @@ use engine::check::Verdict;
 use engine::chemistry::{Chemistry, charge_at_rest, odd_cells};
 use engine::entry::Entry;
 use engine::quantity::{Celsius, Quantity, Volts};
+use engine::sharing::Arrangement;
 
 /// A field in any state, with a number of the field's own size, or now and then one that cannot be meant.
 fn any<Q: Quantity>(u: &mut Unstructured<'_>, least: f64, most: f64) -> Result<Entry<Q>> {
@@ -86,6 +87,15 @@ fn ask(u: &mut Unstructured<'_>) -> Result<Ask> {
         air_opening: any(u, 0.0, 1000.0)?,
         sleeping_room: said(u)?,
         lowest_charge: any(u, 0.0, 100.0)?,
+        take_off: *u.choose(&[
+            Entry::Blank,
+            Entry::Unread,
+            Entry::Typed(Arrangement::SameEnd),
+            Entry::Typed(Arrangement::OppositeEnds),
+            Entry::Typed(Arrangement::Middle),
+        ])?,
+        tie: any(u, 0.0, 0.002)?,
+        volts_apart: any(u, 0.0, 3.0)?,
         used_a_day: any(u, 0.0, 50_000.0)?,
     })
 }
