@@ -97,7 +97,11 @@ pub(super) fn sharing(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> O
         return Outcome::Asks;
     };
     let over = steps.step("Hardest string over the even share", Percent::from_share(over), || {
-        let put_in = format!("{count} strings, {count} × the same volts");
+        let put_in = format!(
+            "{count} strings of {}, ties of {}",
+            show::step(string.resistance.amount()),
+            show::step(tie.amount())
+        );
         ("Iₖ / (I / p), by nodal analysis", put_in, origin(Field::TakeOff, ask.take_off))
     });
     Outcome::Held { value: over.amount(), limit: Limit::at_most(MOST_OVER_EVEN) }
