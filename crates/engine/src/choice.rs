@@ -78,6 +78,9 @@ keys!(Stands: "dwelling" => Self::Dwelling, "building" => Self::Building, "groun
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::bank::YesNo;
+    use crate::chemistry::Chemistry;
+    use crate::sharing::Arrangement;
 
     fn all_known<C: Choice>(field: Field) {
         let Takes::Choice(list) = field.takes() else { panic!("{field:?} is no choice") };
@@ -93,5 +96,10 @@ mod tests {
         all_known::<LimitHoldsFactor>(Field::LimitHoldsFactor);
         all_known::<CodeFamily>(Field::CodeFamily);
         all_known::<Stands>(Field::StandsOn);
+        all_known::<Chemistry>(Field::Chemistry);
+        all_known::<Arrangement>(Field::TakeOff);
+        for field in [Field::OwnProtection, Field::PostsCovered, Field::WetRoom, Field::SleepingRoom] {
+            all_known::<YesNo>(field);
+        }
     }
 }

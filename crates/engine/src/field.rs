@@ -156,6 +156,129 @@ fields! {
         ("iec", "IEC"),
         ("north-america", "North America"),
     ]);
+    /// What the cells are made of.
+    Chemistry, "Chemistry", Takes::Choice(&[
+        ("vented-lead", "vented lead"),
+        ("agm", "AGM lead"),
+        ("gel", "gel lead"),
+        ("nickel-iron", "nickel-iron"),
+        ("nickel-cadmium", "nickel-cadmium, vented"),
+        ("lfp", "LiFePO4"),
+        ("nmc", "NMC lithium-ion"),
+        ("sodium-ion", "sodium-ion"),
+    ]);
+    /// Nominal voltage of one cell, or of one block where the cells come in blocks.
+    CellVoltage, "Cell voltage", number(Unit::Volt, 0.5, 400.0);
+    /// Rated capacity of one cell or block.
+    CellCapacity, "Cell capacity", number(Unit::AmpHour, 0.1, 20_000.0);
+    /// Cells, or blocks where the cells come in blocks.
+    NumberOfCells, "Number of cells", whole(1, 400);
+    /// Nominal voltage of the bus that the bank is to stand on.
+    BusVoltage, "Bus voltage", number(Unit::Volt, 6.0, 400.0);
+    /// Lowest temperature of the room that the bank stands in.
+    ColdestInTheRoom, "Coldest in the room", number(Unit::DegreeCelsius, -60.0, 40.0);
+    /// Highest temperature of the room that the bank stands in.
+    WarmestInTheRoom, "Warmest in the room", number(Unit::DegreeCelsius, -20.0, 70.0);
+    /// Rows of cells on the shelf.
+    Rows, "Rows", whole(1, 40);
+    /// Cells in each row of the shelf.
+    Columns, "Columns", whole(1, 100);
+    /// Length of a cell, along the line between its posts.
+    CellLength, "Cell length", number(Unit::Millimetre, 0.01, 2.0);
+    /// Width of a cell, across the line between its posts.
+    CellWidth, "Cell width", number(Unit::Millimetre, 0.01, 2.0);
+    /// Where on a cell its posts stand.
+    Posts, "Posts", Takes::Choice(&[
+        ("ends", "one at each end"),
+        ("same-side", "both along one long side"),
+        ("corners", "at opposite corners"),
+    ]);
+    /// Cross-section of the links between cells.
+    LinkSize, "Link size", number(Unit::SquareMillimetre, 0.5, 2000.0);
+    /// Where the bank's two leads leave the shelf.
+    TakeOff, "Take-off", Takes::Choice(&[
+        ("same-end", "same end"),
+        ("opposite-ends", "opposite ends"),
+        ("middle", "middle"),
+    ]);
+    /// Lowest voltage at which the inverter runs.
+    InverterLow, "Inverter low", number(Unit::Volt, 1.0, 1000.0);
+    /// Highest voltage that the inverter's battery side tolerates.
+    InverterHigh, "Inverter high", number(Unit::Volt, 1.0, 1000.0);
+    /// Highest voltage that the loads on the bus tolerate; blank where there are none.
+    LoadsHigh, "Loads high", number(Unit::Volt, 1.0, 1000.0);
+    /// Greatest current that all chargers together put into the bank.
+    ChargeCurrent, "Charge current", number(Unit::Amp, 0.1, 5000.0);
+    /// Greatest steady power drawn from the bank.
+    GreatestLoad, "Greatest load", number(Unit::Watt, 1.0, 500_000.0);
+    /// Lowest voltage at which the loads on the bus run; blank where there are none.
+    LoadsLow, "Loads low", number(Unit::Volt, 1.0, 1000.0);
+    /// Cells in series inside one block; blank where the block's voltage tells.
+    CellsInABlock, "Cells in a block", whole(1, 130);
+    /// Cells or blocks in series, where the layout is already chosen.
+    CellsInSeries, "Cells in series", whole(1, 400);
+    /// Strings of cells side by side, where the layout is already chosen.
+    StringsOfCells, "Strings of cells", whole(1, 400);
+    /// Voltage of one cell at which discharge ends.
+    CellEnd, "End of discharge, a cell", number(Unit::Volt, 0.5, 5.0);
+    /// Absorb voltage of one cell at 25 °C.
+    CellAbsorb, "Absorb, a cell", number(Unit::Volt, 0.5, 5.0);
+    /// Float voltage of one cell at 25 °C.
+    CellFloat, "Float, a cell", number(Unit::Volt, 0.5, 5.0);
+    /// Equalise or boost voltage of one cell at 25 °C.
+    CellEqualise, "Equalise, a cell", number(Unit::Volt, 0.5, 5.0);
+    /// Change of the charge voltage of one cell with temperature.
+    CellCompensation, "Compensation, a cell", number(Unit::MillivoltPerKelvin, -0.02, 0.02);
+    /// Highest voltage to which the chargers let compensation raise the bank.
+    ChargeCap, "Charge voltage cap", number(Unit::Volt, 1.0, 1000.0);
+    /// Part of the capacity that is drawn before the bank is charged again.
+    DepthUsed, "Depth used", number(Unit::Percent, 1.0, 100.0);
+    /// Highest voltage that a controller's output can reach when the bank is no longer there.
+    ControllerOutputLimit, "Controller output limit", number(Unit::Volt, 1.0, 2000.0);
+    /// Whether each block guards itself.
+    OwnProtection, "Own protection", Takes::Choice(&[
+        ("no", "bare cells or blocks"),
+        ("yes", "packs that guard themselves"),
+    ]);
+    /// Greatest charge current that one pack's protection lets pass.
+    PackChargeLimit, "Pack charge limit", number(Unit::Amp, 0.1, 5000.0);
+    /// Greatest steady current that one pack's protection lets pass.
+    PackDischargeLimit, "Pack discharge limit", number(Unit::Amp, 0.1, 5000.0);
+    /// Greatest short current that one pack's protection lets pass.
+    PackPeak, "Pack peak", number(Unit::Amp, 0.1, 10_000.0);
+    /// How long one pack's protection lets the peak pass.
+    PackPeakTime, "Pack peak time", number(Unit::Second, 0.0, 1.0);
+    /// Cell temperature below which a pack refuses charge; blank where it does not.
+    PackColdLock, "Pack cold lock", number(Unit::DegreeCelsius, -40.0, 30.0);
+    /// Greatest power drawn from the bank while something starts; blank where nothing does.
+    StartingLoad, "Starting load", number(Unit::Watt, 1.0, 500_000.0);
+    /// How long the greatest start lasts.
+    StartingTime, "Starting time", number(Unit::Second, 0.0, 1.0);
+    /// Whether bare live posts can be touched.
+    PostsCovered, "Posts covered", Takes::Choice(&[
+        ("no", "bare posts within reach"),
+        ("yes", "covered or behind a barrier"),
+    ]);
+    /// Whether the room or the hands in it may be wet.
+    WetRoom, "Wet room", Takes::Choice(&[
+        ("no", "dry"),
+        ("yes", "may be wet"),
+    ]);
+    /// Free area of the air inlet; the outlet is as large.
+    AirOpening, "Air opening", number(Unit::SquareCentimetre, 0.0, 100_000.0);
+    /// Whether people sleep in the room that the bank stands in.
+    SleepingRoom, "Sleeping room", Takes::Choice(&[
+        ("no", "nobody sleeps there"),
+        ("yes", "people sleep there"),
+    ]);
+    /// Lowest charge that the bank reaches.
+    LowestCharge, "Lowest charge", number(Unit::Percent, 0.0, 100.0);
+    /// Resistance of one tie between neighbouring strings, lugs counted.
+    TieResistance, "Tie resistance", number(Unit::Milliohm, 0.0, 1.0);
+    /// Greatest difference of rest voltage between strings or packs that are to be joined.
+    VoltsApart, "Volts apart", number(Unit::Volt, 0.0, 1000.0);
+    /// Energy drawn from the bank on a usual day.
+    UsedADay, "Used a day", number(Unit::WattHour, 0.0, 10_000_000.0);
 }
 
 /// What a range in percent for each kelvin is multiplied by where volts or amps for each kelvin are typed:

@@ -6,8 +6,10 @@
 #![warn(missing_docs)]
 
 pub mod assumed;
+pub mod bank;
 pub mod cell_temperature;
 pub mod check;
+pub mod chemistry;
 pub mod choice;
 pub mod controller;
 pub mod diode;

@@ -225,11 +225,20 @@ quantity! {
     WattsPerSquareMetre, WattPerSquareMetre;
     /// A number of equal things.
     Count, One;
+    /// Volume of a liquid.
+    Litres, Litre;
+    /// Flow of air.
+    CubicMetresPerHour, CubicMetrePerHour;
+    /// Area of an opening in a wall.
+    SquareCentimetres, SquareCentimetre;
+    /// Current that makes gas, for each unit of capacity.
+    MilliampsPerAmpHour, MilliampPerAmpHour;
 }
 
 extent! {
     Volts Amps Watts VoltAmps AmpHours WattHours Hours Seconds Ohms OhmsPerMetre Metres SquareMillimetres
     Kelvins VoltsPerKelvin AmpsPerKelvin PercentPerKelvin Percent WattsPerSquareMetre Count
+    Litres CubicMetresPerHour SquareCentimetres MilliampsPerAmpHour
 }
 
 relation! {

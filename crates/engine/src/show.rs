@@ -139,6 +139,9 @@ const fn digits(unit: Unit) -> Digits {
         Unit::DegreeCelsius | Unit::DegreeFahrenheit | Unit::KelvinAbsolute | Unit::Percent => From(&[], 1),
         Unit::PercentPerKelvin | Unit::CurrentPercentPerKelvin | Unit::RelativePercentPerKelvin => From(&[(1.0, 2)], 3),
         Unit::Awg | Unit::WattPerSquareMetre => From(&[], 0),
+        Unit::Litre | Unit::CubicMetrePerHour => From(&[(100.0, 0), (10.0, 1)], 2),
+        Unit::SquareCentimetre | Unit::SquareInch => From(&[(10.0, 0)], 1),
+        Unit::MilliampPerAmpHour => From(&[], 1),
         Unit::One => From(&[], 2),
     }
 }

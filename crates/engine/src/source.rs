@@ -67,6 +67,24 @@ works! {
     IEC_60364_4_41: "IEC 60364-4-41", "Low-voltage electrical installations: protection against electric shock", "2005+A1:2017";
     /// Dealing numbers to sets of nearly equal sums.
     KARMARKAR_KARP: "Karmarkar and Karp 1982", "The differencing method of set partitioning, University of California report", "1982";
+    /// Rested voltage and specific gravity of vented lead cells. Met in two technical pages and from memory.
+    BCI: "BCI service manual", "Battery service manual: open-circuit voltage and specific gravity by state of charge", "as reproduced in handbooks";
+    /// Freezing of sulphuric acid in water. Met in three vehicle manuals and from memory.
+    ACID_FREEZING: "lead battery handbooks", "Freezing point of battery acid by specific gravity", "army technical manuals";
+    /// Lead capacity against temperature. Factors from memory; the table's range was met.
+    IEEE_485: "IEEE 485", "Recommended practice for sizing lead-acid batteries for stationary applications", "2010";
+    /// Nickel-cadmium capacity against temperature. It points to the maker's curve; typical values from memory.
+    IEEE_1115: "IEEE 1115", "Recommended practice for sizing nickel-cadmium batteries for stationary applications", "2014";
+    /// Ranges of the cell chemistries. From memory; a maker's data sheet always wins.
+    BATTERY_HANDBOOK: "Handbook of Batteries", "Handbook of Batteries, with IEEE 450, 1188 and 1106 for upkeep", "4th ed.";
+    /// Charging limits of lithium cells.
+    IEC_62133_2: "IEC 62133-2", "Secondary cells and batteries: safety requirements for portable sealed lithium cells", "2017";
+    /// Ventilation and distance. Formula, opening and valve-regulated float met; other rows from memory.
+    IEC_62485_2: "IEC 62485-2", "Safety requirements for secondary batteries and battery installations: stationary batteries", "2010";
+    /// Capacity against the rate of discharge.
+    PEUKERT: "Peukert 1897", "On the dependence of the capacity of lead accumulators on the current of discharge", "1897";
+    /// Values that stand apart from the rest of a list.
+    NIST_HANDBOOK: "NIST/SEMATECH e-Handbook", "e-Handbook of Statistical Methods", "2012";
     /// A fact every practitioner knows, with no one publication behind it.
     COMMON_PRACTICE: "common practice", "what careful practitioners do", "";
     /// A value of ours, with its reason given where it stands.

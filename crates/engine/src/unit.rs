@@ -45,6 +45,14 @@ pub enum Dimension {
     Irradiance,
     /// A number of equal things.
     Number,
+    /// Volume of a liquid.
+    Volume,
+    /// Flow of air.
+    AirFlow,
+    /// Area of an opening in a wall.
+    Opening,
+    /// Current that makes gas, for each unit of capacity.
+    GasCurrent,
 }
 
 macro_rules! units {
@@ -175,6 +183,16 @@ units! {
     WattPerSquareMetre: Irradiance, "W/m²", [], 1.0;
     /// A plain number.
     One: Number, "", ["×", "x", "pcs"], 1.0;
+    /// Litre.
+    Litre: Volume, "L", ["l", "litre", "litres", "liter", "liters"], 1.0;
+    /// Cubic metre for each hour.
+    CubicMetrePerHour: AirFlow, "m³/h", ["m3/h"], 1.0;
+    /// Square centimetre.
+    SquareCentimetre: Opening, "cm²", ["cm2", "sqcm"], 1.0;
+    /// Square inch, exactly 6.4516 cm².
+    SquareInch: Opening, "in²", ["in2", "sqin"], 6.4516;
+    /// Thousandth of an ampere for each ampere-hour.
+    MilliampPerAmpHour: GasCurrent, "mA/Ah", ["ma/ah"], 1.0;
 }
 
 impl Unit {
@@ -206,6 +224,10 @@ impl Unit {
             Self::MilliampPerKelvin | Self::AmpPerKelvin => Self::AmpPerKelvin,
             Self::Percent => Self::Percent,
             Self::WattPerSquareMetre => Self::WattPerSquareMetre,
+            Self::Litre => Self::Litre,
+            Self::CubicMetrePerHour => Self::CubicMetrePerHour,
+            Self::SquareCentimetre | Self::SquareInch => Self::SquareCentimetre,
+            Self::MilliampPerAmpHour => Self::MilliampPerAmpHour,
             Self::One => Self::One,
         }
     }

@@ -7,7 +7,7 @@ use engine::quantity::{
     RELATIONS, Seconds, VoltAmps, Volts, VoltsPerKelvin, WattHours, Watts,
 };
 use engine::unit::{Unit, awg_area};
-use uom::si::area::{circular_mil, square_meter, square_millimeter};
+use uom::si::area::{circular_mil, square_centimeter, square_inch, square_meter, square_millimeter};
 use uom::si::electric_charge::ampere_hour;
 use uom::si::electric_current::{ampere, kiloampere, milliampere};
 use uom::si::electric_potential::{millivolt, volt};
@@ -15,7 +15,7 @@ use uom::si::electrical_resistance::{milliohm, ohm};
 use uom::si::energy::{kilowatt_hour, watt_hour};
 use uom::si::f64::{
     Area, ElectricCharge, ElectricCurrent, ElectricPotential, ElectricalResistance, Energy, Length, Power, Ratio,
-    TemperatureInterval, ThermodynamicTemperature, Time,
+    TemperatureInterval, ThermodynamicTemperature, Time, Volume, VolumeRate,
 };
 use uom::si::length::{centimeter, foot, inch, kilometer, meter, millimeter};
 use uom::si::power::{horsepower, kilowatt, watt};
@@ -23,6 +23,8 @@ use uom::si::ratio::{percent, ratio};
 use uom::si::temperature_interval::{degree_fahrenheit as interval_fahrenheit, kelvin};
 use uom::si::thermodynamic_temperature as point;
 use uom::si::time::{hour, minute, second};
+use uom::si::volume::liter;
+use uom::si::volume_rate::cubic_meter_per_hour;
 
 /// A few roundings of a double.
 fn same(ours: f64, theirs: f64, what: &str) {
@@ -159,6 +161,15 @@ fn by_the_other_library(unit: Unit, n: f64) -> f64 {
         Unit::AmpPerKelvin => per_kelvin(current(ElectricCurrent::new::<ampere>(n))),
         Unit::Percent => Ratio::new::<percent>(n).get::<percent>(),
         Unit::WattPerSquareMetre => (Power::new::<watt>(n) / Area::new::<square_meter>(1.0)).value,
+        Unit::Litre => Volume::new::<liter>(n).get::<liter>(),
+        Unit::CubicMetrePerHour => VolumeRate::new::<cubic_meter_per_hour>(n).get::<cubic_meter_per_hour>(),
+        Unit::SquareCentimetre => Area::new::<square_centimeter>(n).get::<square_centimeter>(),
+        Unit::SquareInch => Area::new::<square_inch>(n).get::<square_centimeter>(),
+        Unit::MilliampPerAmpHour => {
+            // A current by a charge is one over a time.
+            let by_charge = ElectricCurrent::new::<milliampere>(n) / ElectricCharge::new::<ampere_hour>(1.0);
+            (by_charge * ElectricCharge::new::<ampere_hour>(1.0)).get::<milliampere>()
+        }
         Unit::One => Ratio::new::<ratio>(n).get::<ratio>(),
     }
 }

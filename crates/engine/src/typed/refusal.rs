@@ -196,6 +196,10 @@ const fn kind(dimension: Dimension) -> &'static str {
         }
         Dimension::Part => "a percentage",
         Dimension::Irradiance => "an irradiance",
+        Dimension::Volume => "a volume",
+        Dimension::AirFlow => "a flow of air",
+        Dimension::Opening => "an area",
+        Dimension::GasCurrent => "a current by capacity",
         Dimension::Number => "a number of things",
     }
 }
@@ -220,6 +224,10 @@ const fn wanted(dimension: Dimension) -> &'static str {
         Dimension::RelativeCoefficient => "%/K",
         Dimension::Part => "percent",
         Dimension::Irradiance => "W/m²",
+        Dimension::Volume => "litres",
+        Dimension::AirFlow => "m³/h",
+        Dimension::Opening => "an area, as 150 cm²",
+        Dimension::GasCurrent => "mA/Ah",
         Dimension::Number => "a number alone",
     }
 }

@@ -28,7 +28,7 @@ pub(super) fn read(rest: &str, usual: Unit) -> Result<Unit, Refusal> {
     Err(Refusal::UnknownUnit { typed: rest.trim().to_owned(), usual })
 }
 
-/// One spelling for the many: no spaces, hyphens, points or raised dots; one sign for ohm, degree and square.
+/// One spelling for the many: no spaces, hyphens, points or raised dots; one sign for ohm, degree, square and cube.
 fn plain(text: &str) -> String {
     let joined = text.trim().replace(" per ", "/").replace("''", "\"");
     let mut plain = String::new();
@@ -40,6 +40,7 @@ fn plain(text: &str) -> String {
             '℉' => plain.push_str("°F"),
             'º' | '˚' => plain.push('°'),
             '²' => plain.push('2'),
+            '³' => plain.push('3'),
             '\u{2019}' | '\u{2032}' => plain.push('\''),
             '\u{201C}' | '\u{201D}' | '\u{2033}' => plain.push('"'),
             '-' | '.' | '·' | '⋅' | '^' => {}
@@ -64,7 +65,11 @@ fn named(units: impl Iterator<Item = Unit> + Clone, typed: &str) -> Option<Unit>
 
 /// A spelling of ours letter by letter, as [`plain`] would write it.
 fn letters(spelling: &str) -> impl Iterator<Item = char> + '_ {
-    spelling.chars().map(|letter| if letter == '²' { '2' } else { letter })
+    spelling.chars().map(|letter| match letter {
+        '²' => '2',
+        '³' => '3',
+        other => other,
+    })
 }
 
 /// Whether `typed` is this unit in some other case, where case does not matter.

@@ -1,0 +1,244 @@
+//! Every way to make a bank of so many cells, ranked, and why the others are refused.
+//!
+//! For each count in series, as many strings as the cells make; what is left over is said. A layout is judged by the
+//! same requirements as a bank that was typed in. Refused is what breaks a hazard, what the chargers' cap never fills,
+//! and what the cut-off lets nothing be drawn from. The rest are ranked: no loss first, then posts that may be touched, then usable energy, then fewest left
+//! over, then margin. Touch does not refuse: covers mend it, another count need not.
+
+use core::cmp::Ordering;
+
+use super::ask::positive;
+use super::requirement::worst_first;
+use super::{Ask, Energy, Requirement, Window, energy, window};
+use crate::check::{Basis, Check, Cost, Sense, Verdict};
+use crate::quantity::{Amps, Hours, Quantity};
+use crate::show;
+
+/// A way to make a bank.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Layout {
+    /// Cells or blocks in series.
+    pub series: u32,
+    /// Strings in parallel.
+    pub strings: u32,
+    /// Cells in series, those inside blocks counted.
+    pub cells: u32,
+    /// Cells or blocks left over.
+    pub left_over: u32,
+    /// The span of its voltages.
+    pub window: Window,
+    /// What it gives; none where the capacity is not known.
+    pub energy: Option<Energy>,
+    /// Its capacity over the charge current; none where either is not known.
+    pub charged_over: Option<Hours>,
+    /// Its capacity over the greatest steady draw; none where either is not known.
+    pub drawn_over: Option<Hours>,
+    /// What it was judged by, worst first.
+    pub checks: Vec<Check<Requirement>>,
+}
+
+/// The requirements that tell one layout from another.
+const TELL_APART: [Requirement; 15] = [
+    Requirement::WindowHigh,
+    Requirement::WindowHighAbsorb,
+    Requirement::WindowHighLoads,
+    Requirement::ChargeCap,
+    Requirement::WindowLow,
+    Requirement::Touch,
+    Requirement::ChargeRate,
+    Requirement::ChargeRateLeast,
+    Requirement::DischargeRate,
+    Requirement::Hold,
+    Requirement::HoldOneOut,
+    Requirement::HoldStart,
+    Requirement::HoldStartOneOut,
+    Requirement::HoldCharge,
+    Requirement::HoldChargeOneOut,
+];
+
+impl Layout {
+    /// The check of it with this id.
+    #[must_use]
+    pub fn check(&self, requirement: Requirement) -> Option<&Check<Requirement>> {
+        self.checks.iter().find(|check| check.id == requirement)
+    }
+
+    /// The worst of its checks that is not a missing input.
+    #[must_use]
+    pub fn worst(&self) -> Option<&Check<Requirement>> {
+        self.checks.iter().find(|check| check.verdict != Verdict::Asks)
+    }
+
+    /// The verdict of that check.
+    #[must_use]
+    pub fn verdict(&self) -> Verdict {
+        self.worst().map_or(Verdict::Asks, |check| check.verdict)
+    }
+
+    /// The check that refuses it; none where it stands in the ranking.
+    #[must_use]
+    pub fn refused_by(&self) -> Option<&Check<Requirement>> {
+        let hazard = self.broken().find(|check| check.cost == Cost::Hazard && check.id != Requirement::Touch);
+        let empty = self.energy.is_some_and(|energy| energy.usable.get() <= 0.0);
+        let starved = self.broken().find(|check| check.id == Requirement::ChargeCap);
+        hazard.or(starved).or_else(|| self.check(Requirement::WindowLow).filter(|_| empty))
+    }
+
+    fn broken(&self) -> impl Iterator<Item = &Check<Requirement>> {
+        self.checks.iter().filter(|check| check.verdict == Verdict::Breaks)
+    }
+
+    /// What stands against it, in words: the check, the value, the limit and by how much.
+    ///
+    /// ```text
+    /// Highest bank voltage against the inverter: 21.0 V, at most 16 V, 31.3 % past it
+    /// ```
+    #[must_use]
+    pub fn reason(&self) -> String {
+        let Some(check) = self.refused_by().or_else(|| self.worst()) else { return "Inputs are missing.".to_owned() };
+        said(check)
+    }
+
+    fn better(&self, other: &Self) -> Ordering {
+        let loss = |one: &Self| one.broken().any(|check| check.cost == Cost::Loss);
+        let bare = |one: &Self| one.check(Requirement::Touch).is_some_and(|check| check.verdict == Verdict::Breaks);
+        let gives = |one: &Self| {
+            // Without a capacity, the count of cells that can be used tells the same order.
+            one.energy.map_or(one.window.nominal.get() * f64::from(one.strings), |energy| energy.usable.get())
+        };
+        let margin = |one: &Self| {
+            one.check(Requirement::WindowHigh).and_then(|check| check.margin).map_or(0.0, |margin| margin.get())
+        };
+        loss(self)
+            .cmp(&loss(other))
+            .then(bare(self).cmp(&bare(other)))
+            // Less than a watt-hour apart is equal.
+            .then(gives(other).round().total_cmp(&gives(self).round()))
+            .then(self.left_over.cmp(&other.left_over))
+            .then(margin(other).total_cmp(&margin(self)))
+            .then(self.series.cmp(&other.series))
+    }
+}
+
+/// A check in words.
+pub(super) fn said(check: &Check<Requirement>) -> String {
+    let (Some(value), Some(limit), Some(margin)) = (check.value, check.limit, check.margin) else {
+        return format!("{}: an input is missing", check.id.name());
+    };
+    let side = match limit.sense {
+        Sense::AtMost => "at most",
+        Sense::AtLeast => "at least",
+    };
+    let by = show::room(margin.abs().amount());
+    let by = if margin.get() < 0.0 { format!("{by} past it") } else { format!("{by} in hand") };
+    let (value, limit) = show::apart(value, limit.amount);
+    format!("{}: {value}, {side} {limit}, {by}", check.id.name())
+}
+
+/// What the cells at hand can become.
+#[derive(Clone, Debug, Default, PartialEq)]
+pub struct Layouts {
+    /// Best first.
+    pub ranked: Vec<Layout>,
+    /// Refused, from the fewest in series on.
+    pub rejected: Vec<Layout>,
+}
+
+impl Layouts {
+    /// The best that stands.
+    #[must_use]
+    pub fn best(&self) -> Option<&Layout> {
+        self.ranked.first()
+    }
+
+    /// Whichever has `series` in series.
+    #[must_use]
+    pub fn with_series(&self, series: u32) -> Option<&Layout> {
+        self.ranked.iter().chain(&self.rejected).find(|layout| layout.series == series)
+    }
+}
+
+/// The most cells that are laid out: what the field takes.
+const MOST: f64 = 400.0;
+
+/// Every layout of the cells or blocks at hand. Counts that `ask` holds play no part. Empty where the count, the
+/// chemistry or what a block holds is missing.
+///
+/// # Example
+///
+/// Twelve nickel-iron cells on a bus whose inverter takes 10.5 to 16 V: nine fit, ten and more do not.
+///
+/// ```
+/// use engine::bank::{Ask, layouts};
+/// use engine::chemistry::Chemistry;
+/// use engine::entry::Entry;
+///
+/// let ask = Ask {
+///     chemistry: Entry::Typed(Chemistry::NickelIron),
+///     cell_voltage: Entry::of(1.2),
+///     cell_capacity: Entry::of(700.0),
+///     count: Entry::of(12.0),
+///     inverter_low: Entry::of(10.5),
+///     inverter_high: Entry::of(16.0),
+///     ..Ask::default()
+/// };
+/// assert_eq!(layouts(&ask).best().unwrap().series, 9);
+/// ```
+#[must_use]
+pub fn layouts(ask: &Ask) -> Layouts {
+    let Some(count) = positive(ask.count).typed() else { return Layouts::default() };
+    #[expect(clippy::cast_possible_truncation, clippy::cast_sign_loss, reason = "between 0 and 400")]
+    let count = count.get().floor().min(MOST) as u32;
+    let mut found = Layouts::default();
+    for series in 1..=count {
+        let strings = count / series;
+        let Some(layout) = laid_out(&ask.with_counts(series, strings), series, strings, count - series * strings)
+        else {
+            return Layouts::default();
+        };
+        if layout.refused_by().is_some() { found.rejected.push(layout) } else { found.ranked.push(layout) }
+    }
+    found.ranked.sort_by(Layout::better);
+    found
+}
+
+fn laid_out(ask: &Ask, series: u32, strings: u32, left_over: u32) -> Option<Layout> {
+    let window = window(ask)?;
+    let basis = &mut Basis::default();
+    #[expect(
+        clippy::cast_possible_truncation,
+        clippy::cast_sign_loss,
+        reason = "cells of a block are at most a thousand"
+    )]
+    let in_block = ask.block_cells(basis)?.get().min(1000.0) as u32;
+    let energy = energy(ask);
+    let over = |current: Option<Amps>| Some(energy?.capacity / current?);
+    let (_, figures) = ask.chemistry(basis)?;
+    let draw = positive(ask.greatest_load).typed().map(|load| load / (figures.nominal * f64::from(series * in_block)));
+    let mut checks: Vec<_> = TELL_APART.iter().filter_map(|requirement| requirement.check(ask)).collect();
+    worst_first(&mut checks);
+    Some(Layout {
+        series,
+        strings,
+        cells: series * in_block,
+        left_over,
+        window,
+        energy,
+        charged_over: over(positive(ask.charge_current).typed()),
+        drawn_over: over(draw),
+        checks,
+    })
+}
+
+/// The bank with its counts: those entered, or those of the best layout of the cells at hand. Where no layout stands,
+/// the counts stay as they were.
+#[must_use]
+pub fn settled(ask: &Ask) -> Ask {
+    if ask.series != crate::entry::Entry::Blank {
+        return *ask;
+    }
+    match layouts(ask).best() {
+        Some(best) => ask.with_counts(best.series, best.strings),
+        None => *ask,
+    }
+}

@@ -1,0 +1,155 @@
+//! Lithium and its kin: LiFePO4, NMC, sodium-ion. No compensation, no equalising, sealed.
+
+use super::figure::Span;
+use super::gas::Gas;
+use super::table::{
+    Figures, Freezing, HANDBOOK, at, capacity_over, charging, degrees, exponent, milliohms, percent, share, volts,
+};
+use crate::quantity::{Celsius, Hours, Percent, Volts};
+use crate::source;
+
+/// LiFePO4.
+pub(super) const LFP: Figures = Figures {
+    nominal: Volts::new(3.2),
+    rest: &[
+        at(0.0, 2.80),
+        at(5.0, 3.05),
+        at(10.0, 3.18),
+        at(20.0, 3.23),
+        at(30.0, 3.265),
+        at(40.0, 3.285),
+        at(60.0, 3.30),
+        at(70.0, 3.325),
+        at(90.0, 3.335),
+        at(99.0, 3.345),
+        at(100.0, 3.39),
+    ],
+    rest_band: Volts::new(0.015),
+    rest_source: source::COMMON_PRACTICE.at("rested LiFePO4 cells, from memory; flat from a third to full, and some 15 mV apart after charge and after discharge"),
+    on_load: &[
+        at(0.0, 2.80),
+        at(5.0, 3.00),
+        at(10.0, 3.10),
+        at(20.0, 3.17),
+        at(50.0, 3.25),
+        at(90.0, 3.30),
+        at(100.0, 3.35),
+    ],
+    end: volts(2.50, 3.10, 2.80, "a few percent are left, so that a sleeping site does not kill the cell"),
+    absorb: volts(3.40, 3.65, 3.50, "full in practice, and easy on the cell; 3.65 gains next to nothing"),
+    float: Some(volts(3.33, 3.40, 3.35, "optional: rests at full without being pushed")),
+    equalise: None,
+    equalise_is_usual: false,
+    never_above: Some(Volts::new(3.65)),
+    compensation: None,
+    depth_used: percent(70.0, 90.0, 80.0, "up to about 90 %, common practice; the rest is for a dull week"),
+    greatest_depth: Percent::new(100.0),
+    coulomb_efficiency: percent(98.0, 99.9, 99.0, "middle of the range"),
+    energy_efficiency: share(90.0, 98.0),
+    rated_over: Hours::new(5.0),
+    least_charge: None,
+    greatest_charge: capacity_over(1.0, 5.0, 2.0, "half the capacity: what most makers call standard"),
+    greatest_discharge: capacity_over(0.33, 2.0, 1.0, "the capacity in one hour"),
+    resistance_at_100_ah: milliohms(0.2, 1.0),
+    charging: charging(
+        0.0,
+        10.0,
+        5.0,
+        45.0,
+        "lithium plates out below 0 °C; 5 K are kept, as a shelf is never of one temperature",
+        source::IEC_62133_2.at("default range for charging 10 to 45 °C; makers allow from 0 °C"),
+    ),
+    discharging: Some(Span { least: Celsius::new(-20.0), greatest: Celsius::new(60.0) }),
+    peukert: exponent(1.0, 1.05, 1.02, "middle of the range"),
+    size_factor: &[
+        degrees(-20.0, 1.67),
+        degrees(-10.0, 1.33),
+        degrees(0.0, 1.18),
+        degrees(10.0, 1.08),
+        degrees(25.0, 1.0),
+    ],
+    size_factor_source: source::CHOSEN.at("typical makers' curves, from memory, cautious"),
+    gas: Gas::Nothing,
+    takes_water: false,
+    freezing: Freezing::Nothing,
+    self_discharge: percent(1.0, 5.0, 3.0, "with the pack's own electronics"),
+};
+
+/// NMC lithium-ion.
+pub(super) const NMC: Figures = Figures {
+    nominal: Volts::new(3.65),
+    rest: &[
+        at(0.0, 3.20),
+        at(10.0, 3.45),
+        at(20.0, 3.55),
+        at(30.0, 3.60),
+        at(40.0, 3.63),
+        at(50.0, 3.67),
+        at(60.0, 3.75),
+        at(70.0, 3.85),
+        at(80.0, 3.95),
+        at(90.0, 4.06),
+        at(100.0, 4.17),
+    ],
+    rest_band: Volts::new(0.030),
+    rest_source: source::COMMON_PRACTICE.at("rested NMC cells, from memory; builds differ"),
+    on_load: &[at(0.0, 3.00), at(10.0, 3.38), at(20.0, 3.48), at(50.0, 3.62), at(80.0, 3.88), at(100.0, 4.10)],
+    end: volts(2.50, 3.30, 3.00, "hardly any charge is left below"),
+    absorb: volts(4.05, 4.20, 4.10, "about nine tenths full: much longer life"),
+    float: Some(volts(3.90, 4.05, 3.95, "low: long float shortens its life")),
+    never_above: Some(Volts::new(4.20)),
+    depth_used: percent(60.0, 80.0, 70.0, "middle of the range"),
+    energy_efficiency: share(90.0, 97.0),
+    resistance_at_100_ah: milliohms(0.3, 1.5),
+    peukert: exponent(1.0, 1.08, 1.04, "middle of the range"),
+    size_factor: &[
+        degrees(-20.0, 1.43),
+        degrees(-10.0, 1.25),
+        degrees(0.0, 1.14),
+        degrees(10.0, 1.05),
+        degrees(25.0, 1.0),
+    ],
+    ..LFP
+};
+
+/// Sodium-ion, layered oxide. A young technology: the weakest figures of the table.
+pub(super) const SODIUM: Figures = Figures {
+    nominal: Volts::new(3.1),
+    rest: &[
+        at(0.0, 2.00),
+        at(10.0, 2.50),
+        at(20.0, 2.75),
+        at(30.0, 2.90),
+        at(40.0, 3.00),
+        at(50.0, 3.08),
+        at(60.0, 3.18),
+        at(70.0, 3.32),
+        at(80.0, 3.50),
+        at(90.0, 3.68),
+        at(100.0, 3.90),
+    ],
+    rest_band: Volts::new(0.080),
+    rest_source: source::COMMON_PRACTICE.at("layered-oxide sodium cells, from memory; read the maker's curve"),
+    on_load: &[at(0.0, 2.00), at(10.0, 2.42), at(20.0, 2.68), at(50.0, 3.02), at(80.0, 3.42), at(100.0, 3.85)],
+    end: volts(1.50, 2.20, 2.00, "little charge is left below, and inverters do not follow"),
+    absorb: volts(3.80, 4.10, 3.95, "middle of the range"),
+    float: None,
+    never_above: Some(Volts::new(4.10)),
+    coulomb_efficiency: percent(97.0, 99.8, 99.0, "as lithium, towards the upper end"),
+    depth_used: percent(70.0, 90.0, 80.0, "middle of the range"),
+    energy_efficiency: share(85.0, 95.0),
+    resistance_at_100_ah: milliohms(0.4, 2.0),
+    charging: charging(
+        -20.0,
+        0.0,
+        -10.0,
+        50.0,
+        "middle: some builds charge far below freezing, others do not",
+        HANDBOOK,
+    ),
+    discharging: Some(Span { least: Celsius::new(-40.0), greatest: Celsius::new(60.0) }),
+    peukert: exponent(1.0, 1.08, 1.03, "middle of the range"),
+    size_factor: &[degrees(-40.0, 1.67), degrees(-20.0, 1.25), degrees(0.0, 1.10), degrees(25.0, 1.0)],
+    self_discharge: percent(1.0, 6.0, 3.0, "middle of the range"),
+    ..LFP
+};
