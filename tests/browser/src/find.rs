@@ -17,7 +17,8 @@ const words = (text) => (text ?? "").replace(/\s+/g, " ").trim();
 const spoken = (node) => {
   if (node.nodeType === Node.TEXT_NODE) return node.data;
   if (node.nodeType !== Node.ELEMENT_NODE || node.getAttribute("aria-hidden") === "true") return "";
-  return node.getAttribute("aria-label") ?? [...node.childNodes].map(spoken).join("");
+  const said = node.getAttribute("aria-label") ?? [...node.childNodes].map(spoken).join("");
+  return getComputedStyle(node).display.startsWith("inline") ? said : ` ${said} `;
 };
 const name = (it) => {
   const by = it.getAttribute("aria-labelledby");

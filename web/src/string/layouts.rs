@@ -80,12 +80,12 @@ fn Laid(question: Memo<Question>) -> impl IntoView {
                             })
                     })
             }}
-            {when(move || found.with(|found| wants_change(found)), move || view! { <Fold
+            {when(move || found.with(wants_change), move || view! { <Fold
                     id="string/change"
                     title="What would use them all"
                     says=derived(|| "one change".to_owned())
                 >
-                    {move || settled.with(|question| change_list(question))}
+                    {move || settled.with(change_list)}
                 </Fold> }.into_any())}
         </section>
     }

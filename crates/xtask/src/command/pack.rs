@@ -20,14 +20,29 @@ pub fn run(arguments: &[String]) -> Result<()> {
     if !arguments.is_empty() {
         bail!("pack takes nothing after it");
     }
+    write()?;
+    weigh()
+}
+
+/// Builds the page and writes the one file beside it.
+///
+/// # Errors
+///
+/// When the page does not build, or something in it cannot be put into one file.
+pub fn write() -> Result<()> {
     page::build(&Shell::new()?)?;
     let dist = root::dist();
     let one_file = dist.join(one_file::NAME);
-    fs::write(&one_file, one_file::gather(&dist)?).with_context(|| format!("cannot write {}", one_file.display()))?;
-    weigh(&dist)
+    fs::write(&one_file, one_file::gather(&dist)?).with_context(|| format!("cannot write {}", one_file.display()))
 }
 
-fn weigh(dist: &Path) -> Result<()> {
+/// Prints what each file and the whole weigh, raw and pressed.
+///
+/// # Errors
+///
+/// When the page has grown past its limit.
+pub fn weigh() -> Result<()> {
+    let dist = &root::dist();
     println!("{:>10} {:>10}  file", "raw", "brotli");
     let mut total = [0; 2];
     for path in stamp::files(dist)?.iter().map(String::as_str).chain([stamp::WORKER]) {
