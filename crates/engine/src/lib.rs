@@ -5,10 +5,12 @@
 
 #![warn(missing_docs)]
 
+pub mod ampacity;
 pub mod assumed;
 pub mod cell_temperature;
 pub mod check;
 pub mod choice;
+pub mod conductor;
 pub mod controller;
 pub mod diode;
 pub mod entry;
@@ -20,6 +22,7 @@ pub mod module;
 pub mod network;
 pub mod pad;
 pub mod quantity;
+pub mod ratings;
 pub mod sharing;
 pub mod show;
 pub mod source;
