@@ -23,6 +23,7 @@ pub mod network;
 pub mod pad;
 pub mod quantity;
 pub mod ratings;
+pub mod run;
 pub mod sharing;
 pub mod show;
 pub mod source;
