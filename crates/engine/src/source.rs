@@ -77,8 +77,6 @@ works! {
     IEC_60287: "IEC 60287-1-1", "Electric cables: calculation of the current rating", "2006";
     /// Ampacity and voltage drop.
     IEC_60364_5_52: "IEC 60364-5-52", "Low-voltage electrical installations: wiring systems", "2009";
-    /// Protection against overcurrent.
-    IEC_60364_4_43: "IEC 60364-4-43", "Low-voltage electrical installations: protection against overcurrent", "2008";
     /// Cable for PV.
     EN_50618: "EN 50618", "Electric cables for photovoltaic systems", "2014";
     /// Small circuit-breakers.
