@@ -106,7 +106,9 @@ fn no_combination_of_entries_panics_or_gives_what_is_no_number() {
             }
         }
         for requirement in Requirement::ALL {
-            working(&ask, requirement);
+            for step in working(&ask, requirement) {
+                assert!(step.result.number.is_finite(), "{step:?} of {ask:?}");
+            }
         }
         if let Ok(answer) = size(&ask) {
             assert!(numbers(&answer).iter().all(|number| number.is_finite()), "{answer:?} of {ask:?}");
@@ -127,8 +129,7 @@ fn a_thicker_conductor_never_drops_more() {
         let mut ask = open_ask(u)?;
         let ladder: &[Size] = if u.arbitrary()? { &AMERICAN } else { &METRIC };
         let at = u.int_in_range(0..=ladder.len() - 2)?;
-        let parallel = entry(u, 10, engine::quantity::Count::new(f64::from(u.int_in_range(1..=8u32)?)))?;
-        ask.parallel = parallel;
+        ask.parallel = Entry::of(f64::from(u.int_in_range(1..=8u32)?));
         // Within its ampacity and past it alike, as long as the current does not melt it.
         ask.current = quantity(u, 10, 0.1, 60.0)?;
         let drop = |size: Size| {

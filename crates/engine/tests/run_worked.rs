@@ -255,7 +255,7 @@ fn a_polarised_breaker_stands_only_where_current_flows_one_way() {
     let ask =
         |kind| Ask { kind: Entry::Typed(kind), breaker_type: Entry::Typed(BreakerType::Polarised), ..Ask::default() };
     assert_eq!(check(&ask(Kind::BankMain), Requirement::Poles).verdict, Verdict::Breaks);
-    assert_eq!(check(&ask(Kind::DcBranch), Requirement::Poles).verdict, Verdict::Close);
+    assert_eq!(check(&ask(Kind::DcBranch), Requirement::Poles).verdict, Verdict::Clears);
     assert_eq!(Requirement::Poles.check(&ask(Kind::AcOutput)), None);
     let fused = Ask { breaker_type: Entry::Typed(BreakerType::Fuse), ..ask(Kind::BankMain) };
     assert_eq!(Requirement::Poles.check(&fused), None);
