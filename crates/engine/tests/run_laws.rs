@@ -4,12 +4,14 @@ use arbtest::arbitrary::{Result, Unstructured};
 use arbtest::arbtest;
 use engine::ampacity::{Insulation, Method, Terminals};
 use engine::check::{Cost, Verdict};
+use engine::choice::Choice;
 use engine::conductor::{AMERICAN, Conductor, METRIC, Size};
 use engine::entry::Entry;
 use engine::family::CodeFamily;
 use engine::field::Field;
 use engine::pad::Pad;
 use engine::quantity::{Amps, Metres, Quantity, SquareMillimetres};
+use engine::run::assumed;
 use engine::run::{Ask, BreakerType, Candidate, Kind, Requirement, Sizing, assess, reach, size, working};
 use engine::unit::Unit;
 
@@ -54,7 +56,7 @@ fn any_ask(u: &mut Unstructured<'_>, often: u8) -> Result<Ask> {
         terminals: pick(u, often, Terminals::ALL)?,
         allowed_drop: quantity(u, often, 0.01, 50.0)?,
         breaker: quantity(u, often, 0.5, 6000.0)?,
-        breaker_type: pick(u, often, &[BreakerType::Breaker, BreakerType::Polarised, BreakerType::Fuse])?,
+        breaker_type: pick(u, often, &BreakerType::ALL)?,
         interrupting: quantity(u, often, 100.0, 100_000.0)?,
         bank_resistance: quantity(u, often, 1e-8, 10.0)?,
         family: pick(u, often, &CodeFamily::ALL)?,
@@ -303,6 +305,43 @@ fn an_odd_cross_section_is_judged_by_the_step_below_it() {
         let odd = carries(&ask);
         ask.size = Entry::Typed(below.area());
         assert_eq!(odd, carries(&ask), "{area} mm² and {below} of {ask:?}");
+        Ok(())
+    });
+}
+
+/// What is shown as assumed is what the checks assume: typing it in changes no value, only the doubt.
+#[test]
+fn typing_in_what_is_assumed_changes_no_value() {
+    arbtest(|u| {
+        let often = u.int_in_range(3..=9u8)?;
+        let ask = any_ask(u, often)?;
+        let amount =
+            |field| assumed::of(&ask, field).and_then(|assumption| assumption.amount).map(|amount| amount.number);
+        let key = |field| assumed::of(&ask, field).and_then(|assumption| assumption.choice);
+        fn quantity<Q: Quantity + PartialEq>(entry: Entry<Q>, number: Option<f64>) -> Entry<Q> {
+            if entry == Entry::Blank { number.map_or(Entry::Blank, Entry::of) } else { entry }
+        }
+        fn choice<C: Choice + PartialEq>(entry: Entry<C>, key: Option<&str>) -> Entry<C> {
+            if entry == Entry::Blank { key.map_or(Entry::Blank, C::entry) } else { entry }
+        }
+        let typed = Ask {
+            conductor: choice(ask.conductor, key(Field::Conductor)),
+            insulation: choice(ask.insulation, key(Field::Insulation)),
+            ambient: quantity(ask.ambient, amount(Field::Ambient)),
+            together: quantity(ask.together, amount(Field::ConductorsTogether)),
+            method: choice(ask.method, key(Field::Method)),
+            terminals: choice(ask.terminals, key(Field::Terminals)),
+            allowed_drop: quantity(ask.allowed_drop, amount(Field::AllowedDrop)),
+            breaker_type: choice(ask.breaker_type, key(Field::BreakerType)),
+            bank_resistance: quantity(ask.bank_resistance, amount(Field::BankResistance)),
+            family: choice(ask.family, key(Field::CodeFamily)),
+            ..ask
+        };
+        for requirement in Requirement::ALL {
+            let (left, entered) = (requirement.check(&ask), requirement.check(&typed));
+            let of = |check: &engine::check::Check<Requirement>| (check.value, check.limit, check.asks);
+            assert_eq!(left.as_ref().map(of), entered.as_ref().map(of), "{requirement:?} of {ask:?}");
+        }
         Ok(())
     });
 }

@@ -115,14 +115,24 @@ impl Choice for Terminals {
     }
 }
 
+impl BreakerType {
+    /// All of them.
+    pub const ALL: [Self; 3] = [Self::Breaker, Self::Polarised, Self::Fuse];
+
+    /// What it is kept and chosen under.
+    #[must_use]
+    pub const fn key(self) -> &'static str {
+        match self {
+            Self::Breaker => "breaker",
+            Self::Polarised => "polarised",
+            Self::Fuse => "fuse",
+        }
+    }
+}
+
 impl Choice for BreakerType {
     fn of_key(key: &str) -> Option<Self> {
-        match key {
-            "breaker" => Some(Self::Breaker),
-            "polarised" => Some(Self::Polarised),
-            "fuse" => Some(Self::Fuse),
-            _ => None,
-        }
+        Self::ALL.into_iter().find(|one| one.key() == key)
     }
 }
 
@@ -162,8 +172,7 @@ impl Ask {
     }
 
     pub(super) fn breaker_type(&self, basis: &mut Basis, kind: Kind) -> Option<BreakerType> {
-        let usual = if kind == Kind::PvString { BreakerType::Fuse } else { BreakerType::Breaker };
-        basis.assume(Field::BreakerType, self.breaker_type, usual)
+        basis.assume(Field::BreakerType, self.breaker_type, super::assumed::breaker_type(kind))
     }
 
     /// Where and how the conductor lies.
@@ -212,5 +221,29 @@ impl Ask {
     pub(super) fn series(kind: Kind, family: CodeFamily, protects: BreakerType) -> Series {
         let device = if protects == BreakerType::Fuse { Device::Fuse } else { Device::Breaker };
         Series::of(family, device, kind.direct_branch())
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::field::Takes;
+
+    fn all_known<C: Choice>(field: Field, many: usize) {
+        let Takes::Choice(list) = field.takes() else { panic!("{field:?} is no choice") };
+        assert_eq!(list.len(), many, "{field:?}");
+        for (key, _) in list {
+            assert!(C::of_key(key).is_some(), "{field:?} {key}");
+        }
+    }
+
+    #[test]
+    fn every_key_on_screen_is_known_and_every_one_is_on_screen() {
+        all_known::<Kind>(Field::RunKind, Kind::ALL.len());
+        all_known::<Conductor>(Field::Conductor, Conductor::ALL.len());
+        all_known::<Insulation>(Field::Insulation, Insulation::ALL.len());
+        all_known::<Method>(Field::Method, Method::ALL.len());
+        all_known::<Terminals>(Field::Terminals, Terminals::ALL.len());
+        all_known::<BreakerType>(Field::BreakerType, BreakerType::ALL.len());
     }
 }

@@ -1,9 +1,11 @@
 //! What stands in for the inputs of a run that were not entered.
 
-use super::{Ask, Kind};
+use super::known::Known;
+use super::{Ask, BreakerType, Kind};
 use crate::ampacity::{Insulation, Method};
-use crate::check::Assumption;
+use crate::check::{Assumption, Basis, Silent};
 use crate::conductor::Conductor;
+use crate::entry::Entry;
 use crate::family::CodeFamily;
 use crate::field::Field;
 use crate::quantity::{Celsius, Count, Ohms, Percent, Quantity, Volts};
@@ -66,52 +68,64 @@ pub const fn method(kind: Kind) -> Method {
     }
 }
 
+/// What protects a run: fuses in strings, else a breaker that opens both directions. *Chosen*.
+#[must_use]
+pub const fn breaker_type(kind: Kind) -> BreakerType {
+    match kind {
+        Kind::PvString => BreakerType::Fuse,
+        _ => BreakerType::Breaker,
+    }
+}
+
 /// Resistance of the bank.
 #[must_use]
 pub fn bank_resistance(voltage: Volts) -> Ohms {
     Ohms::new(BANK_OHMS_PER_VOLT * voltage.get())
 }
 
-/// What stands in for `field` in this question, with its reason.
+/// What stands in for `field` in this question, with its reason. `None` where nothing does, or it cannot be told yet.
 #[must_use]
 pub fn of(ask: &Ask, field: Field) -> Option<Assumption> {
+    let family = ask.family.typed().unwrap_or_default();
     let chosen = source::CHOSEN.at("");
-    let kind = ask.kind.typed();
-    let (amount, why, source) = match field {
-        Field::CodeFamily => (None, "IEC", chosen),
-        Field::Conductor => match kind.map(|kind| conductor(kind, ask.family.typed().unwrap_or_default())) {
-            Some(Conductor::TinnedFine) => (None, "tinned copper, fine-strand: what PV cable is", chosen),
-            _ => (None, "copper, stranded", chosen),
+    let choice = |key, why| Assumption { amount: None, choice: Some(key), why, source: chosen };
+    let amount = |amount, why| Assumption { amount: Some(amount), choice: None, why, source: chosen };
+    Some(match field {
+        Field::CodeFamily => crate::assumed::of(field)?,
+        Field::Conductor => match conductor(ask.kind.typed()?, family) {
+            Conductor::TinnedFine => choice(Conductor::TinnedFine.key(), "what PV cable is"),
+            usual => choice(usual.key(), "the usual building wire"),
         },
-        Field::Insulation => match kind.map(|kind| insulation(kind, ask.family.typed().unwrap_or_default())) {
-            Some(Insulation::PvCable) => (None, "PV cable", chosen),
-            Some(Insulation::Bears90) => (None, "90 °C, the usual building wire", chosen),
-            _ => (None, "PVC 70 °C, the usual building wire", chosen),
+        Field::Insulation => match insulation(ask.kind.typed()?, family) {
+            Insulation::PvCable => choice(Insulation::PvCable.key(), "made for the sun"),
+            usual => choice(usual.key(), "the usual building wire"),
         },
-        Field::Ambient => {
-            let why =
-                if kind.is_some_and(Kind::is_pv) { "in the sun, by the modules" } else { "a room, as the tables" };
-            (Some(ambient(kind?).amount()), why, chosen)
+        Field::Ambient if ask.kind.typed()?.is_pv() => {
+            amount(ambient(ask.kind.typed()?).amount(), "in the sun, by the modules")
         }
-        Field::ConductorsTogether => (Some(TOGETHER.amount()), "the two of this run, by themselves", chosen),
-        Field::Method => match kind.map(method) {
-            Some(Method::Surface) => (None, "on a surface, behind the modules", chosen),
-            _ => (None, "in conduit, where a conductor carries least", chosen),
+        Field::Ambient => amount(ambient(ask.kind.typed()?).amount(), "a room, as the tables"),
+        Field::ConductorsTogether => amount(TOGETHER.amount(), "the two of this run, by themselves"),
+        Field::Method => match method(ask.kind.typed()?) {
+            Method::Surface => choice(Method::Surface.key(), "behind the modules"),
+            usual => choice(usual.key(), "where a conductor carries least"),
         },
-        Field::Terminals => match ask.family.typed().unwrap_or_default() {
-            CodeFamily::Iec => (None, "70 °C, as IEC devices are tested", source::IEC_60364_5_52.at("523.1")),
-            CodeFamily::NorthAmerica => (None, "60 °C to 100 A, 75 °C above", source::NEC.at("110.14(C)(1)")),
-        },
-        Field::AllowedDrop => (Some(kind?.allowed_drop().amount()), "what careful hands keep", chosen),
-        Field::BreakerType => match kind {
-            Some(Kind::PvString) => (None, "fuse of class gPV", chosen),
-            _ => (None, "breaker, not polarised", chosen),
+        Field::Terminals => {
+            let blank = Ask { terminals: Entry::Blank, ..*ask };
+            let known = Known::read(&blank, &mut Basis::default(), &mut Silent).ok()?;
+            let (why, source) = match family {
+                CodeFamily::Iec => ("as IEC devices are tested", source::IEC_60364_5_52.at("523.1")),
+                CodeFamily::NorthAmerica => ("60 °C to 100 A, 75 °C above", source::NEC.at("110.14(C)(1)")),
+            };
+            Assumption { amount: None, choice: Some(known.terminals.key()), why, source }
+        }
+        Field::AllowedDrop => amount(ask.kind.typed()?.allowed_drop().amount(), "what careful hands keep"),
+        Field::BreakerType => match breaker_type(ask.kind.typed()?) {
+            BreakerType::Fuse => choice(BreakerType::Fuse.key(), "of class gPV, as strings have"),
+            usual => choice(usual.key(), "opens current of both directions"),
         },
         Field::BankResistance => {
-            let amount = ask.voltage.typed().map(|voltage| bank_resistance(voltage).amount());
-            (amount, "a bank of some 400 Ah; a larger one drives more", chosen)
+            amount(bank_resistance(ask.voltage.typed()?).amount(), "a bank of some 400 Ah; a larger one drives more")
         }
         _ => return None,
-    };
-    Some(Assumption { amount, why, source })
+    })
 }
