@@ -349,3 +349,63 @@ fn the_working_ends_at_the_value_of_the_check() {
         assert_eq!(steps.last().unwrap().result.unit, Unit::Percent);
     }
 }
+
+/// 24 V behind 3.6 mΩ: 1.15 · 24 / 0.0036 = 7,667 A at the breaker.
+#[test]
+fn what_the_bank_can_drive_against_what_the_breaker_opens() {
+    let mut ask = Ask {
+        kind: Entry::Typed(Kind::DcFeeder),
+        current: Entry::of(40.0),
+        voltage: Entry::of(24.0),
+        length: Entry::of(2.0),
+        bank_resistance: Entry::of(0.0036),
+        family: Entry::Typed(CodeFamily::NorthAmerica),
+        ..Ask::default()
+    };
+    assert!(check(&ask, Requirement::BankFault).asks.contains(Field::InterruptingRating));
+    ask.interrupting = Entry::of(6000.0);
+    let fault = check(&ask, Requirement::BankFault);
+    assert_eq!(fault.verdict, Verdict::Breaks);
+    near(fault.value.unwrap().number, 7666.667, 0.001);
+    ask.interrupting = Entry::of(10_000.0);
+    assert!(check(&ask, Requirement::BankFault).verdict > Verdict::Asks);
+    let answer = size(&ask).unwrap();
+    near(answer.protection.interrupting_asked.unwrap().get(), 7666.667, 0.001);
+    assert_eq!(answer.protection.interrupting_rating, Some(Amps::new(10_000.0)));
+    assert_eq!(answer.protection.rating, Amps::new(50.0));
+    // At the far end of 400 m of it a low bank no longer drives what opens a 50 A breaker: 22.8 V over 72.5 A is 0.31 Ω.
+    ask.length = Entry::of(400.0);
+    ask.size = Entry::Typed(Size::Gauge(6).area());
+    let far = check(&ask, Requirement::BankFault);
+    assert_eq!(far.verdict, Verdict::Breaks);
+    near(far.limit.unwrap().amount.number, 72.5, 1e-9);
+    assert!(far.value.unwrap().number < 72.5);
+}
+
+/// A thin wire on a great bank is spoilt before the breaker is open: 1 mm² of copper under PVC, k = 115.
+#[test]
+fn a_thin_wire_does_not_live_through_the_fault() {
+    let ask = Ask {
+        kind: Entry::Typed(Kind::DcBranch),
+        current: Entry::of(4.0),
+        voltage: Entry::of(48.0),
+        length: Entry::of(0.5),
+        size: Entry::of(1.0),
+        breaker: Entry::of(6.0),
+        interrupting: Entry::of(20_000.0),
+        bank_resistance: Entry::of(0.005),
+        ..Ask::default()
+    };
+    let found = check(&ask, Requirement::BankFault);
+    assert_eq!((found.verdict, found.value.unwrap().number), (Verdict::Breaks, 0.02));
+    // 55.2 V over 5 mΩ and 2 · 0.5 m of 18.1 mΩ/m: 2,389.6 A; (115 / 2,389.6)² = 2.3 ms.
+    near(found.limit.unwrap().amount.number, 0.002_316, 2e-6);
+}
+
+#[test]
+fn a_fault_arises_only_where_the_bank_drives_it() {
+    for kind in Kind::ALL {
+        let ask = Ask { kind: Entry::Typed(*kind), ..Ask::default() };
+        assert_eq!(Requirement::BankFault.check(&ask).is_some(), kind.on_bank(), "{kind:?}");
+    }
+}

@@ -140,7 +140,7 @@ pub fn resistance(conductor: Conductor, size: Size, at: Celsius) -> OhmsPerMetre
 
 /// Ω/m at 75 °C, where the table of the North American code holds it.
 fn american(conductor: Conductor, size: Size) -> Option<f64> {
-    let row = super::AMERICAN.iter().position(|one| *one == size)?;
+    let row = size.american_row()?;
     let cells = match conductor.make() {
         Make::Solid => TABLE_8_SOLID.get(row)?,
         Make::Stranded => &TABLE_8[row],
@@ -156,7 +156,7 @@ fn american(conductor: Conductor, size: Size) -> Option<f64> {
 
 /// Ω/m at 20 °C, where the table of IEC 60228 holds it.
 fn metric(conductor: Conductor, size: Size) -> Option<f64> {
-    let row = super::METRIC.iter().position(|one| *one == size)?;
+    let row = size.metric_row()?;
     let (column, tin) = match (conductor.metal(), conductor.make(), conductor.tinned()) {
         (Metal::Aluminium, _, _) => (3, 1.0),
         (Metal::Copper, Make::FineStrand, false) => (1, 1.0),

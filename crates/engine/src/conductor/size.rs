@@ -125,27 +125,71 @@ impl Size {
     /// Its cross-section.
     #[must_use]
     pub fn area(self) -> SquareMillimetres {
-        let american = |size| AMERICAN.iter().position(|one| *one == size).map(|at| AMERICAN_AREAS[at]);
+        if let Some(row) = self.american_row() {
+            return SquareMillimetres::new(AMERICAN_AREAS[row]);
+        }
         SquareMillimetres::new(match self {
-            Gauge(gauge) => american(self).unwrap_or_else(|| crate::unit::awg_area(f64::from(gauge))),
-            Kcmil(thousands) => {
-                american(self).unwrap_or_else(|| crate::unit::Unit::Kcmil.to_base(f64::from(thousands)))
-            }
+            Gauge(gauge) => crate::unit::awg_area(f64::from(gauge)),
+            Kcmil(thousands) => crate::unit::Unit::Kcmil.to_base(f64::from(thousands)),
             Metric(hundredths) => f64::from(hundredths) / 100.0,
             Self::Other(area) => return area,
+        })
+    }
+
+    /// Its row on [`AMERICAN`], where it is one of it.
+    #[must_use]
+    pub const fn american_row(self) -> Option<usize> {
+        Some(match self {
+            // The even gauges down to 4, then every one.
+            Gauge(gauge @ 4..=18) if gauge % 2 == 0 => (18 - gauge as usize) / 2,
+            Gauge(gauge @ -3..=3) => (11 - gauge as isize) as usize,
+            Kcmil(250) => 15,
+            Kcmil(300) => 16,
+            Kcmil(350) => 17,
+            Kcmil(400) => 18,
+            Kcmil(500) => 19,
+            _ => return None,
+        })
+    }
+
+    /// Its row on [`METRIC`], where it is one of it.
+    #[must_use]
+    pub const fn metric_row(self) -> Option<usize> {
+        let Metric(hundredths) = self else { return None };
+        Some(match hundredths {
+            50 => 0,
+            75 => 1,
+            100 => 2,
+            150 => 3,
+            250 => 4,
+            400 => 5,
+            600 => 6,
+            1000 => 7,
+            1600 => 8,
+            2500 => 9,
+            3500 => 10,
+            5000 => 11,
+            7000 => 12,
+            9500 => 13,
+            12000 => 14,
+            15000 => 15,
+            18500 => 16,
+            24000 => 17,
+            30000 => 18,
+            _ => return None,
         })
     }
 
     /// Where on the North American ladder it stands, or the next thinner step; none where it is thinner than all.
     #[must_use]
     pub fn american_step(self) -> Option<usize> {
-        step(&AMERICAN_AREAS, self.area().get())
+        self.american_row().or_else(|| step(&AMERICAN_AREAS, self.area().get()))
     }
 
     /// Where on the metric ladder it stands, or the next thinner step; none where it is thinner than all.
     #[must_use]
     pub fn metric_step(self) -> Option<usize> {
-        step(&METRIC_AREAS, self.area().get())
+        self.metric_row().or_else(|| step(&METRIC_AREAS, self.area().get()))
     }
 }
 
@@ -208,6 +252,12 @@ mod tests {
     fn every_size_is_found_by_its_own_area() {
         for size in AMERICAN.iter().chain(&METRIC) {
             assert_eq!(Size::of_area(size.area()), *size);
+        }
+        for (row, size) in AMERICAN.iter().enumerate() {
+            assert_eq!((size.american_row(), size.american_step(), size.metric_row()), (Some(row), Some(row), None));
+        }
+        for (row, size) in METRIC.iter().enumerate() {
+            assert_eq!((size.metric_row(), size.metric_step(), size.american_row()), (Some(row), Some(row), None));
         }
     }
 }

@@ -1,7 +1,7 @@
 //! run-ampacity: whether the conductor carries the run's current.
 
 use super::{Candidate, Load, worse};
-use crate::ampacity::{Laid, Terminals, ambient_factor, at_terminals, corrected, tabled, together_factor};
+use crate::ampacity::{Laid, Terminals, ambient_factor, at_terminals, tabled, together_factor};
 use crate::check::{Limit, Origin, Outcome, Steps};
 use crate::family::CodeFamily;
 use crate::quantity::{Amps, Count, Quantity};
@@ -58,8 +58,7 @@ pub(super) fn ampacity(
         };
         ("", format!("{} conductors", show::number(laid.together, 0)), Origin::Published(clause))
     });
-    let where_it_lies = corrected(laid, candidate.size)? * several;
-    let where_it_lies = steps.step("Ampacity where it lies", where_it_lies, || {
+    let where_it_lies = steps.step("Ampacity where it lies", table * (air.get() * together.get()), || {
         let put_in = format!(
             "{} × {} × {}",
             show::given(table.amount()),

@@ -72,8 +72,13 @@ impl Known {
 
     /// Whether `candidate` meets ampacity and protection, and drop where it is known what that asks.
     pub(super) fn holds(&self, candidate: Candidate, way: Option<Way>) -> bool {
-        super::holds(self.carries(candidate, &mut Silent))
-            && super::holds(self.protected(candidate, &mut Silent))
+        let ampacity = carry::ampacity(candidate, &self.laid, self.terminals, &mut Silent);
+        let protects = || {
+            let (load, laid, series) = (&self.load, &self.laid, self.series);
+            protect::protect(self.rating, load, candidate, laid, ampacity, series, &mut Silent)
+        };
+        super::holds(carry::carry(&self.load, self.family, ampacity, &mut Silent))
+            && super::holds(protects())
             && way.is_none_or(|way| super::holds(self.drops(candidate, way, &mut Silent)))
     }
 

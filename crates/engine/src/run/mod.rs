@@ -2,6 +2,8 @@
 
 mod ask;
 pub mod assumed;
+mod bank_fault;
+pub mod branched;
 mod carry;
 mod kind;
 mod known;
@@ -16,6 +18,7 @@ mod sizing;
 mod voltage_drop;
 
 pub use ask::{Ask, BreakerType, Candidate};
+pub use bank_fault::Fault;
 pub use carry::Ampacity;
 pub use kind::{FromPower, Kind, Rule};
 pub use landing::{Landing, landing};

@@ -2,7 +2,7 @@
 
 use super::known::Known;
 use super::voltage_drop::{Way, by_length};
-use super::{Ask, Candidate, poles, precharge, voltage_drop};
+use super::{Ask, Candidate, bank_fault, poles, precharge, voltage_drop};
 use crate::check::{Basis, Check, Cost, FieldSet, Origin, Outcome, Sense, Silent, Step, Steps, Written, judge};
 use crate::field::Field;
 use crate::quantity::{Metres, Ohms, Percent};
@@ -19,6 +19,8 @@ pub enum Requirement {
     Drop,
     /// Whether the breaker opens what can flow through it, in each direction.
     Poles,
+    /// What the bank can drive into a short circuit, against breaker and conductor.
+    BankFault,
     /// The rush of current into an inverter's empty capacitors.
     Precharge,
 }
@@ -42,7 +44,8 @@ pub(super) fn conductor(ask: &Ask) -> Result<Candidate, FieldSet> {
 
 impl Requirement {
     /// Every requirement, in the order of the page where nothing is worse than another.
-    pub const ALL: [Self; 5] = [Self::Ampacity, Self::Protection, Self::Drop, Self::Poles, Self::Precharge];
+    pub const ALL: [Self; 6] =
+        [Self::Ampacity, Self::Protection, Self::BankFault, Self::Drop, Self::Poles, Self::Precharge];
 
     /// The id, as in the documents of the engine.
     #[must_use]
@@ -52,6 +55,7 @@ impl Requirement {
             Self::Protection => "run-protection",
             Self::Drop => "run-drop",
             Self::Poles => "breaker-poles",
+            Self::BankFault => "bank-fault",
             Self::Precharge => "precharge",
         }
     }
@@ -64,6 +68,7 @@ impl Requirement {
             Self::Protection => "Breaker fits load and conductor",
             Self::Drop => "Voltage lost in the run",
             Self::Poles => "Breaker opens both directions",
+            Self::BankFault => "Breaker opens a short circuit",
             Self::Precharge => "Closing onto empty capacitors",
         }
     }
@@ -73,7 +78,7 @@ impl Requirement {
     pub const fn cost(self) -> Cost {
         match self {
             Self::Drop => Cost::Loss,
-            Self::Ampacity | Self::Protection | Self::Poles | Self::Precharge => Cost::Hazard,
+            Self::Ampacity | Self::Protection | Self::Poles | Self::BankFault | Self::Precharge => Cost::Hazard,
         }
     }
 
@@ -122,6 +127,14 @@ impl Requirement {
                 let Some(protects) = ask.breaker_type(basis, kind) else { return Outcome::Asks };
                 poles::directions(kind, protects, steps)
             }
+            Self::BankFault => {
+                if !ask.kind.typed().is_some_and(super::Kind::on_bank) {
+                    return Outcome::DoesNotArise;
+                }
+                let known = Known::read(ask, basis, &mut Silent);
+                let (Ok(known), Some(candidate)) = (known, candidate(conductor, basis)) else { return Outcome::Asks };
+                bank_fault::bank_fault(ask, &known, candidate, basis, steps)
+            }
             Self::Precharge => {
                 let Some(kind) = ask.kind.typed() else { return Outcome::DoesNotArise };
                 if kind != super::Kind::InverterFeed {
@@ -167,16 +180,19 @@ fn candidate(conductor: Result<Candidate, FieldSet>, basis: &mut Basis) -> Optio
     }
 }
 
+/// The order of reading.
+pub(super) fn worst_first(a: &Check<Requirement>, b: &Check<Requirement>) -> core::cmp::Ordering {
+    let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
+    group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
+}
+
 /// Every requirement that arises, worst first. Where no size was entered, the smallest conductor that holds is judged.
 #[must_use]
 pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
     let conductor = conductor(ask);
     let mut checks: Vec<_> =
         Requirement::ALL.iter().filter_map(|requirement| requirement.check_with(ask, conductor)).collect();
-    checks.sort_by(|a, b| {
-        let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
-        group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
-    });
+    checks.sort_by(worst_first);
     checks
 }
 

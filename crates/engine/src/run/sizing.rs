@@ -4,7 +4,7 @@ use super::known::Known;
 use super::landing::{Landing, landing};
 use super::precharge::{Precharge, advice};
 use super::voltage_drop::{Drop, Way, by_length, drop};
-use super::{Ampacity, Ask, BreakerType, Candidate, Kind, Load, Requirement, carry, poles, protect};
+use super::{Ampacity, Ask, BreakerType, Candidate, Fault, Kind, Load, Requirement, bank_fault, carry, poles, protect};
 use crate::ampacity::{Insulation, tabled};
 use crate::check::{Basis, Check, FieldSet, Silent, Verdict};
 use crate::family::CodeFamily;
@@ -23,6 +23,10 @@ pub struct Protection {
     pub voltage_asked: Option<Volts>,
     /// The next usual voltage rating.
     pub voltage_rating: Option<Volts>,
+    /// The current that it has to interrupt; none where the bank drives no fault into it, or its voltage was not entered.
+    pub interrupting_asked: Option<Amps>,
+    /// The next interrupting rating that such devices are sold with.
+    pub interrupting_rating: Option<Amps>,
     /// Poles in series that break the voltage. Twice as many where neither pole is earthed.
     pub poles: Option<u32>,
     /// Whether one that opens current of one direction only would do.
@@ -70,6 +74,8 @@ pub struct Sizing {
     pub landing: Option<Landing>,
     /// The two next thinner, and why not.
     pub thinner: Vec<Thinner>,
+    /// What the bank can drive into it; none where it does not, or voltage or length was not entered.
+    pub fault: Option<Fault>,
     /// How to charge an inverter's capacitors; inverter feeds only.
     pub precharge: Option<Precharge>,
 }
@@ -103,6 +109,7 @@ pub fn size(ask: &Ask) -> Result<Sizing, FieldSet> {
             .map(|(one, way)| drop(known.load.working, one, &known.laid, known.kind, way, &mut Silent)),
         landing: conductor.map(|one| landing(one, known.laid.conductor.make(), known.rating, known.family)),
         thinner,
+        fault: conductor.and_then(|one| bank_fault::of_run(ask, &known, one)),
         precharge: conductor.and_then(|one| how_to_precharge(ask, &known, one)),
     })
 }
@@ -119,7 +126,7 @@ fn two_thinner(ask: &Ask, known: &Known, conductor: Candidate) -> Vec<Thinner> {
                 .filter_map(|requirement| requirement.check_on(ask, candidate))
                 .filter(|check| check.verdict == Verdict::Breaks)
                 .collect();
-            breaks.sort_by(|a, b| a.rank().partial_cmp(&b.rank()).unwrap_or(core::cmp::Ordering::Equal));
+            breaks.sort_by(super::requirement::worst_first);
             Thinner { candidate, breaks }
         })
         .collect()
@@ -142,12 +149,16 @@ fn columns(known: &Known, conductor: Candidate) -> Vec<Column> {
 fn protection(ask: &Ask, known: &Known) -> Protection {
     let voltage = ask.voltage.typed();
     let kind = known.kind;
+    let interrupting_asked = bank_fault::asked(ask, kind);
     Protection {
         rating: known.rating,
         protects: known.protects,
         class: protect::class(known.protects, kind.is_pv(), kind.alternates(), known.family),
         voltage_asked: voltage.map(|voltage| poles::voltage_asked(kind, voltage)),
         voltage_rating: voltage.and_then(|voltage| poles::voltage_rating(kind, voltage)),
+        interrupting_asked,
+        interrupting_rating: interrupting_asked
+            .and_then(|current| bank_fault::next_interrupting(current, known.protects, known.family, known.rating)),
         poles: voltage.map(|voltage| poles::poles(kind, voltage)),
         may_be_polarised: kind.directions() < 2,
     }
