@@ -279,6 +279,79 @@ fields! {
     VoltsApart, "Volts apart", number(Unit::Volt, 0.0, 1000.0);
     /// Energy drawn from the bank on a usual day.
     UsedADay, "Used a day", number(Unit::WattHour, 0.0, 10_000_000.0);
+    /// What a run joins, which decides by what rule its current is found.
+    RunKind, "Kind of run", Takes::Choice(&[
+        ("pv-string", "PV string"),
+        ("pv-array", "PV array"),
+        ("controller", "controller output"),
+        ("bank", "bank main"),
+        ("inverter", "inverter feed"),
+        ("dc-branch", "DC branch"),
+        ("dc-feeder", "DC feeder"),
+        ("ac-output", "AC output"),
+        ("generator", "generator"),
+    ]);
+    /// Current of a run, without any factor.
+    RunCurrent, "Current", number(Unit::Amp, 0.01, 5000.0);
+    /// Power that a run carries; of an inverter feed, what the inverter gives.
+    RunPower, "Power", number(Unit::Watt, 0.1, 500_000.0);
+    /// Voltage of a run, nominal; of a PV run, at greatest power.
+    RunVoltage, "Voltage", number(Unit::Volt, 1.0, 1500.0);
+    /// Length of a run from end to end.
+    RunLength, "Length one way", number(Unit::Metre, 0.01, 5000.0);
+    /// What the conductor is made of.
+    Conductor, "Conductor", Takes::Choice(&[
+        ("copper", "copper, stranded"),
+        ("copper-fine", "copper, fine-strand"),
+        ("copper-solid", "copper, solid"),
+        ("tinned", "tinned copper, stranded"),
+        ("tinned-fine", "tinned copper, fine-strand"),
+        ("aluminium", "aluminium"),
+    ]);
+    /// Size of the conductor that there is.
+    ConductorSize, "Size", number(Unit::SquareMillimetre, 0.05, 1000.0);
+    /// What the conductor is insulated with.
+    Insulation, "Insulation", Takes::Choice(&[
+        ("60", "60 °C (TW, UF)"),
+        ("pvc-70", "PVC 70 °C"),
+        ("75", "75 °C (THW, THWN)"),
+        ("90", "90 °C (XLPE, THHN)"),
+        ("pv", "PV cable"),
+    ]);
+    /// The air round the conductor.
+    Ambient, "Ambient", number(Unit::DegreeCelsius, -60.0, 90.0);
+    /// Conductors that carry current together in one conduit or bundle, these included.
+    ConductorsTogether, "Conductors together", whole(1, 100);
+    /// How the conductor is laid.
+    Method, "Method", Takes::Choice(&[
+        ("conduit", "in conduit or trunking"),
+        ("surface", "sheathed, on a surface"),
+        ("cable-air", "sheathed, in free air"),
+        ("singles-air", "singles, in free air"),
+    ]);
+    /// The temperature that the terminals at both ends are made for.
+    Terminals, "Terminals", Takes::Choice(&[
+        ("60", "60 °C"),
+        ("70", "70 °C"),
+        ("75", "75 °C"),
+        ("90", "90 °C"),
+    ]);
+    /// Part of the voltage that may be lost in a run.
+    AllowedDrop, "Allowed drop", number(Unit::Percent, 0.01, 50.0);
+    /// Rating of the breaker or fuse that there is.
+    Breaker, "Breaker", number(Unit::Amp, 0.5, 6000.0);
+    /// Current that the breaker or fuse can interrupt at the run's voltage.
+    InterruptingRating, "Interrupting rating", number(Unit::Amp, 100.0, 500_000.0);
+    /// Resistance of the bank, new, warm and full.
+    BankResistance, "Bank resistance", number(Unit::Milliohm, 0.000_01, 10.0);
+    /// What protects the run.
+    BreakerType, "Breaker type", Takes::Choice(&[
+        ("breaker", "breaker, not polarised"),
+        ("polarised", "breaker, polarised"),
+        ("fuse", "fuse"),
+    ]);
+    /// Equal conductors side by side for each pole.
+    ConductorsInParallel, "Conductors in parallel", whole(1, 8);
 }
 
 /// What a range in percent for each kelvin is multiplied by where volts or amps for each kelvin are typed:

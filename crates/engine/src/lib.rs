@@ -5,12 +5,14 @@
 
 #![warn(missing_docs)]
 
+pub mod ampacity;
 pub mod assumed;
 pub mod bank;
 pub mod cell_temperature;
 pub mod check;
 pub mod chemistry;
 pub mod choice;
+pub mod conductor;
 pub mod controller;
 pub mod diode;
 pub mod entry;
@@ -24,6 +26,8 @@ pub mod network;
 pub mod order;
 pub mod pad;
 pub mod quantity;
+pub mod ratings;
+pub mod run;
 pub mod sharing;
 pub mod shelf;
 pub mod show;

@@ -89,6 +89,22 @@ works! {
     COMMON_PRACTICE: "common practice", "what careful practitioners do", "";
     /// A value of ours, with its reason given where it stands.
     CHOSEN: "chosen", "a cautious value of ours, with its reason", "";
+    /// Resistance of copper.
+    IEC_60028: "IEC 60028", "International standard of resistance for copper", "1925";
+    /// Resistance of aluminium.
+    IEC_60889: "IEC 60889", "Hard-drawn aluminium wire for overhead line conductors", "1987";
+    /// Conductors of cables.
+    IEC_60228: "IEC 60228", "Conductors of insulated cables", "2004";
+    /// Current rating of cables from their losses.
+    IEC_60287: "IEC 60287-1-1", "Electric cables: calculation of the current rating", "2006";
+    /// Ampacity and voltage drop.
+    IEC_60364_5_52: "IEC 60364-5-52", "Low-voltage electrical installations: wiring systems", "2009";
+    /// Cable for PV.
+    EN_50618: "EN 50618", "Electric cables for photovoltaic systems", "2014";
+    /// Small circuit-breakers.
+    IEC_60898: "IEC 60898-1", "Circuit-breakers for overcurrent protection for household and similar installations", "2015";
+    /// Fuses.
+    IEC_60269: "IEC 60269-1", "Low-voltage fuses: general requirements", "2006";
 }
 
 impl Work {

@@ -314,3 +314,37 @@ fn a_start_on_one_pack_and_on_two() {
     case(19.96, 48.9449, 153.059);
     case(11.16, 50.3392, 148.820);
 }
+
+/// Trees with one supply, as branched runs: each place's volts and each stretch's current.
+#[test]
+fn trees_as_branched_runs() {
+    use engine::run::branched::{Draw, Stretch, solve};
+    let mut trees = 0;
+    for row in table::<Tree>(NETWORKS, "tree") {
+        let tree = row.says;
+        if tree.source_at.len() > 1 {
+            continue;
+        }
+        trees += 1;
+        // The supply's node is the head; every segment makes one place.
+        let mut names = vec![tree.source_at[0].node.clone()];
+        let mut stretches = Vec::new();
+        for segment in &tree.segment {
+            let from = names.iter().position(|name| *name == segment.from).expect("an earlier place");
+            names.push(segment.to.clone());
+            let amps: f64 = tree.load.iter().filter(|load| load.node == segment.to).map(|load| load.value).sum();
+            assert!(tree.load.iter().all(|load| load.kind == "amp"));
+            let way = Ohms::new(segment.out_ohm + segment.back_ohm);
+            stretches.push(Stretch { from, way, draw: Draw::Current(Amps::new(amps)) });
+        }
+        let at = &tree.source_at[0];
+        let supply = Behind { emf: Volts::new(at.emf_volt), resistance: Ohms::new(at.internal_ohm) };
+        let found = solve(supply, &stretches).unwrap_or_else(|error| panic!("{}: {error}", tree.id));
+        for (place, segment) in found.places.iter().zip(&tree.segment) {
+            let volt = tree.node.iter().find(|node| node.name == segment.to).expect("a node").volt;
+            assert!((place.volts.get() - volt).abs() < 1e-6, "{} {}: {volt}", tree.id, segment.to);
+            assert!((place.current.get() - segment.amp).abs() < 1e-6, "{} {}", tree.id, segment.to);
+        }
+    }
+    assert_eq!(trees, 2);
+}
