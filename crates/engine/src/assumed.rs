@@ -4,8 +4,9 @@
 
 use crate::check::Assumption;
 use crate::field::Field;
-use crate::quantity::{Kelvins, Percent, PercentPerKelvin, Quantity, Volts};
+use crate::quantity::{Amount, Kelvins, Percent, PercentPerKelvin, Quantity, Volts};
 use crate::source;
+use crate::unit::Unit;
 
 /// Voc tolerance: +3 %. *Chosen*: the band that most nameplates print, at its upper end.
 pub const VOC_TOLERANCE: Percent = Percent::new(3.0);
@@ -46,8 +47,14 @@ pub fn of(field: Field) -> Option<Assumption> {
     let (amount, why) = match field {
         Field::VocTolerance => (Some(VOC_TOLERANCE.amount()), "upper end of the usual nameplate band"),
         Field::VocCoefficient => (None, "the code family's cold table stands in, crystalline only"),
-        Field::PmaxCoefficient => (Some(PMAX_COEFFICIENT.amount()), "steep end of recent crystalline modules"),
-        Field::IscCoefficient => (Some(ISC_COEFFICIENT.amount()), "middle of crystalline modules"),
+        Field::PmaxCoefficient => (
+            Some(Amount { number: PMAX_COEFFICIENT.get(), unit: Unit::RelativePercentPerKelvin }),
+            "steep end of recent crystalline modules",
+        ),
+        Field::IscCoefficient => (
+            Some(Amount { number: ISC_COEFFICIENT.get(), unit: Unit::CurrentPercentPerKelvin }),
+            "middle of crystalline modules",
+        ),
         Field::RearGain => (Some(REAR_GAIN.amount()), "one-sided module"),
         Field::Mounting => (None, "cells 30 K over air"),
         Field::StandsOn => (None, "the lowest limit"),
@@ -68,6 +75,18 @@ mod tests {
     use super::*;
     use crate::choice::{Choice, ControllerKind, LimitHoldsFactor, Mounting};
     use crate::family::{CodeFamily, Stands};
+
+    /// A stand-in can be shown in its field: it measures what the field does.
+    #[test]
+    fn every_assumed_amount_fits_its_field() {
+        for field in Field::ALL {
+            if let (Some(amount), Some(dimension)) =
+                (of(*field).and_then(|assumption| assumption.amount), field.dimension())
+            {
+                assert_eq!(amount.unit.dimension(), dimension, "{field:?}");
+            }
+        }
+    }
 
     /// What is shown as assumed is what the checks assume: the first of each kind.
     #[test]

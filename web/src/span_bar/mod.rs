@@ -55,6 +55,11 @@ pub fn slim_bar(Bar { ruler, verdict, says, .. }: Bar) -> AnyView {
     view! { <span class="slim" data-v=verdict.word() role="img" aria-label=says>{rule(&drawn)}</span> }.into_any()
 }
 
+/// The distance of graduations; of a ruler that has no scale yet, `plain`.
+fn step(distance: f64, plain: f64) -> f64 {
+    if distance > 0.0 { distance.max(0.1) } else { plain }
+}
+
 fn percent(value: f64) -> String {
     format!("{value:.3}%")
 }
@@ -133,8 +138,8 @@ fn rule(drawn: &Geometry) -> AnyView {
             aria-hidden="true"
             style=("--lo", percent(drawn.lo.unwrap_or(0.0)))
             style=("--hi", percent(drawn.hi.unwrap_or(100.0)))
-            style=("--major", percent(drawn.major.max(0.5)))
-            style=("--minor", percent(drawn.minor.max(0.1)))
+            style=("--major", percent(step(drawn.major, 10.0)))
+            style=("--minor", percent(step(drawn.minor, 2.0)))
             style=("--major-from", percent(drawn.major_from))
             style=("--minor-from", percent(drawn.minor_from))
         >

@@ -69,6 +69,9 @@ fn Laid(question: Memo<Question>) -> impl IntoView {
                                 let rows = found
                                     .ranked
                                     .iter()
+                                    .enumerate()
+                                    .filter(|(place, layout)| !is_part_of_another(layout, &found.ranked[..*place]))
+                                    .map(|(_, layout)| layout)
                                     .take(SHOWN)
                                     .map(|layout| ranked(layout, question))
                                     .chain(found.rejected.iter().take(SHOWN).map(|one| rejected(one, question)))
@@ -93,6 +96,13 @@ fn Laid(question: Memo<Question>) -> impl IntoView {
 
 fn find(question: &Question) -> Layouts {
     layouts(&question.ask, question.modules.unwrap_or(0), &question.controllers)
+}
+
+/// Whether a better layout is the same with more strings: one need not be told that fewer would hold as well.
+fn is_part_of_another(layout: &Layout, better: &[Layout]) -> bool {
+    let series =
+        |layout: &Layout| layout.groups.iter().map(|group| (group.controller, group.series)).collect::<Vec<_>>();
+    better.iter().any(|other| other.holds() && other.used > layout.used && series(other) == series(layout))
 }
 
 /// Whether the best that holds leaves modules over.

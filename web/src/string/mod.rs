@@ -88,7 +88,7 @@ fn AnswerView(answer: Memo<Option<Answer>>) -> impl IntoView {
             view! {
                 <p class="answer-for">{of}</p>
                 <div class="answer-row">
-                    <p class="answer-num">{number}<small>" V"</small></p>
+                    <p class="answer-num">{volts(number)}</p>
                     <p class="answer-tags">
                         <VerdictMark verdict=check.verdict big=true/>
                         {tells_cost(check.verdict).then(|| view! { <CostMark cost=check.cost/> })}
@@ -112,6 +112,12 @@ fn AnswerView(answer: Memo<Option<Answer>>) -> impl IntoView {
             <Told answer=answer/>
         </section>
     }
+}
+
+/// The number with its unit set smaller; a dash has none.
+fn volts(number: String) -> AnyView {
+    let unit = (number != engine::show::NONE).then(|| view! { <small>" V"</small> });
+    view! { {number}{unit} }.into_any()
 }
 
 /// What a screen reader says once typing has rested.
@@ -171,7 +177,7 @@ fn Ride(answer: Memo<Option<Answer>>) -> impl IntoView {
         answer.get().map(|answer| {
             let Answer { number, check, bar, .. } = answer;
             view! {
-                <span class="num">{number}<small>" V"</small></span>
+                <span class="num">{volts(number)}</span>
                 <VerdictMark verdict=check.verdict/>
                 {tells_cost(check.verdict).then(|| view! { <CostMark cost=check.cost/> })}
                 {slim_bar(bar)}
