@@ -1,10 +1,13 @@
 //! How long a bank takes: one assessment, and the layouts of the cells at hand.
 
+#[cfg(not(target_family = "wasm"))]
 use criterion::{Criterion, criterion_group, criterion_main};
 use engine::bank::{Ask, assess, layouts};
 use engine::chemistry::Chemistry;
 use engine::entry::Entry;
 use std::hint::black_box;
+#[cfg(target_family = "wasm")]
+use wasm_bindgen_test::{Criterion, wasm_bindgen_bench};
 
 fn cells(count: f64) -> Ask {
     Ask {
@@ -20,6 +23,7 @@ fn cells(count: f64) -> Ask {
     }
 }
 
+#[cfg_attr(target_family = "wasm", wasm_bindgen_bench)]
 fn bank(criterion: &mut Criterion) {
     let ask = cells(16.0).with_counts(16, 1);
     criterion.bench_function("assess a bank", |bencher| bencher.iter(|| assess(black_box(&ask))));
@@ -30,5 +34,11 @@ fn bank(criterion: &mut Criterion) {
     }
 }
 
+#[cfg(not(target_family = "wasm"))]
 criterion_group!(benches, bank);
+#[cfg(not(target_family = "wasm"))]
 criterion_main!(benches);
+
+/// The runner calls the benches by itself.
+#[cfg(target_family = "wasm")]
+fn main() {}

@@ -1,12 +1,16 @@
 //! How long the network solves take.
 
+#[cfg(not(target_family = "wasm"))]
 use criterion::{Criterion, criterion_group, criterion_main};
 use engine::check::Silent;
 use engine::network::{Behind, Network};
 use engine::quantity::{Amps, Ohms, Volts, Watts};
 use engine::sharing::{Arrangement, Paralleled, share};
 use std::hint::black_box;
+#[cfg(target_family = "wasm")]
+use wasm_bindgen_test::{Criterion, wasm_bindgen_bench};
 
+#[cfg_attr(target_family = "wasm", wasm_bindgen_bench)]
 fn sharing(bench: &mut Criterion) {
     let strings = [Behind { emf: Volts::new(52.8), resistance: Ohms::new(0.005) }; 6];
     let ties = [Ohms::new(0.000_12); 5];
@@ -34,6 +38,7 @@ fn trunk(taps: usize) -> Network {
     network
 }
 
+#[cfg_attr(target_family = "wasm", wasm_bindgen_bench)]
 fn draws(bench: &mut Criterion) {
     for taps in [1, 10, 100] {
         let network = trunk(taps);
@@ -46,5 +51,11 @@ fn draws(bench: &mut Criterion) {
     });
 }
 
+#[cfg(not(target_family = "wasm"))]
 criterion_group!(benches, sharing, draws);
+#[cfg(not(target_family = "wasm"))]
 criterion_main!(benches);
+
+/// The runner calls the benches by itself.
+#[cfg(target_family = "wasm")]
+fn main() {}

@@ -1,10 +1,13 @@
 //! How long the sizing of one run takes.
 
+#[cfg(not(target_family = "wasm"))]
 use criterion::{Criterion, criterion_group, criterion_main};
 use engine::entry::Entry;
 use engine::family::CodeFamily;
 use engine::run::{Ask, Kind, assess, reach, size};
 use std::hint::black_box;
+#[cfg(target_family = "wasm")]
+use wasm_bindgen_test::{Criterion, wasm_bindgen_bench};
 
 fn feeder(family: CodeFamily) -> Ask {
     Ask {
@@ -18,6 +21,7 @@ fn feeder(family: CodeFamily) -> Ask {
     }
 }
 
+#[cfg_attr(target_family = "wasm", wasm_bindgen_bench)]
 fn runs(c: &mut Criterion) {
     for family in CodeFamily::ALL {
         let ask = feeder(family);
@@ -31,5 +35,11 @@ fn runs(c: &mut Criterion) {
     c.bench_function("reach of a cable", |b| b.iter(|| reach(black_box(&truck))));
 }
 
+#[cfg(not(target_family = "wasm"))]
 criterion_group!(benches, runs);
+#[cfg(not(target_family = "wasm"))]
 criterion_main!(benches);
+
+/// The runner calls the benches by itself.
+#[cfg(target_family = "wasm")]
+fn main() {}
