@@ -15,7 +15,9 @@ fn a_page_that_was_served_is_not_the_one_file() {
 fn the_one_file_is_its_own_copy() {
     let root = document().document_element().expect("a page has a root");
     root.set_attribute("data-form", "one-file").expect("the root takes attributes");
-    let offline = Owner::new().with(offline::watch);
+    // Signals live as long as their owner.
+    let owner = Owner::new();
+    let offline = owner.with(offline::watch);
     root.remove_attribute("data-form").expect("the root gives attributes up");
     assert_eq!(offline.copy.get_untracked(), Copy::OneFile);
     assert!(!offline.update_ready.get_untracked());
@@ -23,7 +25,9 @@ fn the_one_file_is_its_own_copy() {
 
 #[wasm_bindgen_test]
 fn nothing_is_said_to_be_kept_before_it_is() {
-    let offline = Owner::new().with(offline::watch);
+    // Signals live as long as their owner.
+    let owner = Owner::new();
+    let offline = owner.with(offline::watch);
     assert_eq!(offline.copy.get_untracked(), Copy::NotYet);
     assert!(!offline.update_ready.get_untracked());
 }
