@@ -72,6 +72,7 @@ impl Site {
     /// Presses what has that name.
     pub async fn press(&self, name: &str) -> Result<()> {
         let button = self.button(name).await?;
+        self.bring_up(&button).await?;
         button.click().await.with_context(|| format!("cannot press \"{name}\""))
     }
 
@@ -94,7 +95,15 @@ impl Site {
         if open.await? == Value::Bool(true) {
             return Ok(());
         }
+        self.bring_up(&fold).await?;
         fold.click().await.with_context(|| format!("cannot unfold \"{name}\""))
+    }
+
+    /// Scrolls until the element lies in the middle, clear of what stands fixed at the edges, as a person does.
+    async fn bring_up(&self, element: &Element) -> Result<()> {
+        let script = "arguments[0].scrollIntoView({ block: 'center', behavior: 'instant' })";
+        self.browser.execute(script, vec![serde_json::to_value(element)?]).await?;
+        Ok(())
     }
 
     /// Runs a script in the page and gives what it returns. For what no hand can do.
