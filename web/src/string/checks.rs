@@ -13,7 +13,7 @@ use crate::fold::Folds;
 
 /// Every check of the string, the one on top among them.
 #[component]
-pub fn Checks(question: Memo<Question>, checks: Memo<Vec<Check<Requirement>>>) -> impl IntoView {
+pub fn Checks(question: ReadSignal<Question>, checks: Memo<Vec<Check<Requirement>>>) -> impl IntoView {
     let folds = expect_context::<Folds>();
     let go = Callback::new(move |field: Field| go_to(folds, field));
     let rows = move || {

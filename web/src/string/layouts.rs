@@ -25,7 +25,7 @@ const SHOWN: usize = 4;
 
 /// The layouts of the modules at hand.
 #[component]
-pub fn LayoutList(question: Memo<Question>) -> impl IntoView {
+pub fn LayoutList(question: ReadSignal<Question>) -> impl IntoView {
     let asked = memo(move || question.with(|question| question.modules.is_some()));
     view! {
         {when(move || asked.get(), move || view! { <Laid question=question/> }.into_any())}
@@ -33,27 +33,11 @@ pub fn LayoutList(question: Memo<Question>) -> impl IntoView {
 }
 
 #[component]
-fn Laid(question: Memo<Question>) -> impl IntoView {
-    // A moment after the answer, so that typing never waits for the search.
-    let settled = RwSignal::new(question.get_untracked());
-    let timer = StoredValue::new(None::<leptos::leptos_dom::helpers::TimeoutHandle>);
-    Effect::new(move |_| {
-        let now = question.get();
-        if let Some(earlier) = timer.try_update_value(Option::take).flatten() {
-            earlier.clear();
-        }
-        let soon = std::time::Duration::from_millis(30);
-        timer.set_value(set_timeout_with_handle(move || settled.set(now.clone()), soon).ok());
-    });
-    on_cleanup(move || {
-        if let Some(timer) = timer.try_update_value(Option::take).flatten() {
-            timer.clear();
-        }
-    });
-    let found = memo(move || settled.with(find));
-    let modules = move || settled.with(|question| question.modules.unwrap_or(0));
+fn Laid(question: ReadSignal<Question>) -> impl IntoView {
+    let found = memo(move || question.with(find));
+    let modules = move || question.with(|question| question.modules.unwrap_or(0));
     let on = move || {
-        settled.with(|question| match question.controllers.len() {
+        question.with(|question| match question.controllers.len() {
             1 => "on this controller".to_owned(),
             count => format!("on {count} controllers"),
         })
@@ -64,7 +48,7 @@ fn Laid(question: Memo<Question>) -> impl IntoView {
             {move || {
                 found
                     .with(|found| {
-                        settled
+                        question
                             .with(|question| {
                                 let rows = found
                                     .ranked
@@ -88,7 +72,7 @@ fn Laid(question: Memo<Question>) -> impl IntoView {
                     title="What would use them all"
                     says=derived(|| "one change".to_owned())
                 >
-                    {move || settled.with(change_list)}
+                    {move || question.with(change_list)}
                 </Fold> }.into_any())}
         </section>
     }

@@ -34,12 +34,11 @@ pub fn StringTool() -> impl IntoView {
     let draft = use_draft();
     // Read once for each change; whatever hangs on it is told only where it differs.
     let question = memo(move || draft.with(Question::read));
-    let checks = memo(move || question.with(Question::checks));
     let answer = memo(move || {
-        draft.with(|pads| {
-            question.with(|question| checks.with(|checks| answer::answer(&pads.of(TOOL), &question.ask, checks)))
-        })
+        draft.with(|pads| question.with(|question| answer::answer(&pads.of(TOOL), &question.ask, &question.checks())))
     });
+    let settled = settled(question);
+    let checks = memo(move || settled.with(Question::checks));
     view! {
         <div class="tool">
             <div class="page-head">
@@ -64,8 +63,8 @@ pub fn StringTool() -> impl IntoView {
             <div class="tool-right">
                 <Ride answer=answer/>
                 <Fields checks=checks/>
-                <Checks question=question checks=checks/>
-                <LayoutList question=question/>
+                <Checks question=settled checks=checks/>
+                <LayoutList question=settled/>
                 <Caution>
                     <p>
                         "A string is live in any light. Cover or darken the array before you touch its terminals. "
@@ -77,6 +76,27 @@ pub fn StringTool() -> impl IntoView {
             </div>
         </div>
     }
+}
+
+/// The question a moment after it last changed. The answer is painted at once; what else hangs on it may follow.
+fn settled(question: Memo<Question>) -> ReadSignal<Question> {
+    let (settled, settle) = signal(question.get_untracked());
+    let timer = StoredValue::new(None::<leptos::leptos_dom::helpers::TimeoutHandle>);
+    let stop = move || {
+        if let Some(earlier) = timer.try_update_value(Option::take).flatten() {
+            earlier.clear();
+        }
+    };
+    Effect::new(move |before: Option<()>| {
+        let now = question.get();
+        stop();
+        if before.is_some() {
+            let soon = std::time::Duration::from_millis(30);
+            timer.set_value(set_timeout_with_handle(move || settle.set(now.clone()), soon).ok());
+        }
+    });
+    on_cleanup(stop);
+    settled
 }
 
 /// The number, its verdict, and what it means. The one region of the page with the role of a status.
