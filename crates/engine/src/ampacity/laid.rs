@@ -2,7 +2,7 @@
 
 use super::correction::{self, Arrangement};
 use super::{Insulation, Method, Terminals, iec, north_america, pv_cable};
-use crate::conductor::{Conductor, Metal, Size};
+use crate::conductor::{AMERICAN, Conductor, METRIC, Metal, Size};
 use crate::family::CodeFamily;
 use crate::quantity::{Amps, Celsius};
 
@@ -90,6 +90,21 @@ pub fn corrected(laid: &Laid, size: Size) -> Option<Amps> {
     Some(tabled(laid, laid.insulation, size)? * factor)
 }
 
+/// The current that warms `size` to what its insulation bears, where it lies.
+///
+/// It is [`corrected`] where the table has a row. A size thinner than the table is taken from its thinnest row in
+/// proportion to the area. *Chosen*: an ampacity falls slower than the area, so the conductor is never taken for cooler
+/// than it is.
+#[must_use]
+pub fn warms(laid: &Laid, size: Size) -> Amps {
+    let ladder = if laid.family == CodeFamily::NorthAmerica { &AMERICAN[..] } else { &METRIC[..] };
+    let thicker = || {
+        let row = *ladder.iter().find(|row| row.area() > size.area() && tabled(laid, laid.insulation, **row).is_some())?;
+        Some(corrected(laid, row)? * (size.area() / row.area()))
+    };
+    corrected(laid, size).or_else(thicker).unwrap_or_default()
+}
+
 /// The current at which `size` keeps to what `terminals` bear. `None` where the table has no such row.
 ///
 /// North America: the column of the terminals in Table 310.16, uncorrected, whatever the method (110.14(C)).
@@ -152,6 +167,16 @@ mod tests {
         let laid = laid(CodeFamily::NorthAmerica, Insulation::Bears75);
         // 10 mm² lies between 8 and 6 AWG.
         assert_eq!(tabled(&laid, laid.insulation, Size::Metric(1000)), Some(Amps::new(50.0)));
+    }
+
+    #[test]
+    fn a_size_thinner_than_the_table_is_warmed_by_its_share_of_the_thinnest_row() {
+        let laid = laid(CodeFamily::NorthAmerica, Insulation::PvCable);
+        let (thin, thick) = (Size::Gauge(16), Size::Gauge(14));
+        assert_eq!(corrected(&laid, thin), None);
+        let share = warms(&laid, thin) / warms(&laid, thick);
+        assert!((share - thin.area() / thick.area()).abs() < 1e-9, "{share}");
+        assert_eq!(warms(&laid, thick), corrected(&laid, thick).unwrap());
     }
 
     #[test]

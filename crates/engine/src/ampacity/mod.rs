@@ -7,7 +7,7 @@ mod laid;
 pub mod north_america;
 pub mod pv_cable;
 
-pub use laid::{Laid, ambient_factor, at_terminals, corrected, tabled, together_factor};
+pub use laid::{Laid, ambient_factor, at_terminals, corrected, tabled, together_factor, warms};
 
 use crate::family::CodeFamily;
 use crate::quantity::{Amps, Celsius};

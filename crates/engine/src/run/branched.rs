@@ -1,7 +1,7 @@
 //! Branched circuits on direct current: a trunk with loads along it, as lights down a corridor.
 
 use super::Candidate;
-use crate::ampacity::{Laid, corrected};
+use crate::ampacity::{Laid, warms};
 use crate::conductor::{own_temperature, resistance};
 use crate::network::{Behind, Network, NetworkError};
 use crate::quantity::{Amps, Metres, Ohms, Percent, Volts, Watts};
@@ -196,7 +196,7 @@ const TURNS: u32 = 40;
 pub fn solve_cables(supply: Behind, laid: &Laid, stretches: &[Stretch<Cable>]) -> Result<Branched, BranchedError> {
     let resist = |cable: &Cable, current: Amps| {
         let several = f64::from(cable.conductor.parallel);
-        let ampacity = corrected(laid, cable.conductor.size).unwrap_or_default() * several;
+        let ampacity = warms(laid, cable.conductor.size) * several;
         let temperature = own_temperature(laid.ambient, laid.insulation.bears(laid.family), current, ampacity);
         resistance(laid.conductor, cable.conductor.size, temperature) / several * (cable.length * 2.0)
     };

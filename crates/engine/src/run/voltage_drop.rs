@@ -1,7 +1,7 @@
 //! run-drop: what the conductor takes of the voltage, at its own temperature.
 
 use super::{Ask, Candidate, Kind};
-use crate::ampacity::{Laid, corrected};
+use crate::ampacity::{Laid, warms};
 use crate::check::{Basis, Limit, Origin, Outcome, Steps};
 use crate::conductor::{REACTANCE, own_temperature, resistance};
 use crate::field::Field;
@@ -55,7 +55,7 @@ pub(super) fn by_length(
 ) -> (OhmsPerMetre, OhmsPerMetre, Celsius) {
     let several = f64::from(candidate.parallel);
     let greatest = laid.insulation.bears(laid.family);
-    let ampacity = corrected(laid, candidate.size).unwrap_or_default() * several;
+    let ampacity = warms(laid, candidate.size) * several;
     let temperature = own_temperature(laid.ambient, greatest, current, ampacity);
     let temperature = steps.step("The conductor's own temperature", temperature, || {
         let (air, most) = (show::given(laid.ambient.amount()), show::given(greatest.amount()));
