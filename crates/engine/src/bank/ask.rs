@@ -231,18 +231,22 @@ impl Ask {
     }
 }
 
-/// A typed number that is not above zero cannot be meant.
+/// The greatest number of any unit that can be meant; its inverse is the least. *Chosen*: past every part of the trade, and
+/// no product of a few such numbers overflows.
+const FAR: f64 = 1e12;
+
+/// A typed number that is not above zero, or out of all measure, cannot be meant.
 pub(super) fn positive<Q: Quantity>(entry: Entry<Q>) -> Entry<Q> {
     match entry {
-        Entry::Typed(value) if !(value.number() > 0.0 && value.number().is_finite()) => Entry::Unread,
+        Entry::Typed(value) if !(1.0 / FAR..=FAR).contains(&value.number()) => Entry::Unread,
         other => other,
     }
 }
 
-/// A typed number that is none cannot be meant.
+/// A typed number that is none, or out of all measure, cannot be meant.
 pub(super) fn finite<Q: Quantity>(entry: Entry<Q>) -> Entry<Q> {
     match entry {
-        Entry::Typed(value) if !value.number().is_finite() => Entry::Unread,
+        Entry::Typed(value) if !(-FAR..=FAR).contains(&value.number()) => Entry::Unread,
         other => other,
     }
 }
