@@ -99,7 +99,8 @@ pub fn corrected(laid: &Laid, size: Size) -> Option<Amps> {
 pub fn warms(laid: &Laid, size: Size) -> Amps {
     let ladder = if laid.family == CodeFamily::NorthAmerica { &AMERICAN[..] } else { &METRIC[..] };
     let thicker = || {
-        let row = *ladder.iter().find(|row| row.area() > size.area() && tabled(laid, laid.insulation, **row).is_some())?;
+        let row =
+            *ladder.iter().find(|row| row.area() > size.area() && tabled(laid, laid.insulation, **row).is_some())?;
         Some(corrected(laid, row)? * (size.area() / row.area()))
     };
     corrected(laid, size).or_else(thicker).unwrap_or_default()

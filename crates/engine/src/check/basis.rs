@@ -7,36 +7,40 @@ use crate::source::Clause;
 
 /// A set of fields.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
-pub struct FieldSet(u128);
+pub struct FieldSet([u64; 4]);
 
 impl FieldSet {
     /// Whether no field is in it.
     #[must_use]
     pub const fn is_empty(self) -> bool {
-        self.0 == 0
+        self.len() == 0
     }
 
     /// How many fields are in it.
     #[must_use]
     pub const fn len(self) -> u32 {
-        self.0.count_ones()
+        let [a, b, c, d] = self.0;
+        a.count_ones() + b.count_ones() + c.count_ones() + d.count_ones()
     }
 
     /// Whether `field` is in it.
     #[must_use]
     pub const fn contains(self, field: Field) -> bool {
-        self.0 & (1 << field as u8) != 0
+        let place = field as u8;
+        self.0[(place / 64) as usize] & (1 << (place % 64)) != 0
     }
 
     /// Puts `field` in.
     pub const fn insert(&mut self, field: Field) {
-        self.0 |= 1 << field as u8;
+        let place = field as u8;
+        self.0[(place / 64) as usize] |= 1 << (place % 64);
     }
 
     /// The fields of both.
     #[must_use]
     pub const fn union(self, other: Self) -> Self {
-        Self(self.0 | other.0)
+        let ([a, b, c, d], [e, f, g, h]) = (self.0, other.0);
+        Self([a | e, b | f, c | g, d | h])
     }
 
     /// The fields, in the order of the page.
