@@ -5,6 +5,7 @@
 //! - [`shell`] stands around every view; [`route`] says which is open.
 //! - The other modules are components, one noun each. Views hold no formulas.
 
+pub mod answer;
 pub mod caution;
 pub mod check_row;
 mod clock;
@@ -14,12 +15,14 @@ pub mod field;
 pub mod file;
 pub mod first_visit;
 pub mod fold;
+pub mod form;
 pub mod icon;
 pub mod keep;
 pub mod notice;
 pub mod offline;
 pub mod pads;
 pub mod route;
+pub mod settled;
 pub mod sheet;
 pub mod shell;
 pub mod span_bar;

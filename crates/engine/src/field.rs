@@ -437,7 +437,7 @@ mod tests {
         for field in Field::ALL {
             assert_eq!(Field::of_key(field.key()), Some(*field));
         }
-        assert!(Field::ALL.len() <= 256, "FieldSet holds 256");
+        assert!(Field::ALL.len() <= 192, "FieldSet holds 192");
     }
 
     #[test]

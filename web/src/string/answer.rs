@@ -1,54 +1,18 @@
 //! The answer of the String tool, worded and drawn. Pure: from what was typed to what is shown.
 
-use engine::check::{Check, FieldSet, Verdict};
+use engine::check::{Check, Verdict};
 use engine::field::Field;
 use engine::pad::Pad;
 use engine::quantity::{Amount, Count, Quantity, Volts};
 use engine::show;
 use engine::string::{self, Ask, Requirement};
 
+use super::TOOL;
+use crate::answer::{Answer, Offer, without_unit};
+use crate::form::{as_entered, names};
+use crate::pads::Typed;
 use crate::span_bar::Bar;
 use crate::span_bar::geometry::{From, Mark, Post, Ruler};
-
-/// Everything that stands on top.
-#[derive(Clone, Debug, PartialEq)]
-pub struct Answer {
-    /// For what the number is.
-    pub of: String,
-    /// The number, without its unit; a dash where it cannot be told.
-    pub number: String,
-    /// The judgement.
-    pub check: Check<Requirement>,
-    /// What it means, in a sentence.
-    pub says: String,
-    /// What it rests on, where something was assumed.
-    pub rests: Option<String>,
-    /// The longest safe string, where it can be told.
-    pub longest: Option<String>,
-    /// What other checks break, where some do.
-    pub besides: Option<String>,
-    /// The picture of it: an empty ruler before a limit or a voltage is known.
-    pub bar: Bar,
-}
-
-impl Answer {
-    /// What a screen reader is told: verdict, value and distance.
-    pub fn told(&self) -> String {
-        let cost = if crate::verdict::tells_cost(self.check.verdict) {
-            format!(", {}", self.check.cost.word())
-        } else {
-            String::new()
-        };
-        let volts = if self.number == show::NONE { String::new() } else { format!(" {} volts.", self.number) };
-        let longest = self.longest.as_ref().map_or_else(String::new, |longest| format!(" {longest}."));
-        format!("{}{cost}.{volts} {}{longest}", self.check.verdict.word(), self.says)
-    }
-
-    /// Whether nothing but the assumed tolerance stands between the string and its verdict's last word.
-    pub fn rests_on_tolerance(&self) -> bool {
-        self.check.verdict != Verdict::Asks && self.check.assumed.contains(Field::VocTolerance)
-    }
-}
 
 /// The answer to what was typed into `pad`, all of whose checks are `checks`.
 ///
@@ -60,12 +24,15 @@ pub fn answer(pad: &impl Pad, ask: &Ask, checks: &[Check<Requirement>]) -> Optio
     Some(Answer {
         of: of(pad, ask),
         number: number(&check, volts),
+        unit: "V",
+        verdict: check.verdict,
+        cost: check.cost,
         says: says(&check, longest),
+        most: longest.map(longest_words),
         rests: rests(&check, ask),
-        longest: longest.map(longest_words),
         besides: besides(checks),
-        bar: bar(pad, ask, &check, volts),
-        check,
+        bar: Some(bar(pad, ask, &check, volts)),
+        offer: offer(&check),
     })
 }
 
@@ -74,17 +41,20 @@ fn of(pad: &impl Pad, ask: &Ask) -> String {
         Some(series) => format!("{} in series", series.get()),
         None => "A string".to_owned(),
     };
-    match typed(pad, Field::RecordLow) {
+    match as_entered(pad, Field::RecordLow) {
         Some(low) => format!("{series} at {low}, the record low"),
         None => format!("{series} at the record low"),
     }
 }
 
-/// A field as it was entered, in the unit the person chose.
-fn typed(pad: &impl Pad, field: Field) -> Option<String> {
-    let (text, unit) = pad.typed(field);
-    let reading = field.read(text, unit).ok()??;
-    Some(show::given(Amount { number: reading.number(), unit: reading.unit() }))
+/// Where nothing but the assumed tolerance stands between the string and its verdict's last word, one tap enters it.
+fn offer(check: &Check<Requirement>) -> Option<Offer> {
+    let rests = check.verdict != Verdict::Asks && check.assumed.contains(Field::VocTolerance);
+    let typed = Typed { text: engine::assumed::VOC_TOLERANCE.get().to_string(), unit: None };
+    rests.then(|| Offer {
+        words: "The nameplate says +3 %".to_owned(),
+        fill: vec![((TOOL, Field::VocTolerance), typed)],
+    })
 }
 
 fn number(check: &Check<Requirement>, volts: Option<Volts>) -> String {
@@ -94,11 +64,6 @@ fn number(check: &Check<Requirement>, volts: Option<Volts>) -> String {
         _ => return show::NONE.to_owned(),
     };
     without_unit(&shown).to_owned()
-}
-
-/// The figure alone: its unit is set smaller beside it.
-fn without_unit(shown: &str) -> &str {
-    shown.rsplit_once(show::NARROW).map_or(shown, |(number, _)| number)
 }
 
 fn says(check: &Check<Requirement>, longest: Option<u32>) -> String {
@@ -155,16 +120,6 @@ fn asks(check: &Check<Requirement>, longest: Option<u32>) -> String {
     }
 }
 
-/// Names of fields, as in "Voc, Record low and Input limit".
-pub fn names(fields: FieldSet) -> String {
-    let names: Vec<&str> = fields.iter().map(Field::name).collect();
-    match names.split_last() {
-        None => String::new(),
-        Some((one, [])) => (*one).to_owned(),
-        Some((last, before)) => format!("{} and {last}", before.join(", ")),
-    }
-}
-
 fn longest_words(longest: u32) -> String {
     match longest {
         0 => "Longest safe string: none. A single module is over the limit.".to_owned(),
@@ -197,7 +152,7 @@ fn bar(pad: &impl Pad, ask: &Ask, check: &Check<Requirement>, cold: Option<Volts
     };
     let mut marks = Vec::new();
     if let Some(hot) = hot {
-        let name = typed(pad, Field::RecordHigh).map_or_else(|| "hot".to_owned(), |high| format!("hot {high}"));
+        let name = as_entered(pad, Field::RecordHigh).map_or_else(|| "hot".to_owned(), |high| format!("hot {high}"));
         marks.push(Mark { at: hot.get(), name, shown: shown(hot) });
     }
     if let (Some(cold), Some(voc), Some(series)) = (cold, ask.module.voc.typed(), ask.series.typed()) {
@@ -205,7 +160,7 @@ fn bar(pad: &impl Pad, ask: &Ask, check: &Check<Requirement>, cold: Option<Volts
         if rated < cold {
             marks.push(Mark { at: rated.get(), name: "open, 25 °C".to_owned(), shown: shown(rated) });
         }
-        let name = typed(pad, Field::RecordLow).map_or_else(|| "cold".to_owned(), |low| format!("cold {low}"));
+        let name = as_entered(pad, Field::RecordLow).map_or_else(|| "cold".to_owned(), |low| format!("cold {low}"));
         marks.push(Mark { at: cold.get(), name, shown: shown(cold) });
     }
     let room = check.room().map(|room| show::room(Amount { number: room.number.abs(), ..room }));
@@ -348,7 +303,7 @@ mod tests {
         let answer = of_rows(RIDGE);
         assert_eq!(plain(&answer.of), "3 in series at −31 °C, the record low");
         assert_eq!(answer.number, "175.4");
-        assert_eq!(answer.check.verdict, Verdict::Breaks);
+        assert_eq!(answer.verdict, Verdict::Breaks);
         assert_eq!(
             plain(&answer.says),
             "25.4 V (16.9 %) over the input limit of 150 V: a cold morning can destroy it."
@@ -357,7 +312,7 @@ mod tests {
             answer.rests.as_deref().map(plain).as_deref(),
             Some("170.3 V by the nameplate; a tolerance of +3 % is assumed on top.")
         );
-        assert_eq!(answer.longest.as_deref(), Some("Longest safe string: 2"));
+        assert_eq!(answer.most.as_deref(), Some("Longest safe string: 2"));
     }
 
     #[test]
@@ -371,7 +326,7 @@ mod tests {
     #[test]
     fn an_assumption_keeps_it_close_and_is_named() {
         let answer = of_rows(&[RIDGE, &[(Field::Series, "2")]].concat());
-        assert_eq!(answer.check.verdict, Verdict::Close);
+        assert_eq!(answer.verdict, Verdict::Close);
         assert!(answer.rests.is_some_and(|rests| rests.ends_with("Close until that is confirmed: Voc tolerance.")));
     }
 
@@ -380,10 +335,10 @@ mod tests {
         let answer = of_rows(&[]);
         assert_eq!(answer.number, show::NONE);
         assert_eq!(answer.says, "Waits for Voc, Record low, Input limit and Modules in series.");
-        assert_eq!(answer.bar.ruler.covered, None);
+        assert_eq!(answer.bar.expect("a bar").ruler.covered, None);
         let no_count = of_rows(&RIDGE[..4]);
         assert_eq!(no_count.says, "Enter Modules in series to judge a string.");
-        assert_eq!(no_count.longest.as_deref(), Some("Longest safe string: 2"));
+        assert_eq!(no_count.most.as_deref(), Some("Longest safe string: 2"));
     }
 
     #[test]
@@ -405,7 +360,7 @@ mod tests {
             ],
         ]
         .concat();
-        let bar = of_rows(&rows).bar;
+        let bar = of_rows(&rows).bar.expect("a bar");
         assert_eq!(bar.ruler.low.as_ref().map(|post| (post.at, post.name.as_str())), Some((57.0, "charging needs")));
         assert_eq!(bar.ruler.high.as_ref().map(|post| post.at), Some(150.0));
         let shown: Vec<String> = bar.ruler.marks.iter().map(|mark| plain(&mark.shown)).collect();

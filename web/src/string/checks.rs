@@ -6,7 +6,7 @@ use engine::string::{Requirement, working};
 use leptos::prelude::*;
 
 use super::answer::note;
-use super::fields::go_to;
+use super::fields::FORM;
 use super::question::Question;
 use crate::check_row::check_row;
 use crate::fold::Folds;
@@ -15,7 +15,7 @@ use crate::fold::Folds;
 #[component]
 pub fn Checks(question: ReadSignal<Question>, checks: Memo<Vec<Check<Requirement>>>) -> impl IntoView {
     let folds = expect_context::<Folds>();
-    let go = Callback::new(move |field: Field| go_to(folds, field));
+    let go = Callback::new(move |field: Field| FORM.go_to(folds, field));
     let rows = move || {
         question.with(|question| {
             checks.with(|checks| {

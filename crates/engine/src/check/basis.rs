@@ -7,7 +7,7 @@ use crate::source::Clause;
 
 /// A set of fields.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
-pub struct FieldSet([u64; 4]);
+pub struct FieldSet([u64; 3]);
 
 impl FieldSet {
     /// Whether no field is in it.
@@ -19,8 +19,8 @@ impl FieldSet {
     /// How many fields are in it.
     #[must_use]
     pub const fn len(self) -> u32 {
-        let [a, b, c, d] = self.0;
-        a.count_ones() + b.count_ones() + c.count_ones() + d.count_ones()
+        let [a, b, c] = self.0;
+        a.count_ones() + b.count_ones() + c.count_ones()
     }
 
     /// Whether `field` is in it.
@@ -39,8 +39,8 @@ impl FieldSet {
     /// The fields of both.
     #[must_use]
     pub const fn union(self, other: Self) -> Self {
-        let ([a, b, c, d], [e, f, g, h]) = (self.0, other.0);
-        Self([a | e, b | f, c | g, d | h])
+        let ([a, b, c], [d, e, f]) = (self.0, other.0);
+        Self([a | d, b | e, c | f])
     }
 
     /// The fields, in the order of the page.

@@ -1,0 +1,194 @@
+//! The answer of a tool: for what, the number, its verdict, what it means, and the picture of it.
+//!
+//! A tool's own `answer.rs` makes one, pure; here it is put on the page, the same for all.
+
+use engine::check::{Cost, Verdict};
+use engine::show;
+use leptos::prelude::*;
+
+use crate::derived::{derived, memo, when};
+use crate::draft::use_draft;
+use crate::pads::{Edit, Place, Typed};
+use crate::span_bar::{Bar, slim_bar, span_bar};
+use crate::verdict::{CostMark, VerdictMark, tells_cost};
+
+/// Everything that stands on top of a tool.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Answer {
+    /// For what the number is.
+    pub of: String,
+    /// The number without its unit, or a few words; a dash where it cannot be told.
+    pub number: String,
+    /// Its unit, set smaller beside it; empty where it has none.
+    pub unit: &'static str,
+    /// The judgement.
+    pub verdict: Verdict,
+    /// What it costs where it breaks.
+    pub cost: Cost,
+    /// What it means, in a sentence.
+    pub says: String,
+    /// A second figure that belongs to it, such as the longest safe string.
+    pub most: Option<String>,
+    /// What it rests on, where something was assumed.
+    pub rests: Option<String>,
+    /// What other checks break, where some do.
+    pub besides: Option<String>,
+    /// The picture of it: an empty ruler before a limit or a value is known.
+    pub bar: Option<Bar>,
+    /// What one tap would enter.
+    pub offer: Option<Offer>,
+}
+
+/// What one tap enters, such as a value that was assumed.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Offer {
+    /// The words on the button.
+    pub words: String,
+    /// The fields that it fills.
+    pub fill: Vec<(Place, Typed)>,
+}
+
+impl Answer {
+    /// What a screen reader is told: verdict, value and distance.
+    pub fn told(&self) -> String {
+        let cost = if tells_cost(self.verdict) { format!(", {}", self.cost.word()) } else { String::new() };
+        let number =
+            if self.number == show::NONE { String::new() } else { format!(" {} {}.", self.number, spoken(self.unit)) };
+        let most = self.most.as_ref().map_or_else(String::new, |most| format!(" {most}."));
+        format!("{}{cost}.{number} {}{most}", self.verdict.word(), self.says)
+    }
+}
+
+/// A unit as it is said.
+fn spoken(unit: &'static str) -> &'static str {
+    match unit {
+        "V" => "volts",
+        "A" => "amperes",
+        "W" => "watts",
+        "kW" => "kilowatts",
+        "kWh" => "kilowatt-hours",
+        "%" => "percent",
+        other => other,
+    }
+}
+
+/// The figure alone of what [`show`] wrote: its unit is set smaller beside it.
+pub fn without_unit(shown: &str) -> &str {
+    shown.rsplit_once(show::NARROW).map_or(shown, |(number, _)| number)
+}
+
+/// The answer: number, verdict, what it means, picture. The one region of the page with the role of a status.
+pub fn answer_view(answer: Memo<Option<Answer>>) -> AnyView {
+    let words = move || {
+        let Answer { of, number, unit, verdict, cost, says, most, rests, besides, .. } = answer.get()?;
+        let words = view! {
+            <p class="answer-for">{of}</p>
+            <div class="answer-row">
+                <p class="answer-num">{with_unit(number, unit)}</p>
+                <p class="answer-tags">
+                    <VerdictMark verdict=verdict big=true/>
+                    {tells_cost(verdict).then(|| view! { <CostMark cost=cost/> })}
+                </p>
+            </div>
+            <p class="answer-say">{says}</p>
+            {most.map(|most| view! { <p class="answer-most">{most}</p> })}
+            {rests.map(|rests| view! { <p class="answer-note">{rests}</p> })}
+            {besides.map(|besides| view! { <p class="answer-besides">{besides}</p> })}
+        };
+        Some(words.into_any())
+    };
+    let bar = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.bar.clone()).map(span_bar));
+    view! {
+        <section class="answer" aria-label="Answer">
+            // A reader is told by the line below, once typing rests: not by every keystroke.
+            <div role="status" aria-live="off">{words}</div>
+            {bar}
+            {offer(answer)}
+            {told(answer)}
+        </section>
+    }
+    .into_any()
+}
+
+/// The number with its unit set smaller; a dash has none.
+fn with_unit(number: String, unit: &'static str) -> AnyView {
+    let unit = (number != show::NONE && !unit.is_empty()).then(|| view! { <small>{format!(" {unit}")}</small> });
+    view! { {number}{unit} }.into_any()
+}
+
+/// What a screen reader says once typing has rested.
+fn told(answer: Memo<Option<Answer>>) -> AnyView {
+    let said = RwSignal::new(String::new());
+    let waiting = StoredValue::new(None::<leptos::leptos_dom::helpers::TimeoutHandle>);
+    let stop = move || {
+        if let Some(timer) = waiting.try_update_value(Option::take).flatten() {
+            timer.clear();
+        }
+    };
+    on_cleanup(stop);
+    Effect::new(move |before: Option<Option<String>>| {
+        let now = answer.with(|answer| answer.as_ref().map(Answer::told));
+        if let Some(before) = before
+            && before != now
+            && let Some(words) = now.clone()
+        {
+            stop();
+            let rest = std::time::Duration::from_millis(600);
+            waiting.set_value(set_timeout_with_handle(move || said.set(words.clone()), rest).ok());
+        }
+        now
+    });
+    view! { <p class="vh" aria-live="polite">{said}</p> }.into_any()
+}
+
+/// One tap turns what was assumed into what is entered.
+fn offer(answer: Memo<Option<Answer>>) -> AnyView {
+    let draft = use_draft();
+    let offered = memo(move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.offer.clone())));
+    let take = move |_| {
+        if let Some(offer) = offered.get_untracked() {
+            draft.edit(Edit::Fill(offer.fill));
+        }
+    };
+    when(
+        move || offered.with(Option::is_some),
+        move || {
+            let words = derived(move || offered.get().map_or_else(String::new, |offer| offer.words));
+            view! {
+                <div class="btns">
+                    <button class="btn small" type="button" on:click=take>{words}</button>
+                </div>
+            }
+            .into_any()
+        },
+    )
+}
+
+/// The answer once more, at the top of the screen, once the answer itself has been scrolled out of it.
+pub fn ride(answer: Memo<Option<Answer>>) -> AnyView {
+    let away = RwSignal::new(false);
+    let look = move |_: ()| away.set(answer_is_away());
+    let scrolled = window_event_listener_untyped("scroll", move |_| look(()));
+    let resized = window_event_listener_untyped("resize", move |_| look(()));
+    on_cleanup(move || {
+        scrolled.remove();
+        resized.remove();
+    });
+    let shown = move || {
+        let Answer { number, unit, verdict, cost, bar, .. } = answer.get()?;
+        let words = view! {
+            <span class="num">{with_unit(number, unit)}</span>
+            <VerdictMark verdict=verdict/>
+            {tells_cost(verdict).then(|| view! { <CostMark cost=cost/> })}
+            {bar.map(slim_bar)}
+        };
+        Some(words.into_any())
+    };
+    view! { <div class="ride" aria-hidden="true" hidden=move || !away.get()>{shown}</div> }.into_any()
+}
+
+/// Whether the verdict on top has left the screen.
+fn answer_is_away() -> bool {
+    let row = document().query_selector(".answer-row").ok().flatten();
+    row.is_some_and(|row| row.get_bounding_client_rect().bottom() < 0.0)
+}

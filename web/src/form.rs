@@ -1,0 +1,158 @@
+//! The inputs of a tool: what the first verdict needs stands open, the rest lies in a fold, by group.
+
+use std::sync::Arc;
+
+use engine::check::FieldSet;
+use engine::field::{Field, Takes};
+use leptos::prelude::*;
+
+use crate::derived::derived;
+use crate::draft::use_draft;
+use crate::field::{ChoiceField, CountField, NumberField, StandIn};
+use crate::fold::{Fold, Folds};
+use crate::tools::Tool;
+
+/// Which inputs a tool has, and where they stand.
+#[derive(Debug)]
+pub struct Form {
+    /// The tool.
+    pub tool: Tool,
+    /// What they are inputs of, and where they are read.
+    pub title: (&'static str, &'static str),
+    /// The fields that always stand open, in the order of the ten-second path: at most eight.
+    pub first: &'static [Field],
+    /// The rest, by group.
+    pub groups: &'static [(&'static str, &'static [Field])],
+    /// The word above a field: at most twelve letters or so, contained in the field's name.
+    pub short: fn(Field) -> &'static str,
+}
+
+/// What is said beside fields.
+#[derive(Clone)]
+pub struct Hints {
+    /// What stands in while a field is blank.
+    pub stands_in: Told<StandIn>,
+    /// What waits for a field, while it is blank.
+    pub waits: Told<String>,
+    /// What else is said under it.
+    pub note: Told<String>,
+}
+
+/// Something told of a field, again at each change of what it hangs on.
+pub type Told<T> = Arc<dyn Fn(Field) -> Option<T> + Send + Sync>;
+
+impl Form {
+    /// The fold that holds everything but the first fields.
+    fn more(&self) -> String {
+        format!("{}/more", self.tool.key())
+    }
+
+    /// Opens what holds `field`, and puts the caret into it.
+    pub fn go_to(&self, folds: Folds, field: Field) {
+        if !self.first.contains(&field) {
+            folds.open(&self.more());
+        }
+        let id = format!("{}-{}", self.tool.key(), field.key());
+        // Once the fold has put its fields up.
+        request_animation_frame(move || crate::field::focus(&id));
+    }
+}
+
+/// The inputs of a tool.
+pub fn form(form: &'static Form, hints: &Hints) -> AnyView {
+    let draft = use_draft();
+    let says = derived(move || {
+        let blank = |field: &&Field| draft.with(|pads| pads.typed((form.tool, **field)).text.is_empty());
+        let rest = || form.groups.iter().flat_map(|(_, fields)| fields.iter());
+        match rest().count() - rest().filter(blank).count() {
+            0 => "each lets more checks speak".to_owned(),
+            entered => format!("{entered} of {} entered", rest().count()),
+        }
+    });
+    let first: Vec<AnyView> = form.first.iter().map(|field| one(form, *field, hints)).collect();
+    let hints = hints.clone();
+    let groups = move || {
+        let group = |(title, fields): &(&'static str, &'static [Field])| {
+            let fields: Vec<AnyView> = fields.iter().map(|field| one(form, *field, &hints)).collect();
+            view! {
+                <h3 class="group">{*title}</h3>
+                <div class="fields">{fields}</div>
+            }
+            .into_any()
+        };
+        form.groups.iter().map(group).collect::<Vec<AnyView>>()
+    };
+    view! {
+        <h2 class="sub">{form.title.0} " " <span>{form.title.1}</span></h2>
+        <div class="fields">{first}</div>
+        {(!form.groups.is_empty()).then(|| view! { <Fold id=form.more() title="More" says=says>{groups()}</Fold> })}
+    }
+    .into_any()
+}
+
+fn one(form: &'static Form, field: Field, hints: &Hints) -> AnyView {
+    let (tool, label) = (form.tool, (form.short)(field));
+    let told = |told: &Told<String>| {
+        let told = told.clone();
+        derived(move || told(field))
+    };
+    let stands_in = hints.stands_in.clone();
+    let stands_in = derived(move || stands_in(field));
+    let asks = told(&hints.waits);
+    match field.takes() {
+        Takes::Number { .. } => {
+            let note = told(&hints.note);
+            view! { <NumberField tool=tool field=field label=label assumed=stands_in asks=asks note=note/> }.into_any()
+        }
+        Takes::Whole { .. } => view! { <CountField tool=tool field=field label=label asks=asks/> }.into_any(),
+        Takes::Choice(_) => view! { <ChoiceField tool=tool field=field label=label assumed=stands_in/> }.into_any(),
+    }
+}
+
+/// The same fields once more, of something else of the same kind, such as a second controller: in a pad of its own.
+pub fn of_another(other: Tool, fields: &[Field], short: fn(Field) -> &'static str) -> AnyView {
+    let one = |field: &Field| {
+        let (field, label) = (*field, short(*field));
+        match field.takes() {
+            Takes::Number { .. } => {
+                view! { <NumberField tool=other field=field label=label of=other.name()/> }.into_any()
+            }
+            Takes::Whole { .. } => {
+                view! { <CountField tool=other field=field label=label of=other.name()/> }.into_any()
+            }
+            Takes::Choice(_) => view! { <ChoiceField tool=other field=field label=label of=other.name()/> }.into_any(),
+        }
+    };
+    let fields: Vec<AnyView> = fields.iter().map(one).collect();
+    view! {
+        <h3 class="group">{other.name()}</h3>
+        <div class="fields">{fields}</div>
+    }
+    .into_any()
+}
+
+/// What waits for `field`: the answer, where `answer` lacks it, else a check that lacks nothing but it.
+pub fn waits(field: Field, answer: FieldSet, others: impl Iterator<Item = FieldSet>) -> Option<String> {
+    if !answer.is_empty() {
+        return answer.contains(field).then(|| "the answer waits for this".to_owned());
+    }
+    let mut alone = others.filter(|asks| asks.len() == 1 && asks.contains(field));
+    alone.next().map(|_| "a check waits for this".to_owned())
+}
+
+/// Names of fields, as in "Voc, Record low and Input limit".
+pub fn names(fields: FieldSet) -> String {
+    let names: Vec<&str> = fields.iter().map(Field::name).collect();
+    match names.split_last() {
+        None => String::new(),
+        Some((one, [])) => (*one).to_owned(),
+        Some((last, before)) => format!("{} and {last}", before.join(", ")),
+    }
+}
+
+/// A field as it was entered, in the unit the person chose.
+pub fn as_entered(pad: &impl engine::pad::Pad, field: Field) -> Option<String> {
+    let (text, unit) = pad.typed(field);
+    let reading = field.read(text, unit).ok()??;
+    Some(engine::show::given(engine::quantity::Amount { number: reading.number(), unit: reading.unit() }))
+}
