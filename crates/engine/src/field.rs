@@ -352,6 +352,85 @@ fields! {
     ]);
     /// Equal conductors side by side for each pole.
     ConductorsInParallel, "Conductors in parallel", whole(1, 8);
+    /// Which pole of the direct current is earthed.
+    Earthing, "Earthing", Takes::Choice(&[
+        ("negative", "negative earthed"),
+        ("positive", "positive earthed"),
+        ("floating", "neither earthed"),
+    ]);
+    /// Whether module frames, racks and cases are joined to earth.
+    FramesBonded, "Frames bonded", Takes::Choice(&[
+        ("no", "not all of them"),
+        ("yes", "all joined to earth"),
+    ]);
+    /// Whether a fault to earth of the array is found and told, or opened.
+    GroundFault, "Ground-fault protection", Takes::Choice(&[
+        ("no", "none"),
+        ("yes", "fitted"),
+    ]);
+    /// Surge arresters of the array's circuit.
+    Arresters, "Surge arresters", Takes::Choice(&[
+        ("none", "none"),
+        ("one", "at the controller"),
+        ("both", "at both ends"),
+    ]);
+    /// Where an inverter joins its neutral to earth.
+    InverterBond, "Bond in the inverter", Takes::Choice(&[
+        ("none", "none"),
+        ("fixed", "always"),
+        ("switched", "opens when passing through"),
+    ]);
+    /// Voltage of the alternating side.
+    AcVolts, "AC voltage", number(Unit::Volt, 90.0, 500.0);
+    /// Whether the panel joins neutral and earth.
+    PanelBond, "Bond in the panel", Takes::Choice(&[
+        ("no", "neutral and earth apart"),
+        ("yes", "joined there"),
+    ]);
+    /// How the legs of the panel are fed.
+    PanelLegs, "Panel legs", Takes::Choice(&[
+        ("single", "one leg"),
+        ("joined", "two legs on one 120 V source"),
+        ("split", "two legs, 120/240 V source"),
+    ]);
+    /// Whether two circuits of the panel share a neutral.
+    Multiwire, "Multiwire circuits", Takes::Choice(&[
+        ("no", "none share a neutral"),
+        ("yes", "some share a neutral"),
+    ]);
+    /// Whether the grid can ever feed the panel.
+    GridFeeds, "Grid feeds the panel", Takes::Choice(&[
+        ("no", "never"),
+        ("yes", "it can"),
+    ]);
+    /// Whether a transfer switch keeps grid and inverter apart.
+    TransferSwitch, "Transfer switch", Takes::Choice(&[
+        ("no", "none"),
+        ("yes", "fitted"),
+    ]);
+    /// Whether the generator joins its neutral to its frame.
+    GeneratorBond, "Bond in the generator", Takes::Choice(&[
+        ("no", "floating neutral"),
+        ("yes", "neutral joined to frame"),
+    ]);
+    /// Whether what transfers between inverter and generator opens the neutral too.
+    NeutralSwitched, "Neutral switched", Takes::Choice(&[
+        ("no", "neutral stays joined"),
+        ("yes", "neutral is switched too"),
+    ]);
+    /// Greatest power of a source that is not the sun.
+    SourcePower, "Rated power", number(Unit::Watt, 1.0, 500_000.0);
+    /// Voltage of such a source when nothing loads it and it runs as fast as it can.
+    OverspeedVolts, "Open-circuit volts at overspeed", number(Unit::Volt, 1.0, 2000.0);
+    /// Power of the load that takes what such a source gives when the bank is full.
+    DumpLoad, "Dump load", number(Unit::Watt, 0.0, 500_000.0);
+    /// Power that the inverter gives for as long as it likes.
+    InverterContinuous, "Inverter continuous", number(Unit::Watt, 1.0, 500_000.0);
+    /// Whether a source can be cut off under load, within reach.
+    Isolator, "Isolator within reach", Takes::Choice(&[
+        ("no", "none"),
+        ("yes", "opens under load"),
+    ]);
 }
 
 /// What a range in percent for each kelvin is multiplied by where volts or amps for each kelvin are typed:

@@ -31,6 +31,7 @@ pub mod run;
 pub mod sharing;
 pub mod shelf;
 pub mod show;
+pub mod site;
 pub mod source;
 pub mod string;
 pub mod typed;

@@ -103,6 +103,10 @@ works! {
     EN_50618: "EN 50618", "Electric cables for photovoltaic systems", "2014";
     /// Small circuit-breakers.
     IEC_60898: "IEC 60898-1", "Circuit-breakers for overcurrent protection for household and similar installations", "2015";
+    /// Installations with PV. From memory.
+    IEC_60364_7_712: "IEC 60364-7-712", "Low-voltage electrical installations: photovoltaic (PV) systems", "2017";
+    /// Installations fed by generating sets. From memory.
+    IEC_60364_5_55: "IEC 60364-5-55", "Low-voltage electrical installations: other equipment, generating sets", "2011+A1";
     /// Fuses.
     IEC_60269: "IEC 60269-1", "Low-voltage fuses: general requirements", "2006";
 }

@@ -218,7 +218,8 @@ impl Ask {
     }
 
     /// Whether each block guards itself: as said, or as the pack's limits that were entered say.
-    pub(super) fn guards_itself(&self) -> Option<bool> {
+    #[must_use]
+    pub fn guards_itself(&self) -> Option<bool> {
         match self.own_protection {
             Entry::Typed(said) => Some(said == YesNo::Yes),
             Entry::Unread => None,

@@ -197,6 +197,12 @@ impl<Id> Check<Id> {
         (group, self.margin.map_or(0.0, Percent::get))
     }
 
+    /// The same check under another name.
+    pub fn named<Other>(self, id: Other) -> Check<Other> {
+        let Self { id: _, cost, verdict, value, limit, margin, reserve, asks, assumed } = self;
+        Check { id, cost, verdict, value, limit, margin, reserve, asks, assumed }
+    }
+
     /// How far the value stands from the limit, in the unit of both; negative past it. `None` where the check asks.
     pub fn room(&self) -> Option<Amount> {
         let (value, limit) = (self.value?, self.limit?);

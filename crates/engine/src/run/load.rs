@@ -99,6 +99,13 @@ pub(super) fn working(ask: &Ask, kind: Kind, basis: &mut Basis, steps: &mut impl
     }
 }
 
+/// What flows in the run, without any factor. `None` where an input is missing.
+#[must_use]
+pub fn working_current(ask: &Ask) -> Option<Amps> {
+    let mut basis = Basis::default();
+    working(ask, ask.kind(&mut basis)?, &mut basis, &mut crate::check::Silent)
+}
+
 /// The currents of the run by the rule of its kind.
 pub(super) fn load(
     ask: &Ask,

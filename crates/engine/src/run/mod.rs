@@ -22,7 +22,7 @@ pub use bank_fault::Fault;
 pub use carry::Ampacity;
 pub use kind::{FromPower, Kind, Rule};
 pub use landing::{Landing, landing};
-pub use load::Load;
+pub use load::{Load, working_current};
 pub use poles::{poles, voltage_asked, voltage_rating};
 pub use precharge::Precharge;
 pub use reach::{Reach, reach};

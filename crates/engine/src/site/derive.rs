@@ -1,0 +1,246 @@
+//! What each part asks, with the figures that follow from other parts put in where nobody typed them.
+//!
+//! What was typed always goes first: a figure that follows from others only stands where a field is blank.
+
+use super::Site;
+use super::part::{Part, PartKind};
+use super::view::{Subject, View};
+use crate::bank;
+use crate::entry::Entry;
+use crate::field::Field;
+use crate::pad::Pad;
+use crate::quantity::{Amps, Count, Ohms, Volts, Watts};
+use crate::run::{self, Kind};
+use crate::string;
+
+/// The figure that was typed, else the one that follows.
+fn else_from<T: Copy>(entry: Entry<T>, follows: Option<T>) -> Entry<T> {
+    match (entry, follows) {
+        (Entry::Blank, Some(value)) => Entry::Typed(value),
+        (entry, _) => entry,
+    }
+}
+
+/// What the checks of `array` read: its own figures, its controller's, and what the bank is charged to.
+#[must_use]
+pub fn string_ask(site: &Site, array: &Part) -> string::Ask {
+    let mut ask = string::Ask::read(&View::new(site, Subject::Part(array.id)));
+    // The bank's absorb voltage at 25 °C: a warm bank with compensation is charged to less, never to more.
+    let charged_to = || Some(bank::window(&bank_of(site)?)?.absorb);
+    if ask.controller.highest_charge == Entry::Blank {
+        ask.controller.highest_charge = else_from(Entry::Blank, charged_to());
+    }
+    ask
+}
+
+fn bank_of(site: &Site) -> Option<bank::Ask> {
+    site.first(PartKind::Bank).map(|part| bank_ask(site, part))
+}
+
+/// What the checks of `part`, a bank, read: its own figures and those of everything on its bus.
+#[must_use]
+pub fn bank_ask(site: &Site, part: &Part) -> bank::Ask {
+    let view = View::new(site, Subject::Part(part.id));
+    let mut ask = bank::Ask::read(&view);
+    let output = |part: &Part| part.entries.entry::<Amps>(Field::OutputCurrent);
+    ask.charge_current = match ask.charge_current {
+        Entry::Blank => sum(site.of_kind(PartKind::Controller).map(output)),
+        typed => typed,
+    };
+    // The highest that any controller's output can reach: the bus sees the worst of them.
+    let limits =
+        || site.of_kind(PartKind::Controller).map(|part| part.entries.entry::<Volts>(Field::ControllerOutputLimit));
+    ask.controller_output_limit = greatest(limits());
+    // The strictest of several inverters and panels counts.
+    let inverters = |field| site.of_kind(PartKind::Inverter).map(move |part| part.entries.entry::<Volts>(field));
+    ask.inverter_low = greatest(inverters(Field::InverterLow));
+    ask.inverter_high = least(inverters(Field::InverterHigh));
+    let panels = |field| site.of_kind(PartKind::DcPanel).map(move |part| part.entries.entry::<Volts>(field));
+    ask.loads_low = greatest(panels(Field::LoadsLow));
+    ask.loads_high = least(panels(Field::LoadsHigh));
+    ask
+}
+
+/// The sum. Blank where one is blank, unread where one is unread.
+fn sum(entries: impl Iterator<Item = Entry<Amps>>) -> Entry<Amps> {
+    let mut total = None;
+    for entry in entries {
+        match entry {
+            Entry::Typed(value) => total = Some(total.unwrap_or_default() + value),
+            other => return other,
+        }
+    }
+    total.map_or(Entry::Blank, Entry::Typed)
+}
+
+/// The greatest. Blank or unread where one is: what is not known may be greater.
+fn greatest(entries: impl Iterator<Item = Entry<Volts>>) -> Entry<Volts> {
+    extreme(entries, Volts::max)
+}
+
+/// The least. Blank or unread where one is.
+fn least(entries: impl Iterator<Item = Entry<Volts>>) -> Entry<Volts> {
+    extreme(entries, Volts::min)
+}
+
+fn extreme(entries: impl Iterator<Item = Entry<Volts>>, of: fn(Volts, Volts) -> Volts) -> Entry<Volts> {
+    let mut found = None;
+    for entry in entries {
+        match entry {
+            Entry::Typed(value) => found = Some(found.map_or(value, |before| of(before, value))),
+            other => return other,
+        }
+    }
+    found.map_or(Entry::Blank, Entry::Typed)
+}
+
+/// The kind of the run that leads from a part.
+#[must_use]
+pub const fn run_kind(part: &Part) -> Option<Kind> {
+    Some(match part.kind {
+        PartKind::Array => Kind::PvArray,
+        PartKind::OtherSource | PartKind::Controller => Kind::ControllerOutput,
+        PartKind::Bank => Kind::BankMain,
+        PartKind::Inverter => Kind::InverterFeed,
+        PartKind::DcPanel => Kind::DcFeeder,
+        PartKind::DcCircuit => Kind::DcBranch,
+        PartKind::AcPanel => Kind::AcOutput,
+        PartKind::Generator => Kind::Generator,
+        PartKind::Bus | PartKind::Load => return None,
+    })
+}
+
+/// What the checks of the run that leads from `part` read. `None` where none does.
+#[must_use]
+pub fn run_ask(site: &Site, part: &Part) -> Option<run::Ask> {
+    let kind = run_kind(part)?;
+    part.run.as_ref()?;
+    let mut ask = run::Ask::read(&View::new(site, Subject::Run(part.id)));
+    ask.kind = else_from(ask.kind, Some(kind));
+    let told = ask.current != Entry::Blank || ask.power != Entry::Blank;
+    if !told {
+        match load(site, part) {
+            Some(Carries::Amps(current)) => ask.current = current,
+            Some(Carries::Watts(power)) => ask.power = power,
+            None => {}
+        }
+    }
+    if ask.voltage == Entry::Blank {
+        ask.voltage = voltage(site, part);
+    }
+    if kind.on_bank() && ask.bank_resistance == Entry::Blank {
+        ask.bank_resistance = bank_of(site).and_then(|bank| least_resistance(&bank)).map_or(Entry::Blank, Entry::Typed);
+    }
+    Some(ask)
+}
+
+/// What a run carries, where other parts tell.
+enum Carries {
+    Amps(Entry<Amps>),
+    Watts(Entry<Watts>),
+}
+
+fn load(site: &Site, part: &Part) -> Option<Carries> {
+    let own = |field| part.entries.entry::<Amps>(field);
+    match part.kind {
+        PartKind::Array => {
+            let strings = match part.entries.entry::<Count>(Field::Strings) {
+                Entry::Blank => Entry::of(1.0),
+                entry => entry,
+            };
+            Some(Carries::Amps(times(own(Field::Isc), strings)))
+        }
+        PartKind::Controller => Some(Carries::Amps(own(Field::OutputCurrent))),
+        PartKind::OtherSource => Some(Carries::Watts(part.entries.entry(Field::SourcePower))),
+        PartKind::Bank => Some(Carries::Amps(bank_current(site))),
+        PartKind::Inverter => Some(Carries::Watts(part.entries.entry(Field::InverterContinuous))),
+        PartKind::AcPanel => {
+            let inverter = part.to.and_then(|to| site.part(to)).filter(|to| to.kind == PartKind::Inverter)?;
+            Some(Carries::Watts(inverter.entries.entry(Field::InverterContinuous)))
+        }
+        PartKind::DcPanel => Some(Carries::Amps(circuits(site, part))),
+        PartKind::DcCircuit | PartKind::Generator | PartKind::Bus | PartKind::Load => None,
+    }
+}
+
+fn times(current: Entry<Amps>, count: Entry<Count>) -> Entry<Amps> {
+    match (current, count) {
+        (Entry::Typed(current), Entry::Typed(count)) => Entry::Typed(current * count.get()),
+        (Entry::Unread, _) | (_, Entry::Unread) => Entry::Unread,
+        _ => Entry::Blank,
+    }
+}
+
+/// All circuits of a panel together, where each of them tells its own.
+fn circuits(site: &Site, panel: &Part) -> Entry<Amps> {
+    sum(site.joined_to(panel.id).filter(|part| part.kind == PartKind::DcCircuit).map(|circuit| drawn(site, circuit)))
+}
+
+/// Current of the run that leads from `part`, of direct current.
+fn drawn(site: &Site, part: &Part) -> Entry<Amps> {
+    let Some(ask) = run_ask(site, part) else { return Entry::Blank };
+    run::working_current(&ask).map_or(Entry::Blank, Entry::Typed)
+}
+
+/// The greatest that flows for long, either way: all that charges, or all that draws.
+fn bank_current(site: &Site) -> Entry<Amps> {
+    let charging = sum(site.of_kind(PartKind::Controller).map(|part| part.entries.entry(Field::OutputCurrent)));
+    let draws = sum(site
+        .parts
+        .iter()
+        .filter(|part| matches!(part.kind, PartKind::Inverter | PartKind::DcPanel))
+        .map(|part| drawn(site, part)));
+    match (charging, draws) {
+        (Entry::Typed(charging), Entry::Typed(draws)) => Entry::Typed(charging.max(draws)),
+        // Loads whose sum is not known may be the greater.
+        _ => Entry::Blank,
+    }
+}
+
+/// Nominal voltage of the run that leads from `part`.
+fn voltage(site: &Site, part: &Part) -> Entry<Volts> {
+    match part.kind {
+        PartKind::Array => {
+            let (vmp, series) = (part.entries.entry::<Volts>(Field::Vmp), part.entries.entry::<Count>(Field::Series));
+            match (vmp, series) {
+                (Entry::Typed(vmp), Entry::Typed(series)) => Entry::Typed(vmp * series.get()),
+                (Entry::Unread, _) | (_, Entry::Unread) => Entry::Unread,
+                _ => Entry::Blank,
+            }
+        }
+        PartKind::AcPanel | PartKind::Generator => {
+            let inverter = part
+                .to
+                .and_then(|to| site.part(to))
+                .filter(|to| to.kind == PartKind::Inverter)
+                .or_else(|| site.first(PartKind::Inverter));
+            inverter.map_or(Entry::Blank, |inverter| inverter.entries.entry(Field::AcVolts))
+        }
+        _ => bus_voltage(site),
+    }
+}
+
+/// Nominal voltage of the bank, else the one entered for the bus.
+fn bus_voltage(site: &Site) -> Entry<Volts> {
+    let Some(ask) = bank_of(site) else { return Entry::Blank };
+    match bank::window(&bank::settled(&ask)) {
+        Some(window) => Entry::Typed(window.nominal),
+        None => ask.bus_voltage,
+    }
+}
+
+/// Resistance of the whole bank, new, warm and full, by its chemistry, its capacity and its counts.
+///
+/// R = n · R_cell / p, the least of its chemistry's span.
+///
+/// # Source
+///
+/// [`crate::chemistry`], each figure with its own.
+pub(super) fn least_resistance(ask: &bank::Ask) -> Option<Ohms> {
+    let ask = bank::settled(ask);
+    let figures = ask.chemistry.typed()?.figures();
+    let capacity = ask.cell_capacity.typed()?;
+    let strings = ask.strings.typed().map_or(1.0, Count::get);
+    let cells = bank::window(&ask)?.nominal / figures.nominal;
+    (capacity.get() > 0.0 && strings > 0.0).then(|| figures.resistance(capacity).least * (cells / strings))
+}

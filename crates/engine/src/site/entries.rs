@@ -1,0 +1,78 @@
+//! What was typed into the fields of one part.
+
+use crate::field::Field;
+use crate::pad::Pad;
+use crate::unit::Unit;
+
+/// What stands in one field.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Typed {
+    /// The text, to the letter.
+    pub text: String,
+    /// The unit that was chosen for the field, where one was.
+    pub unit: Option<Unit>,
+}
+
+impl Typed {
+    /// A text in the field's usual unit, or in the one it names itself.
+    #[must_use]
+    pub fn plain(text: &str) -> Self {
+        Self { text: text.to_owned(), unit: None }
+    }
+}
+
+/// What was typed, by field. A list, as there are some dozens at most. A blank text is not kept.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Entries(Vec<(Field, Typed)>);
+
+impl Entries {
+    /// Of texts in the fields' usual units.
+    #[must_use]
+    pub fn of(rows: &[(Field, &str)]) -> Self {
+        let mut entries = Self::default();
+        for (field, text) in rows {
+            entries.set(*field, Typed::plain(text));
+        }
+        entries
+    }
+
+    /// What stands in `field`.
+    #[must_use]
+    pub fn get(&self, field: Field) -> Option<&Typed> {
+        self.0.iter().find(|(one, _)| *one == field).map(|(_, typed)| typed)
+    }
+
+    /// Puts `typed` into `field`; a blank text with no unit takes the entry away.
+    pub fn set(&mut self, field: Field, typed: Typed) {
+        let blank = typed.text.is_empty() && typed.unit.is_none();
+        match self.0.iter_mut().find(|(one, _)| *one == field) {
+            Some(_) if blank => self.0.retain(|(one, _)| *one != field),
+            Some((_, there)) => *there = typed,
+            None if blank => {}
+            None => self.0.push((field, typed)),
+        }
+    }
+
+    /// Every entry, in the order it was first made.
+    pub fn iter(&self) -> impl Iterator<Item = (Field, &Typed)> {
+        self.0.iter().map(|(field, typed)| (*field, typed))
+    }
+
+    /// Whether nothing was entered.
+    #[must_use]
+    pub const fn is_empty(&self) -> bool {
+        self.0.is_empty()
+    }
+
+    /// How many fields hold something.
+    #[must_use]
+    pub const fn len(&self) -> usize {
+        self.0.len()
+    }
+}
+
+impl Pad for Entries {
+    fn typed(&self, field: Field) -> (&str, Option<Unit>) {
+        self.get(field).map_or(("", None), |typed| (&typed.text, typed.unit))
+    }
+}
