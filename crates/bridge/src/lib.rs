@@ -4,6 +4,8 @@
 //!
 //! - [`Kept`] is the layout of today, the same in the browser's storage and in a file.
 //! - [`file`] opens and writes files: size, shape and version are checked, and nothing in a file can make it panic.
+//! - [`site`] does the same for one site.
+//! - [`demo`] holds sites to look at; [`report`] writes a site's checks out.
 //! - `browser` (wasm only) turns it into a structured value for the browser's storage and back.
 //!
 //! Each version that was ever released has a kept example under `tests/kept/`, which must open for ever.
@@ -12,9 +14,12 @@
 
 #[cfg(target_arch = "wasm32")]
 pub mod browser;
+pub mod demo;
 pub mod file;
 mod kept;
 mod refused;
+pub mod report;
+pub mod site;
 
 pub use kept::{Kept, KeptEntry, VERSION};
 pub use refused::Refused;

@@ -424,6 +424,11 @@ fields! {
     OverspeedVolts, "Open-circuit volts at overspeed", number(Unit::Volt, 1.0, 2000.0);
     /// Power of the load that takes what such a source gives when the bank is full.
     DumpLoad, "Dump load", number(Unit::Watt, 0.0, 500_000.0);
+    /// Whether an inverter's capacitors are charged through a resistor before its breaker is closed.
+    Precharged, "Precharged", Takes::Choice(&[
+        ("no", "closed straight onto the bank"),
+        ("yes", "through a resistor first"),
+    ]);
     /// Power that the inverter gives for as long as it likes.
     InverterContinuous, "Inverter continuous", number(Unit::Watt, 1.0, 500_000.0);
     /// Whether a source can be cut off under load, within reach.

@@ -1,8 +1,8 @@
-//! Linehut's build commands: `cargo xtask serve | test | pack | bench | stamp`.
+//! Linehut's build commands: `cargo xtask serve | test | pack | bench | assess | stamp`.
 
 use std::process::ExitCode;
 
-use xtask::command::{bench, pack, serve, stamp, test};
+use xtask::command::{assess, bench, pack, serve, stamp, test};
 
 const USAGE: &str = "\
 cargo xtask <command>
@@ -11,6 +11,7 @@ cargo xtask <command>
   test              install what is missing, then every check there is
   pack              write dist/ (static folder) and dist/linehut.html (one file)
   bench             time the engine, natively and as wasm
+  assess FILE       every check of a stored site: [--json] [--working ID]
   stamp [folder]    list the files of a built page in its sw.js; the build calls this
 ";
 
@@ -22,6 +23,10 @@ fn main() -> ExitCode {
         Some("test") => test::run(rest),
         Some("pack") => pack::run(rest),
         Some("bench") => bench::run(rest),
+        Some("assess") => match assess::run(rest) {
+            Ok(code) => return code,
+            Err(error) => Err(error),
+        },
         Some("stamp") => stamp::run(rest),
         _ => Err(anyhow::anyhow!("{USAGE}")),
     };

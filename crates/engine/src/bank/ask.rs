@@ -117,6 +117,8 @@ pub struct Ask {
     pub volts_apart: Entry<Volts>,
     /// Energy drawn on a usual day.
     pub used_a_day: Entry<WattHours>,
+    /// Whether it is known that no inverter stands on the bus: a room of direct current only.
+    pub without_inverter: bool,
 }
 
 impl Ask {
@@ -165,6 +167,7 @@ impl Ask {
             tie: pad.entry(Field::TieResistance),
             volts_apart: pad.entry(Field::VoltsApart),
             used_a_day: pad.entry(Field::UsedADay),
+            without_inverter: false,
         }
     }
 

@@ -42,6 +42,9 @@ fn usual(ask: &Ask, field: Field, entry: Entry<Volts>, basis: &mut Basis) -> Opt
 
 /// The cut-off that stops first: of the inverter, or of loads on the bus.
 pub(super) fn cut_off(ask: &Ask, basis: &mut Basis) -> Option<Volts> {
+    if ask.without_inverter {
+        return basis.need(Field::LoadsLow, positive(ask.loads_low));
+    }
     let inverter = inverter_low(ask, basis);
     match positive(ask.loads_low) {
         Entry::Blank => inverter,
@@ -54,6 +57,9 @@ pub(super) fn cut_off(ask: &Ask, basis: &mut Basis) -> Option<Volts> {
 
 /// bank-window-high: highest voltage on charge ≤ the inverter's top.
 pub(super) fn high(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+    if ask.without_inverter {
+        return Outcome::DoesNotArise;
+    }
     let value = highest(ask, basis, steps).map(|(volts, _)| volts);
     let limit = inverter_high(ask, basis);
     at_most(value, limit, Field::InverterHigh, ask.inverter_high, "What the inverter tolerates", steps)
@@ -61,7 +67,7 @@ pub(super) fn high(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outc
 
 /// bank-window-high-absorb: the same without equalising, where the bank is equalised.
 pub(super) fn high_absorb(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
-    if let Some((_, Stage::Absorb)) = highest(ask, &mut Basis::default(), &mut Silent) {
+    if ask.without_inverter || matches!(highest(ask, &mut Basis::default(), &mut Silent), Some((_, Stage::Absorb))) {
         return Outcome::DoesNotArise;
     }
     let at = coldest(ask, basis);
@@ -126,6 +132,9 @@ pub(super) fn cap(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outco
 
 /// bank-window-low: lowest voltage in use ≥ every cut-off; above it, a cut-off leaves capacity unused.
 pub(super) fn low(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+    if ask.without_inverter && ask.loads_low == Entry::Blank {
+        return Outcome::DoesNotArise;
+    }
     let value = lowest(ask, basis, steps);
     let limit = cut_off(ask, basis);
     let (Some(value), Some(limit)) = (value, limit) else { return Outcome::Asks };
@@ -142,12 +151,21 @@ pub(super) fn low(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outco
 ///
 /// A PWM controller passes the array's own open voltage on: that is then its output limit.
 pub(super) fn orphan(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+    if ask.without_inverter && ask.loads_high == Entry::Blank {
+        return Outcome::DoesNotArise;
+    }
     let value = basis.need(Field::ControllerOutputLimit, positive(ask.controller_output_limit));
-    let inverter = inverter_high(ask, basis);
     let loads = match finite(ask.loads_high) {
         Entry::Blank => Some(None),
         loads => basis.need(Field::LoadsHigh, positive(loads)).map(Some),
     };
+    if ask.without_inverter {
+        let (Some(value), Some(Some(limit))) = (value, loads) else { return Outcome::Asks };
+        let limit =
+            steps.step("What the loads tolerate", limit, || ("", String::new(), Origin::Entered(Field::LoadsHigh)));
+        return Outcome::Held { value: value.amount(), limit: Limit::at_most(limit) };
+    }
+    let inverter = inverter_high(ask, basis);
     let (Some(value), Some(inverter), Some(loads)) = (value, inverter, loads) else { return Outcome::Asks };
     let value = steps.step("With no bank the bus may rise to", value, || {
         ("", String::new(), Origin::Entered(Field::ControllerOutputLimit))

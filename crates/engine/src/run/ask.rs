@@ -81,6 +81,8 @@ pub struct Ask {
     pub interrupting: Entry<Amps>,
     /// Resistance of the bank, new, warm and full.
     pub bank_resistance: Entry<Ohms>,
+    /// Whether an inverter's capacitors are charged through a resistor before its breaker is closed.
+    pub precharged: Entry<crate::bank::YesNo>,
     /// Which family of codes the site is built to.
     pub family: Entry<CodeFamily>,
 }
@@ -159,6 +161,7 @@ impl Ask {
             breaker_type: pad.choice(Field::BreakerType),
             interrupting: pad.entry(Field::InterruptingRating),
             bank_resistance: pad.entry(Field::BankResistance),
+            precharged: pad.choice(Field::Precharged),
             family: pad.choice(Field::CodeFamily),
         }
     }

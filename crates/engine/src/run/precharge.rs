@@ -1,7 +1,9 @@
 //! precharge: closing an inverter's empty capacitors onto the bank.
 
 use super::{Ask, Kind, assumed};
+use crate::bank::YesNo;
 use crate::check::{Basis, Limit, Origin, Outcome, Steps};
+use crate::entry::Entry;
 use crate::field::Field;
 use crate::quantity::{Amps, Ohms, Quantity, Seconds, Volts, Watts};
 use crate::show;
@@ -67,7 +69,21 @@ pub(super) fn precharge(
     if kind != Kind::InverterFeed {
         return Outcome::DoesNotArise;
     }
-    let Some((_, peak)) = peak(ask, way, basis, steps) else { return Outcome::Asks };
+    let Some((voltage, peak)) = peak(ask, way, basis, steps) else { return Outcome::Asks };
+    let peak = match ask.precharged {
+        Entry::Unread => {
+            basis.ask(Field::Precharged);
+            return Outcome::Asks;
+        }
+        Entry::Typed(YesNo::Yes) => {
+            let resistor = resistor(voltage);
+            steps.step("Through a resistor first", voltage / resistor, || {
+                let put_in = format!("{} / {:.1} Ω", show::given(voltage.amount()), resistor.get());
+                ("V / R", put_in, Origin::Entered(Field::Precharged))
+            })
+        }
+        Entry::Typed(YesNo::No) | Entry::Blank => peak,
+    };
     let makes = steps.step("What the breaker makes onto", rating * MAKES, || {
         let clause = source::CHOSEN.at("end of the usual magnetic trip");
         ("10 · In", format!("10 × {}", show::given(rating.amount())), Origin::Published(clause))
@@ -75,11 +91,16 @@ pub(super) fn precharge(
     Outcome::Held { value: peak.amount(), limit: Limit::at_most(makes) }
 }
 
+/// The smallest resistor sold that lets no more than [`GENTLE`] through.
+fn resistor(voltage: Volts) -> Ohms {
+    let least = voltage / GENTLE;
+    RESISTORS.iter().copied().find(|ohms| *ohms >= least.get()).map_or(least, Ohms::new)
+}
+
 /// How to charge the capacitors of an inverter of `power` on this run. `None` where voltage or bank is not known.
 pub(super) fn advice(ask: &Ask, power: Watts, way: Ohms) -> Option<Precharge> {
     let (voltage, peak) = peak(ask, way, &mut Basis::default(), &mut crate::check::Silent)?;
-    let least = voltage / GENTLE;
-    let resistor = RESISTORS.iter().copied().find(|ohms| *ohms >= least.get()).map_or(least, Ohms::new);
+    let resistor = resistor(voltage);
     let time_constant = Seconds::new(resistor.get() * power.get() * FARADS_A_WATT);
     let resistor_peak = voltage * (voltage / resistor);
     Some(Precharge { peak, resistor, time_constant, wait: time_constant * TIME_CONSTANTS, resistor_peak })

@@ -6,10 +6,11 @@ use super::Site;
 use super::part::{Part, PartKind};
 use super::view::{Subject, View};
 use crate::bank;
+use crate::conductor::{Size, resistance};
 use crate::entry::Entry;
 use crate::field::Field;
 use crate::pad::Pad;
-use crate::quantity::{Amps, Count, Ohms, Volts, Watts};
+use crate::quantity::{Amps, Celsius, Count, Ohms, Volts, Watts};
 use crate::run::{self, Kind};
 use crate::string;
 
@@ -55,6 +56,7 @@ pub fn bank_ask(site: &Site, part: &Part) -> bank::Ask {
     let inverters = |field| site.of_kind(PartKind::Inverter).map(move |part| part.entries.entry::<Volts>(field));
     ask.inverter_low = greatest(inverters(Field::InverterLow));
     ask.inverter_high = least(inverters(Field::InverterHigh));
+    ask.without_inverter = site.first(PartKind::Inverter).is_none();
     let panels = |field| site.of_kind(PartKind::DcPanel).map(move |part| part.entries.entry::<Volts>(field));
     ask.loads_low = greatest(panels(Field::LoadsLow));
     ask.loads_high = least(panels(Field::LoadsHigh));
@@ -129,9 +131,33 @@ pub fn run_ask(site: &Site, part: &Part) -> Option<run::Ask> {
         ask.voltage = voltage(site, part);
     }
     if kind.on_bank() && ask.bank_resistance == Entry::Blank {
-        ask.bank_resistance = bank_of(site).and_then(|bank| least_resistance(&bank)).map_or(Entry::Blank, Entry::Typed);
+        ask.bank_resistance = source_of(site, part).map_or(Entry::Blank, Entry::Typed);
     }
     Some(ask)
+}
+
+/// What stands between the bank's cells and the breaker of the run that leads from `part`: the bank, the bank's own run,
+/// and a panel's feeder, cold. A run whose size nobody entered counts for nothing, as it may be thicker yet.
+fn source_of(site: &Site, part: &Part) -> Option<Ohms> {
+    let bank = site.first(PartKind::Bank)?;
+    let mut all = least_resistance(&bank_ask(site, bank))?;
+    if part.id != bank.id {
+        all = all + cold_way(bank);
+        let feeder = part.to.and_then(|to| site.part(to)).filter(|to| to.kind == PartKind::DcPanel);
+        all = all + feeder.map_or(Ohms::new(0.0), cold_way);
+    }
+    Some(all)
+}
+
+/// Resistance of a run there and back at 20 °C, by its size and length alone.
+fn cold_way(part: &Part) -> Ohms {
+    let Some(run) = &part.run else { return Ohms::new(0.0) };
+    let ask = run::Ask::read(run);
+    let (Some(size), Some(length)) = (ask.size.typed(), ask.length.typed()) else { return Ohms::new(0.0) };
+    let size = Size::of_area(size);
+    let conductor = ask.conductor.typed().unwrap_or_default();
+    let several = ask.parallel.typed().map_or(1.0, Count::get).max(1.0);
+    resistance(conductor, size, Celsius::new(20.0)) / several * (length * 2.0)
 }
 
 /// What a run carries, where other parts tell.

@@ -21,7 +21,8 @@ impl Typed {
     }
 }
 
-/// What was typed, by field. A list, as there are some dozens at most. A blank text is not kept.
+/// What was typed, by field. A list in the order of the fields, as there are some dozens at most. A blank text is not
+/// kept.
 #[derive(Clone, Debug, Default, PartialEq, Eq)]
 pub struct Entries(Vec<(Field, Typed)>);
 
@@ -39,21 +40,22 @@ impl Entries {
     /// What stands in `field`.
     #[must_use]
     pub fn get(&self, field: Field) -> Option<&Typed> {
-        self.0.iter().find(|(one, _)| *one == field).map(|(_, typed)| typed)
+        let at = self.0.binary_search_by_key(&field, |(one, _)| *one).ok()?;
+        Some(&self.0[at].1)
     }
 
     /// Puts `typed` into `field`; a blank text with no unit takes the entry away.
     pub fn set(&mut self, field: Field, typed: Typed) {
         let blank = typed.text.is_empty() && typed.unit.is_none();
-        match self.0.iter_mut().find(|(one, _)| *one == field) {
-            Some(_) if blank => self.0.retain(|(one, _)| *one != field),
-            Some((_, there)) => *there = typed,
-            None if blank => {}
-            None => self.0.push((field, typed)),
+        match self.0.binary_search_by_key(&field, |(one, _)| *one) {
+            Ok(at) if blank => drop(self.0.remove(at)),
+            Ok(at) => self.0[at].1 = typed,
+            Err(_) if blank => {}
+            Err(at) => self.0.insert(at, (field, typed)),
         }
     }
 
-    /// Every entry, in the order it was first made.
+    /// Every entry, in the order of the fields.
     pub fn iter(&self) -> impl Iterator<Item = (Field, &Typed)> {
         self.0.iter().map(|(field, typed)| (*field, typed))
     }

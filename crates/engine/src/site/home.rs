@@ -62,7 +62,9 @@ pub const fn home(field: F) -> Option<Home> {
         | F::StartingHeadroom
         | F::ControllersAtHand
         | F::ControllerOutputLimit => Home::Of(PartKind::Controller),
-        F::InverterLow | F::InverterHigh | F::InverterBond | F::AcVolts => Home::Of(PartKind::Inverter),
+        F::InverterLow | F::InverterHigh | F::InverterBond | F::AcVolts | F::InverterContinuous => {
+            Home::Of(PartKind::Inverter)
+        }
         F::LoadsLow | F::LoadsHigh => Home::Of(PartKind::DcPanel),
         F::PanelBond | F::PanelLegs | F::Multiwire | F::GridFeeds | F::TransferSwitch => Home::Of(PartKind::AcPanel),
         F::GeneratorBond | F::NeutralSwitched => Home::Of(PartKind::Generator),
@@ -85,7 +87,8 @@ pub const fn home(field: F) -> Option<Home> {
         | F::InterruptingRating
         | F::BankResistance
         | F::BreakerType
-        | F::ConductorsInParallel => Home::Run,
+        | F::ConductorsInParallel
+        | F::Precharged => Home::Run,
         _ => Home::Of(PartKind::Bank),
     })
 }

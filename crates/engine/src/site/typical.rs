@@ -261,7 +261,7 @@ fn inverter(site: &mut Site, got: Got) {
 /// `tenths` of a 12 V class, at the bus's own, as typed: 10.5 V of 12 V is 42 at 48 V.
 fn decimal(bus: u32, tenths: u32) -> String {
     let all = bus / 12 * tenths;
-    if all % 10 == 0 { (all / 10).to_string() } else { format!("{}.{}", all / 10, all % 10) }
+    if all.is_multiple_of(10) { (all / 10).to_string() } else { format!("{}.{}", all / 10, all % 10) }
 }
 
 #[cfg(test)]

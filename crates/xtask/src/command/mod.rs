@@ -1,5 +1,6 @@
 //! One file per command.
 
+pub mod assess;
 pub mod bench;
 pub mod pack;
 pub mod serve;
