@@ -59,6 +59,7 @@ fn any_ask(u: &mut Unstructured<'_>, often: u8) -> Result<Ask> {
         breaker_type: pick(u, often, &BreakerType::ALL)?,
         interrupting: quantity(u, often, 100.0, 100_000.0)?,
         bank_resistance: quantity(u, often, 1e-8, 10.0)?,
+        precharged: pick(u, often, &[engine::bank::YesNo::No, engine::bank::YesNo::Yes])?,
         family: pick(u, often, &CodeFamily::ALL)?,
     })
 }

@@ -97,6 +97,7 @@ fn ask(u: &mut Unstructured<'_>) -> Result<Ask> {
         tie: any(u, 0.0, 0.002)?,
         volts_apart: any(u, 0.0, 3.0)?,
         used_a_day: any(u, 0.0, 50_000.0)?,
+        without_inverter: u.ratio(1, 8)?,
     })
 }
 
