@@ -35,6 +35,8 @@ pub struct Answer {
     pub besides: Option<String>,
     /// The picture of it: an empty ruler before a limit or a value is known.
     pub bar: Option<Bar>,
+    /// A second picture, where the answer rests on two limits.
+    pub second: Option<Bar>,
     /// What one tap would enter.
     pub offer: Option<Offer>,
 }
@@ -98,11 +100,13 @@ pub fn answer_view(answer: Memo<Option<Answer>>) -> AnyView {
         Some(words.into_any())
     };
     let bar = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.bar.clone()).map(span_bar));
+    let second = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.second.clone()).map(span_bar));
     view! {
         <section class="answer" aria-label="Answer">
             // A reader is told by the line below, once typing rests: not by every keystroke.
             <div role="status" aria-live="off">{words}</div>
             {bar}
+            {second}
             {offer(answer)}
             {told(answer)}
         </section>

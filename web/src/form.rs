@@ -8,7 +8,7 @@ use leptos::prelude::*;
 
 use crate::derived::derived;
 use crate::draft::use_draft;
-use crate::field::{ChoiceField, CountField, NumberField, StandIn};
+use crate::field::{ChoiceField, CountField, NumberField, StandIn, list_field};
 use crate::fold::{Fold, Folds};
 use crate::tools::Tool;
 
@@ -52,7 +52,7 @@ impl Form {
         if !self.first.contains(&field) {
             folds.open(&self.more());
         }
-        let id = format!("{}-{}", self.tool.key(), field.key());
+        let id = format!("{}-{}", self.tool.pad().key(), field.key());
         // Once the fold has put its fields up.
         request_animation_frame(move || crate::field::focus(&id));
     }
@@ -62,14 +62,14 @@ impl Form {
 pub fn form(form: &'static Form, hints: &Hints) -> AnyView {
     let draft = use_draft();
     let says = derived(move || {
-        let blank = |field: &&Field| draft.with(|pads| pads.typed((form.tool, **field)).text.is_empty());
+        let blank = |field: &&Field| draft.with(|pads| pads.typed((form.tool.pad(), **field)).text.is_empty());
         let rest = || form.groups.iter().flat_map(|(_, fields)| fields.iter());
         match rest().count() - rest().filter(blank).count() {
             0 => "each lets more checks speak".to_owned(),
             entered => format!("{entered} of {} entered", rest().count()),
         }
     });
-    let first: Vec<AnyView> = form.first.iter().map(|field| one(form, *field, hints)).collect();
+    let first = fields_of(form, form.first, hints);
     let hints = hints.clone();
     let groups = move || {
         let group = |(title, fields): &(&'static str, &'static [Field])| {
@@ -90,8 +90,13 @@ pub fn form(form: &'static Form, hints: &Hints) -> AnyView {
     .into_any()
 }
 
+/// Some fields of a form by themselves.
+pub fn fields_of(form: &'static Form, fields: &[Field], hints: &Hints) -> Vec<AnyView> {
+    fields.iter().map(|field| one(form, *field, hints)).collect()
+}
+
 fn one(form: &'static Form, field: Field, hints: &Hints) -> AnyView {
-    let (tool, label) = (form.tool, (form.short)(field));
+    let (tool, label) = (form.tool.pad(), (form.short)(field));
     let told = |told: &Told<String>| {
         let told = told.clone();
         derived(move || told(field))
@@ -106,6 +111,7 @@ fn one(form: &'static Form, field: Field, hints: &Hints) -> AnyView {
         }
         Takes::Whole { .. } => view! { <CountField tool=tool field=field label=label asks=asks/> }.into_any(),
         Takes::Choice(_) => view! { <ChoiceField tool=tool field=field label=label assumed=stands_in/> }.into_any(),
+        Takes::List { .. } => list_field(tool, field, label),
     }
 }
 
@@ -121,6 +127,7 @@ pub fn of_another(other: Tool, fields: &[Field], short: fn(Field) -> &'static st
                 view! { <CountField tool=other field=field label=label of=other.name()/> }.into_any()
             }
             Takes::Choice(_) => view! { <ChoiceField tool=other field=field label=label of=other.name()/> }.into_any(),
+            Takes::List { .. } => list_field(other, field, label),
         }
     };
     let fields: Vec<AnyView> = fields.iter().map(one).collect();

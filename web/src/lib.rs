@@ -5,8 +5,10 @@
 //! - [`shell`] stands around every view; [`route`] says which is open.
 //! - The other modules are components, one noun each. Views hold no formulas.
 
+pub mod air;
 pub mod answer;
 pub mod caution;
+pub mod cells;
 pub mod check_row;
 mod clock;
 pub mod derived;
@@ -22,12 +24,16 @@ pub mod notice;
 pub mod offline;
 pub mod pads;
 pub mod route;
+pub mod run;
+pub mod settings;
 pub mod settled;
 pub mod sheet;
+pub mod shelf;
 pub mod shell;
 pub mod span_bar;
 pub mod string;
 pub mod theme;
+pub mod tool_page;
 pub mod tools;
 pub mod verdict;
 pub mod working;

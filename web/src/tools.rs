@@ -9,6 +9,14 @@ use crate::string::StringTool;
 pub enum Tool {
     /// How many modules in series.
     String,
+    /// How cells make a bank.
+    Cells,
+    /// Which conductor and which breaker.
+    Run,
+    /// What to key into controllers and inverter.
+    Settings,
+    /// What the bank's room needs.
+    AirAndWater,
     /// A second kind of controller, for the layouts of the String tool. A pad of its own, but no page.
     SecondController,
     /// A third kind.
@@ -17,15 +25,20 @@ pub enum Tool {
 
 impl Tool {
     /// Every tool, in the order of the first page.
-    pub const ALL: &'static [Self] = &[Self::String];
+    pub const ALL: &'static [Self] = &[Self::String, Self::Cells, Self::Run, Self::Settings, Self::AirAndWater];
 
     /// Everything that keeps entries under a key of its own: the tools, and the pads that belong to one.
-    const PADS: &'static [Self] = &[Self::String, Self::SecondController, Self::ThirdController];
+    const PADS: &'static [Self] =
+        &[Self::String, Self::Cells, Self::Run, Self::SecondController, Self::ThirdController];
 
     /// The word it is kept and linked under. Never changed once released.
     pub const fn key(self) -> &'static str {
         match self {
             Self::String => "string",
+            Self::Cells => "cells",
+            Self::Run => "run",
+            Self::Settings => "settings",
+            Self::AirAndWater => "air-and-water",
             Self::SecondController => "string-second-controller",
             Self::ThirdController => "string-third-controller",
         }
@@ -38,13 +51,25 @@ impl Tool {
 
     /// The tool whose page has that key.
     pub fn with_page(key: &str) -> Option<Self> {
-        Self::of_key(key).filter(|tool| Self::ALL.contains(tool))
+        Self::ALL.iter().copied().find(|tool| tool.key() == key)
+    }
+
+    /// Whose entries its page shows: Settings and Air and water ask about the bank of Cells.
+    pub const fn pad(self) -> Self {
+        match self {
+            Self::Settings | Self::AirAndWater => Self::Cells,
+            other => other,
+        }
     }
 
     /// Its name on screen.
     pub const fn name(self) -> &'static str {
         match self {
             Self::String => "String",
+            Self::Cells => "Cells",
+            Self::Run => "Run",
+            Self::Settings => "Settings",
+            Self::AirAndWater => "Air and water",
             Self::SecondController => "Second controller",
             Self::ThirdController => "Third controller",
         }
@@ -54,6 +79,10 @@ impl Tool {
     pub const fn question(self) -> &'static str {
         match self {
             Self::String | Self::SecondController | Self::ThirdController => "How many in series?",
+            Self::Cells => "How do cells make a bank?",
+            Self::Run => "Which cable and breaker?",
+            Self::Settings => "What to key in?",
+            Self::AirAndWater => "What does its room need?",
         }
     }
 
@@ -61,6 +90,10 @@ impl Tool {
     pub const fn symbol(self) -> &'static str {
         match self {
             Self::String => "s-string",
+            Self::Cells => "s-cell",
+            Self::Run => "s-run",
+            Self::Settings => "s-bank",
+            Self::AirAndWater => "s-bank",
             Self::SecondController | Self::ThirdController => "s-conv",
         }
     }
@@ -69,6 +102,10 @@ impl Tool {
     pub fn page(self) -> AnyView {
         match self {
             Self::String | Self::SecondController | Self::ThirdController => view! { <StringTool/> }.into_any(),
+            Self::Cells => crate::cells::cells_tool(),
+            Self::Run => crate::run::run_tool(),
+            Self::Settings => crate::settings::settings_tool(),
+            Self::AirAndWater => crate::air::air_tool(),
         }
     }
 }

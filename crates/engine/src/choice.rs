@@ -23,7 +23,7 @@ pub trait Choice: Copy + Sized {
 pub fn words(field: Field, key: &str) -> Option<&'static str> {
     match field.takes() {
         Takes::Choice(list) => list.iter().find(|(one, _)| *one == key).map(|(_, words)| *words),
-        Takes::Number { .. } | Takes::Whole { .. } => None,
+        Takes::Number { .. } | Takes::Whole { .. } | Takes::List { .. } => None,
     }
 }
 

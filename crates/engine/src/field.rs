@@ -26,6 +26,15 @@ pub enum Takes {
         /// The most that can be meant.
         most: u32,
     },
+    /// Several numbers, one after the other, each with or without a unit.
+    List {
+        /// The unit that stands where none is typed.
+        unit: Unit,
+        /// The least that can be meant.
+        least: f64,
+        /// The most that can be meant.
+        most: f64,
+    },
     /// One of a short list: a key that is kept, and the words on screen.
     Choice(&'static [(&'static str, &'static str)]),
 }
@@ -70,6 +79,10 @@ const fn number(unit: Unit, least: f64, most: f64) -> Takes {
 
 const fn whole(least: u32, most: u32) -> Takes {
     Takes::Whole { least, most }
+}
+
+const fn list(unit: Unit, least: f64, most: f64) -> Takes {
+    Takes::List { unit, least, most }
 }
 
 fields! {
@@ -431,6 +444,19 @@ fields! {
     ]);
     /// Power that the inverter gives for as long as it likes.
     InverterContinuous, "Inverter continuous", number(Unit::Watt, 1.0, 500_000.0);
+    /// How cells side by side are joined.
+    ParallelAs, "Parallel as", Takes::Choice(&[
+        ("strings", "whole strings"),
+        ("groups", "groups of cells"),
+    ]);
+    /// Voltages of single cells, rested, in the order of the cells.
+    RestVoltages, "Rest voltages", list(Unit::Volt, 0.0, 100.0);
+    /// Measured capacities of single cells, in the order of the cells.
+    Capacities, "Measured capacities", list(Unit::AmpHour, 0.01, 20_000.0);
+    /// What the meter read after each link of the shelf, in the order of fitting.
+    LinkReadings, "Readings after links", list(Unit::Volt, -2000.0, 2000.0);
+    /// Equal loads at equal distances along a run.
+    LoadsAlong, "Loads along it", whole(1, 50);
     /// Whether a source can be cut off under load, within reach.
     Isolator, "Isolator within reach", Takes::Choice(&[
         ("no", "none"),
@@ -461,7 +487,7 @@ impl Field {
             Takes::Number { unit, .. } => {
                 Unit::ALL.iter().copied().filter(|other| other.dimension() == unit.dimension()).collect()
             }
-            Takes::Whole { .. } | Takes::Choice(_) => Vec::new(),
+            Takes::Whole { .. } | Takes::Choice(_) | Takes::List { .. } => Vec::new(),
         }
     }
 
@@ -486,8 +512,24 @@ impl Field {
                 let reading = typed::read(text, Unit::One)?;
                 reading.whole_within(least, most).map(Some)
             }
-            Takes::Choice(_) => Err(Refusal::NotANumber { text: text.to_owned() }),
+            Takes::Choice(_) | Takes::List { .. } => Err(Refusal::NotANumber { text: text.to_owned() }),
         }
+    }
+
+    /// Reads several numbers that were typed or pasted into it.
+    ///
+    /// # Errors
+    ///
+    /// The first that was not understood: its place, from 1, and why.
+    pub fn list<Q: Quantity>(self, text: &str) -> Result<Vec<Q>, (usize, Refusal)> {
+        let Takes::List { unit, least, most } = self.takes() else { return Ok(Vec::new()) };
+        let mut all = Vec::new();
+        for (place, item) in typed::list::read_list(text, unit).into_iter().enumerate() {
+            let read = item.reading.and_then(|reading| reading.within(least, most, unit));
+            let quantity = read.and_then(|reading| reading.quantity().ok_or(Refusal::NotANumber { text: item.text }));
+            all.push(quantity.map_err(|refusal| (place + 1, refusal))?);
+        }
+        Ok(all)
     }
 
     /// Reads what was typed as a quantity. A blank field is [`Entry::Blank`]; a refused one is [`Entry::Unread`], and
@@ -506,7 +548,7 @@ impl Field {
     pub const fn dimension(self) -> Option<Dimension> {
         match self.takes() {
             Takes::Number { unit, .. } => Some(unit.dimension()),
-            Takes::Whole { .. } | Takes::Choice(_) => None,
+            Takes::Whole { .. } | Takes::Choice(_) | Takes::List { .. } => None,
         }
     }
 }
@@ -533,6 +575,15 @@ mod tests {
         assert_eq!(Field::Series.entry::<Count>("3", None), Entry::of(3.0));
         assert_eq!(Field::RecordLow.entry::<Celsius>("−40 F", None), Entry::of(-40.0));
         assert_eq!(Field::PmaxCoefficient.entry::<PercentPerKelvin>("-0.35", None), Entry::of(-0.35));
+    }
+
+    #[test]
+    fn a_list_names_the_first_that_is_not_understood() {
+        let field = Field::RestVoltages;
+        assert_eq!(field.list("3.31 3,305; 3310 mV"), Ok([3.31, 3.305, 3.31].map(Volts::new).to_vec()));
+        assert_eq!(field.list::<Volts>(""), Ok(Vec::new()));
+        let (place, _) = field.list::<Volts>("3.31 3.3.1 3.3").unwrap_err();
+        assert_eq!(place, 2);
     }
 
     #[test]

@@ -47,7 +47,7 @@ pub fn ChoiceField(
 ) -> impl IntoView {
     let choices = match field.takes() {
         Takes::Choice(choices) => choices,
-        Takes::Number { .. } | Takes::Whole { .. } => &[],
+        Takes::Number { .. } | Takes::Whole { .. } | Takes::List { .. } => &[],
     };
     let known = move |text: &str| choices.iter().any(|(key, _)| *key == text);
     let parts = Parts::new((tool, field), Said { assumed, asks, note }, move |typed| {

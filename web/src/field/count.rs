@@ -43,7 +43,7 @@ pub fn CountField(
     let (least, most) = match field.takes() {
         Takes::Whole { least, most } => (f64::from(least), f64::from(most)),
         Takes::Number { least, most, .. } => (least, most),
-        Takes::Choice(_) => (0.0, 0.0),
+        Takes::Choice(_) | Takes::List { .. } => (0.0, 0.0),
     };
     let stand_in = move || parts.stand_in(said, Unit::One);
     // From the number that stands there, else from the one that stands in, else to the least.

@@ -4,11 +4,13 @@
 
 mod choice;
 mod count;
+mod list;
 mod number;
 mod units;
 
 pub use choice::{ChoiceField, Shape};
 pub use count::CountField;
+pub use list::list_field;
 pub use number::NumberField;
 
 use std::time::Duration;

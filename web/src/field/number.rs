@@ -39,7 +39,7 @@ pub fn NumberField(
     let open = RwSignal::new(false);
     let usual = match field.takes() {
         Takes::Number { unit, .. } => unit,
-        Takes::Whole { .. } | Takes::Choice(_) => engine::unit::Unit::One,
+        Takes::Whole { .. } | Takes::Choice(_) | Takes::List { .. } => engine::unit::Unit::One,
     };
     let stand_in = move || parts.stand_in(said, unit(parts, usual)).map(|number| show::number(number, 6));
     view! {
@@ -82,6 +82,6 @@ fn keypad(field: Field) -> &'static str {
         Takes::Number { unit, .. } if unit.dimension() == Dimension::ConductorSize => "text",
         Takes::Number { .. } => "decimal",
         Takes::Whole { .. } => "numeric",
-        Takes::Choice(_) => "text",
+        Takes::Choice(_) | Takes::List { .. } => "text",
     }
 }

@@ -32,6 +32,7 @@ pub fn answer(pad: &impl Pad, ask: &Ask, checks: &[Check<Requirement>]) -> Optio
         rests: rests(&check, ask),
         besides: besides(checks),
         bar: Some(bar(pad, ask, &check, volts)),
+        second: None,
         offer: offer(&check),
     })
 }

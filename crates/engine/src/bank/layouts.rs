@@ -57,6 +57,18 @@ const TELL_APART: [Requirement; 15] = [
 ];
 
 impl Layout {
+    /// The layout that `ask` holds the counts of. `None` where an input is missing.
+    #[must_use]
+    pub fn of(ask: &Ask) -> Option<Self> {
+        let series = positive(ask.series).typed()?.get();
+        let strings = positive(ask.strings).typed().map_or(1.0, |strings| strings.get());
+        let count = positive(ask.count).typed().map_or(series * strings, |count| count.get());
+        #[expect(clippy::cast_possible_truncation, clippy::cast_sign_loss, reason = "held between 0 and 400")]
+        let whole = |number: f64| number.floor().clamp(0.0, MOST) as u32;
+        let (series, strings) = (whole(series).max(1), whole(strings).max(1));
+        laid_out(&ask.with_counts(series, strings), series, strings, whole(count).saturating_sub(series * strings))
+    }
+
     /// The check of it with this id.
     #[must_use]
     pub fn check(&self, requirement: Requirement) -> Option<&Check<Requirement>> {

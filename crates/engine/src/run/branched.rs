@@ -220,6 +220,23 @@ pub fn solve_cables(supply: Behind, laid: &Laid, stretches: &[Stretch<Cable>]) -
     Err(BranchedError::NotSettled)
 }
 
+/// Equal loads at equal distances along the run, the last at its far end, which share its current alike. The distance
+/// between two, and the circuit solved. `None` where an input is missing, or the circuit has no solution.
+#[must_use]
+pub fn evenly(ask: &super::Ask, count: u32) -> Option<(Metres, Branched)> {
+    let found = super::size(ask).ok()?;
+    let mut basis = crate::check::Basis::default();
+    let family = ask.family(&mut basis)?;
+    let laid = ask.laid(&mut basis, found.kind, family)?;
+    let several = f64::from(count.max(1));
+    let step = ask.length.typed()? / several;
+    let way = Cable { length: step, conductor: found.conductor? };
+    let draw = Draw::Current(found.load.working / several);
+    let stretches: Vec<Stretch<Cable>> = (0..count.max(1) as usize).map(|from| Stretch { from, way, draw }).collect();
+    let supply = Behind { emf: ask.voltage.typed()?, resistance: Ohms::new(0.0) };
+    Some((step, solve_cables(supply, &laid, &stretches).ok()?))
+}
+
 #[cfg(test)]
 mod tests {
     use super::*;
@@ -262,6 +279,27 @@ mod tests {
         // 24 A at 70 °C: at 12 A 40 °C. 7.41 mΩ/m · 1.0786 · 8 m · 12 A.
         let volts = 12.0 - found.unwrap().places[0].volts.get();
         assert!((volts - 0.007_41 * 1.0786 * 8.0 * 12.0).abs() < 1e-9, "{volts}");
+    }
+
+    #[test]
+    fn equal_loads_along_a_run_lose_less_than_all_at_its_end() {
+        use crate::entry::Entry;
+        let ask = super::super::Ask {
+            kind: Entry::Typed(super::super::Kind::DcBranch),
+            current: Entry::of(6.0),
+            voltage: Entry::of(12.0),
+            length: Entry::of(12.0),
+            size: Entry::of(4.0),
+            ..super::super::Ask::default()
+        };
+        let end = |count| {
+            let (step, found) = evenly(&ask, count).unwrap();
+            assert!((step.get() * f64::from(count) - 12.0).abs() < 1e-9);
+            found.places.last().unwrap().lost.get()
+        };
+        // By hand, at one resistance: n loads lose (n + 1) / 2n of what all at the end lose; warmth adds a little.
+        let ratio = end(3) / end(1);
+        assert!((ratio - 2.0 / 3.0).abs() < 0.02, "{ratio}");
     }
 
     #[test]

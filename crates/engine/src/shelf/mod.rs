@@ -11,6 +11,7 @@
 //!
 //! A one-row shelf cannot bring both take-off posts to one side, as no link skips a cell.
 
+mod asked;
 mod board;
 mod cell;
 mod cost;
@@ -19,15 +20,18 @@ mod fitting;
 mod ground;
 mod layout;
 mod local;
+mod reading;
 mod refused;
 mod turns;
 mod wiring;
 
+pub use asked::{Asked, Lacks, asked, usual};
 pub use board::{MOST_PLACES, Shelf, Stand};
 pub use cell::{Cell, CellVolts, PlusOn, Pole, Posts, Spot, Turn};
 pub use cost::Cost;
 pub use fitting::{BURNS, Caution, Meter, Step, steps};
 pub use layout::{Barrier, Cut, Ends, Layout, Link, LinkKind, Lug, Place, Remark, Touch};
+pub use reading::{Says, says};
 pub use refused::ShelfError;
 pub use wiring::{ADVICE, Advice, Family, Parallel, TakeOff, Wiring, advice};
 

@@ -88,7 +88,8 @@ pub const fn home(field: F) -> Option<Home> {
         | F::BankResistance
         | F::BreakerType
         | F::ConductorsInParallel
-        | F::Precharged => Home::Run,
+        | F::Precharged
+        | F::LoadsAlong => Home::Run,
         _ => Home::Of(PartKind::Bank),
     })
 }

@@ -1,0 +1,42 @@
+//! A field that takes several numbers, typed or pasted.
+
+use engine::field::Field;
+use engine::quantity::Volts;
+use leptos::prelude::*;
+
+use super::{Parts, Said};
+use crate::derived::derived;
+use crate::pads::Edit;
+use crate::tools::Tool;
+
+/// A field that takes several numbers, one after the other. What is not understood is named by its place.
+pub fn list_field(tool: Tool, field: Field, label: &'static str) -> AnyView {
+    let none = || derived(|| None);
+    let wrong = derived(move || {
+        let text = crate::draft::use_draft().typed((tool, field)).get().text;
+        // Which quantity plays no part in what can be read.
+        field.list::<Volts>(&text).err().map(|(place, why)| format!("the {place}. of them: {why}"))
+    });
+    let said = Said { assumed: derived(|| None), asks: none(), note: wrong };
+    let parts = Parts::new((tool, field), said, |_| Ok(None));
+    view! {
+        <div class="field wide" class:wrong=move || wrong.get().is_some()>
+            {parts.head(label)}
+            <div class="field-box">
+                <textarea
+                    id=parts.id()
+                    rows="3"
+                    aria-label=field.name()
+                    autocomplete="off"
+                    spellcheck="false"
+                    aria-describedby=derived(move || parts.described_by())
+                    prop:value=derived(move || parts.typed.with(|typed| typed.text.clone()))
+                    on:input=move |event| parts.draft.edit(Edit::Type(parts.place, event_target_value(&event)))
+                    on:blur=move |_| parts.draft.leave()
+                ></textarea>
+            </div>
+            {move || wrong.get().map(|words| view! { <p class="field-note" id=format!("{}-note", parts.id())>{words}</p> })}
+        </div>
+    }
+    .into_any()
+}

@@ -1,0 +1,133 @@
+//! The Run tool: which conductor and which breaker, what is lost on the way, and what a fault would do.
+
+mod answer;
+mod branch;
+mod details;
+mod picture;
+
+use std::sync::Arc;
+
+use engine::field::Field;
+use engine::run::{Ask, Requirement, assess, working};
+use leptos::prelude::*;
+
+use crate::check_row::check_row;
+use crate::derived::memo;
+use crate::draft::use_draft;
+use crate::field::StandIn;
+use crate::fold::Folds;
+use crate::form::{Form, Hints, waits};
+use crate::settled::settled;
+use crate::tool_page::{ToolPage, check_list, tool_page};
+use crate::tools::Tool;
+
+const TOOL: Tool = Tool::Run;
+
+static FORM: Form = Form {
+    tool: TOOL,
+    title: ("The run", "four entries give an answer"),
+    first: &[
+        Field::RunKind,
+        Field::CodeFamily,
+        Field::RunCurrent,
+        Field::RunPower,
+        Field::RunVoltage,
+        Field::RunLength,
+        Field::ConductorSize,
+        Field::Breaker,
+    ],
+    groups: &[
+        (
+            "Cable",
+            &[
+                Field::Conductor,
+                Field::Insulation,
+                Field::Method,
+                Field::Ambient,
+                Field::ConductorsTogether,
+                Field::ConductorsInParallel,
+                Field::Terminals,
+                Field::AllowedDrop,
+            ],
+        ),
+        (
+            "Breaker and bank",
+            &[Field::BreakerType, Field::InterruptingRating, Field::BankResistance, Field::Precharged],
+        ),
+    ],
+    short,
+};
+
+const CAUTIONS: &[&str] = &[
+    "A bank cannot be switched off: it welds a wrench and burns at any voltage. Open and lock its breaker, prove dead \
+     with a meter, insulate tools, and cover what stays live.",
+    "A direct-current arc does not go out. Use breakers and fuses rated for these volts d.c., wired as their maker shows; \
+     a polarised one connected the wrong way round burns instead of opening.",
+];
+
+fn short(field: Field) -> &'static str {
+    match field {
+        Field::RunLength => "Length",
+        Field::ConductorsTogether => "Together",
+        Field::ConductorsInParallel => "In parallel",
+        Field::InterruptingRating => "Interrupting",
+        Field::BankResistance => "Resistance",
+        Field::ConductorSize => "Size",
+        other => other.name(),
+    }
+}
+
+/// The Run tool.
+pub fn run_tool() -> AnyView {
+    let draft = use_draft();
+    let ask = memo(move || draft.with(|pads| Ask::read(&pads.of(TOOL))));
+    let answer = memo(move || draft.with(|pads| ask.with(|ask| answer::answer(&pads.of(TOOL), ask))));
+    let rested = settled(ask);
+    let checks = memo(move || rested.with(assess));
+    let hints = Hints {
+        stands_in: Arc::new(move |field| {
+            ask.with(|ask| engine::run::assumed::of(ask, field)).map(|assumption| StandIn::of(&assumption))
+        }),
+        waits: Arc::new(move |field| {
+            let missing = ask.with(answer::missing);
+            checks.with(|checks| waits(field, missing, checks.iter().map(|check| check.asks)))
+        }),
+        note: Arc::new(|_| None),
+    };
+    let folds = expect_context::<Folds>();
+    let go = Callback::new(move |field: Field| FORM.go_to(folds, field));
+    let rows = move || {
+        rested.with(|ask| {
+            checks.with(|checks| {
+                checks
+                    .iter()
+                    .map(|check| {
+                        let id = format!("run/{}", check.id.id());
+                        check_row(
+                            id,
+                            check.id.name(),
+                            check,
+                            answer::note(ask, check.id),
+                            || working(ask, check.id),
+                            go,
+                        )
+                    })
+                    .collect()
+            })
+        })
+    };
+    tool_page(ToolPage {
+        form: &FORM,
+        answer,
+        working: Box::new(move || {
+            ask.with(|ask| {
+                let worst = answer::on_top(ask).map_or(Requirement::Drop, |check| check.id);
+                working(ask, worst)
+            })
+        }),
+        hints,
+        before: vec![picture::picture(ask)],
+        after: vec![details::on_the_truck(rested), check_list(rows), details::fitting(rested), branch::branch(rested)],
+        cautions: CAUTIONS,
+    })
+}

@@ -1,0 +1,119 @@
+//! The page of a tool: the answer first, then its working, its inputs, its checks, and what else there is.
+
+use engine::check::Step;
+use leptos::prelude::*;
+
+use crate::answer::{Answer, answer_view, ride};
+use crate::caution::Caution;
+use crate::derived::{derived, when};
+use crate::fold::Fold;
+use crate::form::{Form, Hints, form};
+use crate::route::Route;
+use crate::working::Working;
+
+/// What stands on the page of a tool.
+pub struct ToolPage {
+    /// Its inputs.
+    pub form: &'static Form,
+    /// The answer.
+    pub answer: Memo<Option<Answer>>,
+    /// The steps to the number on top, made when they are unfolded.
+    pub working: Box<dyn Fn() -> Vec<Step> + Send + Sync>,
+    /// What is said beside the inputs.
+    pub hints: Hints,
+    /// What stands right of the answer before the inputs, if anything.
+    pub before: Vec<AnyView>,
+    /// What follows the inputs: checks, layouts, lists.
+    pub after: Vec<AnyView>,
+    /// What can hurt, each a paragraph.
+    pub cautions: &'static [&'static str],
+}
+
+/// Said under every caution.
+const LOCAL_CODE: &str = "Local code and a licensed electrician rule; this page decides nothing for them.";
+
+/// The page of a tool.
+pub fn tool_page(page: ToolPage) -> AnyView {
+    let ToolPage { form: inputs, answer, working, hints, before, after, cautions } = page;
+    let working = std::sync::Arc::new(working);
+    view! {
+        <div class="tool">
+            <div class="page-head">
+                <h1 tabindex="-1">{inputs.tool.name()}</h1>
+                <a class="aside" href=Route::Tools.href()>"All tools"</a>
+            </div>
+            <div class="tool-left">
+                {answer_view(answer)}
+                <Fold
+                    id=format!("{}/working", inputs.tool.key())
+                    title="Working"
+                    icon="i-work"
+                    says=derived(|| "how this number is made".to_owned())
+                >
+                    {
+                        let working = working.clone();
+                        move || view! { <Working steps=working()/> }
+                    }
+                </Fold>
+                {before}
+            </div>
+            <div class="tool-right">
+                {ride(answer)}
+                {form(inputs, &hints)}
+                {after}
+                {caution(cautions)}
+            </div>
+        </div>
+    }
+    .into_any()
+}
+
+/// What can hurt, and who rules.
+pub fn caution(cautions: &'static [&'static str]) -> AnyView {
+    let lines: Vec<AnyView> = cautions.iter().map(|line| view! { <p>{*line}</p> }.into_any()).collect();
+    view! {
+        <Caution>
+            {lines}
+            <p>{LOCAL_CODE}</p>
+        </Caution>
+    }
+    .into_any()
+}
+
+/// A list of checks under its head, made again at each change of what `rows` reads.
+pub fn check_list(rows: impl Fn() -> Vec<AnyView> + Send + Sync + 'static) -> AnyView {
+    let rows: Box<dyn Fn() -> Vec<AnyView> + Send + Sync> = Box::new(rows);
+    view! {
+        <h2 class="sub">"Checks" <span>"worst first"</span></h2>
+        <ol class="checks">{rows}</ol>
+    }
+    .into_any()
+}
+
+/// A section that is there while `holds` does.
+pub fn section(
+    title: &'static str,
+    says: &'static str,
+    holds: impl Fn() -> bool + Send + Sync + 'static,
+    body: impl Fn() -> AnyView + Clone + Send + Sync + 'static,
+) -> AnyView {
+    when(holds, move || {
+        let body = body.clone();
+        view! {
+            <section aria-label=title>
+                <h2 class="sub">{title} " " <span>{says}</span></h2>
+                {move || body()}
+            </section>
+        }
+        .into_any()
+    })
+}
+
+/// A list of names and figures.
+pub fn figures(rows: Vec<(String, String)>) -> AnyView {
+    let rows: Vec<AnyView> = rows
+        .into_iter()
+        .map(|(name, figure)| view! { <div><dt>{name}</dt><dd>{figure}</dd></div> }.into_any())
+        .collect();
+    view! { <dl class="figures">{rows}</dl> }.into_any()
+}
