@@ -457,6 +457,99 @@ fields! {
     LinkReadings, "Readings after links", list(Unit::Volt, -2000.0, 2000.0);
     /// Equal loads at equal distances along a run.
     LoadsAlong, "Loads along it", whole(1, 50);
+    /// What is started: a class of load, whose usual figures stand in.
+    StartLoad, "Load", Takes::Choice(&[
+        ("well-pump", "well pump, submersible"),
+        ("surface-pump", "pump on the ground"),
+        ("refrigerator", "refrigerator or freezer"),
+        ("air-compressor", "air compressor"),
+        ("hand-tool", "hand tool or saw, brushes"),
+        ("shop-motor", "table saw or shop motor"),
+        ("washing-machine", "washing machine"),
+        ("microwave", "microwave oven"),
+        ("fan", "fan"),
+        ("heater", "heater or kettle"),
+        ("electronics", "lights and electronics"),
+    ]);
+    /// What it draws while it runs.
+    RunningPower, "Running power", number(Unit::Watt, 0.1, 500_000.0);
+    /// How it starts.
+    StartsAs, "Starts as", Takes::Choice(&[
+        ("resistive", "resistive"),
+        ("electronic", "electronic"),
+        ("fan", "fan"),
+        ("universal", "universal motor"),
+        ("compressor", "compressor"),
+        ("submersible", "submersible pump"),
+        ("induction", "induction motor"),
+    ]);
+    /// Starting over running apparent power.
+    StartingMultiple, "Starting multiple", number(Unit::One, 0.1, 100.0);
+    /// Letter on a motor's nameplate that tells its apparent power with the rotor standing still.
+    CodeLetter, "Code letter", Takes::Choice(&[
+        ("a", "A"),
+        ("b", "B"),
+        ("c", "C"),
+        ("d", "D"),
+        ("e", "E"),
+        ("f", "F"),
+        ("g", "G"),
+        ("h", "H"),
+        ("j", "J"),
+        ("k", "K"),
+        ("l", "L"),
+        ("m", "M"),
+        ("n", "N"),
+        ("p", "P"),
+        ("r", "R"),
+        ("s", "S"),
+        ("t", "T"),
+        ("u", "U"),
+    ]);
+    /// Rated output of a motor.
+    MotorSize, "Motor size", number(Unit::Horsepower, 1.0, 500_000.0);
+    /// Power factor while it starts.
+    StartingPowerFactor, "Starting power factor", number(Unit::One, 0.05, 1.0);
+    /// Power factor while it runs.
+    RunningPowerFactor, "Running power factor", number(Unit::One, 0.05, 1.0);
+    /// How long the start lasts.
+    StartingSeconds, "Starting seconds", number(Unit::Second, 0.0, 1.0);
+    /// How many start at once.
+    HowMany, "How many", whole(1, 50);
+    /// What runs already.
+    AlreadyRunning, "Already running", number(Unit::Watt, 0.0, 500_000.0);
+    /// Apparent power that the inverter gives for the surge time.
+    InverterSurge, "Inverter surge", number(Unit::VoltAmp, 1.0, 1_000_000.0);
+    /// How long the surge lasts.
+    SurgeSeconds, "Surge seconds", number(Unit::Second, 0.0, 1.0);
+    /// Efficiency of the inverter in a surge.
+    InverterEfficiency, "Inverter efficiency", number(Unit::Percent, 10.0, 100.0);
+    /// Voltage at which the inverter lets go.
+    CutOff, "Cut-off", number(Unit::Volt, 1.0, 1000.0);
+    /// Air round the inverter.
+    InverterAir, "Air at the inverter", number(Unit::DegreeCelsius, -40.0, 90.0);
+    /// Height of the site above the sea.
+    Height, "Height", number(Unit::Metre, -450.0, 8000.0);
+    /// Voltage of the bank at rest, as the start begins.
+    BankEmf, "Bank voltage", number(Unit::Volt, 1.0, 1000.0);
+    /// Resistance of cables, links and lugs between bank and inverter, there and back.
+    CableResistance, "Cable resistance", number(Unit::Milliohm, 0.0, 10.0);
+    /// Charge at which it must still start.
+    Charge, "Charge", number(Unit::Percent, 0.0, 100.0);
+    /// Temperature of the bank.
+    BankTemperature, "Bank temperature", number(Unit::DegreeCelsius, -60.0, 70.0);
+    /// Packs side by side that guard themselves.
+    Packs, "Packs", whole(1, 50);
+    /// Trip curve of the breaker between bank and inverter.
+    TripCurve, "Trip curve", Takes::Choice(&[
+        ("b", "B"),
+        ("c", "C"),
+        ("d", "D"),
+    ]);
+    /// Rating of the generator.
+    GeneratorRating, "Generator rating", number(Unit::VoltAmp, 100.0, 1_000_000.0);
+    /// What the charger takes from the generator.
+    ChargerDraw, "Charger draw", number(Unit::VoltAmp, 0.0, 1_000_000.0);
     /// Whether a source can be cut off under load, within reach.
     Isolator, "Isolator within reach", Takes::Choice(&[
         ("no", "none"),

@@ -33,6 +33,7 @@ pub mod shelf;
 pub mod show;
 pub mod site;
 pub mod source;
+pub mod start;
 pub mod string;
 pub mod typed;
 pub mod unit;

@@ -107,6 +107,8 @@ works! {
     IEC_60364_7_712: "IEC 60364-7-712", "Low-voltage electrical installations: photovoltaic (PV) systems", "2017";
     /// Installations fed by generating sets. From memory.
     IEC_60364_5_55: "IEC 60364-5-55", "Low-voltage electrical installations: other equipment, generating sets", "2011+A1";
+    /// Ranges of starting currents by kind of load. From memory; sources differ widely.
+    MOTOR_GUIDES: "motor and generator guides", "Starting multiples and times of motors and other loads, engineering handbooks", "";
     /// Fuses.
     IEC_60269: "IEC 60269-1", "Low-voltage fuses: general requirements", "2006";
 }

@@ -1,0 +1,204 @@
+//! Everything that the checks of a start read.
+
+use super::class::{Class, Kind, Usual, usual, usual_of};
+use crate::bank;
+use crate::choice::Choice;
+use crate::entry::Entry;
+use crate::field::Field;
+use crate::pad::Pad;
+use crate::quantity::{Amps, Celsius, Count, Metres, Ohms, Percent, Quantity, Seconds, VoltAmps, Volts, Watts};
+
+/// A code letter.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct Letter(pub char);
+
+impl Choice for Letter {
+    fn of_key(key: &str) -> Option<Self> {
+        let letter = key.chars().next().filter(|_| key.len() == 1)?;
+        super::code_letter(letter).map(|_| Self(letter.to_ascii_uppercase()))
+    }
+}
+
+/// Trip curve of a small breaker.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Curve {
+    /// Magnetic from 3 times.
+    B,
+    /// Magnetic from 5 times.
+    C,
+    /// Magnetic from 10 times.
+    D,
+}
+
+impl Choice for Curve {
+    fn of_key(key: &str) -> Option<Self> {
+        Some(match key {
+            "b" => Self::B,
+            "c" => Self::C,
+            "d" => Self::D,
+            _ => return None,
+        })
+    }
+}
+
+/// One start, on one inverter, on one bus.
+#[derive(Clone, Copy, Debug, Default, PartialEq)]
+pub struct Ask {
+    /// What starts.
+    pub load: Entry<Class>,
+    /// What it draws while it runs.
+    pub running: Entry<Watts>,
+    /// How many of it start at once.
+    pub how_many: Entry<Count>,
+    /// How it starts.
+    pub starts_as: Entry<Kind>,
+    /// Starting over running apparent power.
+    pub multiple: Entry<Count>,
+    /// Code letter of the motor.
+    pub letter: Entry<Letter>,
+    /// Rated output of the motor.
+    pub motor: Entry<Watts>,
+    /// Power factor while it starts.
+    pub starting_factor: Entry<Count>,
+    /// Power factor while it runs.
+    pub running_factor: Entry<Count>,
+    /// How long the start lasts.
+    pub seconds: Entry<Seconds>,
+    /// What runs already.
+    pub already: Entry<Watts>,
+    /// What the inverter gives for as long as it likes.
+    pub inverter_continuous: Entry<Watts>,
+    /// What it gives for the surge time.
+    pub inverter_surge: Entry<VoltAmps>,
+    /// The surge time.
+    pub surge_seconds: Entry<Seconds>,
+    /// Its efficiency meanwhile.
+    pub efficiency: Entry<Percent>,
+    /// The volts at which it lets go.
+    pub cut_off: Entry<Volts>,
+    /// Air round it.
+    pub inverter_air: Entry<Celsius>,
+    /// Height of the site.
+    pub height: Entry<Metres>,
+    /// The bank at rest, as it starts.
+    pub bank_voltage: Entry<Volts>,
+    /// Its resistance, old, cold and low.
+    pub bank_resistance: Entry<Ohms>,
+    /// Cables, links and lugs there and back.
+    pub cable: Entry<Ohms>,
+    /// Charge at which it must still start.
+    pub charge: Entry<Percent>,
+    /// Temperature of the bank.
+    pub bank_temperature: Entry<Celsius>,
+    /// Packs side by side that guard themselves.
+    pub packs: Entry<Count>,
+    /// What one pack lets pass for long.
+    pub pack_limit: Entry<Amps>,
+    /// What one pack lets pass for a moment.
+    pub pack_peak: Entry<Amps>,
+    /// How long that moment is.
+    pub pack_peak_time: Entry<Seconds>,
+    /// The breaker between bank and inverter.
+    pub breaker: Entry<Amps>,
+    /// Its trip curve.
+    pub curve: Entry<Curve>,
+    /// Rating of the generator.
+    pub generator: Entry<VoltAmps>,
+    /// What the charger takes from it.
+    pub charger: Entry<VoltAmps>,
+    /// The bank by its cells, where its volts were not entered.
+    pub bank: bank::Ask,
+}
+
+impl Ask {
+    /// Reads the fields of the Start tool.
+    #[must_use]
+    pub fn read(pad: &impl Pad) -> Self {
+        Self {
+            load: pad.choice(Field::StartLoad),
+            running: pad.entry(Field::RunningPower),
+            how_many: pad.entry(Field::HowMany),
+            starts_as: pad.choice(Field::StartsAs),
+            multiple: pad.entry(Field::StartingMultiple),
+            letter: pad.choice(Field::CodeLetter),
+            motor: pad.entry(Field::MotorSize),
+            starting_factor: pad.entry(Field::StartingPowerFactor),
+            running_factor: pad.entry(Field::RunningPowerFactor),
+            seconds: pad.entry(Field::StartingSeconds),
+            already: pad.entry(Field::AlreadyRunning),
+            inverter_continuous: pad.entry(Field::InverterContinuous),
+            inverter_surge: pad.entry(Field::InverterSurge),
+            surge_seconds: pad.entry(Field::SurgeSeconds),
+            efficiency: pad.entry(Field::InverterEfficiency),
+            cut_off: pad.entry(Field::CutOff),
+            inverter_air: pad.entry(Field::InverterAir),
+            height: pad.entry(Field::Height),
+            bank_voltage: pad.entry(Field::BankEmf),
+            bank_resistance: pad.entry(Field::BankResistance),
+            cable: pad.entry(Field::CableResistance),
+            charge: pad.entry(Field::Charge),
+            bank_temperature: pad.entry(Field::BankTemperature),
+            packs: pad.entry(Field::Packs),
+            pack_limit: pad.entry(Field::PackDischargeLimit),
+            pack_peak: pad.entry(Field::PackPeak),
+            pack_peak_time: pad.entry(Field::PackPeakTime),
+            breaker: pad.entry(Field::Breaker),
+            curve: pad.choice(Field::TripCurve),
+            generator: pad.entry(Field::GeneratorRating),
+            charger: pad.entry(Field::ChargerDraw),
+            bank: bank::Ask::read(pad),
+        }
+    }
+
+    /// The class of the load, where it was named.
+    #[must_use]
+    pub fn class(&self) -> Option<Class> {
+        self.load.typed()
+    }
+
+    /// The figures typical of this load: by its kind, else by its class.
+    #[must_use]
+    pub fn usual(&self) -> Option<Usual> {
+        match (self.starts_as, self.load) {
+            (Entry::Typed(kind), Entry::Typed(class)) if usual(class).kind == kind => Some(usual(class)),
+            (Entry::Typed(kind), _) => Some(usual_of(kind)),
+            (Entry::Blank, Entry::Typed(class)) => Some(usual(class)),
+            _ => None,
+        }
+    }
+
+    /// Three quarters up the range: sources differ, and the high end is rare.
+    pub(super) fn usual_multiple(&self) -> Option<Count> {
+        let (least, most) = self.usual()?.multiple;
+        Some(Count::new(least + 0.75 * (most - least)))
+    }
+
+    pub(super) fn usual_starting_factor(&self) -> Option<Count> {
+        // A rotor that stands still, where a motor's nameplate was entered and nothing else is known.
+        self.usual().map_or_else(
+            || self.letter.typed().map(|_| Count::new(0.5)),
+            |usual| Some(Count::new(usual.starting_factor)),
+        )
+    }
+
+    pub(super) fn usual_running_factor(&self) -> Option<Count> {
+        self.usual().map(|usual| Count::new(usual.running_factor))
+    }
+
+    pub(super) fn usual_seconds(&self) -> Option<Seconds> {
+        self.usual().map_or_else(|| self.letter.typed().map(|_| Seconds::new(1.0)), |usual| Some(usual.seconds))
+    }
+
+    /// *Chosen*: 2 mΩ, some two metres of 50 mm² and four lugs, there and back.
+    pub(super) fn usual_cable(&self) -> Ohms {
+        Ohms::new(0.002)
+    }
+}
+
+/// A positive number within reason, or nothing that was read.
+pub(super) fn positive<Q: Quantity>(entry: Entry<Q>) -> Entry<Q> {
+    match entry {
+        Entry::Typed(value) if !(1e-12..=1e12).contains(&value.number()) => Entry::Unread,
+        other => other,
+    }
+}
