@@ -2,7 +2,7 @@
 
 #[cfg(not(target_family = "wasm"))]
 use criterion::{Criterion, criterion_group, criterion_main};
-use engine::check::Silent;
+use engine::check::Steps;
 use engine::network::{Behind, Network};
 use engine::quantity::{Amps, Ohms, Volts, Watts};
 use engine::sharing::{Arrangement, Paralleled, share};
@@ -18,7 +18,7 @@ fn sharing(bench: &mut Criterion) {
         let (positive, negative) = arrangement.take_offs(6);
         let bank = Paralleled { strings: &strings, positive_ties: &ties, negative_ties: &ties, positive, negative };
         bench.bench_function(&format!("share 6 strings, {name}"), |run| {
-            run.iter(|| share(black_box(bank), Amps::new(300.0), &mut Silent));
+            run.iter(|| share(black_box(bank), Amps::new(300.0), &mut Steps::silent()));
         });
     }
 }
@@ -47,7 +47,7 @@ fn draws(bench: &mut Criterion) {
     }
     let source = Behind { emf: Volts::new(52.0), resistance: Ohms::new(0.019_96) };
     bench.bench_function("one draw in closed form", |run| {
-        run.iter(|| black_box(source).under(black_box(Watts::new(7491.5)), &mut Silent));
+        run.iter(|| black_box(source).under(black_box(Watts::new(7491.5)), &mut Steps::silent()));
     });
 }
 

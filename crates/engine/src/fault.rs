@@ -79,13 +79,13 @@ impl core::error::Error for FaultError {}
 /// 24 to 27 V behind 2 to 5 mΩ, 1 mΩ of way: 27 V over 3 mΩ at most, 24 V over 6 mΩ at least.
 ///
 /// ```
-/// use engine::check::Silent;
+/// use engine::check::Steps;
 /// use engine::fault::{Bounds, prospective};
 /// use engine::quantity::{Ohms, Volts};
 ///
 /// let emf = Bounds { least: Volts::new(24.0), greatest: Volts::new(27.0) };
 /// let bank = Bounds { least: Ohms::new(0.002), greatest: Ohms::new(0.005) };
-/// let fault = prospective(emf, bank, Bounds::known(Ohms::new(0.001)), &mut Silent)?;
+/// let fault = prospective(emf, bank, Bounds::known(Ohms::new(0.001)), &mut Steps::silent())?;
 /// assert!((fault.greatest.get() - 9000.0).abs() < 1e-9);
 /// assert!((fault.least.get() - 4000.0).abs() < 1e-9);
 /// # Ok::<(), engine::fault::FaultError>(())
@@ -94,7 +94,7 @@ pub fn prospective(
     emf: Bounds<Volts>,
     bank: Bounds<Ohms>,
     way: Bounds<Ohms>,
-    steps: &mut impl Steps,
+    steps: &mut Steps,
 ) -> Result<Prospective, FaultError> {
     let bounds = [(emf.least.get(), emf.greatest.get())]
         .into_iter()
@@ -198,20 +198,15 @@ impl HeatConstant {
 /// 10 mm² of copper under PVC, 1150 A: k·S is 1150 A·√s, so one second.
 ///
 /// ```
-/// use engine::check::Silent;
+/// use engine::check::Steps;
 /// use engine::fault::{Core, longest};
 /// use engine::quantity::{Amps, SquareMillimetres};
 ///
-/// let time = longest(Core::CopperPvc, SquareMillimetres::new(10.0), Amps::new(1150.0), &mut Silent)?;
+/// let time = longest(Core::CopperPvc, SquareMillimetres::new(10.0), Amps::new(1150.0), &mut Steps::silent())?;
 /// assert_eq!(time.get(), 1.0);
 /// # Ok::<(), engine::fault::FaultError>(())
 /// ```
-pub fn longest(
-    core: Core,
-    area: SquareMillimetres,
-    current: Amps,
-    steps: &mut impl Steps,
-) -> Result<Seconds, FaultError> {
+pub fn longest(core: Core, area: SquareMillimetres, current: Amps, steps: &mut Steps) -> Result<Seconds, FaultError> {
     let (k, size, amps) = (HeatConstant::of(core, area).get(), area.get(), current.get());
     work_with([size, amps])?;
     let time = (k * size / amps).powi(2);
@@ -234,7 +229,7 @@ pub fn withstands(
     area: SquareMillimetres,
     current: Amps,
     time: Seconds,
-    steps: &mut impl Steps,
+    steps: &mut Steps,
 ) -> Result<bool, FaultError> {
     if time.get().is_nan() || time.get() < 0.0 {
         return Err(FaultError::NotPossible);
@@ -259,7 +254,7 @@ pub fn least_area(
     core: Core,
     current: Amps,
     time: Seconds,
-    steps: &mut impl Steps,
+    steps: &mut Steps,
 ) -> Result<SquareMillimetres, FaultError> {
     let (amps, seconds) = (current.get(), time.get());
     work_with([amps, seconds])?;
@@ -290,7 +285,7 @@ fn work_with(numbers: [f64; 2]) -> Result<(), FaultError> {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::check::{Silent, Written};
+    use crate::check::Steps;
 
     fn volts(least: f64, greatest: f64) -> Bounds<Volts> {
         Bounds { least: Volts::new(least), greatest: Volts::new(greatest) }
@@ -302,7 +297,7 @@ mod tests {
 
     #[test]
     fn nothing_in_the_way_is_an_error_and_not_infinity() {
-        let fault = |emf, bank, way| prospective(emf, bank, way, &mut Silent);
+        let fault = |emf, bank, way| prospective(emf, bank, way, &mut Steps::silent());
         assert_eq!(fault(volts(24.0, 27.0), ohms(0.0, 0.01), ohms(0.0, 0.0)), Err(FaultError::NoResistance));
         assert_eq!(fault(volts(28.0, 27.0), ohms(0.01, 0.01), ohms(0.0, 0.0)), Err(FaultError::NotPossible));
         assert_eq!(fault(volts(24.0, 27.0), ohms(-0.01, 0.01), ohms(0.0, 0.0)), Err(FaultError::NotPossible));
@@ -316,8 +311,8 @@ mod tests {
         for core in [Core::CopperPvc, Core::CopperXlpe, Core::AluminiumPvc, Core::AluminiumXlpe] {
             for amps in [50.0, 4000.0, 60_000.0] {
                 let (current, time) = (Amps::new(amps), Seconds::new(0.4));
-                let area = least_area(core, current, time, &mut Silent).unwrap();
-                let held = longest(core, area, current, &mut Silent).unwrap();
+                let area = least_area(core, current, time, &mut Steps::silent()).unwrap();
+                let held = longest(core, area, current, &mut Steps::silent()).unwrap();
                 assert!((held.get() - 0.4).abs() < 1e-12, "{core:?} {amps}");
             }
         }
@@ -326,7 +321,7 @@ mod tests {
     #[test]
     fn the_limit_itself_is_withstood_and_no_more() {
         let (area, current) = (SquareMillimetres::new(10.0), Amps::new(1150.0));
-        let lives = |seconds| withstands(Core::CopperPvc, area, current, Seconds::new(seconds), &mut Silent);
+        let lives = |seconds| withstands(Core::CopperPvc, area, current, Seconds::new(seconds), &mut Steps::silent());
         assert_eq!(lives(1.0), Ok(true));
         assert_eq!(lives(1.000_001), Ok(false));
         assert_eq!(lives(f64::NAN), Err(FaultError::NotPossible));
@@ -334,7 +329,8 @@ mod tests {
 
     #[test]
     fn no_current_and_no_conductor_are_errors() {
-        let time = |area, amps| longest(Core::CopperPvc, SquareMillimetres::new(area), Amps::new(amps), &mut Silent);
+        let time =
+            |area, amps| longest(Core::CopperPvc, SquareMillimetres::new(area), Amps::new(amps), &mut Steps::silent());
         assert_eq!(time(10.0, 0.0), Err(FaultError::Nothing));
         assert_eq!(time(0.0, 10.0), Err(FaultError::Nothing));
         assert_eq!(time(-1.0, 10.0), Err(FaultError::NotPossible));
@@ -365,9 +361,9 @@ mod tests {
 
     #[test]
     fn workings_end_in_the_answer() {
-        let mut written = Written::default();
+        let mut written = Steps::written();
         let fault = prospective(volts(24.0, 27.0), ohms(0.002, 0.005), ohms(0.001, 0.001), &mut written).unwrap();
-        let results: Vec<f64> = written.0.iter().map(|step| step.result.number).collect();
+        let results: Vec<f64> = written.steps().iter().map(|step| step.result.number).collect();
         assert_eq!(results, [fault.greatest.get(), fault.least.get()]);
     }
 }

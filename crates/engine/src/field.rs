@@ -673,7 +673,7 @@ mod tests {
     #[test]
     fn a_list_names_the_first_that_is_not_understood() {
         let field = Field::RestVoltages;
-        assert_eq!(field.list("3.31 3,305; 3310 mV"), Ok([3.31, 3.305, 3.31].map(Volts::new).to_vec()));
+        assert_eq!(field.list("3.31 3,31; 3.31 V"), Ok([3.31, 3.31, 3.31].map(Volts::new).to_vec()));
         assert_eq!(field.list::<Volts>(""), Ok(Vec::new()));
         let (place, _) = field.list::<Volts>("3.31 3.3.1 3.3").unwrap_err();
         assert_eq!(place, 2);

@@ -61,18 +61,18 @@ fn possible(pack: Behind) -> bool {
 /// 53.2 V meets 51.2 V through 5 + 5 mΩ of packs and 10 mΩ of cable: 2 V over 20 mΩ.
 ///
 /// ```
-/// use engine::check::Silent;
+/// use engine::check::Steps;
 /// use engine::joining::join;
 /// use engine::network::Behind;
 /// use engine::quantity::{Ohms, Volts};
 ///
 /// let full = Behind { emf: Volts::new(53.2), resistance: Ohms::new(0.005) };
 /// let low = Behind { emf: Volts::new(51.2), ..full };
-/// let rush = join(full, low, Ohms::new(0.010), &mut Silent)?;
+/// let rush = join(full, low, Ohms::new(0.010), &mut Steps::silent())?;
 /// assert!((rush.get() - 100.0).abs() < 1e-9);
 /// # Ok::<(), engine::joining::JoiningError>(())
 /// ```
-pub fn join(from: Behind, into: Behind, link: Ohms, steps: &mut impl Steps) -> Result<Amps, JoiningError> {
+pub fn join(from: Behind, into: Behind, link: Ohms, steps: &mut Steps) -> Result<Amps, JoiningError> {
     let way = from.resistance + into.resistance + link;
     if !possible(from) || !possible(into) || !possible(Behind { emf: from.emf - into.emf, resistance: way }) {
         return Err(JoiningError::NotPossible);
@@ -143,7 +143,7 @@ pub fn in_parallel(packs: &[Behind]) -> Result<Behind, JoiningError> {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::check::Silent;
+    use crate::check::Steps;
 
     fn pack(volts: f64, ohms: f64) -> Behind {
         Behind { emf: Volts::new(volts), resistance: Ohms::new(ohms) }
@@ -152,7 +152,7 @@ mod tests {
     #[test]
     fn it_flows_from_the_higher_to_the_lower() {
         let link = Ohms::new(0.008);
-        let rush = |from, into| join(from, into, link, &mut Silent).unwrap().get();
+        let rush = |from, into| join(from, into, link, &mut Steps::silent()).unwrap().get();
         let (high, low) = (pack(13.2, 0.001), pack(12.8, 0.001));
         assert!((rush(high, low) - 40.0).abs() < 1e-9);
         assert!((rush(low, high) + 40.0).abs() < 1e-9);
@@ -169,7 +169,7 @@ mod tests {
 
     #[test]
     fn nothing_between_unequal_volts_is_an_error_and_not_infinity() {
-        let join = |from, into, link| join(from, into, Ohms::new(link), &mut Silent);
+        let join = |from, into, link| join(from, into, Ohms::new(link), &mut Steps::silent());
         assert!(matches!(join(pack(13.0, 0.0), pack(12.0, 0.0), 0.0), Err(JoiningError::NoResistance { .. })));
         assert_eq!(join(pack(13.0, 0.0), pack(13.0, 0.0), 0.0), Ok(Amps::default()));
         assert_eq!(join(pack(13.0, 0.0), pack(f64::NAN, 0.0), 0.0), Err(JoiningError::NotPossible));

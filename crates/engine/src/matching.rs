@@ -10,6 +10,7 @@
 //!
 //! [`crate::source::KARMARKAR_KARP`]; the form for equal counts from memory.
 
+use crate::order::sort_short;
 use crate::quantity::{AmpHours, Percent};
 
 /// Up to so many cells the deal is the best there is. The most deals to look at are then 15 400, for four groups of three.
@@ -121,10 +122,10 @@ pub fn deal(capacities: &[AmpHours], groups: usize) -> Result<Deal, MatchingErro
         }
     }
     let mut falling: Vec<usize> = (0..capacities.len()).collect();
-    falling.sort_by(|&a, &b| capacities[b].get().total_cmp(&capacities[a].get()));
+    sort_short(&mut falling, |&a, &b| capacities[b].get().total_cmp(&capacities[a].get()));
     let used = capacities.len() / groups * groups;
     let mut spare = falling.split_off(used);
-    spare.sort_unstable();
+    sort_short(&mut spare, Ord::cmp);
 
     let size = |cell: usize| capacities[cell].get();
     let naive = in_turn((0..capacities.len()).filter(|cell| !spare.contains(cell)), groups);
@@ -141,7 +142,7 @@ pub fn deal(capacities: &[AmpHours], groups: usize) -> Result<Deal, MatchingErro
         .iter()
         .map(|cells| {
             let mut cells = cells.clone();
-            cells.sort_unstable();
+            sort_short(&mut cells, Ord::cmp);
             let capacity = cells.iter().map(|&cell| capacities[cell]).sum();
             Group { cells, capacity }
         })
@@ -164,7 +165,7 @@ fn sums(dealt: &[Vec<usize>], size: impl Fn(usize) -> f64) -> Vec<f64> {
     // Summed in the order of the list, so that equal groups have equal sums to the last bit.
     let sum = |cells: &Vec<usize>| {
         let mut cells = cells.clone();
-        cells.sort_unstable();
+        sort_short(&mut cells, Ord::cmp);
         cells.into_iter().map(&size).sum()
     };
     dealt.iter().map(sum).collect()
@@ -187,7 +188,7 @@ struct Part {
 
 impl Part {
     fn sorted(mut sets: Vec<(f64, Vec<usize>)>) -> Self {
-        sets.sort_by(|a, b| b.0.total_cmp(&a.0));
+        sort_short(&mut sets, |a, b| b.0.total_cmp(&a.0));
         Self { sets }
     }
 
@@ -205,7 +206,7 @@ fn differenced(falling: &[usize], groups: usize, size: impl Fn(usize) -> f64) ->
     let mut parts: Vec<Part> =
         falling.chunks(groups).map(|tuple| Part::sorted(tuple.iter().map(|&c| (size(c), vec![c])).collect())).collect();
     while parts.len() > 1 {
-        parts.sort_by(|a, b| a.difference().total_cmp(&b.difference()));
+        sort_short(&mut parts, |a, b| a.difference().total_cmp(&b.difference()));
         let (Some(one), Some(other)) = (parts.pop(), parts.pop()) else { break };
         let joined = one.sets.into_iter().zip(other.sets.into_iter().rev()).map(|((a, mut cells), (b, more))| {
             cells.extend(more);

@@ -133,7 +133,7 @@ impl Module {
     /// # Source
     ///
     /// [`source::IEC_60891`], voltage correction at zero current; [`source::NEC`], 690.7(A).
-    pub fn cold_open_circuit(self, low: Celsius, basis: &mut Basis, steps: &mut impl Steps) -> Option<Volts> {
+    pub fn cold_open_circuit(self, low: Celsius, basis: &mut Basis, steps: &mut Steps) -> Option<Volts> {
         let voc = basis.need(Field::Voc, self.voc);
         let tolerance = basis.assume(Field::VocTolerance, self.voc_tolerance, assumed::VOC_TOLERANCE);
         let coefficient = basis.assume(Field::VocCoefficient, self.voc_coefficient.map(Some), None);
@@ -182,7 +182,7 @@ impl Module {
     /// # Source
     ///
     /// [`source::IEC_60891`]; the difference of coefficients is common practice.
-    pub fn greatest_power_voltage(self, at: Celsius, basis: &mut Basis, steps: &mut impl Steps) -> Option<Volts> {
+    pub fn greatest_power_voltage(self, at: Celsius, basis: &mut Basis, steps: &mut Steps) -> Option<Volts> {
         let vmp = basis.need(Field::Vmp, self.vmp);
         let gamma = basis.assume(Field::PmaxCoefficient, self.pmax_coefficient, assumed::PMAX_COEFFICIENT);
         let alpha = basis.assume(
@@ -240,7 +240,7 @@ impl Module {
     /// Short-circuit current of one module in the brightest sun that the code reckons with.
     ///
     /// I = Isc · factor · (1 + rear gain)
-    pub fn bright_current(self, factor: f64, basis: &mut Basis, steps: &mut impl Steps) -> Option<Amps> {
+    pub fn bright_current(self, factor: f64, basis: &mut Basis, steps: &mut Steps) -> Option<Amps> {
         let isc = basis.need(Field::Isc, self.isc);
         let rear = basis.assume(Field::RearGain, self.rear_gain, assumed::REAR_GAIN);
         let (isc, rear) = (isc?, rear?);
@@ -274,7 +274,7 @@ pub(crate) const fn origin<T: Copy>(field: Field, entry: Entry<T>) -> Origin {
     }
 }
 
-fn corrected(voc: Volts, coefficient: VoltageCoefficient, low: Celsius, steps: &mut impl Steps) -> Volts {
+fn corrected(voc: Volts, coefficient: VoltageCoefficient, low: Celsius, steps: &mut Steps) -> Volts {
     let colder = steps.step("Colder than the rating", RATED_AT - low, || {
         ("25 °C − record low", format!("25 − ({})", show::number(low.get(), 4)), Origin::Entered(Field::RecordLow))
     });

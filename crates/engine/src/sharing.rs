@@ -145,7 +145,7 @@ impl From<NetworkError> for SharingError {
 /// share 60 A as 14 to 12.
 ///
 /// ```
-/// use engine::check::Silent;
+/// use engine::check::Steps;
 /// use engine::network::Behind;
 /// use engine::quantity::{Amps, Ohms, Volts};
 /// use engine::sharing::{Arrangement, Paralleled, share};
@@ -154,12 +154,12 @@ impl From<NetworkError> for SharingError {
 /// let ties = [Ohms::new(0.001)];
 /// let (positive, negative) = Arrangement::SameEnd.take_offs(2);
 /// let bank = Paralleled { strings: &strings, positive_ties: &ties, negative_ties: &ties, positive, negative };
-/// let found = share(bank, Amps::new(52.0), &mut Silent)?;
+/// let found = share(bank, Amps::new(52.0), &mut Steps::silent())?;
 /// assert!((found.currents[0].get() - 28.0).abs() < 1e-9);
 /// assert!((found.greatest_over_even.unwrap() - 28.0 / 26.0).abs() < 1e-9);
 /// # Ok::<(), engine::sharing::SharingError>(())
 /// ```
-pub fn share(bank: Paralleled<'_>, current: Amps, steps: &mut impl Steps) -> Result<Sharing, SharingError> {
+pub fn share(bank: Paralleled<'_>, current: Amps, steps: &mut Steps) -> Result<Sharing, SharingError> {
     let count = bank.strings.len();
     if count == 0 || count > MOST_STRINGS {
         return Err(SharingError::Strings { count });

@@ -1,6 +1,6 @@
 //! Networks that can be done on paper, and every way in which one has no answer.
 
-use engine::check::{Silent, Written};
+use engine::check::Steps;
 use engine::network::{Behind, MOST_NODES, Network, NetworkError, Node};
 use engine::quantity::{Amps, Ohms, Volts, Watts};
 use engine::sharing::{Arrangement, Paralleled, SharingError, TakeOff, share};
@@ -240,7 +240,7 @@ fn a_network_seen_from_two_nodes_is_one_source() {
     assert!((seen.emf.get() - 12.9).abs() < 1e-9, "{seen:?}");
     assert!((seen.resistance.get() - 0.010).abs() < 1e-12, "{seen:?}");
     // And the draw of power stands where the closed form puts it.
-    let closed = seen.under(Watts::new(100.0), &mut Silent).unwrap();
+    let closed = seen.under(Watts::new(100.0), &mut Steps::silent()).unwrap();
     let found = network.solve().unwrap();
     assert!((found.volts(post).unwrap() - closed.volts).get().abs() < 1e-9);
     assert_eq!(network.seen_from(post, post).unwrap().resistance.get(), 0.0);
@@ -257,7 +257,7 @@ fn strings_ties_and_take_offs_have_to_fit() {
         positive: TakeOff::At(0),
         negative: TakeOff::At(0),
     };
-    let share = |bank| share(bank, Amps::new(30.0), &mut Silent).map(|found| found.hardest);
+    let share = |bank| share(bank, Amps::new(30.0), &mut Steps::silent()).map(|found| found.hardest);
     assert_eq!(share(bank), Ok(0));
     assert_eq!(share(Paralleled { strings: &[], ..bank }), Err(SharingError::Strings { count: 0 }));
     let error = share(Paralleled { negative_ties: &ties[1..], ..bank });
@@ -278,7 +278,7 @@ fn at_rest_there_is_nothing_to_share_though_currents_flow() {
     let ties = [Ohms::new(0.0)];
     let (positive, negative) = Arrangement::SameEnd.take_offs(2);
     let bank = Paralleled { strings: &strings, positive_ties: &ties, negative_ties: &ties, positive, negative };
-    let found = share(bank, Amps::default(), &mut Silent).unwrap();
+    let found = share(bank, Amps::default(), &mut Steps::silent()).unwrap();
     assert_eq!(found.greatest_over_even, None);
     assert!((found.currents[0].get() - 10.0).abs() < 1e-9);
 }
@@ -290,11 +290,11 @@ fn when_charging_the_hardest_string_takes_most() {
     let ties = [Ohms::new(0.0)];
     let (positive, negative) = Arrangement::SameEnd.take_offs(2);
     let bank = Paralleled { strings: &strings, positive_ties: &ties, negative_ties: &ties, positive, negative };
-    let mut written = Written::default();
+    let mut written = Steps::written();
     let found = share(bank, Amps::new(-40.0), &mut written).unwrap();
     assert_eq!(found.hardest, 1);
     assert!((found.greatest_over_even.unwrap() - 1.5).abs() < 1e-9);
-    assert_eq!(Some(written.0.last().unwrap().result.number), found.greatest_over_even);
+    assert_eq!(Some(written.steps().last().unwrap().result.number), found.greatest_over_even);
 }
 
 /// What rounding leaves across two posts that ought to be equal is not a voltage to draw from.

@@ -1,6 +1,6 @@
 //! Heating of cables in a short circuit: the constants of IEC 60364-4-43, and cases computed from them.
 
-use engine::check::Silent;
+use engine::check::Steps;
 use engine::fault::{Core, HeatConstant, least_area, longest, withstands};
 use engine::quantity::{Amps, Seconds, SquareMillimetres};
 use published::table;
@@ -63,12 +63,13 @@ fn longest_times_of_the_cases() {
         let core = core(metal, insulation);
         let (area, current) = (SquareMillimetres::new(case.area_mm2), Amps::new(case.fault_amp));
         assert_eq!(HeatConstant::of(core, area).get(), case.k, "{}", row.source);
-        let time = longest(core, area, current, &mut Silent).unwrap().get();
+        let time = longest(core, area, current, &mut Steps::silent()).unwrap().get();
         assert!((time - case.max_time_s).abs() <= 0.5e-6, "{core:?}: {time} s, {}", row.source);
 
-        let lives = |times: f64| withstands(core, area, current, Seconds::new(time * times), &mut Silent).unwrap();
+        let lives =
+            |times: f64| withstands(core, area, current, Seconds::new(time * times), &mut Steps::silent()).unwrap();
         assert!(lives(1.0) && !lives(1.001));
-        let least = least_area(core, current, Seconds::new(time), &mut Silent).unwrap();
+        let least = least_area(core, current, Seconds::new(time), &mut Steps::silent()).unwrap();
         assert!((least.get() - case.area_mm2).abs() < 1e-9);
     }
 }

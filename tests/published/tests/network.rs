@@ -1,6 +1,6 @@
 //! Twenty networks of invented parts, solved by ngspice and again by a dense nodal solve; and a worked case of sharing.
 
-use engine::check::{Silent, Written};
+use engine::check::Steps;
 use engine::network::{Behind, Network, Node};
 use engine::quantity::{Amps, Ohms, Volts, Watts};
 use engine::sharing::{Arrangement, Paralleled, TakeOff, share};
@@ -172,7 +172,7 @@ fn banks_string_by_string() {
             positive: take_off(bank.takeoff_positive),
             negative: take_off(bank.takeoff_negative),
         };
-        let found = share(paralleled, Amps::new(bank.load_amp), &mut Silent).unwrap();
+        let found = share(paralleled, Amps::new(bank.load_amp), &mut Steps::silent()).unwrap();
         assert_eq!(found.currents.len(), bank.string_amp.len());
         for (string, (ours, theirs)) in found.currents.iter().zip(&bank.string_amp).enumerate() {
             agree(&format!("{} string {}, {from}", bank.id, string + 1), ours.get(), *theirs);
@@ -276,14 +276,14 @@ fn three_strings_on_two_bars() {
         let (positive, negative) = arrangement.take_offs(3);
         let ties = [tie; 2];
         let bank = Paralleled { strings: &strings, positive_ties: &ties, negative_ties: &ties, positive, negative };
-        let mut written = Written::default();
+        let mut written = Steps::written();
         let found = share(bank, Amps::new(200.0), &mut written).unwrap();
         for (ours, theirs) in found.currents.iter().zip(amps) {
             assert!((ours.get() - theirs).abs() < 0.5e-4 + 1e-9, "{arrangement:?}: {ours:?}, worked {theirs}");
         }
         assert!((found.greatest_over_even.unwrap() - greatest).abs() < 0.5e-4, "{arrangement:?}: {found:?}");
         // The working is made by the same run: the even share, each string, and the greatest share.
-        let results: Vec<f64> = written.0.iter().map(|step| step.result.number).collect();
+        let results: Vec<f64> = written.steps().iter().map(|step| step.result.number).collect();
         assert_eq!(results.len(), 5);
         assert!((results[0] - 200.0 / 3.0).abs() < 1e-12);
         assert_eq!(results[4], found.greatest_over_even.unwrap());
@@ -298,7 +298,7 @@ fn a_start_on_one_pack_and_on_two() {
         let bank = Behind { emf: Volts::new(52.0), resistance: Ohms::new(milliohms / 1000.0) };
         // 6,592.5 W through an inverter of 0.88.
         let draw = Watts::new(6592.5 / 0.88);
-        let found = bank.under(draw, &mut Silent).unwrap();
+        let found = bank.under(draw, &mut Steps::silent()).unwrap();
         assert!((found.volts.get() - volts).abs() < 1e-4, "{found:?}");
         assert!((found.current.get() - amps).abs() < 1e-3, "{found:?}");
 

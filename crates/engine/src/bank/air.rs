@@ -5,7 +5,7 @@ use super::ask::{YesNo, finite, positive};
 use super::rates::bank_capacity;
 use super::window::cells;
 use super::{energy, settled};
-use crate::check::{Basis, Check, FieldSet, Limit, Origin, Outcome, Silent, Steps};
+use crate::check::{Basis, Check, FieldSet, Limit, Origin, Outcome, Steps};
 use crate::chemistry::{
     Family, Gas, Span, air_flow, freezing_point, gas_current, keep_clear, natural_opening, water_split,
 };
@@ -77,7 +77,7 @@ struct Gassing {
 }
 
 /// Boost counts, as every absorb of a solar charger is one. `None` inside where nothing gasses.
-fn gassing(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<Option<Gassing>> {
+fn gassing(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<Option<Gassing>> {
     let (_, figures) = ask.chemistry(basis)?;
     match figures.gas {
         Gas::Nothing => Some(None),
@@ -112,7 +112,7 @@ fn gassing(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<Optio
 }
 
 /// Fresh air and the opening for it.
-fn aired(gassing: &Gassing, cells: u32, steps: &mut impl Steps) -> (CubicMetresPerHour, SquareCentimetres) {
+fn aired(gassing: &Gassing, cells: u32, steps: &mut Steps) -> (CubicMetresPerHour, SquareCentimetres) {
     let flow = steps.step("Fresh air", air_flow(cells, gassing.current), || {
         (
             "0.05 · n · I",
@@ -134,7 +134,7 @@ fn counted(cells: f64) -> u32 {
 /// bank-air: the inlet's free area ≥ what carries the hydrogen off without a fan.
 ///
 /// A fan that moves as much air does as well; then enter the opening as wanted and wire the fan to the charger.
-pub(super) fn openings(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn openings(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let gassing = match gassing(ask, basis, steps) {
         Some(None) => return Outcome::DoesNotArise,
         gassing => gassing.flatten(),
@@ -152,7 +152,7 @@ pub(super) fn openings(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> 
 }
 
 /// bank-air-sleeping: nobody sleeps in the room, whatever the chemistry.
-pub(super) fn sleeping(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn sleeping(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.chemistry(&mut Basis::default()).is_none() {
         return Outcome::DoesNotArise;
     }
@@ -172,7 +172,7 @@ fn water(ask: &Ask, basis: &mut Basis) -> Option<Span<Litres>> {
     if !figures.takes_water {
         return None;
     }
-    let cells = cells(ask, basis, &mut Silent)?;
+    let cells = cells(ask, basis, &mut Steps::silent())?;
     let out: AmpHours = match finite(ask.used_a_day) {
         Entry::Typed(energy) if energy.get() >= 0.0 => energy / (figures.nominal * cells),
         Entry::Blank => {
@@ -203,10 +203,10 @@ pub fn air_and_water(ask: &Ask) -> Option<AirAndWater> {
     let ask = &settled(ask);
     let basis = &mut Basis::default();
     let (chemistry, figures) = ask.chemistry(basis)?;
-    let in_series = counted(cells(ask, basis, &mut Silent)?);
+    let in_series = counted(cells(ask, basis, &mut Steps::silent())?);
     let in_block = counted(ask.block_cells(basis)?.get());
-    let gassing = gassing(ask, basis, &mut Silent)?;
-    let aired = gassing.as_ref().map(|gassing| aired(gassing, in_series, &mut Silent));
+    let gassing = gassing(ask, basis, &mut Steps::silent())?;
+    let aired = gassing.as_ref().map(|gassing| aired(gassing, in_series, &mut Steps::silent()));
     let lowest = ask.lowest_charge(figures, basis)?;
     Some(AirAndWater {
         gassing: gassing.as_ref().map(|gassing| gassing.current),

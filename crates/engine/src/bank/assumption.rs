@@ -62,7 +62,7 @@ pub fn assumption(ask: &Ask, field: Field) -> Option<Assumption> {
         Field::WetRoom => chosen(Some("no"), "dry"),
         Field::SleepingRoom => chosen(Some("no"), "nobody sleeps there: confirm"),
         Field::ChargeCurrent => {
-            let capacity = super::rates::bank_capacity(&settled(ask), basis, &mut crate::check::Silent)?;
+            let capacity = super::rates::bank_capacity(&settled(ask), basis, &mut crate::check::Steps::silent())?;
             Assumption {
                 amount: Some((capacity / figures()?.greatest_charge.chosen).amount()),
                 choice: None,

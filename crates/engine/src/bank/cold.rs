@@ -17,7 +17,7 @@ fn at_least(coldest: Celsius, limit: Celsius) -> Outcome {
 }
 
 /// bank-cold: the room's coldest ≥ the freezing point at the lowest charge reached.
-pub(super) fn freezing(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn freezing(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let chemistry = ask.chemistry(basis);
     if chemistry.is_some_and(|(_, figures)| figures.freezing == crate::chemistry::Freezing::Nothing) {
         return Outcome::DoesNotArise;
@@ -50,16 +50,16 @@ pub(super) fn freezing(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> 
 
 /// bank-cold-charge: bare lithium cells, or packs with no lock against cold: the room's coldest ≥ the lowest
 /// temperature for charging. A pack that locks is judged by bank-cold-lock.
-pub(super) fn charge(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn charge(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     lithium(ask, false, basis, steps)
 }
 
 /// bank-cold-lock: packs that refuse charge in the cold: the room's coldest ≥ where they lock.
-pub(super) fn lock(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn lock(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     lithium(ask, true, basis, steps)
 }
 
-fn lithium(ask: &Ask, locks: bool, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn lithium(ask: &Ask, locks: bool, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let Some((chemistry, figures)) = ask.chemistry(basis) else { return Outcome::DoesNotArise };
     if chemistry.family() != Family::Lithium {
         return Outcome::DoesNotArise;

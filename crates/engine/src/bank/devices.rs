@@ -3,7 +3,7 @@
 use super::Ask;
 use super::ask::{finite, origin, positive};
 use super::window::{Stage, coldest, held, highest, lowest};
-use crate::check::{Basis, Limit, Origin, Outcome, Silent, Steps};
+use crate::check::{Basis, Limit, Origin, Outcome, Steps};
 use crate::chemistry::RATED_AT;
 use crate::entry::Entry;
 use crate::field::Field;
@@ -56,7 +56,7 @@ pub(super) fn cut_off(ask: &Ask, basis: &mut Basis) -> Option<Volts> {
 }
 
 /// bank-window-high: highest voltage on charge ≤ the inverter's top.
-pub(super) fn high(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn high(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.without_inverter {
         return Outcome::DoesNotArise;
     }
@@ -66,8 +66,10 @@ pub(super) fn high(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outc
 }
 
 /// bank-window-high-absorb: the same without equalising, where the bank is equalised.
-pub(super) fn high_absorb(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
-    if ask.without_inverter || matches!(highest(ask, &mut Basis::default(), &mut Silent), Some((_, Stage::Absorb))) {
+pub(super) fn high_absorb(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
+    if ask.without_inverter
+        || matches!(highest(ask, &mut Basis::default(), &mut Steps::silent()), Some((_, Stage::Absorb)))
+    {
         return Outcome::DoesNotArise;
     }
     let at = coldest(ask, basis);
@@ -77,7 +79,7 @@ pub(super) fn high_absorb(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) 
 }
 
 /// bank-window-high-loads: highest voltage on charge ≤ what loads on the bus tolerate.
-pub(super) fn high_loads(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn high_loads(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.loads_high == Entry::Blank {
         return Outcome::DoesNotArise;
     }
@@ -87,11 +89,11 @@ pub(super) fn high_loads(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -
 }
 
 /// bank-window-high-cells: no cell above what it may never pass.
-pub(super) fn high_cells(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn high_cells(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let Some((_, figures)) = ask.chemistry(basis) else { return Outcome::DoesNotArise };
     let Some(limit) = figures.never_above else { return Outcome::DoesNotArise };
     let Some((value, _)) = highest(ask, basis, steps) else { return Outcome::Asks };
-    let Some(cells) = super::window::cells(ask, basis, &mut Silent) else { return Outcome::Asks };
+    let Some(cells) = super::window::cells(ask, basis, &mut Steps::silent()) else { return Outcome::Asks };
     let each = steps.step("Highest, a cell", value / cells, || {
         ("V / n", format!("{} / {}", show::step(value.amount()), show::number(cells, 0)), Origin::Before)
     });
@@ -104,7 +106,7 @@ fn at_most(
     field: Field,
     entry: Entry<Volts>,
     what: &'static str,
-    steps: &mut impl Steps,
+    steps: &mut Steps,
 ) -> Outcome {
     let (Some(value), Some(limit)) = (value, limit) else { return Outcome::Asks };
     let limit = steps.step(what, limit, || ("", String::new(), origin(field, entry)));
@@ -112,13 +114,13 @@ fn at_most(
 }
 
 /// bank-charge-cap: where the chargers' voltage is capped, what is left for absorbing ≥ the least that fills the cells.
-pub(super) fn cap(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn cap(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.charge_cap == Entry::Blank {
         return Outcome::DoesNotArise;
     }
     let value = held(ask, Stage::Absorb, Some(RATED_AT), basis, steps).flatten();
     let figures = ask.chemistry(basis).map(|(_, figures)| figures);
-    let cells = super::window::cells(ask, basis, &mut Silent);
+    let cells = super::window::cells(ask, basis, &mut Steps::silent());
     let (Some(value), Some(figures), Some(cells)) = (value, figures, cells) else { return Outcome::Asks };
     let range = figures.absorb.range.least;
     // A maker who asks for less than the usual range is believed.
@@ -131,14 +133,14 @@ pub(super) fn cap(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outco
 }
 
 /// bank-window-low: lowest voltage in use ≥ every cut-off; above it, a cut-off leaves capacity unused.
-pub(super) fn low(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn low(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.without_inverter && ask.loads_low == Entry::Blank {
         return Outcome::DoesNotArise;
     }
     let value = lowest(ask, basis, steps);
     let limit = cut_off(ask, basis);
     let (Some(value), Some(limit)) = (value, limit) else { return Outcome::Asks };
-    if let Some(cells) = super::window::cells(ask, basis, &mut Silent) {
+    if let Some(cells) = super::window::cells(ask, basis, &mut Steps::silent()) {
         steps.step("The cut-off, a cell", limit / cells, || {
             let put_in = format!("{} / {}", show::given(limit.amount()), show::number(cells, 0));
             ("cut-off / n", put_in, origin(Field::InverterLow, ask.inverter_low))
@@ -150,7 +152,7 @@ pub(super) fn low(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outco
 /// bank-orphan: with the bank gone, the controller's output ≤ what every device on the bus tolerates.
 ///
 /// A PWM controller passes the array's own open voltage on: that is then its output limit.
-pub(super) fn orphan(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn orphan(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.without_inverter && ask.loads_high == Entry::Blank {
         return Outcome::DoesNotArise;
     }

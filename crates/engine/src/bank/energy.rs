@@ -5,7 +5,7 @@ use super::ask::{finite, origin, positive};
 use super::devices::cut_off;
 use super::rates::{bank_capacity, usual_draw};
 use super::window::cells;
-use crate::check::{Basis, FieldSet, Origin, Silent, Step, Steps, Written};
+use crate::check::{Basis, FieldSet, Origin, Step, Steps};
 use crate::chemistry::{RATED_AT, capacity_share, share_at};
 use crate::entry::Entry;
 use crate::field::Field;
@@ -46,18 +46,18 @@ pub struct Energy {
 /// Cold: see [`crate::chemistry::size_factor`]; rate: [`source::PEUKERT`]; depth: common practice.
 #[must_use]
 pub fn energy(ask: &Ask) -> Option<Energy> {
-    figured(ask, &mut Silent)
+    figured(ask, &mut Steps::silent())
 }
 
 /// The steps of [`energy`].
 #[must_use]
 pub fn energy_working(ask: &Ask) -> Vec<Step> {
-    let mut steps = Written::default();
+    let mut steps = Steps::written();
     figured(ask, &mut steps);
-    steps.0
+    steps.into_steps()
 }
 
-fn figured(ask: &Ask, steps: &mut impl Steps) -> Option<Energy> {
+fn figured(ask: &Ask, steps: &mut Steps) -> Option<Energy> {
     let basis = &mut Basis::default();
     let (chemistry, figures) = ask.chemistry(basis)?;
     let cells = cells(ask, basis, steps)?;

@@ -210,7 +210,7 @@ pub fn layouts(ask: &Ask) -> Layouts {
         };
         if layout.refused_by().is_some() { found.rejected.push(layout) } else { found.ranked.push(layout) }
     }
-    found.ranked.sort_by(Layout::better);
+    crate::order::sort_short(&mut found.ranked, Layout::better);
     found
 }
 

@@ -5,7 +5,7 @@
 use super::Ask;
 use super::ask::{origin, positive};
 use super::window::cells;
-use crate::check::{Basis, Limit, Origin, Outcome, Silent, Steps};
+use crate::check::{Basis, Limit, Origin, Outcome, Steps};
 use crate::chemistry::rested;
 use crate::choice::Choice;
 use crate::entry::Entry;
@@ -38,7 +38,7 @@ impl Choice for Arrangement {
 }
 
 /// One string, full and rested, with the least resistance of its cells. R = n · R₁₀₀ · 100 Ah / C
-fn string(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<Behind> {
+fn string(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<Behind> {
     let chemistry = ask.chemistry(basis);
     let cells = cells(ask, basis, steps);
     let capacity = ask.capacity(basis);
@@ -68,7 +68,7 @@ fn beside(ask: &Ask, basis: &mut Basis) -> Option<Option<usize>> {
 /// bank-sharing: the hardest string's share over the even one ≤ 120 %.
 ///
 /// For equal strings in a row, tied on both bars by equal ties. Above 96 strings it is not solved, and asks.
-pub(super) fn sharing(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn sharing(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let count = match beside(ask, basis) {
         Some(None) => return Outcome::DoesNotArise,
         count => count.flatten(),
@@ -91,7 +91,7 @@ pub(super) fn sharing(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> O
     let (strings, ties) = (vec![string; count], vec![tie; count - 1]);
     let (positive, negative) = arrangement.take_offs(count);
     let bank = Paralleled { strings: &strings, positive_ties: &ties, negative_ties: &ties, positive, negative };
-    let over = sharing::share(bank, TRIAL, &mut Silent).ok().and_then(|found| found.greatest_over_even);
+    let over = sharing::share(bank, TRIAL, &mut Steps::silent()).ok().and_then(|found| found.greatest_over_even);
     let Some(over) = over else {
         basis.ask(Field::TieResistance);
         return Outcome::Asks;
@@ -110,7 +110,7 @@ pub(super) fn sharing(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> O
 /// bank-join: the rush between two strings as far apart as entered ≤ what one of them may be charged with.
 ///
 /// The link between them is counted as nothing but one tie each way, the hard end.
-pub(super) fn join(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn join(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if beside(ask, &mut Basis::default()) == Some(None) {
         return Outcome::DoesNotArise;
     }

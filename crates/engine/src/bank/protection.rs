@@ -40,7 +40,7 @@ fn packs(ask: &Ask, which: Packs, basis: &mut Basis) -> Option<Option<f64>> {
 }
 
 /// Limit of all packs that are in. I = p · I₁
-fn together(limit: Amps, packs: f64, field: Field, steps: &mut impl Steps) -> Amps {
+fn together(limit: Amps, packs: f64, field: Field, steps: &mut Steps) -> Amps {
     steps.step("What the packs let pass", limit * packs, || {
         (
             "packs · limit",
@@ -51,7 +51,7 @@ fn together(limit: Amps, packs: f64, field: Field, steps: &mut impl Steps) -> Am
 }
 
 /// Greatest current of `watts`: at the lowest voltage in use. I = P / V
-fn draw(ask: &Ask, field: Field, watts: Option<Watts>, basis: &mut Basis, steps: &mut impl Steps) -> Option<Amps> {
+fn draw(ask: &Ask, field: Field, watts: Option<Watts>, basis: &mut Basis, steps: &mut Steps) -> Option<Amps> {
     let lowest = lowest(ask, basis, steps);
     let (watts, lowest) = (watts?, lowest?);
     // An inverter that stops earlier never draws at the end of discharge. Where its cut-off is not known, the end counts.
@@ -69,7 +69,7 @@ fn held(value: Option<Amps>, limit: Option<Amps>) -> Outcome {
 }
 
 /// bms-hold: greatest steady draw ≤ packs × limit.
-pub(super) fn steady(ask: &Ask, which: Packs, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn steady(ask: &Ask, which: Packs, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let packs = match packs(ask, which, basis) {
         Some(None) => return Outcome::DoesNotArise,
         packs => packs.flatten(),
@@ -87,7 +87,7 @@ pub(super) fn steady(ask: &Ask, which: Packs, basis: &mut Basis, steps: &mut imp
 /// bms-hold-start: the greatest start ≤ packs × the limit for as long as it lasts.
 ///
 /// The peak counts where it is entered and lasts long enough; else the steady limit does.
-pub(super) fn start(ask: &Ask, which: Packs, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn start(ask: &Ask, which: Packs, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.starting_load == Entry::Blank {
         return Outcome::DoesNotArise;
     }
@@ -119,7 +119,7 @@ pub(super) fn start(ask: &Ask, which: Packs, basis: &mut Basis, steps: &mut impl
 }
 
 /// bms-hold-charge: charge current ≤ packs × limit. Past it a pack opens while it is charged.
-pub(super) fn charge(ask: &Ask, which: Packs, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn charge(ask: &Ask, which: Packs, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let packs = match packs(ask, which, basis) {
         Some(None) => return Outcome::DoesNotArise,
         packs => packs.flatten(),

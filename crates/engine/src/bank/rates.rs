@@ -10,7 +10,7 @@ use crate::quantity::{AmpHours, Amps, Hours, Quantity, Volts};
 use crate::show;
 
 /// Capacity of all strings together. C = p · C₁
-pub(super) fn bank_capacity(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<AmpHours> {
+pub(super) fn bank_capacity(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<AmpHours> {
     let each = ask.capacity(basis);
     let strings = ask.strings(basis);
     let (each, strings) = (each?, strings?);
@@ -23,7 +23,7 @@ pub(super) fn bank_capacity(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps
     }))
 }
 
-fn over(capacity: AmpHours, time: Figure<Hours>, what: &'static str, steps: &mut impl Steps) -> Amps {
+fn over(capacity: AmpHours, time: Figure<Hours>, what: &'static str, steps: &mut Steps) -> Amps {
     steps.step(what, capacity / time.chosen, || {
         (
             "C / t",
@@ -34,7 +34,7 @@ fn over(capacity: AmpHours, time: Figure<Hours>, what: &'static str, steps: &mut
 }
 
 /// bank-charge-rate: charge current ≤ the greatest that the chemistry takes, lest it gas, foam or overheat.
-pub(super) fn charge(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn charge(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let figures = ask.chemistry(basis).map(|(_, figures)| figures);
     let capacity = bank_capacity(ask, basis, steps);
     let current = basis.need(Field::ChargeCurrent, positive(ask.charge_current));
@@ -44,7 +44,7 @@ pub(super) fn charge(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Ou
 }
 
 /// bank-charge-rate-least: charge current ≥ the least that does the cells good.
-pub(super) fn charge_least(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn charge_least(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let figures = ask.chemistry(basis).map(|(_, figures)| figures);
     if figures.is_some_and(|figures| figures.least_charge.is_none()) {
         return Outcome::DoesNotArise;
@@ -66,7 +66,7 @@ pub(super) fn usual_draw(
     watts: Option<crate::quantity::Watts>,
     ask: &Ask,
     basis: &mut Basis,
-    steps: &mut impl Steps,
+    steps: &mut Steps,
 ) -> Option<Amps> {
     let nominal = ask.chemistry(basis).map(|(_, figures)| figures.nominal);
     let cells = cells(ask, basis, steps);
@@ -78,7 +78,7 @@ pub(super) fn usual_draw(
 }
 
 /// bank-discharge-rate: the greatest steady draw ≤ what the chemistry gives for long.
-pub(super) fn discharge(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn discharge(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let figures = ask.chemistry(basis).map(|(_, figures)| figures);
     let load = basis.need(Field::GreatestLoad, positive(ask.greatest_load));
     let draw = usual_draw(Field::GreatestLoad, load, ask, basis, steps);

@@ -2,7 +2,7 @@
 
 use super::protection::{self, Packs};
 use super::{Ask, air, cold, devices, parallel, rates, settled, touch};
-use crate::check::{Basis, Check, Cost, Limit, Outcome, Sense, Silent, Step, Steps, Written, judge};
+use crate::check::{Basis, Check, Cost, Limit, Outcome, Sense, Step, Steps, judge};
 use crate::quantity::{Amount, Percent, Quantity};
 use crate::show;
 use crate::unit::Unit;
@@ -199,7 +199,7 @@ impl Requirement {
         }
     }
 
-    fn outcome(self, ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+    fn outcome(self, ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
         match self {
             Self::WindowHigh => devices::high(ask, basis, steps),
             Self::WindowHighAbsorb => devices::high_absorb(ask, basis, steps),
@@ -231,10 +231,10 @@ impl Requirement {
     /// Judges this requirement for the counts that `ask` has. `None` where it does not arise.
     #[must_use]
     pub fn check(self, ask: &Ask) -> Option<Check<Self>> {
-        self.judged(ask, &mut Silent)
+        self.judged(ask, &mut Steps::silent())
     }
 
-    fn judged(self, ask: &Ask, steps: &mut impl Steps) -> Option<Check<Self>> {
+    fn judged(self, ask: &Ask, steps: &mut Steps) -> Option<Check<Self>> {
         let mut basis = Basis::default();
         let outcome = self.outcome(ask, &mut basis, steps);
         let check = judge(self, self.cost(), self.reserve(), outcome, &basis)?;
@@ -267,7 +267,7 @@ pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
 }
 
 pub(super) fn worst_first(checks: &mut [Check<Requirement>]) {
-    checks.sort_by(|a, b| {
+    crate::order::sort_short(checks, |a, b| {
         let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
         group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
     });
@@ -277,8 +277,8 @@ pub(super) fn worst_first(checks: &mut [Check<Requirement>]) {
 #[must_use]
 pub fn working(ask: &Ask, requirement: Requirement) -> Vec<Step> {
     let ask = settled(ask);
-    let mut steps = Written::default();
-    let Some(check) = requirement.judged(&ask, &mut steps) else { return steps.0 };
+    let mut steps = Steps::written();
+    let Some(check) = requirement.judged(&ask, &mut steps) else { return steps.into_steps() };
     if let (Some(value), Some(limit), Some(margin)) = (check.value, check.limit, check.margin) {
         steps.step("Margin to the limit", margin, || {
             let (value, bound) = (show::step(value), show::given(limit.amount));
@@ -295,5 +295,5 @@ pub fn working(ask: &Ask, requirement: Requirement) -> Vec<Step> {
             (formula, put_in, crate::check::Origin::Before)
         });
     }
-    steps.0
+    steps.into_steps()
 }

@@ -4,7 +4,7 @@ use super::ask::{finite, positive};
 use super::rates::bank_capacity;
 use super::window::{Stage, cells, compensation, held, lowest};
 use super::{Ask, settled};
-use crate::check::{Basis, FieldSet, Silent};
+use crate::check::{Basis, FieldSet, Steps};
 use crate::chemistry::{Figures, RATED_AT, Span};
 use crate::entry::Entry;
 use crate::quantity::{Amount, Celsius, Percent, Quantity, Volts};
@@ -55,7 +55,7 @@ pub fn settings(ask: &Ask) -> Option<Settings> {
     let ask = &settled(ask);
     let basis = &mut Basis::default();
     let (_, figures) = ask.chemistry(basis)?;
-    let cells = cells(ask, basis, &mut Silent)?;
+    let cells = cells(ask, basis, &mut Steps::silent())?;
     let mut lines = Vec::new();
     charge_voltages(ask, figures, cells, basis, &mut lines)?;
     let per_kelvin = compensation(ask, figures, basis)?;
@@ -108,7 +108,7 @@ fn charge_voltages(
     basis: &mut Basis,
     lines: &mut Vec<Setting>,
 ) -> Option<()> {
-    let mut of = |stage, at: Celsius| held(ask, stage, Some(at), basis, &mut Silent);
+    let mut of = |stage, at: Celsius| held(ask, stage, Some(at), basis, &mut Steps::silent());
     let absorb = of(Stage::Absorb, RATED_AT)??;
     lines.push(Setting {
         name: "Absorb",
@@ -154,7 +154,7 @@ fn charge_voltages(
 }
 
 fn cut_offs(ask: &Ask, figures: &Figures, cells: f64, basis: &mut Basis, lines: &mut Vec<Setting>) -> Option<()> {
-    let end = lowest(ask, basis, &mut Silent)?;
+    let end = lowest(ask, basis, &mut Steps::silent())?;
     let left = Percent::new(100.0) - ask.depth(figures, basis)?;
     let shape = source::CHOSEN.at("a typical discharge at the rated rate");
     let stop = (figures.loaded(left) * cells).max(end);
@@ -180,7 +180,7 @@ fn cut_offs(ask: &Ask, figures: &Figures, cells: f64, basis: &mut Basis, lines: 
 }
 
 fn currents(ask: &Ask, figures: &Figures, basis: &mut Basis, lines: &mut Vec<Setting>) {
-    let Some(capacity) = bank_capacity(ask, basis, &mut Silent) else { return };
+    let Some(capacity) = bank_capacity(ask, basis, &mut Steps::silent()) else { return };
     let greatest = figures.greatest_charge;
     let mut limit = capacity / greatest.chosen;
     // A pack's own limit goes before the chemistry's.

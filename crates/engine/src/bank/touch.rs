@@ -20,7 +20,7 @@ const TOUCH: Clause = source::IEC_60364_4_41.at("414, smooth d.c.: 60 V dry, 30 
 /// bank-touch: highest charge voltage ≤ what may be touched: 60 V d.c. dry, 30 V wet; 120 V where posts are covered.
 ///
 /// Below these the burn caution stays: any bank can weld a wrench.
-pub(super) fn touch(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn touch(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let value = highest(ask, basis, steps).map(|(volts, _)| volts);
     let covered = basis.assume(Field::PostsCovered, ask.posts_covered, YesNo::No);
     let wet = match covered {

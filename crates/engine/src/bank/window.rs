@@ -2,7 +2,7 @@
 
 use super::Ask;
 use super::ask::{finite, origin, positive};
-use crate::check::{Basis, Origin, Silent, Steps};
+use crate::check::{Basis, Origin, Steps};
 use crate::chemistry::{Chemistry, Figures, RATED_AT, rested};
 use crate::entry::Entry;
 use crate::field::Field;
@@ -54,7 +54,7 @@ pub(super) fn coldest(ask: &Ask, basis: &mut Basis) -> Option<Celsius> {
 }
 
 /// Cells in series: blocks in series times cells in each.
-pub(super) fn cells(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<f64> {
+pub(super) fn cells(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<f64> {
     let series = ask.series(basis);
     let in_block = ask.block_cells(basis);
     let (series, in_block) = (series?, in_block?);
@@ -114,7 +114,7 @@ pub(super) fn held(
     stage: Stage,
     at: Option<Celsius>,
     basis: &mut Basis,
-    steps: &mut impl Steps,
+    steps: &mut Steps,
 ) -> Option<Option<Volts>> {
     let figures = ask.chemistry(basis).map(|(_, figures)| figures);
     let cells = cells(ask, basis, steps);
@@ -163,13 +163,13 @@ pub(super) fn held(
 }
 
 /// Highest voltage of the string on charge, at the coldest, and its stage.
-pub(super) fn highest(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<(Volts, Stage)> {
+pub(super) fn highest(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<(Volts, Stage)> {
     let at = coldest(ask, basis);
     let equalise = held(ask, Stage::Equalise, at, basis, steps);
     match equalise? {
         // An equalise voltage below the absorb voltage is a slip that must not hide the higher one.
         Some(equalise) => {
-            let absorb = held(ask, Stage::Absorb, at, basis, &mut Silent)??;
+            let absorb = held(ask, Stage::Absorb, at, basis, &mut Steps::silent())??;
             Some(if equalise >= absorb { (equalise, Stage::Equalise) } else { (absorb, Stage::Absorb) })
         }
         None => Some((held(ask, Stage::Absorb, at, basis, steps)??, Stage::Absorb)),
@@ -177,7 +177,7 @@ pub(super) fn highest(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> O
 }
 
 /// Voltage of the string at the end of discharge. V = n · V_end
-pub(super) fn lowest(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<Volts> {
+pub(super) fn lowest(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<Volts> {
     let figures = ask.chemistry(basis).map(|(_, figures)| figures);
     let cells = cells(ask, basis, steps);
     let end = basis.assume(Field::CellEnd, positive(ask.end), figures?.end.chosen);
@@ -195,12 +195,12 @@ pub(super) fn lowest(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Op
 pub fn window(ask: &Ask) -> Option<Window> {
     let basis = &mut Basis::default();
     let (chemistry, figures): (Chemistry, _) = ask.chemistry(basis)?;
-    let cells = cells(ask, basis, &mut Silent)?;
-    let mut plain = |stage| held(ask, stage, Some(RATED_AT), basis, &mut Silent);
+    let cells = cells(ask, basis, &mut Steps::silent())?;
+    let mut plain = |stage| held(ask, stage, Some(RATED_AT), basis, &mut Steps::silent());
     let (float, absorb, equalise) = (plain(Stage::Float)?, plain(Stage::Absorb)??, plain(Stage::Equalise)?);
-    let (highest, highest_in) = highest(ask, basis, &mut Silent)?;
+    let (highest, highest_in) = highest(ask, basis, &mut Steps::silent())?;
     Some(Window {
-        lowest: lowest(ask, basis, &mut Silent)?,
+        lowest: lowest(ask, basis, &mut Steps::silent())?,
         nominal: figures.nominal * cells,
         rested: rested(chemistry, Percent::new(100.0)) * cells,
         float,

@@ -1,7 +1,7 @@
 //! Workings: the steps from inputs to a value, made by the code that computes the value.
 //!
-//! A method is generic over [`Steps`]. With [`Silent`] it leaves nothing but the number, and the closures that would
-//! word the steps are never called. With [`Written`] the same run records each step.
+//! A method is handed [`Steps`]. Silent, they leave nothing but the number, and the closures that would word the steps
+//! are never called. Written, the same run records each step.
 
 use crate::field::Field;
 use crate::quantity::{Amount, Quantity};
@@ -36,44 +36,47 @@ pub struct Step {
 }
 
 /// Takes the steps of a method, or lets them pass.
-pub trait Steps {
-    /// Passes `result` on. Where steps are kept, `word` says what was done: formula, numbers put in, and origin.
-    fn step<Q: Quantity>(
-        &mut self,
-        what: &'static str,
-        result: Q,
-        word: impl FnOnce() -> (&'static str, String, Origin),
-    ) -> Q;
-}
-
-/// Keeps nothing: only the number is wanted.
-#[derive(Clone, Copy, Debug, Default)]
-pub struct Silent;
-
-impl Steps for Silent {
-    fn step<Q: Quantity>(
-        &mut self,
-        _what: &'static str,
-        result: Q,
-        _word: impl FnOnce() -> (&'static str, String, Origin),
-    ) -> Q {
-        result
-    }
-}
-
-/// Keeps every step.
+///
+/// One type for both, so that each method is compiled once: on a phone its size is the time to load it.
 #[derive(Clone, Debug, Default)]
-pub struct Written(pub Vec<Step>);
+pub struct Steps(Option<Vec<Step>>);
 
-impl Steps for Written {
-    fn step<Q: Quantity>(
+impl Steps {
+    /// Keeps nothing: only the number is wanted.
+    #[must_use]
+    pub const fn silent() -> Self {
+        Self(None)
+    }
+
+    /// Keeps every step.
+    #[must_use]
+    pub const fn written() -> Self {
+        Self(Some(Vec::new()))
+    }
+
+    /// What was kept.
+    #[must_use]
+    pub fn steps(&self) -> &[Step] {
+        self.0.as_deref().unwrap_or_default()
+    }
+
+    /// What was kept.
+    #[must_use]
+    pub fn into_steps(self) -> Vec<Step> {
+        self.0.unwrap_or_default()
+    }
+
+    /// Passes `result` on. Where steps are kept, `word` says what was done: formula, numbers put in, and origin.
+    pub fn step<Q: Quantity>(
         &mut self,
         what: &'static str,
         result: Q,
         word: impl FnOnce() -> (&'static str, String, Origin),
     ) -> Q {
-        let (formula, put_in, origin) = word();
-        self.0.push(Step { what, formula, put_in, result: result.amount(), origin });
+        if let Some(kept) = &mut self.0 {
+            let (formula, put_in, origin) = word();
+            kept.push(Step { what, formula, put_in, result: result.amount(), origin });
+        }
         result
     }
 }

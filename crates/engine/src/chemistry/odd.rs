@@ -75,7 +75,7 @@ pub fn odd_cells(readings: &[Volts]) -> Option<OddCells> {
             off: Volts::new(number - median),
         })
         .collect();
-    odd.sort_by(|a, b| b.off.abs().get().total_cmp(&a.off.abs().get()));
+    crate::order::sort_short(&mut odd, |a, b| b.off.abs().get().total_cmp(&a.off.abs().get()));
     let highest = numbers.iter().copied().fold(f64::NEG_INFINITY, f64::max);
     let lowest = numbers.iter().copied().fold(f64::INFINITY, f64::min);
     Some(OddCells { median: Volts::new(median), spread: Volts::new(highest - lowest), odd, source: RULE })
@@ -83,7 +83,7 @@ pub fn odd_cells(readings: &[Volts]) -> Option<OddCells> {
 
 /// The middle of a list that is not empty.
 fn middle(mut numbers: Vec<f64>) -> f64 {
-    numbers.sort_by(f64::total_cmp);
+    crate::order::sort_short(&mut numbers, f64::total_cmp);
     let half = numbers.len() / 2;
     if numbers.len() % 2 == 1 { numbers[half] } else { f64::midpoint(numbers[half - 1], numbers[half]) }
 }

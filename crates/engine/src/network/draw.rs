@@ -108,17 +108,17 @@ impl Behind {
     /// 10 V behind 1 Ω: 16 W stand at 8 V and 2 A, 25 W is the most there is.
     ///
     /// ```
-    /// use engine::check::Silent;
+    /// use engine::check::Steps;
     /// use engine::network::{Behind, DrawError};
     /// use engine::quantity::{Ohms, Volts, Watts};
     ///
     /// let source = Behind { emf: Volts::new(10.0), resistance: Ohms::new(1.0) };
-    /// let found = source.under(Watts::new(16.0), &mut Silent)?;
+    /// let found = source.under(Watts::new(16.0), &mut Steps::silent())?;
     /// assert!((found.volts.get() - 8.0).abs() < 1e-12 && (found.current.get() - 2.0).abs() < 1e-12);
-    /// assert!(matches!(source.under(Watts::new(25.1), &mut Silent), Err(DrawError::NoOperatingPoint { .. })));
+    /// assert!(matches!(source.under(Watts::new(25.1), &mut Steps::silent()), Err(DrawError::NoOperatingPoint { .. })));
     /// # Ok::<(), DrawError>(())
     /// ```
-    pub fn under(self, draw: Watts, steps: &mut impl Steps) -> Result<Loaded, DrawError> {
+    pub fn under(self, draw: Watts, steps: &mut Steps) -> Result<Loaded, DrawError> {
         let (emf, ohms, watts) = (self.emf.get(), self.resistance.get(), draw.get());
         let not_possible = DrawError::NotPossible { source: self, draw };
         if ![emf, ohms, watts].iter().all(|number| number.is_finite()) || emf < 0.0 || ohms < 0.0 {
@@ -155,11 +155,11 @@ impl Behind {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::check::{Silent, Written};
+    use crate::check::Steps;
 
     fn under(emf: f64, ohms: f64, watts: f64) -> Result<(f64, f64), DrawError> {
         let source = Behind { emf: Volts::new(emf), resistance: Ohms::new(ohms) };
-        source.under(Watts::new(watts), &mut Silent).map(|found| (found.volts.get(), found.current.get()))
+        source.under(Watts::new(watts), &mut Steps::silent()).map(|found| (found.volts.get(), found.current.get()))
     }
 
     #[test]
@@ -196,11 +196,11 @@ mod tests {
     #[test]
     fn the_working_ends_in_the_same_numbers() {
         let source = Behind { emf: Volts::new(52.0), resistance: Ohms::new(0.019_96) };
-        let mut written = Written::default();
+        let mut written = Steps::written();
         let found = source.under(Watts::new(7491.5), &mut written).unwrap();
-        let results: Vec<f64> = written.0.iter().map(|step| step.result.number).collect();
+        let results: Vec<f64> = written.steps().iter().map(|step| step.result.number).collect();
         assert_eq!(results, [found.volts.get(), found.current.get()]);
-        let put_in = &written.0[0].put_in;
+        let put_in = &written.steps()[0].put_in;
         assert!(put_in.contains("52\u{202F}V") && put_in.contains("7491.5\u{202F}W"), "{put_in}");
     }
 }

@@ -3,7 +3,7 @@
 use super::known::Known;
 use super::{Ask, BreakerType, Kind};
 use crate::ampacity::{Insulation, Method};
-use crate::check::{Assumption, Basis, Silent};
+use crate::check::{Assumption, Basis, Steps};
 use crate::conductor::Conductor;
 use crate::entry::Entry;
 use crate::family::CodeFamily;
@@ -111,7 +111,7 @@ pub fn of(ask: &Ask, field: Field) -> Option<Assumption> {
         },
         Field::Terminals => {
             let blank = Ask { terminals: Entry::Blank, ..*ask };
-            let known = Known::read(&blank, &mut Basis::default(), &mut Silent).ok()?;
+            let known = Known::read(&blank, &mut Basis::default(), &mut Steps::silent()).ok()?;
             let (why, source) = match family {
                 CodeFamily::Iec => ("as IEC devices are tested", source::IEC_60364_5_52.at("523.1")),
                 CodeFamily::NorthAmerica => ("60 °C to 100 A, 75 °C above", source::NEC.at("110.14(C)(1)")),

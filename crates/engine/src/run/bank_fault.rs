@@ -3,7 +3,7 @@
 use super::known::Known;
 use super::{Ask, BreakerType, Candidate, Kind, assumed, worse};
 use crate::ampacity::Insulation;
-use crate::check::{Basis, Limit, Origin, Outcome, Silent, Steps};
+use crate::check::{Basis, Limit, Origin, Outcome, Steps};
 use crate::conductor::{Metal, resistance};
 use crate::family::CodeFamily;
 use crate::fault::{Bounds, Core, Prospective, longest, prospective};
@@ -68,7 +68,7 @@ fn fault(
     voltage: Volts,
     bank: Ohms,
     length: Metres,
-    steps: &mut impl Steps,
+    steps: &mut Steps,
 ) -> Option<Fault> {
     let emf = Bounds {
         least: steps.step("Bank old, cold and low", voltage * LOW, || {
@@ -94,7 +94,7 @@ pub(super) fn bank_fault(
     known: &Known,
     candidate: Candidate,
     basis: &mut Basis,
-    steps: &mut impl Steps,
+    steps: &mut Steps,
 ) -> Outcome {
     let interrupts = basis.need(Field::InterruptingRating, ask.interrupting);
     let voltage = basis.need(Field::RunVoltage, ask.voltage);
@@ -136,7 +136,7 @@ pub(super) fn of_run(ask: &Ask, known: &Known, candidate: Candidate) -> Option<F
     let voltage = ask.voltage.typed()?;
     let usual = assumed::bank_resistance(voltage);
     let bank = Basis::default().assume(Field::BankResistance, ask.bank_resistance, usual)?;
-    fault(known, candidate, voltage, bank, ask.length.typed()?, &mut Silent)
+    fault(known, candidate, voltage, bank, ask.length.typed()?, &mut Steps::silent())
 }
 
 /// What has to be interrupted at the breaker of a run on the bank. `None` elsewhere, or where the voltage is missing.

@@ -26,12 +26,7 @@ impl Ampacity {
 }
 
 /// What `candidate` carries. `None` where the family's table has no such conductor.
-pub(super) fn ampacity(
-    candidate: Candidate,
-    laid: &Laid,
-    terminals: Terminals,
-    steps: &mut impl Steps,
-) -> Option<Ampacity> {
+pub(super) fn ampacity(candidate: Candidate, laid: &Laid, terminals: Terminals, steps: &mut Steps) -> Option<Ampacity> {
     let several = f64::from(candidate.parallel);
     let table = tabled(laid, laid.insulation, candidate.size)? * several;
     let table = steps.step("Ampacity by the table", table, || {
@@ -82,7 +77,7 @@ pub(super) fn ampacity(
 ///
 /// North America: the table at the terminals ≥ the continuous rule, and where it lies ≥ the load; the worse counts.
 /// IEC: the lesser of both ≥ the load.
-pub(super) fn carry(load: &Load, family: CodeFamily, ampacity: Option<Ampacity>, steps: &mut impl Steps) -> Outcome {
+pub(super) fn carry(load: &Load, family: CodeFamily, ampacity: Option<Ampacity>, steps: &mut Steps) -> Outcome {
     let Some(ampacity) = ampacity else {
         let limit = Limit::at_least(load.carried);
         return Outcome::Impossible { value: Amps::new(0.0).amount(), limit };
@@ -102,7 +97,7 @@ pub(super) fn carry(load: &Load, family: CodeFamily, ampacity: Option<Ampacity>,
 }
 
 /// A factor on the working current, worded.
-pub(super) fn asked(what: &'static str, load: &Load, current: Amps, factor: f64, steps: &mut impl Steps) -> Amps {
+pub(super) fn asked(what: &'static str, load: &Load, current: Amps, factor: f64, steps: &mut Steps) -> Amps {
     steps.step(what, current, || {
         let put_in = format!("{} × {}", show::number(factor, 4), show::step(load.working.amount()));
         ("factor · I", put_in, Origin::Published(load.rule.clause))

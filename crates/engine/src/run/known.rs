@@ -3,7 +3,7 @@
 use super::voltage_drop::Way;
 use super::{Ask, BreakerType, Candidate, Kind, Load, carry, load, protect, voltage_drop};
 use crate::ampacity::{Laid, Terminals};
-use crate::check::{Basis, Outcome, Silent, Steps};
+use crate::check::{Basis, Outcome, Steps};
 use crate::conductor::{AMERICAN, METRIC, Size};
 use crate::family::CodeFamily;
 use crate::field::Field;
@@ -29,7 +29,7 @@ const MOST_PARALLEL: u32 = 6;
 
 impl Known {
     /// Reads the run. `Err` where an input is missing, which the basis then names, or where no rating is great enough.
-    pub(super) fn read(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Result<Self, Outcome> {
+    pub(super) fn read(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Result<Self, Outcome> {
         let kind = ask.kind(basis);
         let family = ask.family(basis);
         let (Some(kind), Some(family)) = (kind, family) else {
@@ -55,31 +55,31 @@ impl Known {
         Ok(Self { kind, family, load, laid, protects, series, rating, terminals })
     }
 
-    pub(super) fn carries(&self, candidate: Candidate, steps: &mut impl Steps) -> Outcome {
+    pub(super) fn carries(&self, candidate: Candidate, steps: &mut Steps) -> Outcome {
         let ampacity = carry::ampacity(candidate, &self.laid, self.terminals, steps);
         carry::carry(&self.load, self.family, ampacity, steps)
     }
 
-    pub(super) fn protected(&self, candidate: Candidate, steps: &mut impl Steps) -> Outcome {
+    pub(super) fn protected(&self, candidate: Candidate, steps: &mut Steps) -> Outcome {
         let ampacity = carry::ampacity(candidate, &self.laid, self.terminals, steps);
         protect::protect(self.rating, &self.load, candidate, &self.laid, ampacity, self.series, steps)
     }
 
-    pub(super) fn drops(&self, candidate: Candidate, way: Way, steps: &mut impl Steps) -> Outcome {
+    pub(super) fn drops(&self, candidate: Candidate, way: Way, steps: &mut Steps) -> Outcome {
         let drop = voltage_drop::drop(self.load.working, candidate, &self.laid, self.kind, way, steps);
         voltage_drop::judge(&drop, way)
     }
 
     /// Whether `candidate` meets ampacity and protection, and drop where it is known what that asks.
     pub(super) fn holds(&self, candidate: Candidate, way: Option<Way>) -> bool {
-        let ampacity = carry::ampacity(candidate, &self.laid, self.terminals, &mut Silent);
+        let ampacity = carry::ampacity(candidate, &self.laid, self.terminals, &mut Steps::silent());
         let protects = || {
             let (load, laid, series) = (&self.load, &self.laid, self.series);
-            protect::protect(self.rating, load, candidate, laid, ampacity, series, &mut Silent)
+            protect::protect(self.rating, load, candidate, laid, ampacity, series, &mut Steps::silent())
         };
-        super::holds(carry::carry(&self.load, self.family, ampacity, &mut Silent))
+        super::holds(carry::carry(&self.load, self.family, ampacity, &mut Steps::silent()))
             && super::holds(protects())
-            && way.is_none_or(|way| super::holds(self.drops(candidate, way, &mut Silent)))
+            && way.is_none_or(|way| super::holds(self.drops(candidate, way, &mut Steps::silent())))
     }
 
     /// The sizes that are sold in the family's trade, thin to thick.

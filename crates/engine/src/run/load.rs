@@ -44,7 +44,7 @@ impl Load {
 /// Reads the run's current, or finds it from its power.
 ///
 /// Plain: I = P / V. PV: Isc = 1.08 · P / V. Inverter: I = P / (η · V_lowest), V_lowest = 0.875 · V.
-pub(super) fn working(ask: &Ask, kind: Kind, basis: &mut Basis, steps: &mut impl Steps) -> Option<Amps> {
+pub(super) fn working(ask: &Ask, kind: Kind, basis: &mut Basis, steps: &mut Steps) -> Option<Amps> {
     match (ask.current, ask.power) {
         (Entry::Blank, Entry::Typed(power)) => {
             let voltage = basis.need(Field::RunVoltage, ask.voltage)?;
@@ -103,16 +103,10 @@ pub(super) fn working(ask: &Ask, kind: Kind, basis: &mut Basis, steps: &mut impl
 #[must_use]
 pub fn working_current(ask: &Ask) -> Option<Amps> {
     let mut basis = Basis::default();
-    working(ask, ask.kind(&mut basis)?, &mut basis, &mut crate::check::Silent)
+    working(ask, ask.kind(&mut basis)?, &mut basis, &mut crate::check::Steps::silent())
 }
 
 /// The currents of the run by the rule of its kind.
-pub(super) fn load(
-    ask: &Ask,
-    kind: Kind,
-    family: CodeFamily,
-    basis: &mut Basis,
-    steps: &mut impl Steps,
-) -> Option<Load> {
+pub(super) fn load(ask: &Ask, kind: Kind, family: CodeFamily, basis: &mut Basis, steps: &mut Steps) -> Option<Load> {
     Some(Load::of(working(ask, kind, basis, steps)?, kind.rule(family)))
 }

@@ -60,7 +60,7 @@ pub fn poles(kind: Kind, voltage: Volts) -> u32 {
 }
 
 /// Sets the directions in which current can flow against those that the breaker opens. A fuse has no direction.
-pub(super) fn directions(kind: Kind, protects: BreakerType, steps: &mut impl Steps) -> Outcome {
+pub(super) fn directions(kind: Kind, protects: BreakerType, steps: &mut Steps) -> Outcome {
     if kind.alternates() || protects == BreakerType::Fuse {
         return Outcome::DoesNotArise;
     }

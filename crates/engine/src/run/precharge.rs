@@ -47,7 +47,7 @@ pub struct Precharge {
 /// Peak current onto empty capacitors: V / (R_bank + R_way). `None` where the resistance is not known.
 ///
 /// The capacitors are taken as a short circuit and the cables as without inductance: the most it can be.
-fn peak(ask: &Ask, way: Ohms, basis: &mut Basis, steps: &mut impl Steps) -> Option<(Volts, Amps)> {
+fn peak(ask: &Ask, way: Ohms, basis: &mut Basis, steps: &mut Steps) -> Option<(Volts, Amps)> {
     let voltage = basis.need(Field::RunVoltage, ask.voltage)?;
     let bank = basis.assume(Field::BankResistance, ask.bank_resistance, assumed::bank_resistance(voltage))?;
     let current = steps.step("Peak onto empty capacitors", voltage / (bank + way), || {
@@ -64,7 +64,7 @@ pub(super) fn precharge(
     rating: Amps,
     way: Ohms,
     basis: &mut Basis,
-    steps: &mut impl Steps,
+    steps: &mut Steps,
 ) -> Outcome {
     if kind != Kind::InverterFeed {
         return Outcome::DoesNotArise;
@@ -99,7 +99,7 @@ fn resistor(voltage: Volts) -> Ohms {
 
 /// How to charge the capacitors of an inverter of `power` on this run. `None` where voltage or bank is not known.
 pub(super) fn advice(ask: &Ask, power: Watts, way: Ohms) -> Option<Precharge> {
-    let (voltage, peak) = peak(ask, way, &mut Basis::default(), &mut crate::check::Silent)?;
+    let (voltage, peak) = peak(ask, way, &mut Basis::default(), &mut crate::check::Steps::silent())?;
     let resistor = resistor(voltage);
     let time_constant = Seconds::new(resistor.get() * power.get() * FARADS_A_WATT);
     let resistor_peak = voltage * (voltage / resistor);

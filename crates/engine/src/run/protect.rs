@@ -59,7 +59,7 @@ pub(super) fn protect(
     laid: &Laid,
     ampacity: Option<Ampacity>,
     series: Series,
-    steps: &mut impl Steps,
+    steps: &mut Steps,
 ) -> Outcome {
     let least = asked("Least rating by the load", load, load.device_least, load.rule.device_least, steps);
     let share = heat_share(laid.family, laid.ambient);

@@ -3,7 +3,7 @@
 use super::voltage_drop::{Way, by_length};
 use super::{Ask, Candidate, Kind, carry, load, protect};
 use crate::ampacity::Laid;
-use crate::check::{Basis, FieldSet, Silent};
+use crate::check::{Basis, FieldSet, Steps};
 use crate::entry::Entry;
 use crate::family::CodeFamily;
 use crate::field::Field;
@@ -52,7 +52,7 @@ pub fn reach(ask: &Ask) -> Result<Reach, FieldSet> {
     let terminals_read = ask.terminals(&mut basis, family, Amps::new(0.0));
     let current = match (ask.current, ask.power) {
         (Entry::Blank, Entry::Blank) => Some(None),
-        _ => load::working(ask, kind, &mut basis, &mut Silent).map(Some),
+        _ => load::working(ask, kind, &mut basis, &mut Steps::silent()).map(Some),
     };
     let breaker = match ask.breaker {
         Entry::Blank => Some(None),
@@ -114,7 +114,7 @@ fn most(
     let at = |rating: Amps| {
         // Marked terminals, or those that are usual at this rating; unread ones were turned away before.
         let terminals = ask.terminals(&mut Basis::default(), family, rating)?;
-        let ampacity = carry::ampacity(cable, laid, terminals, &mut Silent)?;
+        let ampacity = carry::ampacity(cable, laid, terminals, &mut Steps::silent())?;
         if rating > protect::greatest(cable, laid, ampacity, series) {
             return None;
         }
@@ -142,14 +142,14 @@ fn most(
 
 /// How far `current` goes before the drop is all that is allowed: L = V · allowed / (2 · I · Z).
 fn farthest(current: Amps, cable: Candidate, laid: &Laid, kind: Kind, voltage: Volts, allowed: Percent) -> Metres {
-    let (impedance, ..) = by_length(current, cable, laid, kind, &mut Silent);
+    let (impedance, ..) = by_length(current, cable, laid, kind, &mut Steps::silent());
     Metres::new(voltage.get() * allowed.share() / (2.0 * current.get() * impedance.get()))
 }
 
 /// The current at which the drop over the way is all that is allowed. The drop rises with the current, so halving the
 /// span sixty times finds it to the last bit that counts.
 fn for_drop(cable: Candidate, laid: &Laid, kind: Kind, way: Way) -> Amps {
-    let cold = by_length(Amps::new(0.0), cable, laid, kind, &mut Silent).0;
+    let cold = by_length(Amps::new(0.0), cable, laid, kind, &mut Steps::silent()).0;
     let (mut low, mut high) = (0.0, way.voltage.get() * way.allowed.share() / (2.0 * way.length.get() * cold.get()));
     for _ in 0..60 {
         let middle = 0.5 * (low + high);

@@ -3,7 +3,7 @@
 use super::known::Known;
 use super::voltage_drop::{Way, by_length};
 use super::{Ask, Candidate, bank_fault, poles, precharge, voltage_drop};
-use crate::check::{Basis, Check, Cost, FieldSet, Origin, Outcome, Sense, Silent, Step, Steps, Written, judge};
+use crate::check::{Basis, Check, Cost, FieldSet, Origin, Outcome, Sense, Step, Steps, judge};
 use crate::field::Field;
 use crate::quantity::{Metres, Ohms, Percent};
 use crate::show;
@@ -34,7 +34,7 @@ pub(super) fn conductor(ask: &Ask) -> Result<Candidate, FieldSet> {
         Some(Some(entered)) => return Ok(entered),
         Some(None) => {}
     }
-    let known = Known::read(ask, &mut basis, &mut Silent).map_err(|_| basis.missing())?;
+    let known = Known::read(ask, &mut basis, &mut Steps::silent()).map_err(|_| basis.missing())?;
     let way = Way::read(ask, known.kind, &mut Basis::default());
     let ladder = known.ladder();
     // No ladder is empty.
@@ -93,7 +93,7 @@ impl Requirement {
         ask: &Ask,
         conductor: Result<Candidate, FieldSet>,
         basis: &mut Basis,
-        steps: &mut impl Steps,
+        steps: &mut Steps,
     ) -> Outcome {
         match self {
             Self::Ampacity | Self::Protection => {
@@ -131,7 +131,7 @@ impl Requirement {
                 if !ask.kind.typed().is_some_and(super::Kind::on_bank) {
                     return Outcome::DoesNotArise;
                 }
-                let known = Known::read(ask, basis, &mut Silent);
+                let known = Known::read(ask, basis, &mut Steps::silent());
                 let (Ok(known), Some(candidate)) = (known, candidate(conductor, basis)) else { return Outcome::Asks };
                 bank_fault::bank_fault(ask, &known, candidate, basis, steps)
             }
@@ -140,11 +140,12 @@ impl Requirement {
                 if kind != super::Kind::InverterFeed {
                     return Outcome::DoesNotArise;
                 }
-                let known = Known::read(ask, basis, &mut Silent);
+                let known = Known::read(ask, basis, &mut Steps::silent());
                 let (Ok(known), Some(candidate)) = (known, candidate(conductor, basis)) else { return Outcome::Asks };
                 // A way of unknown length is taken as none: the peak is then the greatest.
                 let length = ask.length.typed().unwrap_or(Metres::new(0.0));
-                let cold = by_length(crate::quantity::Amps::new(0.0), candidate, &known.laid, kind, &mut Silent).0;
+                let cold =
+                    by_length(crate::quantity::Amps::new(0.0), candidate, &known.laid, kind, &mut Steps::silent()).0;
                 let way: Ohms = cold * (length * 2.0);
                 precharge::precharge(ask, kind, known.rating, way, basis, steps)
             }
@@ -159,7 +160,7 @@ impl Requirement {
 
     fn check_with(self, ask: &Ask, conductor: Result<Candidate, FieldSet>) -> Option<Check<Self>> {
         let mut basis = Basis::default();
-        let outcome = self.outcome(ask, conductor, &mut basis, &mut Silent);
+        let outcome = self.outcome(ask, conductor, &mut basis, &mut Steps::silent());
         judge(self, self.cost(), Self::reserve(), outcome, &basis)
     }
 
@@ -192,7 +193,7 @@ pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
     let conductor = conductor(ask);
     let mut checks: Vec<_> =
         Requirement::ALL.iter().filter_map(|requirement| requirement.check_with(ask, conductor)).collect();
-    checks.sort_by(worst_first);
+    crate::order::sort_short(&mut checks, worst_first);
     checks
 }
 
@@ -200,10 +201,10 @@ pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
 #[must_use]
 pub fn working(ask: &Ask, requirement: Requirement) -> Vec<Step> {
     let mut basis = Basis::default();
-    let mut steps = Written::default();
+    let mut steps = Steps::written();
     let outcome = requirement.outcome(ask, conductor(ask), &mut basis, &mut steps);
     let Some(check) = judge(requirement, requirement.cost(), Requirement::reserve(), outcome, &basis) else {
-        return steps.0;
+        return steps.into_steps();
     };
     if let (Some(value), Some(limit), Some(margin)) = (check.value, check.limit, check.margin) {
         steps.step("Margin to the limit", margin, || {
@@ -215,5 +216,5 @@ pub fn working(ask: &Ask, requirement: Requirement) -> Vec<Step> {
             (formula, put_in, Origin::Before)
         });
     }
-    steps.0
+    steps.into_steps()
 }

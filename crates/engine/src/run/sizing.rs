@@ -6,7 +6,7 @@ use super::precharge::{Precharge, advice};
 use super::voltage_drop::{Drop, Way, by_length, drop};
 use super::{Ampacity, Ask, BreakerType, Candidate, Fault, Kind, Load, Requirement, bank_fault, carry, poles, protect};
 use crate::ampacity::{Insulation, tabled};
-use crate::check::{Basis, Check, FieldSet, Silent, Verdict};
+use crate::check::{Basis, Check, FieldSet, Steps, Verdict};
 use crate::family::CodeFamily;
 use crate::quantity::{Amps, Celsius, Metres, Volts};
 
@@ -90,11 +90,11 @@ pub struct Sizing {
 pub fn size(ask: &Ask) -> Result<Sizing, FieldSet> {
     let mut basis = Basis::default();
     let entered = ask.entered(&mut basis);
-    let known = Known::read(ask, &mut basis, &mut Silent).map_err(|_| basis.missing())?;
+    let known = Known::read(ask, &mut basis, &mut Steps::silent()).map_err(|_| basis.missing())?;
     let Some(entered) = entered else { return Err(basis.missing()) };
     let way = Way::read(ask, known.kind, &mut Basis::default());
     let conductor = entered.or_else(|| known.smallest(way));
-    let ampacity = conductor.and_then(|one| carry::ampacity(one, &known.laid, known.terminals, &mut Silent));
+    let ampacity = conductor.and_then(|one| carry::ampacity(one, &known.laid, known.terminals, &mut Steps::silent()));
     let thinner = conductor.map_or_else(Vec::new, |one| two_thinner(ask, &known, one));
     Ok(Sizing {
         kind: known.kind,
@@ -106,7 +106,7 @@ pub fn size(ask: &Ask) -> Result<Sizing, FieldSet> {
         protection: protection(ask, &known),
         drop: conductor
             .zip(way)
-            .map(|(one, way)| drop(known.load.working, one, &known.laid, known.kind, way, &mut Silent)),
+            .map(|(one, way)| drop(known.load.working, one, &known.laid, known.kind, way, &mut Steps::silent())),
         landing: conductor.map(|one| landing(one, known.laid.conductor.make(), known.rating, known.family)),
         thinner,
         fault: conductor.and_then(|one| bank_fault::of_run(ask, &known, one)),
@@ -126,7 +126,7 @@ fn two_thinner(ask: &Ask, known: &Known, conductor: Candidate) -> Vec<Thinner> {
                 .filter_map(|requirement| requirement.check_on(ask, candidate))
                 .filter(|check| check.verdict == Verdict::Breaks)
                 .collect();
-            breaks.sort_by(super::requirement::worst_first);
+            crate::order::sort_short(&mut breaks, super::requirement::worst_first);
             Thinner { candidate, breaks }
         })
         .collect()
@@ -171,6 +171,6 @@ fn how_to_precharge(ask: &Ask, known: &Known, conductor: Candidate) -> Option<Pr
     let voltage = ask.voltage.typed()?;
     let power = ask.power.typed().unwrap_or(voltage * known.load.working);
     let length = ask.length.typed().unwrap_or(Metres::new(0.0));
-    let cold = by_length(Amps::new(0.0), conductor, &known.laid, known.kind, &mut Silent).0;
+    let cold = by_length(Amps::new(0.0), conductor, &known.laid, known.kind, &mut Steps::silent()).0;
     advice(ask, power, cold * (length * 2.0))
 }

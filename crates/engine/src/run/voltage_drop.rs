@@ -51,7 +51,7 @@ pub(super) fn by_length(
     candidate: Candidate,
     laid: &Laid,
     kind: Kind,
-    steps: &mut impl Steps,
+    steps: &mut Steps,
 ) -> (OhmsPerMetre, OhmsPerMetre, Celsius) {
     let several = f64::from(candidate.parallel);
     let greatest = laid.insulation.bears(laid.family);
@@ -90,14 +90,7 @@ pub(super) fn by_length(
 /// # Source
 ///
 /// Ohm's law; [`source::IEC_60364_5_52`], annex G.
-pub(super) fn drop(
-    current: Amps,
-    candidate: Candidate,
-    laid: &Laid,
-    kind: Kind,
-    way: Way,
-    steps: &mut impl Steps,
-) -> Drop {
+pub(super) fn drop(current: Amps, candidate: Candidate, laid: &Laid, kind: Kind, way: Way, steps: &mut Steps) -> Drop {
     let (impedance, one, temperature) = by_length(current, candidate, laid, kind, steps);
     let both_ways = way.length * 2.0;
     let loop_ohms = impedance * both_ways;

@@ -86,7 +86,7 @@ impl Search<'_> {
             };
             order.push((link, (self.near[place] & self.free).count_ones(), place));
         }
-        order.sort_unstable();
+        crate::order::sort_short(&mut order, Ord::cmp);
         for (_, _, place) in order {
             if self.walk.work() > self.work {
                 return Ended::OutOfWork;

@@ -7,6 +7,7 @@ use super::ground::{Ground, Joint};
 use super::turns::Walked;
 use super::wiring::{TakeOff, Wiring};
 use super::{Proof, Stand};
+use crate::order::sort_short;
 use crate::quantity::{Metres, Volts};
 
 /// Above this a direct voltage is dangerous to touch, in the dry.
@@ -372,11 +373,12 @@ fn link_up(ground: &Ground, wiring: &Wiring, volts: CellVolts, allowance: Metres
         }
     }
     // Groups first, then along each string, then what joins halves. The sort keeps the order within each.
-    links.sort_by_key(|link| match link.kind {
+    let turn = |link: &Link| match link.kind {
         LinkKind::Parallel => 0,
         LinkKind::Series if !link.fitted_last => 1,
         LinkKind::Series => 2,
-    });
+    };
+    sort_short(&mut links, |a, b| turn(a).cmp(&turn(b)));
     for (number, link) in (1..).zip(&mut links) {
         link.number = number;
     }
@@ -395,7 +397,7 @@ fn cuts(links: &[Link]) -> Vec<Cut> {
             None => cuts.push(Cut { hole_to_hole: whole, cut: link.cut, links: vec![link.number] }),
         }
     }
-    cuts.sort_by_key(|cut| core::cmp::Reverse(cut.links.len()));
+    sort_short(&mut cuts, |a, b| b.links.len().cmp(&a.links.len()));
     cuts
 }
 
@@ -430,7 +432,7 @@ fn barriers(ground: &Ground, wiring: &Wiring, volts: CellVolts, places: &[Place]
             }
         }
     }
-    found.sort_by(|a, b| b.volts.get().total_cmp(&a.volts.get()));
+    sort_short(&mut found, |a, b| b.volts.get().total_cmp(&a.volts.get()));
     found
 }
 

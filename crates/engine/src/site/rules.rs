@@ -6,7 +6,7 @@ use super::Site;
 use super::part::{Part, PartKind};
 use super::view::{Subject, View};
 use crate::bank::YesNo;
-use crate::check::{Basis, Check, Cost, Limit, Origin, Outcome, Silent, Step, Steps, Written, judge};
+use crate::check::{Basis, Check, Cost, Limit, Origin, Outcome, Step, Steps, judge};
 use crate::choice::Choice;
 use crate::entry::Entry;
 use crate::family::CodeFamily;
@@ -104,7 +104,7 @@ impl Requirement {
         }
     }
 
-    fn outcome(self, site: &Site, part: Option<&Part>, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+    fn outcome(self, site: &Site, part: Option<&Part>, basis: &mut Basis, steps: &mut Steps) -> Outcome {
         let subject = part.map_or(Subject::Place, |part| Subject::Part(part.id));
         let view = View::new(site, subject);
         match self {
@@ -139,7 +139,7 @@ impl Requirement {
         }
     }
 
-    fn judged(self, site: &Site, part: Option<&Part>, steps: &mut impl Steps) -> Option<Check<Self>> {
+    fn judged(self, site: &Site, part: Option<&Part>, steps: &mut Steps) -> Option<Check<Self>> {
         if !self.arises(site, part) {
             return None;
         }
@@ -151,16 +151,16 @@ impl Requirement {
     /// Judges this requirement for `part`, or for the site as a whole. `None` where it does not arise there.
     #[must_use]
     pub fn check(self, site: &Site, part: Option<&Part>) -> Option<Check<Self>> {
-        self.judged(site, part, &mut Silent)
+        self.judged(site, part, &mut Steps::silent())
     }
 
     /// The steps of the same.
     #[must_use]
     pub fn working(self, site: &Site, part: Option<&Part>) -> Vec<Step> {
-        let mut steps = Written::default();
+        let mut steps = Steps::written();
         // What is wanted are the steps; the judgement is the caller's.
         let _ = self.judged(site, part, &mut steps);
-        steps.0
+        steps.into_steps()
     }
 }
 
@@ -243,7 +243,7 @@ fn exactly_one(value: Count) -> Outcome {
 ///
 /// None leaves a fault to a case with no way back, so that no breaker opens; two let the neutral's current flow in
 /// cases and earth wires.
-fn bonds(site: &Site, view: &View<'_>, mode: Mode, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn bonds(site: &Site, view: &View<'_>, mode: Mode, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let inverter = basis.need(Field::InverterBond, view.choice::<InverterBond>(Field::InverterBond));
     let panel = match site.first(PartKind::AcPanel) {
         Some(_) => basis.need(Field::PanelBond, view.choice::<YesNo>(Field::PanelBond)),
@@ -280,7 +280,7 @@ fn bonds(site: &Site, view: &View<'_>, mode: Mode, basis: &mut Basis, steps: &mu
 }
 
 /// neutral-multiwire: two legs of one 120 V source add up in a shared neutral, which has no breaker of its own.
-fn multiwire(view: &View<'_>, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn multiwire(view: &View<'_>, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     match view.choice::<Legs>(Field::PanelLegs) {
         Entry::Typed(Legs::Joined) => {}
         // One leg has no second to share with; two true legs may share.
@@ -301,7 +301,7 @@ fn multiwire(view: &View<'_>, basis: &mut Basis, steps: &mut impl Steps) -> Outc
 }
 
 /// Something that must be there.
-fn said(view: &View<'_>, field: Field, clause: Clause, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn said(view: &View<'_>, field: Field, clause: Clause, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let Some(said) = basis.need(field, view.choice::<YesNo>(field)) else { return Outcome::Asks };
     let there = count(f64::from(u8::from(said == YesNo::Yes)));
     let value = steps.step("There", there, || ("", String::new(), Origin::Published(clause)));
@@ -321,7 +321,7 @@ fn fault(view: &View<'_>) -> Clause {
 const ONE_PROTECTS: Metres = Metres::new(10.0);
 
 /// earthing-arresters: one at the controller, one more at the array where the run is long.
-fn arresters(part: Option<&Part>, view: &View<'_>, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn arresters(part: Option<&Part>, view: &View<'_>, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let length =
         part.and_then(|part| part.run.as_ref()).map_or(Entry::Blank, |run| run.entry::<Metres>(Field::RunLength));
     let length = basis.need(Field::RunLength, length);
@@ -336,7 +336,7 @@ fn arresters(part: Option<&Part>, view: &View<'_>, basis: &mut Basis, steps: &mu
 }
 
 /// backfeed: an inverter's output never stands on a panel that the grid can feed, but through a transfer switch.
-fn backfeed(view: &View<'_>, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn backfeed(view: &View<'_>, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let grid = basis.assume(Field::GridFeeds, view.choice::<YesNo>(Field::GridFeeds), YesNo::No);
     let Some(grid) = grid else { return Outcome::Asks };
     let sources = if grid == YesNo::No {
@@ -354,7 +354,7 @@ fn backfeed(view: &View<'_>, basis: &mut Basis, steps: &mut impl Steps) -> Outco
 }
 
 /// source-overspeed: what a source reaches with nothing on it ≤ what the controller's input survives.
-fn overspeed(view: &View<'_>, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn overspeed(view: &View<'_>, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let volts = basis.need(Field::OverspeedVolts, view.entry::<Volts>(Field::OverspeedVolts));
     let limit = basis.need(Field::InputLimit, view.entry::<Volts>(Field::InputLimit));
     let (Some(volts), Some(limit)) = (volts, limit) else { return Outcome::Asks };
@@ -363,7 +363,7 @@ fn overspeed(view: &View<'_>, basis: &mut Basis, steps: &mut impl Steps) -> Outc
 }
 
 /// source-dump: the dump load ≥ the source's greatest power, or it runs away when the bank is full.
-fn dump(view: &View<'_>, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn dump(view: &View<'_>, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let power = basis.need(Field::SourcePower, view.entry::<Watts>(Field::SourcePower));
     let dump = basis.need(Field::DumpLoad, view.entry::<Watts>(Field::DumpLoad));
     let (Some(power), Some(dump)) = (power, dump) else { return Outcome::Asks };

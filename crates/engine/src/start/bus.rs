@@ -3,7 +3,7 @@
 use super::ask::positive;
 use super::{AGED, Ask, CHARGE};
 use crate::bank;
-use crate::check::{Basis, Origin, Silent, Steps};
+use crate::check::{Basis, Origin, Steps};
 use crate::chemistry::rested;
 use crate::entry::Entry;
 use crate::field::Field;
@@ -15,7 +15,7 @@ use crate::show;
 ///
 /// Where the bank's volts were entered, they hold. Else E and R follow from its cells: the rested voltage at the charge
 /// asked for, and the highest resistance of its chemistry, old, cold and low.
-pub fn seen(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<Behind> {
+pub fn seen(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<Behind> {
     let cable = basis.assume(Field::CableResistance, ask.cable, ask.usual_cable());
     let by_cells = ask.bank_voltage == Entry::Blank && ask.bank.chemistry != Entry::Blank;
     let bank = if by_cells { by_its_cells(ask, None, basis) } else { as_entered(ask, basis) };
@@ -78,7 +78,7 @@ pub fn lowest_charge(ask: &Ask, watts: crate::quantity::Watts) -> Option<Percent
     let asked = Ask { bank_voltage: Entry::Blank, ..*ask };
     let holds = |charge: f64| {
         let bank = by_its_cells(&asked, Some(Percent::new(charge)), &mut Basis::default())?;
-        let found = bank.and(cable).under(watts, &mut Silent).ok();
+        let found = bank.and(cable).under(watts, &mut Steps::silent()).ok();
         Some(found.is_some_and(|found| found.volts >= cut_off))
     };
     if !holds(100.0)? {

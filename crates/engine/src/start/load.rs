@@ -74,7 +74,7 @@ pub struct Phases {
 /// # Source
 ///
 /// [`source::NEC`], Table 430.7(B); multiples: [`source::MOTOR_GUIDES`].
-pub fn phases(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<Phases> {
+pub fn phases(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<Phases> {
     let before = Draws::of(basis.assume(Field::AlreadyRunning, ask.already, Watts::new(0.0))?, 1.0);
     let many = basis.assume(Field::HowMany, positive(ask.how_many), Count::new(1.0))?.get();
     let start = starting(ask, basis, steps);
@@ -108,7 +108,7 @@ fn running(ask: &Ask, basis: &mut Basis) -> Option<Draws> {
     Some(Draws::of(power?, factor?.get()))
 }
 
-fn starting(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<Draws> {
+fn starting(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<Draws> {
     let factor = match ask.usual_starting_factor() {
         Some(usual) => basis.assume(Field::StartingPowerFactor, ask.starting_factor, usual),
         None => basis.need(Field::StartingPowerFactor, ask.starting_factor),

@@ -5,6 +5,7 @@
 /// # Source
 ///
 /// [`crate::source::NEC`], Table 430.7(B), from memory and met in handbook pages.
+#[allow(clippy::approx_constant, reason = "a figure of the table, no circle")]
 pub const CODE_LETTERS: [(char, f64, f64); 19] = [
     ('A', 0.0, 3.14),
     ('B', 3.15, 3.54),

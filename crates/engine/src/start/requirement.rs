@@ -2,7 +2,7 @@
 
 use super::ask::{Curve, positive};
 use super::{Ask, SURGE_EFFICIENCY, SURGE_SECONDS, bus, phases};
-use crate::check::{Basis, Check, Cost, Limit, Origin, Outcome, Sense, Silent, Step, Steps, Written, judge};
+use crate::check::{Basis, Check, Cost, Limit, Origin, Outcome, Sense, Step, Steps, judge};
 use crate::entry::Entry;
 use crate::field::Field;
 use crate::network::Loaded;
@@ -78,7 +78,7 @@ impl Requirement {
         })
     }
 
-    fn outcome(self, ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+    fn outcome(self, ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
         match self {
             Self::Surge => surge(ask, basis, steps),
             Self::Sag => sag(ask, basis, steps),
@@ -90,7 +90,7 @@ impl Requirement {
         }
     }
 
-    fn judged(self, ask: &Ask, steps: &mut impl Steps) -> Option<Check<Self>> {
+    fn judged(self, ask: &Ask, steps: &mut Steps) -> Option<Check<Self>> {
         let mut basis = Basis::default();
         let outcome = self.outcome(ask, &mut basis, steps);
         judge(self, self.cost(), self.reserve(), outcome, &basis)
@@ -99,7 +99,7 @@ impl Requirement {
     /// Judges this requirement. `None` where it does not arise.
     #[must_use]
     pub fn check(self, ask: &Ask) -> Option<Check<Self>> {
-        self.judged(ask, &mut Silent)
+        self.judged(ask, &mut Steps::silent())
     }
 }
 
@@ -117,8 +117,8 @@ pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
 /// The steps of one requirement, made by the same code as its value. The last is the margin to its limit.
 #[must_use]
 pub fn working(ask: &Ask, requirement: Requirement) -> Vec<Step> {
-    let mut steps = Written::default();
-    let Some(check) = requirement.judged(ask, &mut steps) else { return steps.0 };
+    let mut steps = Steps::written();
+    let Some(check) = requirement.judged(ask, &mut steps) else { return steps.into_steps() };
     if let (Some(value), Some(limit), Some(margin)) = (check.value, check.limit, check.margin) {
         steps.step("Margin to the limit", margin, || {
             let (value, bound) = (show::step(value), show::given(limit.amount));
@@ -134,7 +134,7 @@ pub fn working(ask: &Ask, requirement: Requirement) -> Vec<Step> {
             (formula, put_in, Origin::Before)
         });
     }
-    steps.0
+    steps.into_steps()
 }
 
 /// What the inverter's ratings keep at this height and in this air.
@@ -149,7 +149,7 @@ fn derated(ask: &Ask, basis: &mut Basis) -> Option<f64> {
 }
 
 /// inverter-surge: apparent power of the start on top of what runs ≤ the surge, where that lasts as long as the start.
-fn surge(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn surge(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let phases = phases(ask, basis, steps);
     let lasts = basis.assume(Field::SurgeSeconds, ask.surge_seconds, SURGE_SECONDS);
     let continuous = positive(ask.inverter_continuous);
@@ -178,7 +178,7 @@ fn surge(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
 }
 
 /// inverter-steady: everything running ≤ what the inverter gives for long.
-fn steady(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn steady(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let phases = phases(ask, basis, steps);
     let continuous = basis.need(Field::InverterContinuous, positive(ask.inverter_continuous));
     let derated = derated(ask, basis);
@@ -196,7 +196,7 @@ fn steady(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
 }
 
 /// The draw of the start on the bus: P / η.
-pub(super) fn on_the_bus(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<(Watts, Seconds)> {
+pub(super) fn on_the_bus(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<(Watts, Seconds)> {
     let phases = phases(ask, basis, steps);
     let efficiency = basis.assume(Field::InverterEfficiency, positive(ask.efficiency), SURGE_EFFICIENCY);
     let (phases, efficiency) = (phases?, efficiency?);
@@ -208,7 +208,7 @@ pub(super) fn on_the_bus(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -
 }
 
 /// The bus under the start. `Ok(None)` in collapse.
-fn loaded(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<(Result<Loaded, Watts>, Seconds)> {
+fn loaded(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<(Result<Loaded, Watts>, Seconds)> {
     let drawn = on_the_bus(ask, basis, steps);
     let seen = bus::seen(ask, basis, steps);
     let ((drawn, seconds), seen) = (drawn?, seen?);
@@ -216,7 +216,7 @@ fn loaded(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<(Resul
 }
 
 /// bus-sag: volts at the inverter while it starts ≥ its cut-off. In collapse there are none.
-fn sag(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn sag(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let loaded = loaded(ask, basis, steps);
     let cut_off = match (ask.cut_off, ask.bank.inverter_low) {
         // The window's low end in the site is the same figure.
@@ -231,7 +231,7 @@ fn sag(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
 }
 
 /// bms-hold-this-start: current of the start ≤ packs × what one lets pass for as long.
-fn packs(ask: &Ask, out: f64, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn packs(ask: &Ask, out: f64, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.pack_limit == Entry::Blank && ask.pack_peak == Entry::Blank {
         return Outcome::DoesNotArise;
     }
@@ -284,7 +284,7 @@ fn with_resistance(ask: &Ask, more: f64) -> Ask {
 /// # Source
 ///
 /// [`source::IEC_60898`], table 7, from memory.
-fn breaker(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn breaker(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.breaker == Entry::Blank {
         return Outcome::DoesNotArise;
     }
@@ -314,7 +314,7 @@ const GENERATOR_SHARE: f64 = 0.8;
 /// generator: what runs and the charger ≤ the set's rating, for hours, at this height and heat.
 ///
 /// *Chosen*, common practice for engines that breathe freely: 1 % less for each 100 m, and for each 5 K above 25 °C.
-fn generator(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+fn generator(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.generator == Entry::Blank {
         return Outcome::DoesNotArise;
     }
@@ -343,16 +343,16 @@ fn generator(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
 #[must_use]
 pub fn volts(ask: &Ask) -> Option<[Option<Volts>; 3]> {
     let mut basis = Basis::default();
-    let phases = phases(ask, &mut basis, &mut Silent)?;
-    let seen = bus::seen(ask, &mut basis, &mut Silent)?;
+    let phases = phases(ask, &mut basis, &mut Steps::silent())?;
+    let seen = bus::seen(ask, &mut basis, &mut Steps::silent())?;
     let efficiency = ask.efficiency.typed().unwrap_or(SURGE_EFFICIENCY).share();
-    let under = |watts: Watts| seen.under(watts / efficiency, &mut Silent).ok().map(|found| found.volts);
+    let under = |watts: Watts| seen.under(watts / efficiency, &mut Steps::silent()).ok().map(|found| found.volts);
     Some([under(phases.before.active()), under(phases.starting.active()), under(phases.running.active())])
 }
 
 /// Current of the start, for words.
 #[must_use]
 pub fn current(ask: &Ask) -> Option<Amps> {
-    let (loaded, _) = loaded(ask, &mut Basis::default(), &mut Silent)?;
+    let (loaded, _) = loaded(ask, &mut Basis::default(), &mut Steps::silent())?;
     loaded.ok().map(|found| found.current)
 }

@@ -3,7 +3,7 @@
 use super::ask::Letter;
 use super::requirement::{Requirement, current, volts};
 use super::*;
-use crate::check::{Basis, Silent, Verdict};
+use crate::check::{Basis, Steps, Verdict};
 use crate::entry::Entry;
 use crate::quantity::{Celsius, Metres};
 
@@ -41,7 +41,7 @@ fn value(ask: &Ask, requirement: Requirement) -> (f64, f64, Verdict) {
 #[test]
 fn the_start_passes_by_watts_and_breaks_by_volt_amperes() {
     let ask = pump();
-    let found = phases(&ask, &mut Basis::default(), &mut Silent).unwrap();
+    let found = phases(&ask, &mut Basis::default(), &mut Steps::silent()).unwrap();
     assert!((found.starting.watts - 6592.5).abs() < 0.01, "{found:?}");
     let (apparent, margin, verdict) = value(&ask, Requirement::Surge);
     // 12 295.7 where the reactive part is rounded to 10 379 var first.

@@ -4,7 +4,7 @@
 //! assumptions and the code family are never edited.
 
 use super::{Ask, Layout, layouts};
-use crate::check::Silent;
+use crate::check::Steps;
 use crate::controller::Controller;
 use crate::entry::Entry;
 use crate::quantity::{Amps, Volts};
@@ -95,7 +95,7 @@ fn raised(ask: &Ask, modules: u32, controllers: &[Controller], which: usize) -> 
     let on = ask.on(controllers[which]);
     if let (Some(limit), Some(each)) = (
         controllers[which].input_limit.typed(),
-        super::cold::cold_string(&on.with_counts(1, 1), &mut basis, &mut Silent),
+        super::cold::cold_string(&on.with_counts(1, 1), &mut basis, &mut Steps::silent()),
     ) {
         let candidates = (1..=modules).map(|count| each * f64::from(count)).filter(|volts| *volts > limit);
         // A longer string never needs less: the first that does is the least.

@@ -65,7 +65,7 @@ pub fn bulk_voltage(highest_charge: Volts) -> Volts {
 }
 
 /// array-clip: share of the year's energy that the controller's output current cannot pass on.
-pub(super) fn clip(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn clip(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.kind(basis) == Some(ControllerKind::Pwm) {
         return Outcome::DoesNotArise;
     }
@@ -123,7 +123,7 @@ pub(super) fn clip(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outc
 }
 
 /// pwm-harvest: share of its rated power that the array gives on a PWM controller: Imp · V(bank) over Vmp · Imp.
-pub(super) fn pwm_harvest(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn pwm_harvest(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     match ask.kind(basis) {
         Some(ControllerKind::Pwm) => {}
         Some(ControllerKind::Mppt) => return Outcome::DoesNotArise,

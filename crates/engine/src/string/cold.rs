@@ -1,14 +1,14 @@
 //! The voltage of an open string at record cold, against what it may destroy.
 
 use super::Ask;
-use crate::check::{Basis, Limit, Origin, Outcome, Silent, Steps};
+use crate::check::{Basis, Limit, Origin, Outcome, Steps};
 use crate::family::Stands;
 use crate::field::Field;
 use crate::quantity::{Quantity, Volts};
 use crate::show;
 
 /// Voltage of the whole string, open, at record cold. V = n · Voc(T)
-pub(super) fn cold_string(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<Volts> {
+pub(super) fn cold_string(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<Volts> {
     let series = ask.series(basis);
     let low = basis.need(Field::RecordLow, ask.record_low);
     // Reads the module even where the record low is missing, so that everything missing is named at once.
@@ -30,7 +30,7 @@ pub(super) fn cold_string(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) 
 }
 
 /// string-cold-controller: n · Voc(record low) ≤ the controller's input limit.
-pub(super) fn controller(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn controller(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let value = cold_string(ask, basis, steps);
     let limit = basis.need(Field::InputLimit, ask.controller.input_limit);
     match (value, limit) {
@@ -43,7 +43,7 @@ pub(super) fn controller(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -
 ///
 /// Breakers, fuses, cables and arresters of the circuit must be rated for the same voltage: the value is what to read
 /// on them.
-pub(super) fn circuit(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn circuit(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let value = cold_string(ask, basis, steps);
     // Where and to which code it is built only counts where the code's limit is the lower one.
     let mut place = *basis;
@@ -86,7 +86,7 @@ fn code_limit(ask: &Ask, basis: &mut Basis) -> Option<(Volts, crate::source::Cla
 pub fn longest(ask: &Ask) -> Option<u32> {
     let mut basis = Basis::default();
     let one = ask.with_counts(1, 1);
-    let each = cold_string(&one, &mut basis, &mut Silent)?;
+    let each = cold_string(&one, &mut basis, &mut Steps::silent())?;
     let mut limit = basis.need(Field::InputLimit, ask.controller.input_limit)?;
     if let Some(system) = ask.module.system_voltage.typed() {
         limit = limit.min(system);
@@ -104,7 +104,7 @@ pub fn longest(ask: &Ask) -> Option<u32> {
 /// The voltage of the open string at record cold, where it can be told.
 #[must_use]
 pub fn cold_voltage(ask: &Ask) -> Option<Volts> {
-    cold_string(ask, &mut Basis::default(), &mut Silent)
+    cold_string(ask, &mut Basis::default(), &mut Steps::silent())
 }
 
 /// The cold voltage of the string without its tolerance, for the sentence that says what the tolerance adds.

@@ -11,7 +11,7 @@ use crate::show;
 /// array-short-circuit: strings · Isc · sunlight factor · (1 + rear gain) ≤ the controller's PV current limit.
 ///
 /// Where that limit already holds the factor, the factor is left out.
-pub(super) fn short_circuit(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn short_circuit(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.kind(basis) == Some(ControllerKind::Pwm) {
         return Outcome::DoesNotArise;
     }
@@ -30,7 +30,7 @@ pub(super) fn short_circuit(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps
 /// pwm-match: a PWM controller carries the whole array current: strings · Isc · sunlight factor ≤ its rating.
 ///
 /// Its rating is its PV current limit where that was entered, else its output current: they are one path.
-pub(super) fn pwm(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn pwm(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     match ask.kind(basis) {
         Some(ControllerKind::Pwm) => {}
         Some(ControllerKind::Mppt) => return Outcome::DoesNotArise,
@@ -47,7 +47,7 @@ pub(super) fn pwm(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outco
     }
 }
 
-fn total_current(ask: &Ask, holds: LimitHoldsFactor, basis: &mut Basis, steps: &mut impl Steps) -> Option<Amps> {
+fn total_current(ask: &Ask, holds: LimitHoldsFactor, basis: &mut Basis, steps: &mut Steps) -> Option<Amps> {
     let strings = ask.strings(basis);
     // Both families print the same factor, so which one is chosen needs no asking.
     let rules = ask.family.typed().unwrap_or_default().pv_circuit();

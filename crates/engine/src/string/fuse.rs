@@ -33,7 +33,7 @@ pub struct StringFuses {
 ///
 /// (n − 1) · Isc, in North America times 1.25. What the bank can feed back through the controller is taken as nothing:
 /// a converter or a blocking part stands between; where a controller has neither, its maker says so.
-fn backfeed(ask: &Ask, rules: &PvCircuitRules, basis: &mut Basis, steps: &mut impl Steps) -> Option<Amps> {
+fn backfeed(ask: &Ask, rules: &PvCircuitRules, basis: &mut Basis, steps: &mut Steps) -> Option<Amps> {
     let strings = ask.strings(basis);
     let isc = basis.need(Field::Isc, ask.module.isc);
     let (strings, isc) = (strings?, isc?);
@@ -58,7 +58,7 @@ fn backfeed(ask: &Ask, rules: &PvCircuitRules, basis: &mut Basis, steps: &mut im
 ///
 /// One string has nothing to feed back. A fuse must be of class gPV, its voltage at least the string's cold voltage,
 /// and in both poles where neither is earthed.
-pub(super) fn fuse(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn fuse(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.strings.typed().is_none_or(|strings| strings.get() <= 1.0) && ask.strings != crate::entry::Entry::Unread {
         return Outcome::DoesNotArise;
     }
@@ -106,7 +106,7 @@ pub fn string_fuses(ask: &Ask) -> Option<StringFuses> {
     }
     let rules = ask.family(&mut basis)?.pv_circuit();
     let (isc, module_most) = (ask.module.isc.typed()?, ask.module.series_fuse.typed()?);
-    let backfeed = backfeed(ask, rules, &mut basis, &mut crate::check::Silent)?;
+    let backfeed = backfeed(ask, rules, &mut basis, &mut crate::check::Steps::silent())?;
     let least = isc * rules.fuse_least;
     let fitting: Vec<Amps> = rules.fitting(isc, module_most).collect();
     let advised =

@@ -2,7 +2,7 @@
 
 use super::Ask;
 use crate::assumed;
-use crate::check::{Basis, Limit, Origin, Outcome, Silent, Steps};
+use crate::check::{Basis, Limit, Origin, Outcome, Steps};
 use crate::choice::{ControllerKind, Mounting};
 use crate::field::Field;
 use crate::module::{origin, rise};
@@ -10,7 +10,7 @@ use crate::quantity::{Celsius, Quantity, Volts};
 use crate::show;
 
 /// Hottest temperature of the cells. T = record high + rise by mounting
-pub(super) fn hottest_cell(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<Celsius> {
+pub(super) fn hottest_cell(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<Celsius> {
     let high = basis.need(Field::RecordHigh, ask.record_high);
     let mounting = basis.assume(Field::Mounting, ask.mounting, Mounting::OpenRack);
     let (high, rise) = (high?, rise(mounting?));
@@ -25,7 +25,7 @@ pub(super) fn hottest_cell(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps)
 }
 
 /// Voltage of the whole string at greatest power, cells at `at`. V = n · Vmp(T)
-fn working_string(ask: &Ask, at: Option<Celsius>, basis: &mut Basis, steps: &mut impl Steps) -> Option<Volts> {
+fn working_string(ask: &Ask, at: Option<Celsius>, basis: &mut Basis, steps: &mut Steps) -> Option<Volts> {
     let series = ask.series(basis);
     let each = match at {
         Some(at) => ask.module.greatest_power_voltage(at, basis, steps),
@@ -45,13 +45,13 @@ fn working_string(ask: &Ask, at: Option<Celsius>, basis: &mut Basis, steps: &mut
 }
 
 /// Voltage of the hottest string, at greatest power, at the array.
-pub(super) fn hot_string(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Option<Volts> {
+pub(super) fn hot_string(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<Volts> {
     let hottest = hottest_cell(ask, basis, steps);
     working_string(ask, hottest, basis, steps)
 }
 
 /// string-hot-charge and string-hot-start: n · Vmp(hottest cell) − drop ≥ highest charge voltage + headroom.
-pub(super) fn charge(ask: &Ask, starting: bool, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn charge(ask: &Ask, starting: bool, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let kind = ask.kind(basis);
     if starting && kind == Some(ControllerKind::Pwm) {
         return Outcome::DoesNotArise;
@@ -83,7 +83,7 @@ fn charging_needs(
     kind: Option<ControllerKind>,
     starting: bool,
     basis: &mut Basis,
-    steps: &mut impl Steps,
+    steps: &mut Steps,
 ) -> Option<Volts> {
     let (field, entry, usual) = match (kind, starting) {
         (Some(ControllerKind::Pwm), _) => {
@@ -109,13 +109,13 @@ fn charging_needs(
 pub fn charging_voltage(ask: &Ask) -> Option<Volts> {
     let mut basis = Basis::default();
     let kind = ask.kind(&mut basis);
-    charging_needs(ask, kind, false, &mut basis, &mut Silent)
+    charging_needs(ask, kind, false, &mut basis, &mut Steps::silent())
 }
 
 /// The string's voltage at greatest power with the hottest cells, where it can be told.
 #[must_use]
 pub fn hottest_working(ask: &Ask) -> Option<Volts> {
-    hot_string(ask, &mut Basis::default(), &mut Silent)
+    hot_string(ask, &mut Basis::default(), &mut Steps::silent())
 }
 
 /// The string's voltage at greatest power in full sun with the cells still at the record low, where it can be told.
@@ -123,22 +123,22 @@ pub fn hottest_working(ask: &Ask) -> Option<Volts> {
 pub fn coldest_working(ask: &Ask) -> Option<Volts> {
     let mut basis = Basis::default();
     let low = basis.need(Field::RecordLow, ask.record_low)?;
-    working_string(ask, Some(low), &mut basis, &mut Silent)
+    working_string(ask, Some(low), &mut basis, &mut Steps::silent())
 }
 
 /// string-window: n · Vmp over the year inside the controller's tracking window.
 ///
 /// The low end is the hottest afternoon; the high end is a bright morning with the cells still at the record low.
 /// The end that is nearer to its limit is the value.
-pub(super) fn window(ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+pub(super) fn window(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     if ask.kind(basis) == Some(ControllerKind::Pwm) {
         return Outcome::DoesNotArise;
     }
     let (low, high) = (ask.controller.window_low, ask.controller.window_high);
     // Compared in silence; only the end that counts is worded.
-    let hot = hot_string(ask, basis, &mut Silent);
+    let hot = hot_string(ask, basis, &mut Steps::silent());
     let record_low = basis.need(Field::RecordLow, ask.record_low);
-    let cold = working_string(ask, record_low, basis, &mut Silent);
+    let cold = working_string(ask, record_low, basis, &mut Steps::silent());
     let (window_low, window_high) = (basis.need(Field::WindowLow, low), basis.need(Field::WindowHigh, high));
     let (Some(hot), Some(cold), Some(window_low), Some(window_high)) = (hot, cold, window_low, window_high) else {
         return one_end_breaks(hot, cold, window_low, window_high).unwrap_or(Outcome::Asks);
@@ -179,7 +179,7 @@ fn one_end_breaks(
 pub fn shortest(ask: &Ask) -> Option<u32> {
     let mut basis = Basis::default();
     let one = ask.with_counts(1, 1);
-    let each = hot_string(&one, &mut basis, &mut Silent)?;
+    let each = hot_string(&one, &mut basis, &mut Steps::silent())?;
     let drop = ask.drop(&mut basis)?;
     let needs = charging_voltage(ask)?;
     let count = (needs / (each * (1.0 - drop.share())) * (1.0 - 1e-11)).ceil();

@@ -1,7 +1,7 @@
 //! The requirements of a string, each by its id, judged and worked.
 
 use super::{Ask, clip, cold, current, fuse, hot};
-use crate::check::{Basis, Check, Cost, Outcome, Sense, Silent, Step, Steps, Written, judge};
+use crate::check::{Basis, Check, Cost, Outcome, Sense, Step, Steps, judge};
 use crate::order::sort_short;
 use crate::quantity::{Percent, Quantity};
 use crate::show;
@@ -102,7 +102,7 @@ impl Requirement {
         }
     }
 
-    fn outcome(self, ask: &Ask, basis: &mut Basis, steps: &mut impl Steps) -> Outcome {
+    fn outcome(self, ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
         match self {
             Self::ColdController => cold::controller(ask, basis, steps),
             Self::ColdCircuit => cold::circuit(ask, basis, steps),
@@ -121,7 +121,7 @@ impl Requirement {
     #[must_use]
     pub fn check(self, ask: &Ask) -> Option<Check<Self>> {
         let mut basis = Basis::default();
-        let outcome = self.outcome(ask, &mut basis, &mut Silent);
+        let outcome = self.outcome(ask, &mut basis, &mut Steps::silent());
         judge(self, self.cost(), self.reserve(ask), outcome, &basis)
     }
 }
@@ -141,10 +141,10 @@ pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
 #[must_use]
 pub fn working(ask: &Ask, requirement: Requirement) -> Vec<Step> {
     let mut basis = Basis::default();
-    let mut steps = Written::default();
+    let mut steps = Steps::written();
     let outcome = requirement.outcome(ask, &mut basis, &mut steps);
     let Some(check) = judge(requirement, requirement.cost(), requirement.reserve(ask), outcome, &basis) else {
-        return steps.0;
+        return steps.into_steps();
     };
     if let (Some(value), Some(limit), Some(margin)) = (check.value, check.limit, check.margin) {
         steps.step("Margin to the limit", margin, || {
@@ -161,5 +161,5 @@ pub fn working(ask: &Ask, requirement: Requirement) -> Vec<Step> {
             (formula, put_in, crate::check::Origin::Before)
         });
     }
-    steps.0
+    steps.into_steps()
 }

@@ -2,7 +2,7 @@
 
 use arbtest::arbitrary::{Result, Unstructured};
 use arbtest::arbtest;
-use engine::check::Silent;
+use engine::check::Steps;
 use engine::network::{Behind, Element, Network, NetworkError, Node, Operating};
 use engine::quantity::{Amps, Ohms, Volts, Watts};
 use engine::sharing::{Arrangement, Paralleled, TakeOff, share};
@@ -286,7 +286,7 @@ fn one_draw_in_a_network_is_the_closed_form_and_collapses_where_it_does() {
         // From next to nothing to just past the most there is; also fed.
         let draw = source.and(cable).greatest_draw() * within(u, -1.0, 1.2)?;
         let network = trunk(source, &[(cable, draw)]);
-        match (network, source.and(cable).under(draw, &mut Silent)) {
+        match (network, source.and(cable).under(draw, &mut Steps::silent())) {
             (Ok(network), Ok(closed)) => {
                 // At the edge a hair of rounding moves the volts by its root.
                 let edge = draw / source.and(cable).greatest_draw() > 0.999;
@@ -325,7 +325,7 @@ fn a_bank_that_is_the_same_from_both_sides_shares_the_same_from_both_sides() {
         for arrangement in [Arrangement::OppositeEnds, Arrangement::Middle] {
             let (positive, negative) = arrangement.take_offs(count);
             let bank = Paralleled { strings: &strings, positive_ties: &ties, negative_ties: &ties, positive, negative };
-            let found = share(bank, current, &mut Silent).unwrap();
+            let found = share(bank, current, &mut Steps::silent()).unwrap();
             let sum: f64 = found.currents.iter().map(|one| one.get()).sum();
             assert!((sum - current.get()).abs() < 1e-6, "{sum} A of {current:?}");
             // The middle is a mirror; opposite ends are one when the bars are changed for each other as well.
@@ -360,7 +360,7 @@ fn ends_of_a_bank_may_be_changed_for_each_other() {
             TakeOff::After(tie) => TakeOff::After(count - 2 - tie),
         };
         let there = Paralleled { strings: &strings, positive_ties: &over, negative_ties: &under, positive, negative };
-        let found = share(there, Amps::new(90.0), &mut Silent).unwrap();
+        let found = share(there, Amps::new(90.0), &mut Steps::silent()).unwrap();
         let reversed = |ohms: &[Ohms]| ohms.iter().rev().copied().collect::<Vec<_>>();
         let (turned, over, under) =
             (strings.iter().rev().copied().collect::<Vec<_>>(), reversed(&over), reversed(&under));
@@ -371,7 +371,7 @@ fn ends_of_a_bank_may_be_changed_for_each_other() {
             positive: turn(positive),
             negative: turn(negative),
         };
-        let other = share(back, Amps::new(90.0), &mut Silent).unwrap();
+        let other = share(back, Amps::new(90.0), &mut Steps::silent()).unwrap();
         for (one, other) in found.currents.iter().zip(other.currents.iter().rev()) {
             assert!((*one - *other).get().abs() < 1e-6);
         }
