@@ -6,7 +6,7 @@ use engine::check::{Cost, Verdict};
 use engine::show;
 use leptos::prelude::*;
 
-use crate::derived::{derived, memo, when};
+use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::use_draft;
 use crate::pads::{Edit, Place, Typed};
 use crate::span_bar::{Bar, slim_bar, span_bar};
@@ -81,9 +81,10 @@ pub fn without_unit(shown: &str) -> &str {
 
 /// The answer: number, verdict, what it means, picture. The one region of the page with the role of a status.
 pub fn answer_view(answer: Memo<Option<Answer>>) -> AnyView {
-    let words = move || {
-        let Answer { of, number, unit, verdict, cost, says, most, rests, besides, .. } = answer.get()?;
-        let words = view! {
+    let words = dynamic(move || {
+        let Some(answer) = answer.get() else { return ().into_any() };
+        let Answer { of, number, unit, verdict, cost, says, most, rests, besides, .. } = answer;
+        view! {
             <p class="answer-for">{of}</p>
             <div class="answer-row">
                 <p class="answer-num">{with_unit(number, unit)}</p>
@@ -96,11 +97,13 @@ pub fn answer_view(answer: Memo<Option<Answer>>) -> AnyView {
             {most.map(|most| view! { <p class="answer-most">{most}</p> })}
             {rests.map(|rests| view! { <p class="answer-note">{rests}</p> })}
             {besides.map(|besides| view! { <p class="answer-besides">{besides}</p> })}
-        };
-        Some(words.into_any())
+        }
+        .into_any()
+    });
+    let drawn = move |of: fn(&Answer) -> Option<Bar>| {
+        dynamic(move || answer.with(|answer| answer.as_ref().and_then(of)).map_or_else(|| ().into_any(), span_bar))
     };
-    let bar = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.bar.clone()).map(span_bar));
-    let second = move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.second.clone()).map(span_bar));
+    let (bar, second) = (drawn(|answer| answer.bar.clone()), drawn(|answer| answer.second.clone()));
     view! {
         <section class="answer" aria-label="Answer">
             // A reader is told by the line below, once typing rests: not by every keystroke.
@@ -178,16 +181,16 @@ pub fn ride(answer: Memo<Option<Answer>>) -> AnyView {
         scrolled.remove();
         resized.remove();
     });
-    let shown = move || {
-        let Answer { number, unit, verdict, cost, bar, .. } = answer.get()?;
-        let words = view! {
+    let shown = dynamic(move || {
+        let Some(Answer { number, unit, verdict, cost, bar, .. }) = answer.get() else { return ().into_any() };
+        view! {
             <span class="num">{with_unit(number, unit)}</span>
             <VerdictMark verdict=verdict/>
             {tells_cost(verdict).then(|| view! { <CostMark cost=cost/> })}
             {bar.map(slim_bar)}
-        };
-        Some(words.into_any())
-    };
+        }
+        .into_any()
+    });
     view! { <div class="ride" aria-hidden="true" hidden=move || !away.get()>{shown}</div> }.into_any()
 }
 

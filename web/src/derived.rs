@@ -31,7 +31,16 @@ pub fn when(
     boxed_when(Box::new(holds), Box::new(view))
 }
 
+/// What `view` gives, made again at each change of what it reads. Boxed, as the code that renders it is large.
+pub fn dynamic(view: impl Fn() -> AnyView + Send + Sync + 'static) -> AnyView {
+    boxed_dynamic(Box::new(view))
+}
+
+fn boxed_dynamic(view: Box<dyn Fn() -> AnyView + Send + Sync>) -> AnyView {
+    (move || view()).into_any()
+}
+
 fn boxed_when(holds: Box<dyn Fn() -> bool + Send + Sync>, view: Box<dyn Fn() -> AnyView + Send + Sync>) -> AnyView {
     let holds = memo(holds);
-    (move || holds.get().then(&view)).into_any()
+    dynamic(move || if holds.get() { view() } else { ().into_any() })
 }

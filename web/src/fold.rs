@@ -79,7 +79,7 @@ pub fn Fold(
             >
                 {icon.map(|name| view! { <Icon name=name/> })}
                 {title}
-                <span>{move || says.get()}</span>
+                <span>{derived(move || says.get())}</span>
             </button>
             {when(move || open.get(), move || view! { <div class="fold-body" id=body>{children()}</div> }.into_any())}
         </div>

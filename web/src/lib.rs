@@ -31,6 +31,7 @@ pub mod sheet;
 pub mod shelf;
 pub mod shell;
 pub mod span_bar;
+pub mod start;
 pub mod string;
 pub mod theme;
 pub mod tool_page;
@@ -49,7 +50,7 @@ use keep::Keeper;
 use shell::Shell;
 
 /// Reads what was kept, then puts the page up. Storage that does not answer is not waited for.
-pub fn start() {
+pub fn begin() {
     // The store outlives the page's views: it is made before them.
     let owner = Owner::new();
     let draft = owner.with(|| Draft::new(Keeper::new()));

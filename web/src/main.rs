@@ -1,4 +1,4 @@
 //! Puts the page into the document, and no more.
 fn main() {
-    web::start();
+    web::begin();
 }

@@ -5,7 +5,7 @@ use leptos::prelude::*;
 
 use crate::answer::{Answer, answer_view, ride};
 use crate::caution::Caution;
-use crate::derived::{derived, when};
+use crate::derived::{derived, dynamic, when};
 use crate::fold::Fold;
 use crate::form::{Form, Hints, form};
 use crate::route::Route;
@@ -52,7 +52,10 @@ pub fn tool_page(page: ToolPage) -> AnyView {
                 >
                     {
                         let working = working.clone();
-                        move || view! { <Working steps=working()/> }
+                        move || dynamic({
+                            let working = working.clone();
+                            move || view! { <Working steps=working()/> }.into_any()
+                        })
                     }
                 </Fold>
                 {before}
@@ -82,7 +85,7 @@ pub fn caution(cautions: &'static [&'static str]) -> AnyView {
 
 /// A list of checks under its head, made again at each change of what `rows` reads.
 pub fn check_list(rows: impl Fn() -> Vec<AnyView> + Send + Sync + 'static) -> AnyView {
-    let rows: Box<dyn Fn() -> Vec<AnyView> + Send + Sync> = Box::new(rows);
+    let rows = dynamic(move || rows().into_any());
     view! {
         <h2 class="sub">"Checks" <span>"worst first"</span></h2>
         <ol class="checks">{rows}</ol>
@@ -102,7 +105,7 @@ pub fn section(
         view! {
             <section aria-label=title>
                 <h2 class="sub">{title} " " <span>{says}</span></h2>
-                {move || body()}
+                {dynamic(body)}
             </section>
         }
         .into_any()

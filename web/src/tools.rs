@@ -2,8 +2,6 @@
 
 use leptos::prelude::*;
 
-use crate::string::StringTool;
-
 /// A tool: one question, answered by itself, with no site needed.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord, Hash)]
 pub enum Tool {
@@ -13,6 +11,8 @@ pub enum Tool {
     Cells,
     /// Which conductor and which breaker.
     Run,
+    /// Whether it starts what must start.
+    Start,
     /// What to key into controllers and inverter.
     Settings,
     /// What the bank's room needs.
@@ -21,15 +21,37 @@ pub enum Tool {
     SecondController,
     /// A third kind.
     ThirdController,
+    /// Further loads of the Start tool.
+    SecondLoad,
+    /// The third.
+    ThirdLoad,
+    /// The fourth.
+    FourthLoad,
+    /// The fifth.
+    FifthLoad,
+    /// The sixth.
+    SixthLoad,
 }
 
 impl Tool {
     /// Every tool, in the order of the first page.
-    pub const ALL: &'static [Self] = &[Self::String, Self::Cells, Self::Run, Self::Settings, Self::AirAndWater];
+    pub const ALL: &'static [Self] =
+        &[Self::String, Self::Cells, Self::Run, Self::Start, Self::Settings, Self::AirAndWater];
 
     /// Everything that keeps entries under a key of its own: the tools, and the pads that belong to one.
-    const PADS: &'static [Self] =
-        &[Self::String, Self::Cells, Self::Run, Self::SecondController, Self::ThirdController];
+    const PADS: &'static [Self] = &[
+        Self::String,
+        Self::Cells,
+        Self::Run,
+        Self::Start,
+        Self::SecondController,
+        Self::ThirdController,
+        Self::SecondLoad,
+        Self::ThirdLoad,
+        Self::FourthLoad,
+        Self::FifthLoad,
+        Self::SixthLoad,
+    ];
 
     /// The word it is kept and linked under. Never changed once released.
     pub const fn key(self) -> &'static str {
@@ -37,10 +59,16 @@ impl Tool {
             Self::String => "string",
             Self::Cells => "cells",
             Self::Run => "run",
+            Self::Start => "start",
             Self::Settings => "settings",
             Self::AirAndWater => "air-and-water",
             Self::SecondController => "string-second-controller",
             Self::ThirdController => "string-third-controller",
+            Self::SecondLoad => "start-second-load",
+            Self::ThirdLoad => "start-third-load",
+            Self::FourthLoad => "start-fourth-load",
+            Self::FifthLoad => "start-fifth-load",
+            Self::SixthLoad => "start-sixth-load",
         }
     }
 
@@ -68,10 +96,16 @@ impl Tool {
             Self::String => "String",
             Self::Cells => "Cells",
             Self::Run => "Run",
+            Self::Start => "Start",
             Self::Settings => "Settings",
             Self::AirAndWater => "Air and water",
             Self::SecondController => "Second controller",
             Self::ThirdController => "Third controller",
+            Self::SecondLoad => "Second load",
+            Self::ThirdLoad => "Third load",
+            Self::FourthLoad => "Fourth load",
+            Self::FifthLoad => "Fifth load",
+            Self::SixthLoad => "Sixth load",
         }
     }
 
@@ -82,6 +116,9 @@ impl Tool {
             Self::Cells => "How do cells make a bank?",
             Self::Run => "Which cable and breaker?",
             Self::Settings => "What to key in?",
+            Self::Start | Self::SecondLoad | Self::ThirdLoad | Self::FourthLoad | Self::FifthLoad | Self::SixthLoad => {
+                "Will it start?"
+            }
             Self::AirAndWater => "What does its room need?",
         }
     }
@@ -92,7 +129,10 @@ impl Tool {
             Self::String => "s-string",
             Self::Cells => "s-cell",
             Self::Run => "s-run",
-            Self::Settings => "s-bank",
+            Self::Settings => "s-inv",
+            Self::Start | Self::SecondLoad | Self::ThirdLoad | Self::FourthLoad | Self::FifthLoad | Self::SixthLoad => {
+                "s-motor"
+            }
             Self::AirAndWater => "s-bank",
             Self::SecondController | Self::ThirdController => "s-conv",
         }
@@ -101,9 +141,12 @@ impl Tool {
     /// Its page.
     pub fn page(self) -> AnyView {
         match self {
-            Self::String | Self::SecondController | Self::ThirdController => view! { <StringTool/> }.into_any(),
+            Self::String | Self::SecondController | Self::ThirdController => crate::string::string_tool(),
             Self::Cells => crate::cells::cells_tool(),
             Self::Run => crate::run::run_tool(),
+            Self::Start | Self::SecondLoad | Self::ThirdLoad | Self::FourthLoad | Self::FifthLoad | Self::SixthLoad => {
+                crate::start::start_tool()
+            }
             Self::Settings => crate::settings::settings_tool(),
             Self::AirAndWater => crate::air::air_tool(),
         }

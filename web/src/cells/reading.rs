@@ -8,7 +8,7 @@ use engine::quantity::{Celsius, Quantity, Volts};
 use engine::show;
 use leptos::prelude::*;
 
-use crate::derived::derived;
+use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
 use crate::field::list_field;
 use crate::fold::Fold;
@@ -20,7 +20,7 @@ pub fn reading(ask: ReadSignal<Ask>) -> AnyView {
     view! {
         <Fold id="cells/rest" title="Cells at rest" says=derived(|| "what the meter reads, and the odd ones".to_owned())>
             <div class="fields">{list_field(Tool::Cells, Field::RestVoltages, "Rest voltages")}</div>
-            {move || told(ask)}
+            {dynamic(move || told(ask))}
         </Fold>
     }
     .into_any()

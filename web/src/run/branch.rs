@@ -8,7 +8,7 @@ use engine::run::branched::evenly;
 use engine::show;
 use leptos::prelude::*;
 
-use crate::derived::derived;
+use crate::derived::{derived, dynamic};
 use crate::draft::{Draft, use_draft};
 use crate::field::CountField;
 use crate::fold::Fold;
@@ -23,7 +23,7 @@ pub fn branch(ask: ReadSignal<Ask>) -> AnyView {
             <div class="fields">
                 <CountField tool=Tool::Run field=Field::LoadsAlong label="Loads"/>
             </div>
-            {move || told(draft, ask)}
+            {dynamic(move || told(draft, ask))}
         </Fold>
     }
     .into_any()

@@ -3,9 +3,11 @@
 use engine::run::{Ask, Kind, size};
 use leptos::prelude::*;
 
+use crate::derived::dynamic;
+
 /// The picture. Nothing is drawn before the kind of run is known.
 pub fn picture(ask: Memo<Ask>) -> AnyView {
-    (move || ask.with(|ask| ask.kind.typed().map(|kind| drawn(ask, kind)))).into_any()
+    dynamic(move || ask.with(|ask| ask.kind.typed().map_or_else(|| ().into_any(), |kind| drawn(ask, kind))))
 }
 
 /// Wire width on screen: 2 + 1.1 · √mm², as on the line.

@@ -9,7 +9,7 @@ use engine::show;
 use leptos::prelude::*;
 
 use crate::cells::{TOOL, bank};
-use crate::derived::derived;
+use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
 use crate::field::list_field;
 use crate::fold::Fold;
@@ -20,7 +20,7 @@ pub fn matching() -> AnyView {
     view! {
         <Fold id="cells/matching" title="Match measured cells" says=derived(|| "salvaged ones, dealt to groups".to_owned())>
             <div class="fields">{list_field(TOOL, Field::Capacities, "Measured capacities")}</div>
-            {move || dealt()}
+            {dynamic(dealt)}
         </Fold>
     }
     .into_any()

@@ -13,7 +13,7 @@ use engine::shelf::{Asked, BURNS, Lacks, Layout, asked, lay_out, usual};
 use leptos::prelude::*;
 
 use crate::cells::{TOOL, bank, short};
-use crate::derived::{derived, memo};
+use crate::derived::{derived, dynamic, memo};
 use crate::draft::use_draft;
 use crate::fold::Fold;
 use crate::form::{Form, Hints, fields_of, names};
@@ -57,26 +57,22 @@ fn inside() -> AnyView {
     let rested = settled(found);
     let layout: Memo<Found> = memo(move || rested.get().and_then(|asked| laid(&asked)));
     let none = Hints { stands_in: Arc::new(|_| None), waits: Arc::new(|_| None), note: Arc::new(move |_| None) };
-    let words =
-        move || layout.with(|found| found.as_ref().err().map(|why| view! { <p class="ranked-say">{why.clone()}</p> }));
-    let body = move || {
-        layout.with(|found| {
-            found.as_ref().ok().map(|layout| {
-                view! {
-                    {drawing::figure(layout)}
-                    {lists::remarks(layout)}
-                    <div class="caution" role="note"><b>"Caution"</b><p>{BURNS}</p></div>
-                    {one_by_one::one_by_one(layout)}
-                    {lists::lists(layout)}
-                }
-                .into_any()
-            })
+    let body = dynamic(move || {
+        layout.with(|found| match found {
+            Err(why) => view! { <p class="ranked-say">{why.clone()}</p> }.into_any(),
+            Ok(layout) => view! {
+                {drawing::figure(layout)}
+                {lists::remarks(layout)}
+                <div class="caution" role="note"><b>"Caution"</b><p>{BURNS}</p></div>
+                {one_by_one::one_by_one(layout)}
+                {lists::lists(layout)}
+            }
+            .into_any(),
         })
-    };
+    });
     view! {
         <div class="fields">{fields_of(&FORM, FORM.first, &none)}</div>
-        {move || ask.with(wise)}
-        {words}
+        {dynamic(move || ask.with(wise).into_any())}
         {body}
         {matching::matching()}
     }

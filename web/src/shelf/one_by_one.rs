@@ -8,7 +8,7 @@ use engine::unit::Unit;
 use leptos::prelude::*;
 
 use crate::cells::TOOL;
-use crate::derived::{derived, when};
+use crate::derived::{derived, dynamic, when};
 use crate::draft::{Draft, use_draft};
 use crate::pads::Edit;
 
@@ -20,11 +20,10 @@ pub fn one_by_one(layout: &Layout) -> AnyView {
     let draft = use_draft();
     let at = RwSignal::new(None::<usize>);
     let begin = move |_| at.set(Some(0));
-    let shown = move || {
-        at.get().and_then(|place| {
-            all.with_value(|all| all.get(place).cloned()).map(|step| one(place, count, step, cell, at, draft))
-        })
-    };
+    let shown = dynamic(move || {
+        let step = at.get().and_then(|place| Some((place, all.with_value(|all| all.get(place).cloned())?)));
+        step.map_or_else(|| ().into_any(), |(place, step)| one(place, count, step, cell, at, draft))
+    });
     view! {
         {when(move || at.get().is_none(), move || view! {
             <div class="btns">
@@ -46,12 +45,12 @@ fn one(place: usize, count: usize, step: Step, cell: CellVolts, at: RwSignal<Opt
         .map(|meter| view! { <p class="meter">"Before: " {leads(meter)} <b>{band(meter)}</b></p> }.into_any())
         .collect();
     let now = step.now;
-    let told = move || {
-        let read = reading(draft, place)?;
+    let told = dynamic(move || {
+        let Some(read) = reading(draft, place) else { return ().into_any() };
         let found = says(&now, cell, read);
         let class = if found == Says::AsItMust { "told" } else { "told off" };
-        Some(view! { <p class=class role="status">{found.words()}</p> })
-    };
+        view! { <p class=class role="status">{found.words()}</p> }.into_any()
+    });
     let value = derived(move || line(draft, place));
     let last = place + 1 == count;
     view! {

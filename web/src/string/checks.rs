@@ -10,10 +10,10 @@ use super::fields::FORM;
 use super::question::Question;
 use crate::check_row::check_row;
 use crate::fold::Folds;
+use crate::tool_page::check_list;
 
 /// Every check of the string, the one on top among them.
-#[component]
-pub fn Checks(question: ReadSignal<Question>, checks: Memo<Vec<Check<Requirement>>>) -> impl IntoView {
+pub fn checks(question: ReadSignal<Question>, checks: Memo<Vec<Check<Requirement>>>) -> AnyView {
     let folds = expect_context::<Folds>();
     let go = Callback::new(move |field: Field| FORM.go_to(folds, field));
     let rows = move || {
@@ -28,8 +28,5 @@ pub fn Checks(question: ReadSignal<Question>, checks: Memo<Vec<Check<Requirement
             })
         })
     };
-    view! {
-        <h2 class="sub">"Checks" <span>"worst first"</span></h2>
-        <ol class="checks">{rows}</ol>
-    }
+    check_list(rows)
 }

@@ -14,7 +14,7 @@ use super::question::OTHERS;
 use crate::draft::{Draft, use_draft};
 use crate::field::StandIn;
 use crate::fold::Fold;
-use crate::form::{Form, Hints, form, of_another};
+use crate::form::{Form, Hints, of_another};
 
 const OTHER_CONTROLLERS: &str = "string/other-controllers";
 
@@ -83,24 +83,25 @@ const OF_A_CONTROLLER: [Field; 7] = [
 pub static FORM: Form =
     Form { tool: TOOL, title: ("Module and controller", "from the nameplates"), first: &FIRST, groups: &GROUPS, short };
 
-/// The inputs.
-pub fn fields(checks: Memo<Vec<Check<Requirement>>>) -> AnyView {
+/// What is said beside them.
+pub fn hints(checks: Memo<Vec<Check<Requirement>>>) -> Hints {
     let draft = use_draft();
-    let hints = Hints {
+    Hints {
         stands_in: Arc::new(|field| assumed::of(field).map(|assumption| StandIn::of(&assumption))),
         waits: Arc::new(move |field| checks.with(|checks| asks(field, checks))),
         note: Arc::new(move |field| note(draft, field)),
-    };
-    let others =
-        || OTHERS.map(|other| of_another(other, &OF_A_CONTROLLER, short)).into_iter().collect::<Vec<AnyView>>();
+    }
+}
+
+/// Other kinds of controllers at hand, each in a pad of its own.
+pub fn other_controllers() -> AnyView {
     view! {
-        {form(&FORM, &hints)}
         <Fold
             id=OTHER_CONTROLLERS
             title="Other controllers"
             says=derived(|| "for layouts over unequal ones".to_owned())
         >
-            {others()}
+            {OTHERS.map(|other| of_another(other, &OF_A_CONTROLLER, short)).into_iter().collect::<Vec<AnyView>>()}
         </Fold>
     }
     .into_any()

@@ -1,6 +1,6 @@
 //! The layouts of the modules at hand, ranked; what was rejected; and what single change would use them all.
 
-use crate::derived::{derived, memo, when};
+use crate::derived::{derived, dynamic, memo, when};
 use engine::check::Verdict;
 use engine::controller::Controller;
 use engine::field::Field;
@@ -24,12 +24,9 @@ use crate::verdict::VerdictMark;
 const SHOWN: usize = 4;
 
 /// The layouts of the modules at hand.
-#[component]
-pub fn LayoutList(question: ReadSignal<Question>) -> impl IntoView {
+pub fn layout_list(question: ReadSignal<Question>) -> AnyView {
     let asked = memo(move || question.with(|question| question.modules.is_some()));
-    view! {
-        {when(move || asked.get(), move || view! { <Laid question=question/> }.into_any())}
-    }
+    when(move || asked.get(), move || view! { <Laid question=question/> }.into_any())
 }
 
 #[component]
@@ -44,8 +41,8 @@ fn Laid(question: ReadSignal<Question>) -> impl IntoView {
     };
     view! {
         <section aria-label="Layouts">
-            <h2 class="sub">{move || format!("Every layout of {} modules", modules())} <span>{on}</span></h2>
-            {move || {
+            <h2 class="sub">{derived(move || format!("Every layout of {} modules", modules()))} <span>{derived(on)}</span></h2>
+            {dynamic(move || {
                 found
                     .with(|found| {
                         question
@@ -64,15 +61,16 @@ fn Laid(question: ReadSignal<Question>) -> impl IntoView {
                                     {words(found, question).map(|words| view! { <p class="ranked-say">{words}</p> })}
                                     <ol class="ranked">{rows}</ol>
                                 }
+                                .into_any()
                             })
                     })
-            }}
+            })}
             {when(move || found.with(wants_change), move || view! { <Fold
                     id="string/change"
                     title="What would use them all"
                     says=derived(|| "one change".to_owned())
                 >
-                    {move || question.with(change_list)}
+                    {dynamic(move || question.with(change_list))}
                 </Fold> }.into_any())}
         </section>
     }

@@ -21,8 +21,8 @@ pub use bus::{lowest_charge, seen, told};
 pub use class::{Class, Kind, usual};
 pub use load::{Draws, Phases, phases};
 pub use motor::{CODE_LETTERS, FULL_LOAD, LOCKED_ROTOR, code_letter, full_load, locked_rotor};
-pub use requirement::{Requirement, assess, current, volts, working};
-pub use together::{Judged, Limits, MOST_LOADS, Switched, Together, together};
+pub use requirement::{Requirement, assess, current, drawn, volts, working};
+pub use together::{Judged, Limits, MOST_LOADS, Switched, Together, switched, together};
 pub use what_helps::{Help, what_helps};
 
 use crate::check::Assumption;

@@ -196,7 +196,7 @@ fn steady(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
 }
 
 /// The draw of the start on the bus: P / η.
-pub(super) fn on_the_bus(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<(Watts, Seconds)> {
+fn on_the_bus(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<(Watts, Seconds)> {
     let phases = phases(ask, basis, steps);
     let efficiency = basis.assume(Field::InverterEfficiency, positive(ask.efficiency), SURGE_EFFICIENCY);
     let (phases, efficiency) = (phases?, efficiency?);
@@ -348,6 +348,12 @@ pub fn volts(ask: &Ask) -> Option<[Option<Volts>; 3]> {
     let efficiency = ask.efficiency.typed().unwrap_or(SURGE_EFFICIENCY).share();
     let under = |watts: Watts| seen.under(watts / efficiency, &mut Steps::silent()).ok().map(|found| found.volts);
     Some([under(phases.before.active()), under(phases.starting.active()), under(phases.running.active())])
+}
+
+/// What the start draws from the bus. `None` where an input is missing.
+#[must_use]
+pub fn drawn(ask: &Ask) -> Option<Watts> {
+    on_the_bus(ask, &mut Basis::default(), &mut Steps::silent()).map(|(watts, _)| watts)
 }
 
 /// Current of the start, for words.

@@ -1,8 +1,9 @@
 //! Which loads may run or start together.
 
-use super::Draws;
+use super::{Ask, Draws, SURGE_EFFICIENCY, bus, phases};
+use crate::check::{Basis, Steps};
 use crate::network::Behind;
-use crate::quantity::{Percent, Volts};
+use crate::quantity::{Percent, Volts, Watts};
 
 /// The most loads that are judged in every set.
 pub const MOST_LOADS: usize = 14;
@@ -57,7 +58,31 @@ pub struct Together {
     pub never: Vec<(usize, usize)>,
 }
 
+/// The load of `ask`, by itself. `None` where an input is missing.
+#[must_use]
+pub fn switched(ask: &Ask) -> Option<Switched> {
+    let alone = Ask { already: crate::entry::Entry::Typed(Watts::new(0.0)), ..*ask };
+    let found = phases(&alone, &mut Basis::default(), &mut Steps::silent())?;
+    Some(Switched { running: found.running, starting: found.starting })
+}
+
 impl Limits {
+    /// Those of the inverter and the bus of `ask`, with what runs already. `None` where an input is missing.
+    #[must_use]
+    pub fn of(ask: &Ask) -> Option<Self> {
+        let continuous = ask.inverter_continuous.typed().map(Watts::get);
+        let surge = ask.inverter_surge.typed().map(crate::quantity::VoltAmps::get);
+        let surge = surge.or(continuous)?;
+        Some(Self {
+            continuous: continuous.unwrap_or(surge),
+            surge,
+            efficiency: ask.efficiency.typed().unwrap_or(SURGE_EFFICIENCY).share(),
+            bus: bus::seen(ask, &mut Basis::default(), &mut Steps::silent())?,
+            cut_off: ask.cut_off.typed().or(ask.bank.inverter_low.typed())?,
+            base: Draws::of(ask.already.typed().unwrap_or(Watts::new(0.0)), 1.0),
+        })
+    }
+
     /// Whether the inverter and the bus hold `draws`, with `rating` in VA.
     ///
     /// V ≥ V_c holds where P ≤ V_c · (E − V_c) / R, as long as V_c lies on the upper branch, at E/2 or more.

@@ -1,0 +1,161 @@
+//! What would help where it does not start, and which other loads may run or start with it.
+
+use engine::check::Verdict;
+use engine::field::Field;
+use engine::pad::Pad;
+use engine::quantity::Quantity;
+use engine::show;
+use engine::start::{Ask, Help, Limits, Switched, Together, lowest_charge, switched, together, what_helps};
+use leptos::prelude::*;
+
+use super::TOOL;
+use crate::derived::{derived, dynamic};
+use crate::draft::{Draft, use_draft};
+use crate::fold::Fold;
+use crate::form::of_another;
+use crate::tool_page::section;
+use crate::tools::Tool;
+use crate::verdict::VerdictMark;
+
+/// Further loads, each in a pad of its own.
+const OTHERS: [Tool; 5] = [Tool::SecondLoad, Tool::ThirdLoad, Tool::FourthLoad, Tool::FifthLoad, Tool::SixthLoad];
+
+/// What is asked of each.
+const OF_A_LOAD: [Field; 6] = [
+    Field::StartLoad,
+    Field::RunningPower,
+    Field::StartingMultiple,
+    Field::CodeLetter,
+    Field::MotorSize,
+    Field::StartingPowerFactor,
+];
+
+/// Changes that were tried, where something breaks; and the lowest charge at which it still starts.
+pub fn helps(ask: ReadSignal<Ask>) -> AnyView {
+    let found = move || ask.with(what_helps);
+    view! {
+        {section(
+            "What would help",
+            "each by itself, computed",
+            move || !found().is_empty(),
+            move || {
+                let rows: Vec<AnyView> = found().iter().map(help).collect();
+                view! { <ol class="ranked plain">{rows}</ol> }.into_any()
+            },
+        )}
+        {dynamic(move || ask.with(charge).map_or_else(|| ().into_any(), |words| view! { <p class="ranked-say">{words}</p> }.into_any()))}
+    }
+    .into_any()
+}
+
+fn help(help: &Help) -> AnyView {
+    let verdict = if help.enough { Verdict::Clears } else { Verdict::Breaks };
+    let then: Vec<String> = help
+        .then
+        .iter()
+        .map(|check| {
+            let figures = check.value.zip(check.limit).map_or_else(String::new, |(value, limit)| {
+                let (value, bound) = show::apart(value, limit.amount);
+                format!(" ({value} against {bound})")
+            });
+            format!("{}: {}{figures}.", check.id.name(), check.verdict.word())
+        })
+        .collect();
+    view! {
+        <li data-v=verdict.word()>
+            <span class="name wrap">{help.what}</span>
+            <VerdictMark verdict=verdict/>
+            <p class="why">{then.join(" ")}</p>
+        </li>
+    }
+    .into_any()
+}
+
+fn charge(ask: &Ask) -> Option<String> {
+    ask.bank.chemistry.typed()?;
+    let drawn = engine::start::drawn(ask)?;
+    Some(match lowest_charge(ask, drawn) {
+        Some(charge) => format!("Still starts down to a charge of {}.", show::computed(charge.amount())),
+        None => "Starts at no charge of this bank.".to_owned(),
+    })
+}
+
+/// Other loads, and what may go together.
+pub fn together_with(ask: ReadSignal<Ask>) -> AnyView {
+    let draft = use_draft();
+    view! {
+        <Fold id="start/others" title="Other loads" says=derived(|| "what may run or start together".to_owned())>
+            {OTHERS.map(|other| of_another(other, &OF_A_LOAD, super::short)).into_iter().collect::<Vec<AnyView>>()}
+            {dynamic(move || ask.with(|ask| table(draft, ask)))}
+        </Fold>
+    }
+    .into_any()
+}
+
+fn table(draft: Draft, ask: &Ask) -> AnyView {
+    let say = |words: &str| view! { <p class="ranked-say">{words.to_owned()}</p> }.into_any();
+    let mut names = Vec::new();
+    let mut loads: Vec<Switched> = Vec::new();
+    draft.with(|pads| {
+        for tool in [TOOL].into_iter().chain(OTHERS) {
+            let pad = pads.of(tool);
+            if let Some(load) = switched(&Ask::read(&pad)) {
+                let class = engine::choice::words(Field::StartLoad, pad.typed(Field::StartLoad).0);
+                names.push(class.unwrap_or("load").to_owned());
+                loads.push(load);
+            }
+        }
+    });
+    if loads.len() < 2 {
+        return say("Enter a second load above to see what may go together.");
+    }
+    let Some(limits) = Limits::of(ask) else { return say("Waits for what the inverter and the bus are.") };
+    let found = together(&loads, &limits);
+    rows(&names, &found)
+}
+
+fn rows(names: &[String], found: &Together) -> AnyView {
+    let each: Vec<AnyView> = found
+        .loads
+        .iter()
+        .zip(names)
+        .map(|(one, name)| {
+            let yes = |is: bool| if is { "yes" } else { "no" };
+            view! {
+                <tr>
+                    <th scope="row">{name.clone()}</th>
+                    <td>{yes(one.alone)}</td>
+                    <td>{yes(one.on_top)}</td>
+                    <td>{show::computed(one.margin.amount())}</td>
+                </tr>
+            }
+            .into_any()
+        })
+        .collect();
+    let set = |bits: &u32| {
+        let members: Vec<&str> = names
+            .iter()
+            .enumerate()
+            .filter(|(place, _)| bits & (1 << place) != 0)
+            .map(|(_, name)| name.as_str())
+            .collect();
+        members.join(" + ")
+    };
+    let list = |title: &'static str, sets: Vec<String>| {
+        let words = if sets.is_empty() { "none".to_owned() } else { sets.join("; ") };
+        view! { <p class="ranked-say"><b>{title}</b> " " {words} "."</p> }.into_any()
+    };
+    let never = found.never.iter().map(|(one, other)| format!("{} with {}", names[*one], names[*other])).collect();
+    view! {
+        <table class="together">
+            <thead>
+                <tr><th scope="col">"Load"</th><th scope="col">"Alone"</th><th scope="col">"On top"</th><th scope="col">"Margin"</th></tr>
+            </thead>
+            <tbody>{each}</tbody>
+        </table>
+        {list("May run together:", found.run.iter().map(set).collect())}
+        {list("May start at one moment:", found.start.iter().map(set).collect())}
+        {list("Never start at one moment:", never)}
+    }
+    .into_any()
+}
