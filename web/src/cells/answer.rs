@@ -46,7 +46,7 @@ pub fn answer(pad: &impl Pad, ask: &Ask) -> Option<Answer> {
     Some(Answer {
         of: of(pad, ask),
         number: layout.map_or_else(|| show::NONE.to_owned(), |one| format!("{} × {}", one.series, one.strings)),
-        unit: "in series × strings",
+        unit: "",
         verdict: worst.map_or(Verdict::Asks, |check| check.verdict),
         cost: worst.map_or(Cost::Hazard, |check| check.cost),
         says: says(ask, missing, chosen.as_ref()),
@@ -68,6 +68,7 @@ fn of(pad: &impl Pad, ask: &Ask) -> String {
         None => format!("{count}cells"),
     };
     let bus = as_entered(pad, Field::BusVoltage).map_or_else(String::new, |bus| format!(" for a {bus} bus"));
+    let bus = format!("{bus}: in series × strings");
     let mut letters = format!("{what}{bus}");
     if let Some(first) = letters.get(..1).map(str::to_uppercase) {
         letters.replace_range(..1, &first);

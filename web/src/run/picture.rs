@@ -32,8 +32,8 @@ fn drawn(ask: &Ask, kind: Kind) -> AnyView {
             <path class="blade" d=format!("M{:.0} 24l20 -11", breaker - 12.0)/>
             <circle class="pin" cx=format!("{:.0}", breaker - 12.0) cy="24" r="2.6"/>
             <circle class="pin" cx=format!("{:.0}", breaker + 12.0) cy="24" r="2.6"/>
-            <text x="23" y="58" text-anchor="middle">{from}</text>
-            <text x="297" y="58" text-anchor="middle">{to}</text>
+            <text x="2" y="58">{from}</text>
+            <text x="318" y="58" text-anchor="end">{to}</text>
         </svg>
     }
     .into_any()

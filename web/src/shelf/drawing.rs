@@ -135,11 +135,21 @@ fn link(link: &Link, layout: &Layout, scale: Scale, size: f64) -> Option<AnyView
         _ => "link",
     };
     let volts = show::number(link.running.get(), 1);
-    // Volts stand beside the bar: above a level one, right of an upright one.
+    // Volts stand in the free lane: outside the cells beside a level bar, right of an upright one.
     let level = (to.0 - from.0).abs() >= (to.1 - from.1).abs();
-    let (vx, vy) = if level { (x, y - size * 0.95) } else { (x + size * 1.7, y + size * 0.4) };
+    let middle = scale.at(layout.place(link.from.cell)?.middle).1;
+    let (vx, vy, anchor) = match (level, y < middle) {
+        (true, true) => (x, y - size * 1.55, "middle"),
+        (true, false) => (x, y + size * 2.2, "middle"),
+        (false, _) => (x + size * 0.62, y + size * 0.3, "start"),
+    };
     let running = (link.kind == LinkKind::Series).then(|| {
-        view! { <text class="volts" x=number(vx) y=number(vy) font-size=number(size * 0.85)>{volts}</text> }.into_any()
+        view! {
+            <text class="volts" x=number(vx) y=number(vy) font-size=number(size * 0.74) style:text-anchor=anchor>
+                {volts}
+            </text>
+        }
+        .into_any()
     });
     Some(
         view! {

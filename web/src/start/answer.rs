@@ -111,7 +111,7 @@ fn sag_bar(ask: &Ask, sag: Option<&Check<Requirement>>) -> Bar {
         }
     };
     mark("starting", start);
-    mark("running", running);
+    // The volts once it runs stand in the sentence: three figures would stand on one another.
     mark("before", before);
     let check = sag.copied();
     let room =
