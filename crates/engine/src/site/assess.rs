@@ -1,7 +1,7 @@
 //! Every check of a site.
 
 use super::Site;
-use super::derive::{bank_ask, run_ask, string_ask};
+use super::derive::{bank_ask, run_ask, start_ask, string_ask};
 use super::part::{Part, PartId, PartKind};
 use super::rules::Requirement;
 use crate::bank;
@@ -9,6 +9,7 @@ use crate::check::{Check, Step, Verdict};
 use crate::entry::Entry;
 use crate::order::sort_short;
 use crate::run;
+use crate::start;
 use crate::string;
 
 /// Where on the line a check belongs.
@@ -31,6 +32,8 @@ pub enum CheckId {
     Bank(bank::Requirement),
     /// Of a run.
     Run(run::Requirement),
+    /// Of a start.
+    Start(start::Requirement),
     /// Of the site.
     Site(Requirement),
 }
@@ -43,6 +46,7 @@ impl CheckId {
             Self::String(one) => one.id(),
             Self::Bank(one) => one.id(),
             Self::Run(one) => one.id(),
+            Self::Start(one) => one.id(),
             Self::Site(one) => one.id(),
         }
     }
@@ -54,6 +58,7 @@ impl CheckId {
             Self::String(one) => one.name(),
             Self::Bank(one) => one.name(),
             Self::Run(one) => one.name(),
+            Self::Start(one) => one.name(),
             Self::Site(one) => one.name(),
         }
     }
@@ -120,6 +125,13 @@ pub fn assess(site: &Site) -> Assessment {
                     put(place, one.check(&ask).map(|check| check.named(CheckId::Bank(one))));
                 }
             }
+            // A load of direct current has no inverter to start it.
+            PartKind::Load if site.first(PartKind::Inverter).is_some() => {
+                let ask = start_ask(site, part);
+                for one in start::Requirement::ALL {
+                    put(place, one.check(&ask).map(|check| check.named(CheckId::Start(one))));
+                }
+            }
             _ => {}
         }
         for requirement in Requirement::ALL {
@@ -159,6 +171,7 @@ pub fn working(site: &Site, place: Place, id: CheckId) -> Vec<Step> {
         Some(match (place, id) {
             (Place::Part(at), CheckId::String(one)) => string::working(&string_ask(site, part(at)?), one),
             (Place::Part(at), CheckId::Bank(one)) => bank::working(&bank_ask(site, part(at)?), one),
+            (Place::Part(at), CheckId::Start(one)) => start::working(&start_ask(site, part(at)?), one),
             (Place::Run(at), CheckId::Run(one)) => run::working(&run_ask(site, part(at)?)?, one),
             (Place::Site, CheckId::Site(one)) => one.working(site, None),
             (Place::Part(at), CheckId::Site(one)) => one.working(site, Some(part(at)?)),

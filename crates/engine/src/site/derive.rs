@@ -12,6 +12,7 @@ use crate::field::Field;
 use crate::pad::Pad;
 use crate::quantity::{Amps, Celsius, Count, Ohms, Volts, Watts};
 use crate::run::{self, Kind};
+use crate::start;
 use crate::string;
 
 /// The figure that was typed, else the one that follows.
@@ -158,6 +159,48 @@ fn cold_way(part: &Part) -> Ohms {
     let conductor = ask.conductor.typed().unwrap_or_default();
     let several = ask.parallel.typed().map_or(1.0, Count::get).max(1.0);
     resistance(conductor, size, Celsius::new(20.0)) / several * (length * 2.0)
+}
+
+/// What the checks of the start of `part`, a load, read: its own figures, its inverter's, and the bus by the bank's cells.
+#[must_use]
+pub fn start_ask(site: &Site, part: &Part) -> start::Ask {
+    let mut ask = start::Ask::read(&View::new(site, Subject::Part(part.id)));
+    let bank = site.first(PartKind::Bank);
+    if let Some(bank) = bank {
+        ask.bank = bank_ask(site, bank);
+        ask.packs = else_from(ask.packs, ask.bank.strings.typed().filter(|_| ask.bank.guards_itself() == Some(true)));
+        ask.bank_temperature = else_from(ask.bank_temperature, ask.bank.coldest.typed());
+    }
+    let inverter = site.first(PartKind::Inverter);
+    ask.cut_off = else_from(ask.cut_off, ask.bank.inverter_low.typed());
+    if ask.cable == Entry::Blank {
+        let ways: Vec<Ohms> = [bank, inverter].into_iter().flatten().filter_map(|part| warm_way(site, part)).collect();
+        if !ways.is_empty() {
+            ask.cable = Entry::Typed(ways.into_iter().fold(Ohms::new(0.0), |all, way| all + way));
+        }
+    }
+    if ask.breaker == Entry::Blank
+        && let Some(run) = inverter.and_then(|part| part.run.as_ref())
+    {
+        ask.breaker = run.entry(Field::Breaker);
+    }
+    // Everything else that can be switched on runs already: the cautious end.
+    if ask.already == Entry::Blank {
+        let others = site.of_kind(PartKind::Load).filter(|other| other.id != part.id);
+        let watts: f64 = others
+            .filter_map(|other| {
+                let many = other.entries.entry::<Count>(Field::HowMany).typed().map_or(1.0, Count::get);
+                Some(other.entries.entry::<Watts>(Field::RunningPower).typed()?.get() * many)
+            })
+            .sum();
+        ask.already = Entry::Typed(Watts::new(watts));
+    }
+    ask
+}
+
+/// Resistance of a run there and back at its own temperature.
+fn warm_way(site: &Site, part: &Part) -> Option<Ohms> {
+    Some(run::size(&run_ask(site, part)?).ok()?.drop?.way)
 }
 
 /// What a run carries, where other parts tell.

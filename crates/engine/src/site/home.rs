@@ -69,7 +69,26 @@ pub const fn home(field: F) -> Option<Home> {
         F::PanelBond | F::PanelLegs | F::Multiwire | F::GridFeeds | F::TransferSwitch => Home::Of(PartKind::AcPanel),
         F::GeneratorBond | F::NeutralSwitched => Home::Of(PartKind::Generator),
         F::SourcePower | F::OverspeedVolts | F::DumpLoad => Home::Of(PartKind::OtherSource),
-        F::Isolator => return None,
+        F::InverterSurge | F::SurgeSeconds | F::InverterEfficiency | F::CutOff | F::InverterAir => {
+            Home::Of(PartKind::Inverter)
+        }
+        F::GeneratorRating | F::ChargerDraw => Home::Of(PartKind::Generator),
+        F::Height => Home::Place,
+        F::Isolator
+        | F::StartLoad
+        | F::RunningPower
+        | F::StartsAs
+        | F::StartingMultiple
+        | F::CodeLetter
+        | F::MotorSize
+        | F::StartingPowerFactor
+        | F::RunningPowerFactor
+        | F::StartingSeconds
+        | F::HowMany
+        | F::AlreadyRunning
+        | F::BankEmf
+        | F::CableResistance
+        | F::TripCurve => return None,
         F::RunKind
         | F::RunCurrent
         | F::RunPower

@@ -256,6 +256,10 @@ fn inverter(site: &mut Site, got: Got) {
         &[(Field::PanelBond, "no"), (Field::PanelLegs, "single"), (Field::GridFeeds, "no")],
     );
     run(site, panel, "8", "6000");
+    let surge = (got.inverter * 2).to_string();
+    enter(site, id, &[(Field::InverterSurge, &surge), (Field::SurgeSeconds, "3")]);
+    let fridge = put(site, PartKind::Load, &[(Field::StartLoad, "refrigerator"), (Field::RunningPower, "120")]);
+    name(site, fridge, "Refrigerator");
 }
 
 /// `tenths` of a 12 V class, at the bus's own, as typed: 10.5 V of 12 V is 42 at 48 V.

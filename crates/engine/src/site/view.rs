@@ -90,13 +90,16 @@ impl<'a> View<'a> {
         }
     }
 
-    /// Where what is typed into `field` goes. `None` where the site has no such part.
+    /// Where what is typed into `field` goes. `None` where there is no part that asks.
     #[must_use]
     pub fn slot(&self, field: Field) -> Option<Slot> {
         match home(field) {
             Some(Home::Place) => Some(Slot::Place),
-            Some(Home::Of(kind)) => self.of(kind).map(|part| Slot::Part(part.id)),
-            Some(Home::Run) => self.own.filter(|part| part.run.is_some()).map(|part| Slot::Run(part.id)),
+            // What the site has no part for stands with whoever asks, so that nothing typed is lost.
+            Some(Home::Of(kind)) => self.of(kind).or(self.own).map(|part| Slot::Part(part.id)),
+            Some(Home::Run) => {
+                self.own.map(|part| if part.run.is_some() { Slot::Run(part.id) } else { Slot::Part(part.id) })
+            }
             None => match self.subject {
                 Subject::Place => Some(Slot::Place),
                 Subject::Part(id) => Some(Slot::Part(id)),
@@ -108,8 +111,8 @@ impl<'a> View<'a> {
     fn entries(&self, field: Field) -> Option<&'a Entries> {
         match home(field) {
             Some(Home::Place) => Some(&self.site.place),
-            Some(Home::Of(kind)) => self.of(kind).map(|part| &part.entries),
-            Some(Home::Run) => self.own.and_then(|part| part.run.as_ref()),
+            Some(Home::Of(kind)) => self.of(kind).or(self.own).map(|part| &part.entries),
+            Some(Home::Run) => self.own.map(|part| part.run.as_ref().unwrap_or(&part.entries)),
             None => match self.subject {
                 Subject::Place => Some(&self.site.place),
                 Subject::Part(_) => self.own.map(|part| &part.entries),
