@@ -4,3 +4,8 @@
 pub fn now() -> f64 {
     web_sys::window().and_then(|window| window.performance()).map_or(0.0, |performance| performance.now())
 }
+
+/// Milliseconds since 1970, by the phone's clock.
+pub fn date() -> f64 {
+    js_sys::Date::now()
+}

@@ -4,11 +4,12 @@
 
 use crate::derived::memo;
 use bridge::Kept;
+use engine::site::Subject;
 use leptos::prelude::*;
 
 use crate::clock;
-use crate::keep::Keeper;
-use crate::pads::{Edit, Pads, Place, Typed, What};
+use crate::keep::{Keeper, ToKeep};
+use crate::pads::{Edit, OpenSite, Pads, Place, Typed, What};
 use crate::theme::Theme;
 
 /// The store. A handle: copying it copies nothing.
@@ -41,10 +42,40 @@ impl Draft {
 
     /// Makes a change: the only way to write.
     pub fn edit(self, edit: Edit) {
+        let before = self.pads.with_untracked(|pads| pads.site().cloned());
         let changed = self.pads.try_update(|pads| pads.edit(edit, clock::now())).unwrap_or(false);
         if changed {
             self.keep();
+            let site =
+                self.pads.with_untracked(|pads| pads.site().filter(|site| before.as_ref() != Some(*site)).cloned());
+            if let Some(OpenSite { key, site }) = site {
+                let text = bridge::site::write_short(&site);
+                self.keeper.keep_site(ToKeep { key, name: site.name, text });
+            }
         }
+    }
+
+    /// Looks at a part of the open site, or at none.
+    pub fn look_at(self, subject: Option<Subject>) {
+        if self.pads.with_untracked(Pads::subject) != subject {
+            self.pads.update(|pads| pads.look_at(subject));
+        }
+    }
+
+    /// Takes over the site that was open when the page was last closed.
+    pub async fn reopen(self, key: u32) {
+        if let Some(site) = self.keeper.site(key).await.and_then(|text| bridge::site::open(&text).ok()) {
+            self.pads.update(|pads| pads.load_site(Some(OpenSite { key, site })));
+        }
+    }
+
+    /// The open site was put beside another tab's: it is now kept under `key`.
+    pub fn moved(self, key: u32) {
+        self.pads.update(|pads| {
+            let moved = pads.site().cloned().map(|open| OpenSite { key, ..open });
+            pads.load_site(moved);
+        });
+        self.keep();
     }
 
     /// The field that was typed into was left.
@@ -98,6 +129,7 @@ impl Draft {
     pub fn kept(self) -> Kept {
         let mut kept = self.pads.with_untracked(Pads::kept);
         kept.theme = Some(self.theme.get_untracked().key().to_owned());
+        kept.open_site = self.pads.with_untracked(|pads| pads.site().map(|open| open.key));
         kept
     }
 

@@ -73,6 +73,9 @@ pub fn begin() {
     spawn_local(async move {
         if let Some(kept) = draft.keeper().open().await {
             draft.adopt(&kept);
+            if let Some(key) = kept.open_site {
+                draft.reopen(key).await;
+            }
         }
         put_up();
     });

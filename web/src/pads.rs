@@ -5,6 +5,7 @@ use std::collections::BTreeMap;
 use bridge::{Kept, KeptEntry};
 use engine::field::Field;
 use engine::pad::Pad;
+use engine::site::{PartId, PartKind, Site, Slot, Subject, View};
 use engine::unit::Unit;
 
 use crate::tools::Tool;
@@ -33,6 +34,8 @@ pub enum Edit {
     Unit(Place, Unit),
     /// Several fields at once, as when a layout is taken over.
     Fill(Vec<(Place, Typed)>),
+    /// The open site, or which one is open.
+    Site(SiteEdit),
     /// Everything is replaced by what was in a file.
     Open(Kept),
     /// Everything is forgotten.
@@ -41,6 +44,34 @@ pub enum Edit {
     Undo,
     /// The last change taken back is made again.
     Redo,
+}
+
+/// A change of the open site as a whole.
+#[derive(Clone, Debug, PartialEq)]
+pub enum SiteEdit {
+    /// This one is open now.
+    Open(OpenSite),
+    /// None is.
+    Close,
+    /// Another part of this kind.
+    Add(PartKind),
+    /// A part less.
+    Remove(PartId),
+    /// One more like this.
+    Duplicate(PartId),
+    /// What a part, or the site, is called.
+    Name(Option<PartId>, String),
+    /// What a part is joined to.
+    Join(PartId, Option<PartId>),
+}
+
+/// A site, and what it is kept under.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct OpenSite {
+    /// What it is kept under on this phone.
+    pub key: u32,
+    /// The site.
+    pub site: Site,
 }
 
 /// What a step of undo would take back.
@@ -54,6 +85,10 @@ pub enum What {
     Opened,
     /// Everything having been forgotten.
     Forgotten,
+    /// A change of a site's parts, or of which site is open.
+    Site,
+    /// What a part or the site is called.
+    Name,
 }
 
 /// Entries that this release does not know: kept, and never looked into.
@@ -83,6 +118,8 @@ struct Change {
     what: What,
     fields: Vec<(Place, Typed, Typed)>,
     unknown: Option<(Unknown, Unknown)>,
+    /// The open site before and after, where that is what changed. Boxed: most changes have none.
+    site: Option<Box<(Option<OpenSite>, Option<OpenSite>)>>,
 }
 
 /// All scratch pads, and the way back through the session.
@@ -94,6 +131,9 @@ pub struct Pads {
     future: Vec<Change>,
     /// The field that is being typed into, and when last.
     typing: Option<(Place, f64)>,
+    open: Option<OpenSite>,
+    /// What of the open site the tools look at; none while they stand by themselves.
+    subject: Option<Subject>,
 }
 
 /// What was typed into one tool.
@@ -101,11 +141,15 @@ pub struct Pads {
 pub struct ToolPad<'a> {
     pads: &'a Pads,
     tool: Tool,
+    view: Option<View<'a>>,
 }
 
 impl Pad for ToolPad<'_> {
     fn typed(&self, field: Field) -> (&str, Option<Unit>) {
-        self.pads.typed.get((self.tool, field)).map_or(("", None), |typed| (&typed.text, typed.unit))
+        match self.view {
+            Some(view) => view.at(field),
+            None => self.pads.typed.get((self.tool, field)).map_or(("", None), |typed| (&typed.text, typed.unit)),
+        }
     }
 }
 
@@ -117,19 +161,54 @@ impl What {
             Self::Several => "several fields",
             Self::Opened => "the opened file",
             Self::Forgotten => "forgetting all",
+            Self::Site => "the site",
+            Self::Name => "a name",
         }
     }
 }
 
 impl Pads {
-    /// What stands in a field.
+    /// What stands in a field: of the part that is looked at, or of the tool by itself.
     pub fn typed(&self, place: Place) -> Typed {
-        self.typed.get(place).cloned().unwrap_or_default()
+        match self.view(place.0) {
+            Some(view) => {
+                let (text, unit) = view.typed(place.1);
+                Typed { text: text.to_owned(), unit }
+            }
+            None => self.typed.get(place).cloned().unwrap_or_default(),
+        }
     }
 
-    /// What was typed into one tool, as the engine reads it.
+    /// What was typed into one tool, or into the part that is looked at, as the engine reads it.
     pub fn of(&self, tool: Tool) -> ToolPad<'_> {
-        ToolPad { pads: self, tool }
+        ToolPad { pads: self, tool, view: self.view(tool) }
+    }
+
+    /// The open site.
+    pub fn site(&self) -> Option<&OpenSite> {
+        self.open.as_ref()
+    }
+
+    /// What of it is looked at.
+    pub fn subject(&self) -> Option<Subject> {
+        self.subject.filter(|_| self.open.is_some())
+    }
+
+    /// Looks at a part of the open site, or at none. Nothing that could be undone.
+    pub fn look_at(&mut self, subject: Option<Subject>) {
+        self.subject = subject;
+        self.typing = None;
+    }
+
+    /// Takes over the site that was open, with no way back: it is what was there before.
+    pub fn load_site(&mut self, open: Option<OpenSite>) {
+        self.open = open;
+    }
+
+    /// The open site as the part that is looked at sees it. Pads that belong to one tool only are never part of a site.
+    fn view(&self, tool: Tool) -> Option<View<'_>> {
+        let subject = self.subject.filter(|_| tool.looks_at_sites())?;
+        Some(View::new(&self.open.as_ref()?.site, subject))
     }
 
     /// How many fields hold something.
@@ -174,6 +253,7 @@ impl Pads {
                 self.typing = None;
                 self.make(fields, None, What::Several, false)
             }
+            Edit::Site(edit) => self.edit_site(edit),
             Edit::Open(kept) => self.replace(&kept, What::Opened),
             Edit::Forget => self.replace(&Kept::default(), What::Forgotten),
             Edit::Undo => self.step(true),
@@ -224,23 +304,105 @@ impl Pads {
 
     /// Puts `fields` in and remembers the way back. `join` adds to the step before, where that was in the same field.
     fn make(&mut self, fields: Vec<(Place, Typed)>, unknown: Option<Unknown>, what: What, join: bool) -> bool {
+        if unknown.is_none() && fields.iter().any(|(place, _)| self.view(place.0).is_some()) {
+            return self.make_on_site(fields, what, join);
+        }
         let fields: Vec<_> = fields
             .into_iter()
-            .map(|(place, after)| (place, self.typed(place), after))
+            .map(|(place, after)| (place, self.typed.get(place).cloned().unwrap_or_default(), after))
             .filter(|(_, before, after)| before != after)
             .collect();
         let unknown = unknown.filter(|after| *after != self.unknown).map(|after| (self.unknown.clone(), after));
         if fields.is_empty() && unknown.is_none() {
             return false;
         }
-        let mut change = Change { what, fields, unknown };
-        if join && let Some(earlier) = self.past.pop_if(|earlier| earlier.what == what && earlier.fields.len() == 1) {
+        let mut change = Change { what, fields, unknown, site: None };
+        let joins = |earlier: &mut Change| earlier.what == what && earlier.fields.len() == 1 && earlier.site.is_none();
+        if join && let Some(earlier) = self.past.pop_if(joins) {
             change.fields[0].1 = earlier.fields[0].1.clone();
         }
         self.put(&change, false);
         self.future.clear();
         if change.unknown.is_some() || change.fields.iter().any(|(_, before, after)| before != after) {
             self.past.push(change);
+        }
+        true
+    }
+
+    /// The same where a part of the open site is looked at: each field goes to where its figure stands on the site.
+    fn make_on_site(&mut self, fields: Vec<(Place, Typed)>, what: What, join: bool) -> bool {
+        let Some(open) = &self.open else { return false };
+        let mut after = open.clone();
+        for (place, typed) in fields {
+            let slot = self.view(place.0).and_then(|view| view.slot(place.1));
+            let typed = engine::site::Typed { text: typed.text, unit: typed.unit };
+            match slot {
+                Some(Slot::Place) => after.site.place.set(place.1, typed),
+                Some(Slot::Part(id)) => {
+                    if let Some(part) = after.site.part_mut(id) {
+                        part.entries.set(place.1, typed);
+                        part.typical = false;
+                    }
+                }
+                Some(Slot::Run(id)) => {
+                    if let Some(run) = after.site.part_mut(id).and_then(|part| part.run.as_mut()) {
+                        run.set(place.1, typed);
+                    }
+                }
+                None => {}
+            }
+        }
+        self.put_site(Some(after), what, join)
+    }
+
+    fn edit_site(&mut self, edit: SiteEdit) -> bool {
+        self.typing = None;
+        let mut after = self.open.clone();
+        let what = if matches!(edit, SiteEdit::Name(..)) { What::Name } else { What::Site };
+        match (edit, &mut after) {
+            (SiteEdit::Open(site), _) => after = Some(site),
+            (SiteEdit::Close, _) => after = None,
+            (_, None) => return false,
+            (SiteEdit::Add(kind), Some(open)) => drop(open.site.add(kind)),
+            (SiteEdit::Remove(id), Some(open)) => open.site.remove(id),
+            (SiteEdit::Duplicate(id), Some(open)) => drop(open.site.duplicate(id)),
+            (SiteEdit::Name(None, name), Some(open)) => open.site.name = name,
+            (SiteEdit::Name(Some(id), name), Some(open)) => {
+                if let Some(part) = open.site.part_mut(id) {
+                    part.name = name;
+                }
+            }
+            (SiteEdit::Join(id, to), Some(open)) => {
+                if let Some(part) = open.site.part_mut(id) {
+                    part.to = to;
+                }
+            }
+        }
+        self.put_site(after, what, what == What::Name)
+    }
+
+    fn put_site(&mut self, after: Option<OpenSite>, what: What, join: bool) -> bool {
+        let mut before = self.open.clone();
+        if before == after {
+            return false;
+        }
+        // Keystrokes in one field, or in one name, are one step.
+        let same = |earlier: &mut Change| {
+            let ends_here = earlier.site.as_ref().is_some_and(|site| site.1 == before);
+            earlier.what == what && ends_here && matches!(what, What::Field(_) | What::Name)
+        };
+        let mut joined = None;
+        if join {
+            joined = self.past.pop_if(same);
+        }
+        if let Some(earlier) = joined.and_then(|change| change.site) {
+            before = earlier.0;
+        }
+        self.open = after.clone();
+        self.future.clear();
+        if before != after {
+            let site = Some(Box::new((before, after)));
+            self.past.push(Change { what, fields: Vec::new(), unknown: None, site });
         }
         true
     }
@@ -265,6 +427,9 @@ impl Pads {
             } else {
                 self.typed.insert(*place, typed.clone());
             }
+        }
+        if let Some(site) = &change.site {
+            self.open = if back { site.0.clone() } else { site.1.clone() };
         }
         if let Some((before, after)) = &change.unknown {
             self.unknown = if back { before.clone() } else { after.clone() };
@@ -343,6 +508,61 @@ mod tests {
         assert!(pads.edit(Edit::Redo, 2004.0));
         assert!(pads.edit(Edit::Redo, 2005.0));
         assert_eq!(text(&pads, VOC), "49.31");
+    }
+
+    fn room() -> Pads {
+        use engine::chemistry::Chemistry;
+        let got = engine::site::Got {
+            family: CodeFamily::Iec,
+            coldest: -20,
+            modules: 8,
+            chemistry: Chemistry::Lfp,
+            bus: 48,
+            inverter: 3000,
+        };
+        let mut pads = Pads::default();
+        pads.edit(Edit::Site(SiteEdit::Open(OpenSite { key: 1, site: engine::site::start(got) })), 0.0);
+        pads
+    }
+
+    #[test]
+    fn a_tool_that_looks_at_a_part_writes_to_where_the_figure_stands() {
+        let mut pads = room();
+        let site = &pads.site().unwrap().site;
+        let (array, controller) =
+            (site.first(PartKind::Array).unwrap().id, site.first(PartKind::Controller).unwrap().id);
+        pads.look_at(Some(Subject::Part(array)));
+        let limit = (Tool::String, Field::InputLimit);
+        type_in(&mut pads, limit, "111", 10.0);
+        assert_eq!(text(&pads, limit), "111");
+        let at = |pads: &Pads| {
+            let part = pads.site().unwrap().site.part(controller).unwrap();
+            part.entries.get(Field::InputLimit).map(|typed| typed.text.clone())
+        };
+        assert_eq!(at(&pads).as_deref(), Some("111"));
+        // The scratch pad of the tool is as it was, and three keystrokes are one step.
+        pads.look_at(None);
+        assert_eq!(text(&pads, limit), "");
+        assert!(pads.edit(Edit::Undo, 20.0));
+        assert_ne!(at(&pads).as_deref(), Some("111"));
+        assert!(pads.edit(Edit::Undo, 21.0), "the site itself");
+        assert!(pads.site().is_none());
+        assert!(pads.edit(Edit::Redo, 22.0) && pads.edit(Edit::Redo, 23.0));
+        assert_eq!(at(&pads).as_deref(), Some("111"));
+    }
+
+    #[test]
+    fn parts_come_and_go_and_can_be_undone() {
+        let mut pads = room();
+        let before = pads.site().unwrap().clone();
+        let controller = before.site.first(PartKind::Controller).unwrap().id;
+        pads.edit(Edit::Site(SiteEdit::Duplicate(controller)), 1.0);
+        pads.edit(Edit::Site(SiteEdit::Remove(controller)), 2.0);
+        pads.edit(Edit::Site(SiteEdit::Name(None, "Hut".to_owned())), 3.0);
+        for _ in 0..3 {
+            assert!(pads.edit(Edit::Undo, 4.0));
+        }
+        assert_eq!(pads.site(), Some(&before));
     }
 
     #[test]

@@ -53,6 +53,11 @@ impl Tool {
         Self::SixthLoad,
     ];
 
+    /// Whether its entries are those of a part while one is looked at.
+    pub const fn looks_at_sites(self) -> bool {
+        matches!(self, Self::String | Self::Cells | Self::Run | Self::Start | Self::Settings | Self::AirAndWater)
+    }
+
     /// The word it is kept and linked under. Never changed once released.
     pub const fn key(self) -> &'static str {
         match self {

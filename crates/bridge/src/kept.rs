@@ -22,6 +22,9 @@ pub struct Kept {
     /// The chosen light: `paper`, `night` or `sun`.
     #[serde(default, skip_serializing_if = "Option::is_none")]
     pub theme: Option<String>,
+    /// The site that is open, by what it is kept under on this phone.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub open_site: Option<u32>,
     /// What was typed, by tool and field.
     pub tools: BTreeMap<String, BTreeMap<String, KeptEntry>>,
 }
@@ -38,7 +41,7 @@ pub struct KeptEntry {
 
 impl Default for Kept {
     fn default() -> Self {
-        Self { version: VERSION, theme: None, tools: BTreeMap::new() }
+        Self { version: VERSION, theme: None, open_site: None, tools: BTreeMap::new() }
     }
 }
 
@@ -85,6 +88,9 @@ impl Kept {
     pub fn with_changes(mut self, before: &Self, after: &Self) -> Self {
         if before.theme != after.theme {
             self.theme.clone_from(&after.theme);
+        }
+        if before.open_site != after.open_site {
+            self.open_site = after.open_site;
         }
         for (tool, entries) in &after.tools {
             for (field, entry) in entries {

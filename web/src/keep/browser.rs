@@ -9,7 +9,7 @@ use wasm_bindgen::prelude::*;
 use wasm_bindgen_futures::JsFuture;
 use web_sys::{BroadcastChannel, MessageEvent};
 
-use super::Why;
+use super::{KeptSite, ToKeep, Why};
 
 const DATABASE: &str = "linehut";
 const STORE: &str = "kept";
@@ -21,6 +21,14 @@ const DAMAGED: &str = "damaged";
 /// The database. A handle: a clone is the same database.
 #[derive(Clone)]
 pub struct Storage(Rc<RefCell<Rc<Rexie>>>);
+
+/// What stands before a site's text in its record: how often it was written.
+fn revised(record: &str) -> (u32, &str) {
+    record.split_once('\n').map_or((0, record), |(revision, text)| (revision.parse().unwrap_or(0), text))
+}
+
+/// Between two earlier states of a site.
+const APART: char = '\u{1e}';
 
 /// What was found.
 pub struct Found {
@@ -68,6 +76,132 @@ impl Storage {
             done => done,
         }
     }
+}
+
+impl Storage {
+    /// The sites that are kept: what each is kept under, and its name.
+    pub async fn sites(&self) -> Result<Vec<KeptSite>, Why> {
+        let database = self.0.borrow().clone();
+        let transaction = database.transaction(&[STORE], TransactionMode::ReadOnly).map_err(why)?;
+        let store = transaction.store(STORE).map_err(why)?;
+        listed(&store).await
+    }
+
+    /// The text of a site, and how often it was written.
+    pub async fn site(&self, key: u32) -> Result<Option<(u32, String)>, Why> {
+        let database = self.0.borrow().clone();
+        let transaction = database.transaction(&[STORE], TransactionMode::ReadOnly).map_err(why)?;
+        let store = transaction.store(STORE).map_err(why)?;
+        let record = text(&store, &site_key(key)).await?;
+        Ok(record.map(|record| {
+            let (revision, text) = revised(&record);
+            (revision, text.to_owned())
+        }))
+    }
+
+    /// The earlier states of a site, the latest first: when, in milliseconds, and its text.
+    pub async fn earlier(&self, key: u32) -> Result<Vec<(f64, String)>, Why> {
+        let database = self.0.borrow().clone();
+        let transaction = database.transaction(&[STORE], TransactionMode::ReadOnly).map_err(why)?;
+        let store = transaction.store(STORE).map_err(why)?;
+        let record = text(&store, &earlier_key(key)).await?.unwrap_or_default();
+        Ok(states(&record).map(|(when, text)| (when, text.to_owned())).collect())
+    }
+
+    /// Writes a site, its place in the list, and an earlier state where the last is old enough, in one transaction.
+    ///
+    /// `after` is the revision that this tab read or wrote last. Where another tab has written since, the site is put
+    /// beside the other's under a key of its own, which is given back: neither is overwritten.
+    pub async fn put_site(&self, site: &ToKeep, after: u32, now: f64) -> Result<(u32, u32), Why> {
+        let database = self.0.borrow().clone();
+        let transaction = database.transaction(&[STORE], TransactionMode::ReadWrite).map_err(why)?;
+        let store = transaction.store(STORE).map_err(why)?;
+        let there = text(&store, &site_key(site.key)).await?;
+        let (revision, before) = there.as_deref().map_or((0, ""), revised);
+        let mut list = listed(&store).await?;
+        let (key, revision) = if revision == after {
+            (site.key, revision + 1)
+        } else {
+            (list.iter().map(|one| one.key).max().unwrap_or(0).max(site.key) + 1, 1)
+        };
+        let name = if key == site.key { site.name.clone() } else { format!("{} (this tab)", site.name) };
+        match list.iter_mut().find(|one| one.key == key) {
+            Some(one) => one.name = name,
+            None => list.push(KeptSite { key, name }),
+        }
+        if key == site.key && !before.is_empty() && before != site.text {
+            let record = text(&store, &earlier_key(key)).await?.unwrap_or_default();
+            let last = states(&record).next().map_or(0.0, |(when, _)| when);
+            if now - last > super::STATE_APART {
+                let kept = std::iter::once(format!("{now}\n{before}"))
+                    .chain(states(&record).take(super::STATES - 1).map(|(when, text)| format!("{when}\n{text}")));
+                let record = kept.collect::<Vec<_>>().join(&APART.to_string());
+                put_text(&store, &earlier_key(key), &record).await?;
+            }
+        }
+        put_text(&store, &site_key(key), &format!("{revision}\n{}", site.text)).await?;
+        put_list(&store, &list).await?;
+        transaction.done().await.map_err(why)?;
+        Ok((key, revision))
+    }
+
+    /// Forgets a site and its earlier states.
+    pub async fn forget_site(&self, key: u32) -> Result<(), Why> {
+        let database = self.0.borrow().clone();
+        let transaction = database.transaction(&[STORE], TransactionMode::ReadWrite).map_err(why)?;
+        let store = transaction.store(STORE).map_err(why)?;
+        let mut list = listed(&store).await?;
+        list.retain(|one| one.key != key);
+        store.delete(site_key(key).into()).await.map_err(why)?;
+        store.delete(earlier_key(key).into()).await.map_err(why)?;
+        put_list(&store, &list).await?;
+        transaction.done().await.map_err(why)?;
+        Ok(())
+    }
+}
+
+/// The record that lists the sites: key and name, a line each.
+const SITES: &str = "sites";
+
+fn site_key(key: u32) -> String {
+    format!("site-{key}")
+}
+
+fn earlier_key(key: u32) -> String {
+    format!("earlier-{key}")
+}
+
+async fn text(store: &Store, key: &str) -> Result<Option<String>, Why> {
+    Ok(store.get(key.into()).await.map_err(why)?.and_then(|value| value.as_string()))
+}
+
+async fn put_text(store: &Store, key: &str, text: &str) -> Result<(), Why> {
+    store.put(&text.into(), Some(&key.into())).await.map_err(why)?;
+    Ok(())
+}
+
+async fn listed(store: &Store) -> Result<Vec<KeptSite>, Why> {
+    let record = text(store, SITES).await?.unwrap_or_default();
+    let line = |line: &str| {
+        let (key, name) = line.split_once('\t')?;
+        Some(KeptSite { key: key.parse().ok()?, name: name.to_owned() })
+    };
+    Ok(record.lines().filter_map(line).collect())
+}
+
+async fn put_list(store: &Store, list: &[KeptSite]) -> Result<(), Why> {
+    let plain = |name: &str| name.replace(['\n', '\t', '\r'], " ");
+    let lines: Vec<String> = list.iter().map(|one| format!("{}\t{}", one.key, plain(&one.name))).collect();
+    put_text(store, SITES, &lines.join("\n")).await
+}
+
+fn states(record: &str) -> impl Iterator<Item = (f64, &str)> {
+    record.split(APART).filter_map(|state| {
+        let (when, text) = state.split_once('\n')?;
+        // Milliseconds since 1970 are far below 2^53.
+        #[allow(clippy::cast_precision_loss)]
+        Some((when.split('.').next()?.parse::<u64>().ok()? as f64, text))
+    })
 }
 
 async fn connect() -> Result<Rc<Rexie>, Why> {

@@ -23,6 +23,32 @@ use storage::{Storage, Tabs};
 /// How long the browser's storage may take to answer before the page is put up without it.
 pub const PATIENCE: Duration = Duration::from_secs(2);
 
+/// How many earlier states of a site are kept.
+pub const STATES: usize = 20;
+
+/// How long after one earlier state the next is kept, in milliseconds: a keystroke is no state.
+pub const STATE_APART: f64 = 60_000.0;
+
+/// A site on this phone.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct KeptSite {
+    /// What it is kept under.
+    pub key: u32,
+    /// Its name.
+    pub name: String,
+}
+
+/// A site to be written.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct ToKeep {
+    /// What it is kept under.
+    pub key: u32,
+    /// Its name.
+    pub name: String,
+    /// Its text.
+    pub text: String,
+}
+
 /// Whether what was typed is kept.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Keeping {
@@ -68,6 +94,10 @@ pub struct Keeper {
     lasting: RwSignal<Option<bool>>,
     elsewhere: RwSignal<bool>,
     damaged: RwSignal<bool>,
+    /// The sites on this phone.
+    sites: RwSignal<Vec<KeptSite>>,
+    /// A site that another tab had changed too was put beside it: from which key to which.
+    moved: RwSignal<Option<(u32, u32)>>,
     work: StoredValue<Work, LocalStorage>,
 }
 
@@ -78,6 +108,9 @@ struct Work {
     /// What this tab last read or wrote: the next write puts in only what differs from it.
     base: Kept,
     next: Option<Kept>,
+    next_site: Option<ToKeep>,
+    /// How often each site had been written when this tab last read or wrote it.
+    revisions: Vec<(u32, u32)>,
     busy: bool,
     asked_to_last: bool,
 }
@@ -90,6 +123,8 @@ impl Keeper {
             lasting: RwSignal::new(None),
             elsewhere: RwSignal::new(false),
             damaged: RwSignal::new(false),
+            sites: RwSignal::new(Vec::new()),
+            moved: RwSignal::new(None),
             work: StoredValue::new_local(Work::default()),
         }
     }
@@ -101,7 +136,7 @@ impl Keeper {
 
     /// Whether nothing waits to be written.
     pub fn is_done(self) -> bool {
-        self.work.try_with_value(|work| !work.busy && work.next.is_none()).unwrap_or(true)
+        self.work.try_with_value(|work| !work.busy && work.next.is_none() && work.next_site.is_none()).unwrap_or(true)
     }
 
     /// Whether the browser promised never to clear it by itself. `None` while that is not known.
@@ -117,6 +152,61 @@ impl Keeper {
     /// Whether what was kept could not be read. It was laid aside, not thrown away.
     pub fn damaged(self) -> RwSignal<bool> {
         self.damaged
+    }
+
+    /// The sites on this phone.
+    pub fn sites(self) -> RwSignal<Vec<KeptSite>> {
+        self.sites
+    }
+
+    /// The site that was last put beside another tab's: from which key to which.
+    pub fn moved(self) -> RwSignal<Option<(u32, u32)>> {
+        self.moved
+    }
+
+    fn storage(self) -> Option<Storage> {
+        self.work.try_with_value(|work| work.storage.clone()).flatten()
+    }
+
+    /// A key that no site on this phone has.
+    pub fn new_key(self) -> u32 {
+        self.sites.with_untracked(|sites| sites.iter().map(|one| one.key).max()).unwrap_or(0) + 1
+    }
+
+    /// The text of a kept site.
+    pub async fn site(self, key: u32) -> Option<String> {
+        let (revision, text) = self.storage()?.site(key).await.ok().flatten()?;
+        self.work.update_value(|work| work.set_revision(key, revision));
+        Some(text)
+    }
+
+    /// Earlier states of a site, the latest first.
+    pub async fn earlier(self, key: u32) -> Vec<(f64, String)> {
+        match self.storage() {
+            Some(storage) => storage.earlier(key).await.unwrap_or_default(),
+            None => Vec::new(),
+        }
+    }
+
+    /// Forgets a site.
+    pub async fn forget_site(self, key: u32) {
+        let Some(storage) = self.storage() else { return };
+        match storage.forget_site(key).await {
+            Ok(()) => self.list(&storage).await,
+            Err(why) => self.state.set(Keeping::Not(why)),
+        }
+    }
+
+    async fn list(self, storage: &Storage) {
+        if let Ok(sites) = storage.sites().await {
+            self.sites.set(sites);
+        }
+    }
+
+    /// Keeps a site, as soon as the write before it is done.
+    pub fn keep_site(self, site: ToKeep) {
+        self.work.update_value(|work| work.next_site = Some(site));
+        self.go_on();
     }
 
     /// The storage did not answer in time.
@@ -136,6 +226,7 @@ impl Keeper {
             }
         };
         let found = storage.read().await;
+        self.list(&storage).await;
         self.lasting.set(storage::is_lasting().await);
         let elsewhere = self.elsewhere;
         self.work.update_value(|work| {
@@ -167,7 +258,8 @@ impl Keeper {
         let idle = self
             .work
             .try_update_value(|work| {
-                work.storage.is_some() && work.next.is_some() && !std::mem::replace(&mut work.busy, true)
+                let waits = work.next.is_some() || work.next_site.is_some();
+                work.storage.is_some() && waits && !std::mem::replace(&mut work.busy, true)
             })
             .unwrap_or(false);
         if !idle {
@@ -182,7 +274,13 @@ impl Keeper {
             Duration::from_secs(1),
         );
         spawn_local(async move {
-            while let Some((storage, base, next)) = self.take() {
+            loop {
+                if let Err(why) = self.write_site().await {
+                    self.state.set(Keeping::Not(why));
+                    self.work.update_value(|work| work.busy = false);
+                    return;
+                }
+                let Some((storage, base, next)) = self.take() else { return };
                 match storage.write(&base, &next).await {
                     Ok(()) => {
                         self.work.update_value(|work| {
@@ -208,12 +306,49 @@ impl Keeper {
         });
     }
 
+    /// Writes the site that waits, if one does. Where it cannot be written, it waits on.
+    async fn write_site(self) -> Result<(), Why> {
+        while let Some((storage, site)) =
+            self.work.try_update_value(|work| Some((work.storage.clone()?, work.next_site.take()?))).flatten()
+        {
+            let after = self.work.try_with_value(|work| work.revision(site.key)).unwrap_or(0);
+            match storage.put_site(&site, after, crate::clock::date()).await {
+                Ok((key, revision)) => {
+                    self.work.update_value(|work| {
+                        work.set_revision(key, revision);
+                        if let Some(tabs) = &work.tabs {
+                            tabs.tell();
+                        }
+                    });
+                    if key != site.key {
+                        self.moved.set(Some((site.key, key)));
+                    }
+                    self.list(&storage).await;
+                    self.state.set(Keeping::Kept);
+                    self.ask_to_last().await;
+                }
+                Err(why) => {
+                    self.work.update_value(|work| {
+                        work.next_site.get_or_insert(site);
+                    });
+                    return Err(why);
+                }
+            }
+        }
+        Ok(())
+    }
+
     /// What to write next; ends the work where there is nothing.
     fn take(self) -> Option<(Storage, Kept, Kept)> {
         self.work
             .try_update_value(|work| {
                 let next = work.next.take().filter(|next| *next != work.base);
                 work.busy = next.is_some();
+                // A site that came in meanwhile goes first.
+                if next.is_none() && work.next_site.is_some() {
+                    work.busy = true;
+                    return Some((work.storage.clone()?, work.base.clone(), work.base.clone()));
+                }
                 Some((work.storage.clone()?, work.base.clone(), next?))
             })
             .flatten()
@@ -225,6 +360,17 @@ impl Keeper {
         if asked == Some(false) && self.lasting.get_untracked() != Some(true) {
             self.lasting.set(storage::ask_to_last().await);
         }
+    }
+}
+
+impl Work {
+    fn revision(&self, key: u32) -> u32 {
+        self.revisions.iter().find(|(one, _)| *one == key).map_or(0, |(_, revision)| *revision)
+    }
+
+    fn set_revision(&mut self, key: u32, revision: u32) {
+        self.revisions.retain(|(one, _)| *one != key);
+        self.revisions.push((key, revision));
     }
 }
 

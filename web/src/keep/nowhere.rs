@@ -2,7 +2,7 @@
 
 use bridge::Kept;
 
-use super::Why;
+use super::{KeptSite, ToKeep, Why};
 
 /// No storage.
 #[derive(Clone)]
@@ -27,6 +27,29 @@ impl Storage {
     }
 
     pub async fn write(&self, _base: &Kept, _next: &Kept) -> Result<(), Why> {
+        match *self {}
+    }
+}
+
+#[allow(clippy::unused_async, reason = "the same face as the browser's storage")]
+impl Storage {
+    pub async fn sites(&self) -> Result<Vec<KeptSite>, Why> {
+        match *self {}
+    }
+
+    pub async fn site(&self, _key: u32) -> Result<Option<(u32, String)>, Why> {
+        match *self {}
+    }
+
+    pub async fn earlier(&self, _key: u32) -> Result<Vec<(f64, String)>, Why> {
+        match *self {}
+    }
+
+    pub async fn put_site(&self, _site: &ToKeep, _after: u32, _now: f64) -> Result<(u32, u32), Why> {
+        match *self {}
+    }
+
+    pub async fn forget_site(&self, _key: u32) -> Result<(), Why> {
         match *self {}
     }
 }

@@ -108,6 +108,12 @@ impl<'a> View<'a> {
         }
     }
 
+    /// What stands in `field`, for as long as the site does.
+    #[must_use]
+    pub fn at(&self, field: Field) -> (&'a str, Option<Unit>) {
+        self.entries(field).map_or(("", None), |entries| entries.typed(field))
+    }
+
     fn entries(&self, field: Field) -> Option<&'a Entries> {
         match home(field) {
             Some(Home::Place) => Some(&self.site.place),
