@@ -158,8 +158,8 @@ fn lights_down_a_corridor_tell_the_volts_at_each() {
         enter(site, &[("Voltage", "12"), ("Size", "2.5")]).await?;
         site.unfold("Lights along it volts at each load").await?;
         shows(site, "No loads yet.").await?;
-        enter(site, &[("Distances to loads", "4 8 12"), ("Watts of each load", "10 10 five")]).await?;
-        shows(site, "the 3. of them").await?;
+        enter(site, &[("Distances to loads", "4 8 12"), ("Watts of each load", "10 10 5.5.5")]).await?;
+        shows(site, "Number 3: ").await?;
         enter(site, &[("Watts of each load", "10 10 5")]).await?;
         shows(site, "Load 3 loses most, 2.0 %; 3 % is allowed.").await?;
         shows(site, "Load 1, 4 m along, 10 W 11.87 V, 1.1 % lost").await?;

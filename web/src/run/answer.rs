@@ -310,6 +310,14 @@ pub mod tests {
     }
 
     #[test]
+    fn where_one_is_not_enough_equal_ones_lie_side_by_side() {
+        let rows = [PLATE, &[(Field::RunCurrent, "600")]].concat();
+        let answer = of_rows(&rows);
+        assert!(answer.number.starts_with("2 × "), "{}", answer.number);
+        assert!(answer.says.ends_with("equal ones side by side for each pole."), "{}", answer.says);
+    }
+
+    #[test]
     fn one_tap_puts_a_resistor_before_an_inverter() {
         let rows = [
             (Field::RunKind, "inverter"),

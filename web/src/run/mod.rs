@@ -67,6 +67,8 @@ const CAUTIONS: &[&str] = &[
      with a meter, insulate tools, and cover what stays live.",
     "A direct-current arc does not go out. Use breakers and fuses rated for these volts d.c., wired as their maker shows; \
      a polarised one connected the wrong way round burns instead of opening.",
+    "A string is live in any light: cover or darken the array before its terminals are touched. Above 60 V d.c. (30 V wet) \
+     it shocks.",
 ];
 
 fn short(field: Field) -> &'static str {
