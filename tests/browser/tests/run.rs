@@ -69,6 +69,20 @@ fn four_entries_give_conductor_breaker_and_drop() {
 }
 
 #[test]
+fn several_side_by_side_fit_a_narrow_screen() {
+    visit(Screen::NARROW, async |site| {
+        open(site).await?;
+        site.choose("Kind of run", "inverter feed").await?;
+        site.choose("Code family", "North America").await?;
+        enter(site, &[("Current", "600"), ("Voltage", "12"), ("Length one way", "6 ft")]).await?;
+        says(site, "2 × 500 kcmil").await?;
+        shows(site, "2 equal ones a pole").await?;
+        ensure!(site.overflow().await? == 0, "{} px beyond the edge", site.overflow().await?);
+        Ok(())
+    });
+}
+
+#[test]
 fn four_controllers_on_one_2_awg_break_and_the_table_says_why() {
     visit(Screen::PHONE, async |site| {
         open(site).await?;

@@ -5,7 +5,7 @@ use engine::entry::Entry;
 use engine::field::Field;
 use engine::pad::Pad;
 use engine::quantity::{Amount, Quantity};
-use engine::run::{Ask, BreakerType, Drop, Kind, Precharge, Requirement, Sizing, reach, size};
+use engine::run::{Ask, BreakerType, Candidate, Drop, Kind, Precharge, Requirement, Sizing, reach, size};
 use engine::show;
 use engine::unit::Unit;
 
@@ -50,10 +50,11 @@ pub fn answer(pad: &impl Pad, ask: &Ask) -> Option<Answer> {
     let (verdict, cost) = top.map_or((Verdict::Asks, Cost::Hazard), |check| (check.verdict, check.cost));
     let sizing = found.as_ref().ok();
     let conductor = sizing.and_then(|sizing| sizing.conductor);
+    let (number, unit) = conductor.map_or_else(|| (show::NONE.to_owned(), ""), in_two);
     Some(Answer {
         of: of(pad, ask, sizing),
-        number: conductor.map_or_else(|| show::NONE.to_owned(), |one| one.to_string()),
-        unit: "",
+        number,
+        unit,
         verdict,
         cost,
         says: match &found {
@@ -70,6 +71,14 @@ pub fn answer(pad: &impl Pad, ask: &Ask) -> Option<Answer> {
         second: bars::drop(sizing, &checks),
         offer: offer(ask, &checks),
     })
+}
+
+/// "2 × 500" and "kcmil": the unit is set smaller.
+fn in_two(conductor: Candidate) -> (String, &'static str) {
+    let text = conductor.to_string();
+    let units = ["AWG", "kcmil", "mm²"].into_iter();
+    let parts = units.filter_map(|unit| Some((text.strip_suffix(unit)?.trim_end().to_owned(), unit))).next();
+    parts.unwrap_or((text, ""))
 }
 
 /// Amperes or watts: either will do.
@@ -238,7 +247,7 @@ pub mod tests {
     fn four_entries_name_conductor_breaker_and_drop() {
         let answer = of_rows(PLATE);
         assert_eq!(plain(&answer.of), "Controller to bus, 3 ft one way, 120.0 A flows");
-        assert_eq!(plain(&answer.number), "1/0 AWG");
+        assert_eq!((answer.number.as_str(), answer.unit), ("1/0", "AWG"));
         assert_eq!(answer.most.as_deref().map(plain).as_deref(), Some("Breaker 150 A"));
         // By hand: 6 ft of 0.122 Ω a thousand feet at 75 °C, at 60 °C 0.116: 120 A lose 0.084 V, 10 W; of six cells each
         // 14 mV.
@@ -313,7 +322,7 @@ pub mod tests {
     fn where_one_is_not_enough_equal_ones_lie_side_by_side() {
         let rows = [PLATE, &[(Field::RunCurrent, "600")]].concat();
         let answer = of_rows(&rows);
-        assert!(answer.number.starts_with("2 × "), "{}", answer.number);
+        assert_eq!((answer.number.as_str(), answer.unit), ("2 × 500", "kcmil"));
         assert!(answer.says.ends_with("equal ones side by side for each pole."), "{}", answer.says);
     }
 
