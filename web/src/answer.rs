@@ -70,6 +70,7 @@ fn spoken(unit: &'static str) -> &'static str {
         "kW" => "kilowatts",
         "kWh" => "kilowatt-hours",
         "%" => "percent",
+        "mm²" => "square millimetres",
         other => other,
     }
 }

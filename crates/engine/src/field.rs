@@ -457,6 +457,10 @@ fields! {
     LinkReadings, "Readings after links", list(Unit::Volt, -2000.0, 2000.0);
     /// Equal loads at equal distances along a run.
     LoadsAlong, "Loads along it", whole(1, 50);
+    /// How far each load along a run is from its head, in the order of the loads.
+    LoadDistances, "Distances to loads", list(Unit::Metre, 0.01, 5000.0);
+    /// What each load along a run draws, in the order of the loads.
+    LoadWatts, "Watts of each load", list(Unit::Watt, 0.0, 500_000.0);
     /// What is started: a class of load, whose usual figures stand in.
     StartLoad, "Load", Takes::Choice(&[
         ("well-pump", "well pump, submersible"),
@@ -615,12 +619,21 @@ impl Field {
     ///
     /// The first that was not understood: its place, from 1, and why.
     pub fn list<Q: Quantity>(self, text: &str) -> Result<Vec<Q>, (usize, Refusal)> {
+        // A list's readings are of its field's dimension, which is the quantity's where the caller is right.
+        Ok(self.readings(text)?.into_iter().filter_map(Reading::quantity).collect())
+    }
+
+    /// The same, each number with the unit that it was typed in.
+    ///
+    /// # Errors
+    ///
+    /// As [`Field::list`].
+    pub fn readings(self, text: &str) -> Result<Vec<Reading>, (usize, Refusal)> {
         let Takes::List { unit, least, most } = self.takes() else { return Ok(Vec::new()) };
         let mut all = Vec::new();
         for (place, item) in typed::list::read_list(text, unit).into_iter().enumerate() {
             let read = item.reading.and_then(|reading| reading.within(least, most, unit));
-            let quantity = read.and_then(|reading| reading.quantity().ok_or(Refusal::NotANumber { text: item.text }));
-            all.push(quantity.map_err(|refusal| (place + 1, refusal))?);
+            all.push(read.map_err(|refusal| (place + 1, refusal))?);
         }
         Ok(all)
     }
@@ -649,7 +662,7 @@ impl Field {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::quantity::{Celsius, Count, PercentPerKelvin, Volts, VoltsPerKelvin};
+    use crate::quantity::{Celsius, Count, Metres, PercentPerKelvin, Volts, VoltsPerKelvin};
 
     #[test]
     fn keys_name_one_field_each() {
@@ -677,6 +690,10 @@ mod tests {
         assert_eq!(field.list::<Volts>(""), Ok(Vec::new()));
         let (place, _) = field.list::<Volts>("3.31 3.3.1 3.3").unwrap_err();
         assert_eq!(place, 2);
+        // Whatever the list is of, what is good in it is taken.
+        assert!(Field::Capacities.readings("281,5; 279 Ah").is_ok_and(|all| all.len() == 2));
+        assert_eq!(Field::LoadDistances.list("2 m; 15 ft"), Ok([2.0, 4.572].map(Metres::new).to_vec()));
+        assert!(Field::LoadDistances.readings("2 V").is_err());
     }
 
     #[test]

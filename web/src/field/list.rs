@@ -1,7 +1,6 @@
 //! A field that takes several numbers, typed or pasted.
 
 use engine::field::Field;
-use engine::quantity::Volts;
 use leptos::prelude::*;
 
 use super::{Parts, Said};
@@ -14,8 +13,7 @@ pub fn list_field(tool: Tool, field: Field, label: &'static str) -> AnyView {
     let none = || derived(|| None);
     let wrong = derived(move || {
         let text = crate::draft::use_draft().typed((tool, field)).get().text;
-        // Which quantity plays no part in what can be read.
-        field.list::<Volts>(&text).err().map(|(place, why)| format!("the {place}. of them: {why}"))
+        field.readings(&text).err().map(|(place, why)| format!("Number {place}: {why}"))
     });
     let said = Said { assumed: derived(|| None), asks: none(), note: wrong };
     let parts = Parts::new((tool, field), said, |_| Ok(None));

@@ -1,29 +1,38 @@
 //! The answer of the Run tool, worded and drawn. Pure.
 
 use engine::check::{Check, Cost, FieldSet, Sense, Verdict};
+use engine::entry::Entry;
 use engine::field::Field;
 use engine::pad::Pad;
 use engine::quantity::{Amount, Quantity};
-use engine::run::{Ask, Fault, Kind, Requirement, Sizing, size};
+use engine::run::{Ask, BreakerType, Candidate, Drop, Kind, Precharge, Requirement, Sizing, reach, size};
 use engine::show;
+use engine::unit::Unit;
 
-use crate::answer::Answer;
-use crate::check_row::bar;
+use super::{TOOL, bars, truck};
+use crate::answer::{Answer, Offer};
 use crate::form::{as_entered, names};
-use crate::span_bar::Bar;
-use crate::span_bar::geometry::{From, Mark, Post, Ruler};
+use crate::pads::Typed;
 
-/// The requirements that choose a conductor and its breaker.
-const CHOOSING: [Requirement; 3] = [Requirement::Ampacity, Requirement::Protection, Requirement::Drop];
+/// The requirements that choose a conductor and its breaker, the drop last.
+pub const CHOOSING: [Requirement; 3] = [Requirement::Ampacity, Requirement::Protection, Requirement::Drop];
 
 /// What the answer waits for.
 pub fn missing(ask: &Ask) -> FieldSet {
+    if truck::asked(ask) {
+        return reach(ask).err().unwrap_or_default();
+    }
     size(ask).err().unwrap_or_default()
 }
 
 /// The worst of what chooses conductor and breaker.
 pub fn on_top(ask: &Ask) -> Option<Check<Requirement>> {
-    let checks = CHOOSING.iter().filter_map(|one| one.check(ask));
+    worst_of(&CHOOSING, ask)
+}
+
+/// The worst of some requirements.
+pub fn worst_of(requirements: &[Requirement], ask: &Ask) -> Option<Check<Requirement>> {
+    let checks = requirements.iter().filter_map(|one| one.check(ask));
     checks.min_by(|a, b| {
         let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
         group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
@@ -32,16 +41,20 @@ pub fn on_top(ask: &Ask) -> Option<Check<Requirement>> {
 
 /// The answer to what was typed into `pad`.
 pub fn answer(pad: &impl Pad, ask: &Ask) -> Option<Answer> {
+    if truck::asked(ask) {
+        return Some(truck::answer(pad, ask));
+    }
     let found = size(ask);
     let checks: Vec<Check<Requirement>> = Requirement::ALL.iter().filter_map(|one| one.check(ask)).collect();
     let top = on_top(ask);
     let (verdict, cost) = top.map_or((Verdict::Asks, Cost::Hazard), |check| (check.verdict, check.cost));
     let sizing = found.as_ref().ok();
     let conductor = sizing.and_then(|sizing| sizing.conductor);
+    let (number, unit) = conductor.map_or_else(|| (show::NONE.to_owned(), ""), in_two);
     Some(Answer {
         of: of(pad, ask, sizing),
-        number: conductor.map_or_else(|| show::NONE.to_owned(), |one| one.to_string()),
-        unit: "",
+        number,
+        unit,
         verdict,
         cost,
         says: match &found {
@@ -49,14 +62,36 @@ pub fn answer(pad: &impl Pad, ask: &Ask) -> Option<Answer> {
             Err(missing) if missing.is_empty() => {
                 "No standard breaker is large enough: divide the load over several runs.".to_owned()
             }
-            Err(missing) => format!("Waits for {}.", names(*missing)),
+            Err(missing) => format!("Waits for {}.", waits_for(*missing)),
         },
         most: sizing.map(breaker),
-        rests: top.and_then(|check| rests(&check)),
+        rests: top.as_ref().and_then(rests),
         besides: besides(&checks, top.map(|check| check.id)),
-        bar: Some(main_bar(sizing, &checks, verdict)),
-        second: checks.iter().find(|check| check.id == Requirement::Drop).and_then(|check| drop_bar(check, sizing)),
-        offer: None,
+        bar: Some(bars::amps(sizing, &checks)),
+        second: bars::drop(sizing, &checks),
+        offer: offer(ask, &checks),
+    })
+}
+
+/// "2 × 500" and "kcmil": the unit is set smaller.
+fn in_two(conductor: Candidate) -> (String, &'static str) {
+    let text = conductor.to_string();
+    let units = ["AWG", "kcmil", "mm²"].into_iter();
+    let parts = units.filter_map(|unit| Some((text.strip_suffix(unit)?.trim_end().to_owned(), unit))).next();
+    parts.unwrap_or((text, ""))
+}
+
+/// Amperes or watts: either will do.
+fn waits_for(missing: FieldSet) -> String {
+    names(missing).replace(Field::RunCurrent.name(), "Current or Power")
+}
+
+/// Where an inverter would be closed straight onto the bank, one tap says that a resistor goes first.
+fn offer(ask: &Ask, checks: &[Check<Requirement>]) -> Option<Offer> {
+    let broken = checks.iter().any(|check| check.id == Requirement::Precharge && check.verdict == Verdict::Breaks);
+    (broken && ask.precharged == Entry::Blank).then(|| Offer {
+        words: "Charge it through a resistor first".to_owned(),
+        fill: vec![((TOOL, Field::Precharged), Typed { text: "yes".to_owned(), unit: None })],
     })
 }
 
@@ -74,45 +109,54 @@ fn of(pad: &impl Pad, ask: &Ask, sizing: Option<&Sizing>) -> String {
     letters.next().map_or_else(String::new, |first| first.to_uppercase().chain(letters).collect())
 }
 
-/// "Breaker 100 A", and what it must be.
+/// "Breaker 100 A".
 fn breaker(sizing: &Sizing) -> String {
     let protection = &sizing.protection;
-    let what = if protection.protects == engine::run::BreakerType::Fuse { "Fuse" } else { "Breaker" };
+    let what = if protection.protects == BreakerType::Fuse { "Fuse" } else { "Breaker" };
     format!("{what} {}", show::given(protection.rating.amount()))
 }
 
 fn says(sizing: &Sizing, ask: &Ask, top: Option<&Check<Requirement>>) -> String {
-    let drop = sizing.drop.map(|drop| {
-        let per_cell = drop
-            .per_cell
-            .map(|volts| {
-                format!(
-                    ", {} a cell of 2 V",
-                    show::computed(Amount { number: volts.get() * 1000.0, unit: engine::unit::Unit::Millivolt })
-                )
-            })
-            .unwrap_or_default();
-        format!(
-            "Loses {} ({}){per_cell}, {} as heat.",
-            show::computed(drop.volts.amount()),
-            show::computed(drop.part.amount()),
-            show::computed(drop.lost.amount())
-        )
-    });
-    let waits = || {
-        let missing: Vec<&str> =
-            [(Field::RunVoltage, ask.voltage.typed().is_none()), (Field::RunLength, ask.length.typed().is_none())]
-                .into_iter()
-                .filter(|(_, is)| *is)
-                .map(|(field, _)| field.name())
-                .collect();
-        format!("Enter {} for the drop.", missing.join(" and "))
+    let Some(conductor) = sizing.conductor else {
+        return "Not even six of the thickest side by side hold. Shorten it, raise the voltage, or divide the load over \
+                several runs."
+            .to_owned();
     };
-    let drop = drop.unwrap_or_else(waits);
-    match top.filter(|check| check.verdict == Verdict::Breaks) {
-        Some(check) => format!("{}: {}. {drop}", check.id.name(), against(check)),
-        None => drop,
+    let mut parts = Vec::new();
+    if let Some(check) = top.filter(|check| check.verdict == Verdict::Breaks) {
+        parts.push(format!("{}: {}.", check.id.name(), against(check)));
     }
+    parts.push(sizing.drop.as_ref().map_or_else(|| asks_for_drop(ask), loses));
+    if conductor.parallel > 1 && !sizing.entered {
+        parts.push("One alone is not enough: equal ones side by side for each pole.".to_owned());
+    }
+    parts.join(" ")
+}
+
+/// "Loses 0.26 V (0.5 %), 11 mV a cell of 2 V, 20.8 W as heat."
+fn loses(drop: &Drop) -> String {
+    let per_cell = drop.per_cell.map_or_else(String::new, |volts| {
+        let milli = Amount { number: volts.get() * 1000.0, unit: Unit::Millivolt };
+        format!(", {} a cell of 2 V", show::computed(milli))
+    });
+    format!(
+        "Loses {} ({}){per_cell}, {} as heat.",
+        show::computed(drop.volts.amount()),
+        show::computed(drop.part.amount()),
+        show::computed(drop.lost.amount())
+    )
+}
+
+fn asks_for_drop(ask: &Ask) -> String {
+    let mut missing = FieldSet::default();
+    for (field, is) in
+        [(Field::RunVoltage, ask.voltage.typed().is_none()), (Field::RunLength, ask.length.typed().is_none())]
+    {
+        if is {
+            missing.insert(field);
+        }
+    }
+    format!("Enter {} for the drop.", names(missing))
 }
 
 /// "120 A, needs 150 A".
@@ -124,7 +168,8 @@ pub fn against(check: &Check<Requirement>) -> String {
     })
 }
 
-fn rests(check: &Check<Requirement>) -> Option<String> {
+/// What it rests on, where something was assumed.
+pub fn rests(check: &Check<Requirement>) -> Option<String> {
     let close = check.verdict == Verdict::Close && !check.assumed.is_empty();
     close.then(|| format!("Close until that is confirmed: {}.", names(check.assumed)))
 }
@@ -138,85 +183,9 @@ fn besides(checks: &[Check<Requirement>], top: Option<Requirement>) -> Option<St
     (!broken.is_empty()).then(|| format!("Breaks as well: {}.", broken.join("; ")))
 }
 
-/// Amperes: what flows and what the breaker lets pass, against what the conductor carries where it lies.
-fn main_bar(sizing: Option<&Sizing>, checks: &[Check<Requirement>], verdict: Verdict) -> Bar {
-    let Some((sizing, ampacity)) = sizing.and_then(|sizing| Some((sizing, sizing.ampacity?))) else {
-        let ruler = Ruler { low: None, high: None, covered: None, marks: Vec::new() };
-        return Bar { ruler, verdict, room: None, says: "What flows is not known yet.".to_owned() };
-    };
-    let carries = ampacity.corrected.min(ampacity.at_terminals);
-    let (flows, rating) = (sizing.load.working, sizing.protection.rating);
-    let shown = |amps: engine::quantity::Amps| show::apart(amps.amount(), carries.amount()).0;
-    let mut marks = vec![Mark { at: flows.get(), name: "flows".to_owned(), shown: shown(flows) }];
-    if rating > flows {
-        marks.push(Mark { at: rating.get(), name: "breaker".to_owned(), shown: show::given(rating.amount()) });
-    }
-    let breaks = |one| checks.iter().any(|check| check.id == one && check.verdict == Verdict::Breaks);
-    let broken = breaks(Requirement::Ampacity) || breaks(Requirement::Protection);
-    let left = carries.get() - flows.get();
-    let room = show::room(Amount { number: left.abs(), ..carries.amount() });
-    let says = format!(
-        "Amperes. The conductor carries {}; {} flows, the breaker is {}.",
-        show::computed(carries.amount()),
-        shown(flows),
-        show::given(rating.amount())
-    );
-    Bar {
-        ruler: Ruler {
-            low: None,
-            high: Some(Post {
-                at: carries.get(),
-                reserve: 0.0,
-                name: "conductor carries".to_owned(),
-                shown: show::computed(carries.amount()),
-            }),
-            covered: Some((From::Start, flows.get())),
-            marks,
-        },
-        verdict: if broken { Verdict::Breaks } else { verdict },
-        room: Some(room),
-        says,
-    }
-}
-
-/// The drop against what is allowed.
-fn drop_bar(check: &Check<Requirement>, sizing: Option<&Sizing>) -> Option<Bar> {
-    let mut drawn = bar(check.id.name(), check)?;
-    let volts = sizing?.drop?.volts;
-    let value = check.value?;
-    if let Some(post) = &mut drawn.ruler.high {
-        "drop allowed".clone_into(&mut post.name);
-    }
-    drawn.ruler.marks =
-        vec![Mark { at: value.number, name: show::computed(volts.amount()), shown: show::computed(value) }];
-    Some(drawn)
-}
-
-/// "The bank can drive 9,400 A here; this breaker opens 6,000 A: breaks."
-pub fn fault_line(ask: &Ask, fault: &Fault) -> String {
-    let drives = show::computed(fault.at_breaker.greatest.amount());
-    let opens = ask.interrupting.typed().map_or_else(
-        || "ask for a breaker or fuse that opens that".to_owned(),
-        |rating| {
-            let word = if rating < fault.at_breaker.greatest { "breaks" } else { "holds" };
-            format!("this one opens {}: {word}", show::given(rating.amount()))
-        },
-    );
-    let resistance = match ask.bank_resistance.typed() {
-        Some(ohms) => format!("by its resistance of {}", show::given(ohms.amount())),
-        None => "assumed: a bank of some 400 Ah, new, warm and full".to_owned(),
-    };
-    format!(
-        "The bank can drive {drives} here ({resistance}); {opens}. From an old, cold, low bank at least {} flows at the far \
-         end.",
-        show::computed(fault.at_far_end.least.amount())
-    )
-}
-
 /// What else there is to say of a check, under its name.
 pub fn note(ask: &Ask, requirement: Requirement) -> Option<String> {
     match requirement {
-        Requirement::BankFault => size(ask).ok()?.fault.map(|fault| fault_line(ask, &fault)),
         Requirement::Poles => Some(
             match ask.kind.typed()? {
                 Kind::DcBranch | Kind::DcFeeder => "Current flows one way here, from the bank to the loads.",
@@ -224,25 +193,28 @@ pub fn note(ask: &Ask, requirement: Requirement) -> Option<String> {
             }
             .to_owned(),
         ),
-        Requirement::Precharge => {
-            let how = size(ask).ok()?.precharge?;
-            Some(format!(
-                "Hold {} across the open breaker for {}, then close it. The resistor sees {} for a moment.",
-                show::given(how.resistor.amount()),
-                show::computed(how.wait.amount()),
-                show::computed(how.resistor_peak.amount())
-            ))
-        }
+        Requirement::Precharge => size(ask).ok()?.precharge.as_ref().map(precharge),
         _ => None,
     }
 }
 
-#[cfg(test)]
-mod tests {
-    use super::*;
-    use engine::unit::Unit;
+/// How to charge an inverter's capacitors before its breaker is closed.
+pub fn precharge(how: &Precharge) -> String {
+    format!(
+        "Hold {} across the open breaker for {}, then close it. The resistor sees {} for a moment.",
+        show::given(how.resistor.amount()),
+        show::computed(how.wait.amount()),
+        show::computed(how.resistor_peak.amount())
+    )
+}
 
-    struct Rows<'a>(&'a [(Field, &'a str)]);
+#[cfg(test)]
+pub mod tests {
+    use super::*;
+    use crate::span_bar::geometry::Stand;
+
+    /// What stands in the fields, the last of each counting.
+    pub struct Rows<'a>(pub &'a [(Field, &'a str)]);
 
     impl Pad for Rows<'_> {
         fn typed(&self, field: Field) -> (&str, Option<Unit>) {
@@ -250,11 +222,14 @@ mod tests {
         }
     }
 
-    fn plain(text: &str) -> String {
+    /// The text with plain spaces.
+    pub fn plain(text: &str) -> String {
         text.replace([show::NARROW, '\u{a0}'], " ")
     }
 
-    fn of_rows(rows: &[(Field, &str)]) -> Answer {
+    /// The answer to some rows.
+    #[track_caller]
+    pub fn of_rows(rows: &[(Field, &str)]) -> Answer {
         answer(&Rows(rows), &Ask::read(&Rows(rows))).expect("there is always an answer")
     }
 
@@ -271,42 +246,99 @@ mod tests {
     #[test]
     fn four_entries_name_conductor_breaker_and_drop() {
         let answer = of_rows(PLATE);
-        assert_eq!(plain(&answer.number), "1/0 AWG");
+        assert_eq!(plain(&answer.of), "Controller to bus, 3 ft one way, 120.0 A flows");
+        assert_eq!((answer.number.as_str(), answer.unit), ("1/0", "AWG"));
         assert_eq!(answer.most.as_deref().map(plain).as_deref(), Some("Breaker 150 A"));
-        assert!(plain(&answer.says).starts_with("Loses "), "{}", answer.says);
-        assert!(answer.second.is_some());
+        // By hand: 6 ft of 0.122 Ω a thousand feet at 75 °C, at 60 °C 0.116: 120 A lose 0.084 V, 10 W; of six cells each
+        // 14 mV.
+        let says = plain(&answer.says);
+        assert_eq!(says, "Loses 0.08 V (0.7 %), 13.9 mV a cell of 2 V, 10.0 W as heat.");
+        assert!(answer.second.is_some_and(|bar| bar.ruler.high.is_some_and(|post| plain(&post.shown) == "1 %")));
     }
 
     #[test]
-    fn four_controllers_on_one_2_awg_break_and_it_is_said_by_how_much() {
+    fn four_controllers_on_one_2_awg_break_and_picture_and_sentence_say_by_how_much() {
         let answer = of_rows(&[PLATE, &[(Field::ConductorSize, "2 AWG")]].concat());
         assert_eq!(answer.verdict, Verdict::Breaks);
-        assert!(plain(&answer.says).contains("115.0 A, needs 150 A"), "{}", plain(&answer.says));
+        let says = plain(&answer.says);
+        assert!(says.starts_with("Conductor carries the current: 115.0 A, needs 150 A."), "{says}");
+        let bar = answer.bar.expect("a picture");
+        assert_eq!(bar.ruler.geometry().high_post, Some(Stand::Snapped));
+        assert_eq!(bar.room.as_deref().map(plain).as_deref(), Some("35.0 A"));
+        let shown: Vec<String> =
+            bar.ruler.marks.iter().map(|mark| format!("{} {}", plain(&mark.shown), mark.name)).collect();
+        assert_eq!(shown, ["120.0 A flows", "150.0 A by rule"]);
+    }
+
+    /// 100 A flow in 2 AWG, which carries 115 A at its terminals: by the continuous rule it must carry 125 A.
+    #[test]
+    fn what_breaks_by_the_rule_alone_is_torn_in_the_picture_too() {
+        let rows = [PLATE, &[(Field::ConductorSize, "2 AWG"), (Field::RunCurrent, "100")]].concat();
+        let bar = of_rows(&rows).bar.expect("a picture");
+        assert_eq!((bar.verdict, bar.ruler.geometry().high_post), (Verdict::Breaks, Some(Stand::Snapped)));
+    }
+
+    #[test]
+    fn a_breaker_that_does_not_protect_is_the_picture() {
+        let rows = [
+            (Field::RunKind, "dc-branch"),
+            (Field::RunCurrent, "5"),
+            (Field::RunVoltage, "12"),
+            (Field::ConductorSize, "1.5"),
+            (Field::Breaker, "32"),
+            (Field::RunLength, "2"),
+        ];
+        let bar = of_rows(&rows).bar.expect("a picture");
+        assert_eq!(bar.ruler.high.as_ref().map(|post| post.name.as_str()), Some("protected up to"));
+        assert_eq!(bar.ruler.geometry().high_post, Some(Stand::Snapped));
     }
 
     #[test]
     fn what_is_missing_is_named() {
         let answer = of_rows(&[(Field::RunKind, "inverter")]);
         assert_eq!(answer.number, show::NONE);
-        assert_eq!(answer.says, "Waits for Current.");
+        assert_eq!(answer.says, "Waits for Current or Power.");
+        assert_eq!(of_rows(&[]).says, "Waits for Kind of run and Current or Power.");
         let answer = of_rows(&[(Field::RunKind, "dc-branch"), (Field::RunCurrent, "5")]);
         assert_eq!(answer.says, "Enter Voltage and Length one way for the drop.");
+        let answer = of_rows(&[(Field::RunKind, "dc-branch"), (Field::RunCurrent, "5..2")]);
+        assert_eq!((answer.verdict, answer.number.as_str()), (Verdict::Asks, show::NONE));
     }
 
     #[test]
-    fn the_fault_line_says_what_the_bank_drives_and_what_opens() {
+    fn where_nothing_holds_it_says_what_else_to_do() {
         let rows = [
-            (Field::RunKind, "bank"),
-            (Field::CodeFamily, "iec"),
-            (Field::RunCurrent, "100"),
-            (Field::RunVoltage, "48"),
-            (Field::RunLength, "1.5"),
-            (Field::BankResistance, "5"),
-            (Field::InterruptingRating, "6000"),
+            (Field::RunKind, "dc-feeder"),
+            (Field::RunCurrent, "400"),
+            (Field::RunVoltage, "12"),
+            (Field::RunLength, "500"),
         ];
-        let note = note(&Ask::read(&Rows(&rows)), Requirement::BankFault).map(|note| plain(&note)).unwrap();
-        // 1.15 · 48 V over 5 mΩ = 11 040 A.
-        assert!(note.starts_with("The bank can drive 11 040"), "{note}");
-        assert!(note.contains("opens 6000 A: breaks"), "{note}");
+        let answer = of_rows(&rows);
+        assert_eq!((answer.verdict, answer.number.as_str()), (Verdict::Breaks, show::NONE));
+        assert!(answer.says.starts_with("Not even six"), "{}", answer.says);
+    }
+
+    #[test]
+    fn where_one_is_not_enough_equal_ones_lie_side_by_side() {
+        let rows = [PLATE, &[(Field::RunCurrent, "600")]].concat();
+        let answer = of_rows(&rows);
+        assert_eq!((answer.number.as_str(), answer.unit), ("2 × 500", "kcmil"));
+        assert!(answer.says.ends_with("equal ones side by side for each pole."), "{}", answer.says);
+    }
+
+    #[test]
+    fn one_tap_puts_a_resistor_before_an_inverter() {
+        let rows = [
+            (Field::RunKind, "inverter"),
+            (Field::RunPower, "3000"),
+            (Field::RunVoltage, "48"),
+            (Field::RunLength, "2"),
+        ];
+        let answer = of_rows(&rows);
+        assert_eq!(answer.besides.as_deref(), Some("Breaks as well: Closing onto empty capacitors."));
+        let fill = answer.offer.expect("an offer").fill;
+        assert_eq!(fill[0].0, (TOOL, Field::Precharged));
+        let taken = of_rows(&[&rows[..], &[(Field::Precharged, &fill[0].1.text)]].concat());
+        assert_eq!((taken.besides, taken.offer), (None, None));
     }
 }

@@ -1,12 +1,16 @@
 //! The Run tool: which conductor and which breaker, what is lost on the way, and what a fault would do.
 
 mod answer;
+mod bars;
 mod branch;
 mod details;
+mod fault;
 mod picture;
+mod truck;
 
 use std::sync::Arc;
 
+use engine::check::Check;
 use engine::field::Field;
 use engine::run::{Ask, Requirement, assess, working};
 use leptos::prelude::*;
@@ -63,6 +67,8 @@ const CAUTIONS: &[&str] = &[
      with a meter, insulate tools, and cover what stays live.",
     "A direct-current arc does not go out. Use breakers and fuses rated for these volts d.c., wired as their maker shows; \
      a polarised one connected the wrong way round burns instead of opening.",
+    "A string is live in any light: cover or darken the array before its terminals are touched. Above 60 V d.c. (30 V wet) \
+     it shocks.",
 ];
 
 fn short(field: Field) -> &'static str {
@@ -83,50 +89,39 @@ pub fn run_tool() -> AnyView {
     let ask = memo(move || draft.with(|pads| Ask::read(&pads.of(TOOL))));
     let answer = memo(move || draft.with(|pads| ask.with(|ask| answer::answer(&pads.of(TOOL), ask))));
     let rested = settled(ask);
-    let checks = memo(move || rested.with(assess));
+    // Where a cable is asked about, the checks are of the most that it takes.
+    let checks = memo(move || assess(&rested.with(truck::settled)));
     let hints = Hints {
         stands_in: Arc::new(move |field| {
             ask.with(|ask| engine::run::assumed::of(ask, field)).map(|assumption| StandIn::of(&assumption))
         }),
         waits: Arc::new(move |field| {
             let missing = ask.with(answer::missing);
-            checks.with(|checks| waits(field, missing, checks.iter().map(|check| check.asks)))
+            let told = checks.with(|checks| waits(field, missing, checks.iter().map(|check| check.asks)));
+            told.map(|told| if field == Field::RunCurrent { format!("{told}, or for Power") } else { told })
         }),
         note: Arc::new(|_| None),
     };
     let folds = expect_context::<Folds>();
     let go = Callback::new(move |field: Field| FORM.go_to(folds, field));
     let rows = move || {
-        rested.with(|ask| {
-            checks.with(|checks| {
-                checks
-                    .iter()
-                    .map(|check| {
-                        let id = format!("run/{}", check.id.id());
-                        check_row(
-                            id,
-                            check.id.name(),
-                            check,
-                            answer::note(ask, check.id),
-                            || working(ask, check.id),
-                            go,
-                        )
-                    })
-                    .collect()
-            })
-        })
+        let ask = rested.with(truck::settled);
+        let row = |check: &Check<Requirement>| {
+            let id = format!("run/{}", check.id.id());
+            check_row(id, check.id.name(), check, answer::note(&ask, check.id), || working(&ask, check.id), go)
+        };
+        checks.with(|checks| checks.iter().map(row).collect())
     };
     tool_page(ToolPage {
         form: &FORM,
         answer,
         working: Box::new(move || {
-            ask.with(|ask| {
-                let worst = answer::on_top(ask).map_or(Requirement::Drop, |check| check.id);
-                working(ask, worst)
-            })
+            let ask = ask.with(truck::settled);
+            let worst = answer::on_top(&ask).map_or(Requirement::Drop, |check| check.id);
+            working(&ask, worst)
         }),
         hints,
-        before: vec![picture::picture(ask)],
+        before: vec![picture::picture(ask), details::short_circuit(rested)],
         after: vec![details::on_the_truck(rested), check_list(rows), details::fitting(rested), branch::branch(rested)],
         cautions: CAUTIONS,
     })

@@ -130,6 +130,15 @@ impl BreakerType {
             Self::Fuse => "fuse",
         }
     }
+
+    /// What it is called in a sentence.
+    #[must_use]
+    pub const fn word(self) -> &'static str {
+        match self {
+            Self::Breaker | Self::Polarised => "breaker",
+            Self::Fuse => "fuse",
+        }
+    }
 }
 
 impl Choice for BreakerType {
@@ -198,6 +207,12 @@ impl Ask {
 
     pub(super) fn terminals(&self, basis: &mut Basis, family: CodeFamily, rating: Amps) -> Option<Terminals> {
         basis.assume(Field::Terminals, self.terminals, Terminals::unmarked(family, rating))
+    }
+
+    /// The drop that is allowed: the one entered, else what stands in for the kind. `None` where neither is known.
+    #[must_use]
+    pub fn allowed(&self) -> Option<Percent> {
+        self.allowed_drop(&mut Basis::default(), self.kind.typed()?)
     }
 
     pub(super) fn allowed_drop(&self, basis: &mut Basis, kind: Kind) -> Option<Percent> {

@@ -1,9 +1,13 @@
 //! Branched circuits on direct current: a trunk with loads along it, as lights down a corridor.
 
-use super::Candidate;
+use super::{Ask, Candidate};
 use crate::ampacity::{Laid, warms};
+use crate::check::{Basis, FieldSet};
 use crate::conductor::{own_temperature, resistance};
+use crate::entry::Entry;
+use crate::field::Field;
 use crate::network::{Behind, Network, NetworkError};
+use crate::order::sort_short;
 use crate::quantity::{Amps, Metres, Ohms, Percent, Volts, Watts};
 
 /// What a load draws.
@@ -220,21 +224,103 @@ pub fn solve_cables(supply: Behind, laid: &Laid, stretches: &[Stretch<Cable>]) -
     Err(BranchedError::NotSettled)
 }
 
-/// Equal loads at equal distances along the run, the last at its far end, which share its current alike. The distance
-/// between two, and the circuit solved. `None` where an input is missing, or the circuit has no solution.
-#[must_use]
-pub fn evenly(ask: &super::Ask, count: u32) -> Option<(Metres, Branched)> {
-    let found = super::size(ask).ok()?;
-    let mut basis = crate::check::Basis::default();
-    let family = ask.family(&mut basis)?;
-    let laid = ask.laid(&mut basis, found.kind, family)?;
+/// A load along a run.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct LoadAlong {
+    /// How far it is from the run's head, one way.
+    pub distance: Metres,
+    /// What it draws.
+    pub draw: Draw,
+}
+
+/// Loads along one cable, solved.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Along {
+    /// The loads, from the head on.
+    pub loads: Vec<LoadAlong>,
+    /// What is found at each of them, in the same order.
+    pub found: Branched,
+    /// The cable: the one entered, else the smallest that would hold with all of them at the far end.
+    pub cable: Candidate,
+}
+
+/// Why loads along a run have no answer.
+#[derive(Clone, Debug, PartialEq)]
+pub enum AlongError {
+    /// Inputs of the run that are missing.
+    Missing(FieldSet),
+    /// Not even the thickest conductors side by side would hold with all of them at the far end.
+    NoCable,
+    /// The circuit has no answer.
+    Circuit(BranchedError),
+}
+
+/// Loads along the run `ask`, whose cable is the one entered, else the smallest that would hold with all at the far end.
+///
+/// A run of which neither current nor power was entered carries what the loads draw together, and one without a length
+/// reaches to the farthest.
+///
+/// # Errors
+///
+/// [`AlongError`].
+pub fn along(ask: &Ask, loads: &[LoadAlong]) -> Result<Along, AlongError> {
+    let mut loads = loads.to_vec();
+    sort_short(&mut loads, |a, b| a.distance.get().total_cmp(&b.distance.get()));
+    let mut ask = *ask;
+    let mut basis = Basis::default();
+    let voltage = basis.need(Field::RunVoltage, ask.voltage);
+    let (kind, family) = (ask.kind(&mut basis), ask.family(&mut basis));
+    let (Some(voltage), Some(kind), Some(family)) = (voltage, kind, family) else {
+        return Err(AlongError::Missing(basis.missing()));
+    };
+    if ask.current == Entry::Blank && ask.power == Entry::Blank {
+        let drawn = loads.iter().map(|load| match load.draw {
+            Draw::Nothing => Amps::new(0.0),
+            Draw::Current(current) => current,
+            Draw::Power(power) => power / voltage,
+        });
+        ask.current = Entry::Typed(drawn.sum());
+    }
+    if ask.length == Entry::Blank {
+        ask.length = loads.last().map_or(Entry::Blank, |last| Entry::Typed(last.distance));
+    }
+    let sized = super::size(&ask).map_err(AlongError::Missing)?;
+    let cable = sized.conductor.ok_or(AlongError::NoCable)?;
+    let laid = ask.laid(&mut basis, kind, family).ok_or(AlongError::Missing(basis.missing()))?;
+    let mut before = Metres::new(0.0);
+    let stretches: Vec<Stretch<Cable>> = (0..)
+        .zip(&loads)
+        .map(|(from, load)| {
+            // Two at one place are a millimetre apart, so that no stretch is without resistance.
+            let length = (load.distance - before).max(Metres::new(0.001));
+            before = load.distance;
+            Stretch { from, way: Cable { length, conductor: cable }, draw: load.draw }
+        })
+        .collect();
+    let supply = Behind { emf: voltage, resistance: Ohms::new(0.0) };
+    let found = solve_cables(supply, &laid, &stretches).map_err(AlongError::Circuit)?;
+    Ok(Along { loads, found, cable })
+}
+
+/// Equal loads at equal distances along the run, the last at its far end, which share its current alike.
+///
+/// # Errors
+///
+/// The inputs of the run that are missing.
+pub fn evenly(ask: &Ask, count: u32) -> Result<Vec<LoadAlong>, FieldSet> {
+    let mut basis = Basis::default();
+    let length = basis.need(Field::RunLength, ask.length);
+    let Some(working) = super::working_current(ask) else {
+        basis.ask(Field::RunCurrent);
+        return Err(basis.missing());
+    };
+    let Some(length) = length else { return Err(basis.missing()) };
     let several = f64::from(count.max(1));
-    let step = ask.length.typed()? / several;
-    let way = Cable { length: step, conductor: found.conductor? };
-    let draw = Draw::Current(found.load.working / several);
-    let stretches: Vec<Stretch<Cable>> = (0..count.max(1) as usize).map(|from| Stretch { from, way, draw }).collect();
-    let supply = Behind { emf: ask.voltage.typed()?, resistance: Ohms::new(0.0) };
-    Some((step, solve_cables(supply, &laid, &stretches).ok()?))
+    let load = |place: u32| LoadAlong {
+        distance: length * (f64::from(place) / several),
+        draw: Draw::Current(working / several),
+    };
+    Ok((1..=count.max(1)).map(load).collect())
 }
 
 #[cfg(test)]
@@ -281,25 +367,49 @@ mod tests {
         assert!((volts - 0.007_41 * 1.0786 * 8.0 * 12.0).abs() < 1e-9, "{volts}");
     }
 
-    #[test]
-    fn equal_loads_along_a_run_lose_less_than_all_at_its_end() {
-        use crate::entry::Entry;
-        let ask = super::super::Ask {
+    fn corridor() -> Ask {
+        Ask {
             kind: Entry::Typed(super::super::Kind::DcBranch),
             current: Entry::of(6.0),
             voltage: Entry::of(12.0),
             length: Entry::of(12.0),
             size: Entry::of(4.0),
-            ..super::super::Ask::default()
-        };
+            ..Ask::default()
+        }
+    }
+
+    #[test]
+    fn equal_loads_along_a_run_lose_less_than_all_at_its_end() {
         let end = |count| {
-            let (step, found) = evenly(&ask, count).unwrap();
-            assert!((step.get() * f64::from(count) - 12.0).abs() < 1e-9);
+            let loads = evenly(&corridor(), count).unwrap();
+            assert_eq!(loads.last().unwrap().distance, Metres::new(12.0));
+            let found = along(&corridor(), &loads).unwrap().found;
+            assert!((found.supplied.get() - 6.0).abs() < 1e-9);
             found.places.last().unwrap().lost.get()
         };
         // By hand, at one resistance: n loads lose (n + 1) / 2n of what all at the end lose; warmth adds a little.
         let ratio = end(3) / end(1);
         assert!((ratio - 2.0 / 3.0).abs() < 0.02, "{ratio}");
+    }
+
+    #[test]
+    fn loads_by_their_watts_need_no_current_and_may_be_told_in_any_order() {
+        let load =
+            |distance, watts| LoadAlong { distance: Metres::new(distance), draw: Draw::Power(Watts::new(watts)) };
+        let ask = Ask { current: Entry::Blank, length: Entry::Blank, ..corridor() };
+        let found = along(&ask, &[load(8.0, 10.0), load(2.0, 10.0), load(8.0, 5.0)]).unwrap();
+        let distances: Vec<f64> = found.loads.iter().map(|load| load.distance.get()).collect();
+        assert_eq!(distances, [2.0, 8.0, 8.0]);
+        let volts: Vec<f64> = found.found.places.iter().map(|place| place.volts.get()).collect();
+        // By hand, at 30 °C, 4.61 mΩ/m · 1.0393 · 2 = 9.582 mΩ a metre of way: 25 W draw near 2.09 A over 2 m, then
+        // 15 W near 1.27 A over 6 m.
+        assert!((volts[0] - (12.0 - 0.009_582 * 2.0 * 2.09)).abs() < 0.002, "{volts:?}");
+        assert!((volts[1] - (volts[0] - 0.009_582 * 6.0 * 1.265)).abs() < 0.003, "{volts:?}");
+        assert!((volts[1] - volts[2]).abs() < 1e-4);
+        let missing = along(&Ask { voltage: Entry::Blank, ..ask }, &[load(8.0, 10.0)]).unwrap_err();
+        let AlongError::Missing(missing) = missing else { panic!("{missing:?}") };
+        assert!(missing.contains(Field::RunVoltage));
+        assert!(evenly(&ask, 3).is_err());
     }
 
     #[test]

@@ -5,6 +5,7 @@ use super::voltage_drop::{Way, by_length};
 use super::{Ask, Candidate, bank_fault, poles, precharge, voltage_drop};
 use crate::check::{Basis, Check, Cost, FieldSet, Origin, Outcome, Sense, Step, Steps, judge};
 use crate::field::Field;
+use crate::order::sort_short;
 use crate::quantity::{Metres, Ohms, Percent};
 use crate::show;
 
@@ -193,7 +194,7 @@ pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
     let conductor = conductor(ask);
     let mut checks: Vec<_> =
         Requirement::ALL.iter().filter_map(|requirement| requirement.check_with(ask, conductor)).collect();
-    crate::order::sort_short(&mut checks, worst_first);
+    sort_short(&mut checks, worst_first);
     checks
 }
 

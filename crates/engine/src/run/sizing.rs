@@ -8,6 +8,7 @@ use super::{Ampacity, Ask, BreakerType, Candidate, Fault, Kind, Load, Requiremen
 use crate::ampacity::{Insulation, tabled};
 use crate::check::{Basis, Check, FieldSet, Steps, Verdict};
 use crate::family::CodeFamily;
+use crate::order::sort_short;
 use crate::quantity::{Amps, Celsius, Metres, Volts};
 
 /// The breaker or fuse to ask for.
@@ -126,7 +127,7 @@ fn two_thinner(ask: &Ask, known: &Known, conductor: Candidate) -> Vec<Thinner> {
                 .filter_map(|requirement| requirement.check_on(ask, candidate))
                 .filter(|check| check.verdict == Verdict::Breaks)
                 .collect();
-            crate::order::sort_short(&mut breaks, super::requirement::worst_first);
+            sort_short(&mut breaks, super::requirement::worst_first);
             Thinner { candidate, breaks }
         })
         .collect()
