@@ -3,7 +3,7 @@
 use core::fmt;
 
 use super::ask::positive;
-use super::{Ask, Layout, layouts, window};
+use super::{Ask, Layout, Layouts, layouts, window};
 use crate::check::Basis;
 use crate::chemistry::Chemistry;
 use crate::quantity::{Count, Quantity, Volts};
@@ -89,9 +89,14 @@ const NEAR: f64 = 0.3;
 /// Advice on the cells at hand: the trap first, then the best layout, then what other devices would take.
 #[must_use]
 pub fn advice(ask: &Ask) -> Vec<Advice> {
+    advice_on(ask, &layouts(ask))
+}
+
+/// The same, where the layouts of `ask` are made already.
+#[must_use]
+pub fn advice_on(ask: &Ask, found: &Layouts) -> Vec<Advice> {
     let mut said = Vec::new();
     said.extend(trap(ask));
-    let found = layouts(ask);
     if found.ranked.is_empty() && found.rejected.is_empty() {
         return said;
     }

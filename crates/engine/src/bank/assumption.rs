@@ -4,6 +4,7 @@ use super::{Ask, settled, window};
 use crate::assumed;
 use crate::check::{Assumption, Basis};
 use crate::chemistry::{Figure, RATED_AT};
+use crate::entry::Entry;
 use crate::field::Field;
 use crate::quantity::{Percent, Quantity};
 use crate::source::{self, Clause};
@@ -57,6 +58,21 @@ pub fn assumption(ask: &Ask, field: Field) -> Option<Assumption> {
             why: "by the block's voltage, which is the name of a class: confirm on its nameplate",
             source: CHOSEN,
         },
+        Field::CellsInSeries | Field::StringsOfCells => {
+            let counted = settled(ask);
+            let series = counted.series.typed()?;
+            let strings = counted.strings(basis)?;
+            Assumption {
+                amount: Some(if field == Field::CellsInSeries { series } else { strings }.amount()),
+                choice: None,
+                why: if ask.series == Entry::Blank {
+                    "of the best layout of the cells at hand"
+                } else {
+                    "as many as the cells at hand make, or one"
+                },
+                source: CHOSEN,
+            }
+        }
         Field::GreatestLoad => chosen(None, "no faster than the capacity is rated for"),
         Field::PostsCovered => chosen(Some("no"), "bare posts within reach"),
         Field::WetRoom => chosen(Some("no"), "dry"),

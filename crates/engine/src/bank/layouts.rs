@@ -2,16 +2,18 @@
 //!
 //! For each count in series, as many strings as the cells make; what is left over is said. A layout is judged by the
 //! same requirements as a bank that was typed in. Refused is what breaks a hazard, what the chargers' cap never fills,
-//! and what the cut-off lets nothing be drawn from. The rest are ranked: no loss first, then posts that may be touched, then usable energy, then fewest left
-//! over, then margin. Touch does not refuse: covers mend it, another count need not.
+//! and what the cut-off lets nothing be drawn from. The rest are ranked: no loss first, then posts that may be touched,
+//! then usable energy, then fewest left over, then margin. Touch does not refuse: covers mend it, another count need
+//! not. Nothing is ranked where its window cannot be judged.
 
 use core::cmp::Ordering;
 
 use super::ask::positive;
 use super::requirement::worst_first;
-use super::{Ask, Energy, Requirement, Window, energy, window};
+use super::{Ask, Energy, Requirement, Window, energy, lacks, window};
 use crate::check::{Basis, Check, Cost, Sense, Verdict};
-use crate::quantity::{Amps, Hours, Quantity};
+use crate::entry::Entry;
+use crate::quantity::{Amps, Hours, Percent, Quantity};
 use crate::show;
 
 /// A way to make a bank.
@@ -25,6 +27,8 @@ pub struct Layout {
     pub cells: u32,
     /// Cells or blocks left over.
     pub left_over: u32,
+    /// Cells or blocks that it needs beyond those at hand.
+    pub short: u32,
     /// The span of its voltages.
     pub window: Window,
     /// What it gives; none where the capacity is not known.
@@ -61,12 +65,10 @@ impl Layout {
     #[must_use]
     pub fn of(ask: &Ask) -> Option<Self> {
         let series = positive(ask.series).typed()?.get();
-        let strings = positive(ask.strings).typed().map_or(1.0, |strings| strings.get());
-        let count = positive(ask.count).typed().map_or(series * strings, |count| count.get());
-        #[expect(clippy::cast_possible_truncation, clippy::cast_sign_loss, reason = "held between 0 and 400")]
-        let whole = |number: f64| number.floor().clamp(0.0, MOST) as u32;
+        let strings = ask.strings(&mut Basis::default())?.get();
+        let count = positive(ask.count).typed().map(|count| whole(count.get()));
         let (series, strings) = (whole(series).max(1), whole(strings).max(1));
-        laid_out(&ask.with_counts(series, strings), series, strings, whole(count).saturating_sub(series * strings))
+        laid_out(ask, series, strings, count.unwrap_or(series * strings))
     }
 
     /// The check of it with this id.
@@ -163,6 +165,15 @@ impl Layouts {
         self.ranked.first()
     }
 
+    /// The `most` of the refused that come nearest to being taken, nearest first: by how far past its limit each is.
+    #[must_use]
+    pub fn nearest(&self, most: usize) -> Vec<&Layout> {
+        let past = |layout: &Layout| layout.refused_by().and_then(|check| check.margin).map_or(f64::MIN, Percent::get);
+        let with_margin = self.rejected.iter().map(|layout| (past(layout), layout));
+        let nearest = crate::order::first_of(with_margin, most, |a, b| b.0.total_cmp(&a.0));
+        nearest.into_iter().map(|(_, layout)| layout).collect()
+    }
+
     /// Whichever has `series` in series.
     #[must_use]
     pub fn with_series(&self, series: u32) -> Option<&Layout> {
@@ -173,8 +184,9 @@ impl Layouts {
 /// The most cells that are laid out: what the field takes.
 const MOST: f64 = 400.0;
 
-/// Every layout of the cells or blocks at hand. Counts that `ask` holds play no part. Empty where the count, the
-/// chemistry or what a block holds is missing.
+/// Every layout of the cells or blocks at hand. Counts that `ask` holds play no part, but for strings alone: with those
+/// entered, and nothing in series, only layouts of so many strings are made. Empty where [`super::lacks`] names an input
+/// that is missing.
 ///
 /// # Example
 ///
@@ -198,14 +210,18 @@ const MOST: f64 = 400.0;
 /// ```
 #[must_use]
 pub fn layouts(ask: &Ask) -> Layouts {
-    let Some(count) = positive(ask.count).typed() else { return Layouts::default() };
-    #[expect(clippy::cast_possible_truncation, clippy::cast_sign_loss, reason = "between 0 and 400")]
-    let count = count.get().floor().min(MOST) as u32;
+    let open = match ask.series {
+        Entry::Blank => *ask,
+        _ => Ask { series: Entry::Blank, strings: Entry::Blank, ..*ask },
+    };
+    let count = match positive(ask.count) {
+        Entry::Typed(count) if lacks(&open).is_empty() => whole(count.get()),
+        _ => return Layouts::default(),
+    };
+    let held = positive(open.strings).typed().map(|strings| whole(strings.get()).max(1));
     let mut found = Layouts::default();
-    for series in 1..=count {
-        let strings = count / series;
-        let Some(layout) = laid_out(&ask.with_counts(series, strings), series, strings, count - series * strings)
-        else {
+    for series in 1..=count / held.unwrap_or(1) {
+        let Some(layout) = laid_out(ask, series, held.unwrap_or(count / series), count) else {
             return Layouts::default();
         };
         if layout.refused_by().is_some() { found.rejected.push(layout) } else { found.ranked.push(layout) }
@@ -214,7 +230,14 @@ pub fn layouts(ask: &Ask) -> Layouts {
     found
 }
 
-fn laid_out(ask: &Ask, series: u32, strings: u32, left_over: u32) -> Option<Layout> {
+#[expect(clippy::cast_possible_truncation, clippy::cast_sign_loss, reason = "held between 0 and 400")]
+fn whole(number: f64) -> u32 {
+    number.floor().clamp(0.0, MOST) as u32
+}
+
+/// `series` times `strings` out of `count`.
+fn laid_out(ask: &Ask, series: u32, strings: u32, count: u32) -> Option<Layout> {
+    let ask = &ask.with_counts(series, strings);
     let window = window(ask)?;
     let basis = &mut Basis::default();
     #[expect(
@@ -233,7 +256,8 @@ fn laid_out(ask: &Ask, series: u32, strings: u32, left_over: u32) -> Option<Layo
         series,
         strings,
         cells: series * in_block,
-        left_over,
+        left_over: count.saturating_sub(series * strings),
+        short: (series * strings).saturating_sub(count),
         window,
         energy,
         charged_over: over(positive(ask.charge_current).typed()),
@@ -246,7 +270,7 @@ fn laid_out(ask: &Ask, series: u32, strings: u32, left_over: u32) -> Option<Layo
 /// the counts stay as they were.
 #[must_use]
 pub fn settled(ask: &Ask) -> Ask {
-    if ask.series != crate::entry::Entry::Blank {
+    if ask.series != Entry::Blank {
         return *ask;
     }
     match layouts(ask).best() {

@@ -2,9 +2,9 @@
 //!
 //! Both take the least resistance of the cells, new, warm and full: ties then weigh most, and the rush is greatest.
 
-use super::Ask;
 use super::ask::{origin, positive};
 use super::window::cells;
+use super::{Ask, settled};
 use crate::check::{Basis, Limit, Origin, Outcome, Steps};
 use crate::chemistry::rested;
 use crate::choice::Choice;
@@ -13,7 +13,7 @@ use crate::field::Field;
 use crate::joining;
 use crate::network::Behind;
 use crate::quantity::{Amps, Ohms, Percent, Quantity, Volts};
-use crate::sharing::{self, Arrangement, MOST_STRINGS, Paralleled};
+use crate::sharing::{self, Arrangement, MOST_STRINGS, Paralleled, Sharing};
 use crate::show;
 
 /// One tie: half a metre of 1/0 AWG, 0.329 mΩ/m, and two lugs of 0.05 mΩ. *Chosen*, as usual between shelves.
@@ -65,6 +65,14 @@ fn beside(ask: &Ask, basis: &mut Basis) -> Option<Option<usize>> {
     Some((strings >= 2.0).then_some(strings as usize))
 }
 
+/// One tie as entered; a bar may have no resistance.
+fn tie(ask: &Ask) -> Entry<Ohms> {
+    match ask.tie {
+        Entry::Typed(tie) if tie.get() == 0.0 => ask.tie,
+        entry => positive(entry),
+    }
+}
+
 /// bank-sharing: the hardest string's share over the even one ≤ 120 %.
 ///
 /// For equal strings in a row, tied on both bars by equal ties. Above 96 strings it is not solved, and asks.
@@ -75,11 +83,7 @@ pub(super) fn sharing(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcom
     };
     let string = string(ask, basis, steps);
     let arrangement = basis.assume(Field::TakeOff, ask.take_off, Arrangement::SameEnd);
-    let tie = match ask.tie {
-        // A bar without resistance shares evenly.
-        Entry::Typed(tie) if tie.get() == 0.0 => Some(tie),
-        entry => basis.assume(Field::TieResistance, positive(entry), TIE),
-    };
+    let tie = basis.assume(Field::TieResistance, tie(ask), TIE);
     let (Some(count), Some(string), Some(arrangement), Some(tie)) = (count, string, arrangement, tie) else {
         return Outcome::Asks;
     };
@@ -88,10 +92,7 @@ pub(super) fn sharing(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcom
         return Outcome::Asks;
     }
     let tie = steps.step("One tie", tie, || ("", String::new(), origin(Field::TieResistance, ask.tie)));
-    let (strings, ties) = (vec![string; count], vec![tie; count - 1]);
-    let (positive, negative) = arrangement.take_offs(count);
-    let bank = Paralleled { strings: &strings, positive_ties: &ties, negative_ties: &ties, positive, negative };
-    let over = sharing::share(bank, TRIAL, &mut Steps::silent()).ok().and_then(|found| found.greatest_over_even);
+    let over = shared(string, count, tie, arrangement).and_then(|found| found.greatest_over_even);
     let Some(over) = over else {
         basis.ask(Field::TieResistance);
         return Outcome::Asks;
@@ -107,6 +108,44 @@ pub(super) fn sharing(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcom
     Outcome::Held { value: over.amount(), limit: Limit::at_most(MOST_OVER_EVEN) }
 }
 
+/// Equal strings in a row on equal ties. `None` where no network solves it.
+fn shared(string: Behind, count: usize, tie: Ohms, arrangement: Arrangement) -> Option<Sharing> {
+    let (strings, ties) = (vec![string; count], vec![tie; count.saturating_sub(1)]);
+    let (positive, negative) = arrangement.take_offs(count);
+    let bank = Paralleled { strings: &strings, positive_ties: &ties, negative_ties: &ties, positive, negative };
+    sharing::share(bank, TRIAL, &mut Steps::silent()).ok()
+}
+
+/// What each string carries, by where the bank's leads are taken off.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Shared {
+    /// Where they are.
+    pub take_off: Arrangement,
+    /// Each string's current over the even share, in order along the bars.
+    pub over_even: Vec<Percent>,
+    /// The greatest of them.
+    pub hardest: Percent,
+}
+
+/// How the strings of the bank share, for every take-off: see [`super::Requirement::Sharing`]. `None` where there is one
+/// string alone, more than can be solved, or an input is missing.
+#[must_use]
+pub fn shares(ask: &Ask) -> Option<Vec<Shared>> {
+    let ask = &settled(ask);
+    let basis = &mut Basis::default();
+    let count = beside(ask, basis)??;
+    let string = string(ask, basis, &mut Steps::silent())?;
+    let tie = basis.assume(Field::TieResistance, tie(ask), TIE)?;
+    let each = |take_off: Arrangement| {
+        let found = shared(string, count, tie, take_off)?;
+        let even = TRIAL / count as f64;
+        let over = |current: &Amps| Percent::from_share(*current / even);
+        let hardest = Percent::from_share(found.greatest_over_even?);
+        Some(Shared { take_off, over_even: found.currents.iter().map(over).collect(), hardest })
+    };
+    Arrangement::ALL.into_iter().map(each).collect()
+}
+
 /// bank-join: the rush between two strings as far apart as entered ≤ what one of them may be charged with.
 ///
 /// The link between them is counted as nothing but one tie each way, the hard end.
@@ -119,10 +158,7 @@ pub(super) fn join(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
         Entry::Typed(apart) if apart.get() == 0.0 => Some(apart),
         entry => basis.need(Field::VoltsApart, positive(entry)),
     };
-    let tie = match ask.tie {
-        Entry::Typed(tie) if tie.get() == 0.0 => Some(tie),
-        entry => basis.assume(Field::TieResistance, positive(entry), TIE),
-    };
+    let tie = basis.assume(Field::TieResistance, tie(ask), TIE);
     let chemistry = ask.chemistry(basis);
     let capacity = ask.capacity(basis);
     let pack = match positive(ask.pack_charge_limit) {

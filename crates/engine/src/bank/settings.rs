@@ -4,7 +4,7 @@ use super::ask::{finite, positive};
 use super::rates::bank_capacity;
 use super::window::{Stage, cells, compensation, held, lowest};
 use super::{Ask, settled};
-use crate::check::{Basis, FieldSet, Steps};
+use crate::check::{Basis, FieldSet, Step, Steps};
 use crate::chemistry::{Figures, RATED_AT, Span};
 use crate::entry::Entry;
 use crate::quantity::{Amount, Celsius, Percent, Quantity, Volts};
@@ -95,6 +95,14 @@ pub fn settings(ask: &Ask) -> Option<Settings> {
         source: figures.charging.lowest.source,
     });
     Some(Settings { lines, assumed: basis.assumed() })
+}
+
+/// The steps to the absorb voltage at 25 °C, the first line of the card.
+#[must_use]
+pub fn settings_working(ask: &Ask) -> Vec<Step> {
+    let mut steps = Steps::written();
+    held(&settled(ask), Stage::Absorb, Some(RATED_AT), &mut Basis::default(), &mut steps);
+    steps.into_steps()
 }
 
 fn across(figure: crate::chemistry::Figure<Volts>, cells: f64) -> Span<Amount> {

@@ -387,6 +387,54 @@ fn strings_taken_off_at_one_end_do_not_share_alike() {
     assert_eq!(Requirement::Sharing.check(&lead()), None);
 }
 
+/// The same three strings in full: 1 : 1.165625 : 1.524306 from the far end, and every take-off's own worst.
+#[test]
+fn every_take_off_says_what_each_string_carries() {
+    let ask = Ask { strings: Entry::of(3.0), count: Entry::of(3.0), ..packs() };
+    let found = shares(&ask).unwrap();
+    let sum = 1.0 + 1.165_625 + 1.524_306;
+    for (percent, wanted) in found[0].over_even.iter().zip([1.524_306, 1.165_625, 1.0]) {
+        near(*percent, 300.0 * wanted / sum, 0.001);
+    }
+    for one in &found {
+        let arranged = Ask { take_off: Entry::Typed(one.take_off), ..ask };
+        assert_eq!(Some(one.hardest.amount()), check(&arranged, Requirement::Sharing).value, "{one:?}");
+        near(one.over_even.iter().copied().sum::<crate::quantity::Percent>(), 300.0, 1e-6);
+    }
+    assert!(found[1].hardest < found[0].hardest && found[2].hardest < found[0].hardest);
+    assert_eq!(shares(&lead()), None);
+}
+
+/// Twelve cells in four strings: three in series each, and three again where only the strings are entered.
+#[test]
+fn counts_that_were_entered_are_kept_and_what_is_left_over_or_short_is_said() {
+    let entered = |series, strings| Layout::of(&Ask { series, strings, ..iron() }).unwrap();
+    let blank = Entry::Blank;
+    let layout = entered(Entry::of(5.0), blank);
+    assert_eq!((layout.strings, layout.left_over, layout.short), (2, 2, 0));
+    let layout = entered(Entry::of(9.0), Entry::of(2.0));
+    assert_eq!((layout.left_over, layout.short), (0, 6));
+    let found = layouts(&Ask { strings: Entry::of(2.0), count: Entry::of(21.0), ..iron() });
+    assert_eq!(found.ranked.len() + found.rejected.len(), 10);
+    let best = found.best().unwrap();
+    assert_eq!((best.series, best.strings, best.left_over), (9, 2, 3));
+}
+
+#[test]
+fn the_refused_that_come_nearest_stand_first() {
+    let found = layouts(&iron());
+    let nearest: Vec<u32> = found.nearest(3).iter().map(|layout| layout.series).collect();
+    assert_eq!(nearest, [10, 11, 12]);
+    assert_eq!(found.nearest(99).len(), found.rejected.len());
+}
+
+#[test]
+fn the_working_of_the_card_ends_in_its_first_line() {
+    let steps = settings_working(&lead());
+    let card = settings(&lead()).unwrap();
+    assert_eq!(steps.last().map(|step| step.result), card.line("Absorb").unwrap().amount);
+}
+
 #[test]
 fn packs_half_a_volt_apart_rush_into_each_other() {
     // 0.5 V over 3.2 + 3.2 + 2 · 0.265 = 6.93 mΩ is 72.2 A, into a pack that takes 50 A.
