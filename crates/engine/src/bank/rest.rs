@@ -3,7 +3,7 @@
 use super::Ask;
 use crate::check::Basis;
 use crate::chemistry::{ChargeReading, OddCell, RATED_AT, charge_at_rest, odd_cells};
-use crate::quantity::{Celsius, Quantity, Volts};
+use crate::quantity::{Celsius, Volts};
 
 /// A good hand meter on a cell. *Chosen*: 2 mV either way.
 const METER: Volts = Volts::new(0.002);
