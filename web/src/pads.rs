@@ -5,7 +5,7 @@ use std::collections::BTreeMap;
 use bridge::{Kept, KeptEntry};
 use engine::field::Field;
 use engine::pad::Pad;
-use engine::site::{PartId, PartKind, Site, Slot, Subject, View};
+use engine::site::{Part, PartId, PartKind, Site, Slot, Subject, View};
 use engine::unit::Unit;
 
 use crate::tools::Tool;
@@ -187,6 +187,46 @@ impl Pads {
     /// The open site.
     pub fn site(&self) -> Option<&OpenSite> {
         self.open.as_ref()
+    }
+
+    /// The part that is looked at.
+    fn part(&self) -> Option<(&Site, &Part)> {
+        let site = &self.open.as_ref()?.site;
+        match self.subject? {
+            Subject::Part(id) | Subject::Run(id) => Some((site, site.part(id)?)),
+            Subject::Place => None,
+        }
+    }
+
+    /// What the String tool is asked, with what follows from the rest of the site where a part of it is looked at.
+    pub fn string_ask(&self) -> engine::string::Ask {
+        match self.part().filter(|(_, part)| part.kind == PartKind::Array) {
+            Some((site, part)) => engine::site::string_ask(site, part),
+            None => engine::string::Ask::read(&self.of(Tool::String)),
+        }
+    }
+
+    /// What the Cells tool is asked.
+    pub fn bank_ask(&self) -> engine::bank::Ask {
+        match self.part().filter(|(_, part)| part.kind == PartKind::Bank) {
+            Some((site, part)) => engine::site::bank_ask(site, part),
+            None => engine::bank::Ask::read(&self.of(Tool::Cells)),
+        }
+    }
+
+    /// What the Run tool is asked.
+    pub fn run_ask(&self) -> engine::run::Ask {
+        let of_run = self.part().filter(|_| matches!(self.subject, Some(Subject::Run(_))));
+        let of_site = of_run.and_then(|(site, part)| engine::site::run_ask(site, part));
+        of_site.unwrap_or_else(|| engine::run::Ask::read(&self.of(Tool::Run)))
+    }
+
+    /// What the Start tool is asked.
+    pub fn start_ask(&self) -> engine::start::Ask {
+        match self.part().filter(|(_, part)| part.kind == PartKind::Load) {
+            Some((site, part)) => engine::site::start_ask(site, part),
+            None => engine::start::Ask::read(&self.of(Tool::Start)),
+        }
     }
 
     /// What of it is looked at.

@@ -3,6 +3,9 @@
 use leptos::ev;
 use leptos::prelude::*;
 
+use engine::site::Subject;
+
+use crate::line::subject_of;
 use crate::tools::Tool;
 
 /// A view.
@@ -12,6 +15,12 @@ pub enum Route {
     Tools,
     /// A tool.
     Tool(Tool),
+    /// The open site, from sun to socket.
+    Line,
+    /// A part of it, beside the line.
+    Part(Subject),
+    /// Every check of it.
+    Checks,
     /// What is kept on this phone.
     Sheet,
 }
@@ -21,7 +30,23 @@ impl Route {
     pub fn of_hash(hash: &str) -> Self {
         match hash.trim_start_matches('#').trim_matches('/') {
             "sheet" => Self::Sheet,
+            "line" => Self::Line,
+            "checks" => Self::Checks,
+            part if part.starts_with("line/") => Self::part(&part[5..]),
             key => Tool::with_page(key).map_or(Self::Tools, Self::Tool),
+        }
+    }
+
+    fn part(path: &str) -> Self {
+        let (id, run) = path.strip_suffix("/run").map_or((path, false), |id| (id, true));
+        subject_of(id, run).map_or(Self::Line, Self::Part)
+    }
+
+    /// What of the open site it looks at.
+    pub const fn subject(self) -> Option<Subject> {
+        match self {
+            Self::Part(subject) => Some(subject),
+            _ => None,
         }
     }
 
@@ -30,6 +55,11 @@ impl Route {
         match self {
             Self::Tools => "#/".to_owned(),
             Self::Tool(tool) => format!("#/{}", tool.key()),
+            Self::Line => "#/line".to_owned(),
+            Self::Part(Subject::Place) => "#/line/place".to_owned(),
+            Self::Part(Subject::Part(id)) => format!("#/line/{}", id.0),
+            Self::Part(Subject::Run(id)) => format!("#/line/{}/run", id.0),
+            Self::Checks => "#/checks".to_owned(),
             Self::Sheet => "#/sheet".to_owned(),
         }
     }
@@ -39,6 +69,8 @@ impl Route {
         match self {
             Self::Tools => "Linehut".to_owned(),
             Self::Tool(tool) => format!("{}: Linehut", tool.name()),
+            Self::Line | Self::Part(_) => "Line: Linehut".to_owned(),
+            Self::Checks => "Checks: Linehut".to_owned(),
             Self::Sheet => "Sheet: Linehut".to_owned(),
         }
     }
@@ -52,6 +84,12 @@ pub fn follow() -> ReadSignal<Route> {
     route
 }
 
+/// Goes to a view, as a link would.
+pub fn go(route: Route) {
+    // An address that cannot be set leaves the view as it is.
+    let _ = window().location().set_hash(&route.href());
+}
+
 fn now() -> Route {
     Route::of_hash(&window().location().hash().unwrap_or_default())
 }
@@ -59,11 +97,13 @@ fn now() -> Route {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use engine::site::PartId;
 
     #[test]
     fn every_view_is_found_by_its_link() {
         let tools = Tool::ALL.iter().copied().map(Route::Tool);
-        for route in tools.chain([Route::Tools, Route::Sheet]) {
+        let parts = [Subject::Place, Subject::Part(PartId(7)), Subject::Run(PartId(12))].map(Route::Part);
+        for route in tools.chain(parts).chain([Route::Tools, Route::Line, Route::Checks, Route::Sheet]) {
             assert_eq!(Route::of_hash(&route.href()), route);
         }
     }

@@ -27,8 +27,23 @@ pub fn Shell(
     let route = route::follow();
     let keys = window_event_listener(ev::keydown, move |event| undo_keys(draft, &event));
     on_cleanup(move || keys.remove());
+    Effect::new(move |_| {
+        if let Some((_, key)) = draft.keeper().moved().get() {
+            draft.moved(key);
+        }
+    });
+    // What is looked at is known before anything of the view is made.
+    let followed = route;
+    let route = memo(move || {
+        let now = followed.get();
+        draft.look_at(now.subject());
+        now
+    });
     arrive(route);
     let view = move || match route.get() {
+        Route::Line => crate::line::line_view(None),
+        Route::Part(subject) => crate::line::line_view(Some(subject)),
+        Route::Checks => crate::checks_view::checks_view(),
         Route::Tools => view! { <FirstVisit/> }.into_any(),
         Route::Tool(tool) => tool.page(),
         Route::Sheet => view! { <Sheet/> }.into_any(),
@@ -42,7 +57,7 @@ pub fn Shell(
 }
 
 /// Going to a view sets its title, and puts the reader at its head; the first one is left as the browser opened it.
-fn arrive(route: ReadSignal<Route>) {
+fn arrive(route: Memo<Route>) {
     Effect::new(move |before: Option<Route>| {
         let now = route.get();
         document().set_title(&now.title());
@@ -75,7 +90,7 @@ fn undo_keys(draft: Draft, event: &KeyboardEvent) {
 }
 
 #[component]
-fn Top(route: ReadSignal<Route>) -> impl IntoView {
+fn Top(route: Memo<Route>) -> impl IntoView {
     let home = move || route.get() == Route::Tools;
     view! {
         <header class="top">
@@ -204,6 +219,12 @@ fn Notices(
     update: RwSignal<bool>,
 ) -> impl IntoView {
     let keeper = use_draft().keeper();
+    let beside = RwSignal::new(false);
+    Effect::new(move |_| {
+        if keeper.moved().get().is_some() {
+            beside.set(true);
+        }
+    });
     // A page that cannot load itself again stays as it is, with its notice up.
     let reload = move |()| drop(window().location().reload());
     view! {
@@ -221,6 +242,11 @@ fn Notices(
                 on_act=Callback::new(reload)
             />
             <Notice
+                says="This site was changed in another tab too. Yours is kept beside it, under a name of its own."
+                up=beside
+                close="Close"
+            />
+            <Notice
                 says="What was kept here could not be read. It was laid aside, and this page begins empty."
                 up=keeper.damaged()
                 close="Close"
@@ -230,12 +256,13 @@ fn Notices(
 }
 
 #[component]
-fn BottomBar(route: ReadSignal<Route>) -> impl IntoView {
+fn BottomBar(route: Memo<Route>) -> impl IntoView {
     let tap = move |to: Route, icon: &'static str, word: &'static str| {
         let open = move || {
             let here = match route.get() {
                 Route::Tools | Route::Tool(_) => Route::Tools,
-                Route::Sheet => Route::Sheet,
+                Route::Line | Route::Part(_) => Route::Line,
+                other => other,
             };
             (here == to).then_some("page")
         };
@@ -243,7 +270,12 @@ fn BottomBar(route: ReadSignal<Route>) -> impl IntoView {
     };
     view! {
         <nav class="bar" aria-label="Views">
-            <ul>{tap(Route::Tools, "i-tools", "Tools")} {tap(Route::Sheet, "i-sheet", "Sheet")}</ul>
+            <ul>
+                {tap(Route::Line, "i-line", "Line")}
+                {tap(Route::Tools, "i-tools", "Tools")}
+                {tap(Route::Checks, "i-checks", "Checks")}
+                {tap(Route::Sheet, "i-sheet", "Sheet")}
+            </ul>
         </nav>
     }
 }

@@ -39,8 +39,7 @@ pub fn tool_page(page: ToolPage) -> AnyView {
     view! {
         <div class="tool">
             <div class="page-head">
-                <h1 tabindex="-1">{inputs.tool.name()}</h1>
-                <a class="aside" href=Route::Tools.href()>"All tools"</a>
+                {head(inputs.tool.name())}
             </div>
             <div class="tool-left">
                 {answer_view(answer)}
@@ -69,6 +68,26 @@ pub fn tool_page(page: ToolPage) -> AnyView {
         </div>
     }
     .into_any()
+}
+
+/// The name of the tool and the way back; of the part, where one is looked at.
+fn head(name: &'static str) -> AnyView {
+    let draft = crate::draft::use_draft();
+    match draft.with_now(crate::pads::Pads::subject) {
+        None => view! {
+            <h1 tabindex="-1">{name}</h1>
+            <a class="aside" href=Route::Tools.href()>"All tools"</a>
+        }
+        .into_any(),
+        Some(subject) => {
+            let site = crate::line::open_site();
+            view! {
+                <h1 tabindex="-1">{derived(move || crate::line::title(site, subject))}</h1>
+                <a class="aside" href=Route::Line.href()>"Line"</a>
+            }
+            .into_any()
+        }
+    }
 }
 
 /// What can hurt, and who rules.

@@ -127,7 +127,7 @@ pub fn short(field: Field) -> &'static str {
 /// The bank that was typed in, told wherever it changes.
 pub fn bank() -> Memo<Ask> {
     let draft = use_draft();
-    memo(move || draft.with(|pads| Ask::read(&pads.of(TOOL))))
+    memo(move || draft.with(crate::pads::Pads::bank_ask))
 }
 
 /// What stands in for the fields of a bank.

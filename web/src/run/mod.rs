@@ -12,7 +12,7 @@ use std::sync::Arc;
 
 use engine::check::Check;
 use engine::field::Field;
-use engine::run::{Ask, Requirement, assess, working};
+use engine::run::{Requirement, assess, working};
 use leptos::prelude::*;
 
 use crate::check_row::check_row;
@@ -86,7 +86,7 @@ fn short(field: Field) -> &'static str {
 /// The Run tool.
 pub fn run_tool() -> AnyView {
     let draft = use_draft();
-    let ask = memo(move || draft.with(|pads| Ask::read(&pads.of(TOOL))));
+    let ask = memo(move || draft.with(crate::pads::Pads::run_ask));
     let answer = memo(move || draft.with(|pads| ask.with(|ask| answer::answer(&pads.of(TOOL), ask))));
     let rested = settled(ask);
     // Where a cable is asked about, the checks are of the most that it takes.

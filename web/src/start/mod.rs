@@ -6,7 +6,7 @@ mod others;
 use std::sync::Arc;
 
 use engine::field::Field;
-use engine::start::{Ask, Requirement, assess, assumption, working};
+use engine::start::{Requirement, assess, assumption, working};
 use leptos::prelude::*;
 
 use crate::check_row::check_row;
@@ -116,7 +116,7 @@ fn short(field: Field) -> &'static str {
 /// The Start tool.
 pub fn start_tool() -> AnyView {
     let draft = use_draft();
-    let ask = memo(move || draft.with(|pads| Ask::read(&pads.of(TOOL))));
+    let ask = memo(move || draft.with(crate::pads::Pads::start_ask));
     let answer = memo(move || ask.with(|ask| Some(answer::answer(ask))));
     let rested = settled(ask);
     let checks = memo(move || rested.with(assess));

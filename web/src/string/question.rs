@@ -33,7 +33,7 @@ impl Question {
     /// Reads the pads of the tool.
     pub fn read(pads: &Pads) -> Self {
         let pad = pads.of(TOOL);
-        let ask = Ask::read(&pad);
+        let ask = pads.string_ask();
         let mut controllers = vec![ask.controller; count(&pad).unwrap_or(1)];
         for other in OTHERS {
             let pad = pads.of(other);
