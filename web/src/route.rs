@@ -19,6 +19,8 @@ pub enum Route {
     Line,
     /// A part of it, beside the line.
     Part(Subject),
+    /// A link that holds a site, on its way to the line.
+    Link,
     /// Every check of it.
     Checks,
     /// What is kept on this phone.
@@ -32,6 +34,7 @@ impl Route {
             "sheet" => Self::Sheet,
             "line" => Self::Line,
             "checks" => Self::Checks,
+            link if link.starts_with("site/") => Self::Link,
             part if part.starts_with("line/") => Self::part(&part[5..]),
             key => Tool::with_page(key).map_or(Self::Tools, Self::Tool),
         }
@@ -55,7 +58,7 @@ impl Route {
         match self {
             Self::Tools => "#/".to_owned(),
             Self::Tool(tool) => format!("#/{}", tool.key()),
-            Self::Line => "#/line".to_owned(),
+            Self::Line | Self::Link => "#/line".to_owned(),
             Self::Part(Subject::Place) => "#/line/place".to_owned(),
             Self::Part(Subject::Part(id)) => format!("#/line/{}", id.0),
             Self::Part(Subject::Run(id)) => format!("#/line/{}/run", id.0),
@@ -69,7 +72,7 @@ impl Route {
         match self {
             Self::Tools => "Linehut".to_owned(),
             Self::Tool(tool) => format!("{}: Linehut", tool.name()),
-            Self::Line | Self::Part(_) => "Line: Linehut".to_owned(),
+            Self::Line | Self::Link | Self::Part(_) => "Line: Linehut".to_owned(),
             Self::Checks => "Checks: Linehut".to_owned(),
             Self::Sheet => "Sheet: Linehut".to_owned(),
         }

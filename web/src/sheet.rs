@@ -1,15 +1,15 @@
 //! The Sheet view: what is kept on this phone, saved to a file, opened from one, or forgotten.
 
-use crate::derived::memo;
+use crate::derived::{derived, dynamic, memo, when};
 use leptos::prelude::*;
 use wasm_bindgen_futures::spawn_local;
 use web_sys::HtmlInputElement;
 
-use crate::draft::use_draft;
-use crate::file;
+use crate::draft::{Draft, use_draft};
+use crate::file::{self, Opened};
 use crate::keep::Keeping;
 use crate::offline::{self, Copy};
-use crate::pads::{Edit, Pads};
+use crate::pads::{Edit, OpenSite, Pads, SiteEdit};
 use crate::tools::Tool;
 
 /// What is kept on this phone.
@@ -34,6 +34,9 @@ pub fn Sheet() -> impl IntoView {
                 <OpenFile said=said/>
             </div>
             <p class="said" aria-live="polite">{said}</p>
+            {this_site(said)}
+            {crate::line::kept_sites()}
+            {paste(said)}
             <h2 class="sub">"With no signal"</h2>
             <ul class="signal">
                 {Tool::ALL
@@ -57,15 +60,8 @@ fn OpenFile(said: RwSignal<String>) -> impl IntoView {
         // So that choosing the same file again is a change again.
         input.set_value("");
         spawn_local(async move {
-            said.set(match file::open(&file).await {
-                Ok(kept) => {
-                    let words =
-                        format!("Opened {}: {}. Undo brings back what was here.", file.name(), entries(kept.len()));
-                    draft.edit(Edit::Open(kept));
-                    words
-                }
-                Err(why) => format!("Not opened, nothing changed: {why}."),
-            });
+            let found = file::open(&file).await;
+            said.set(took(draft, &file.name(), found));
         });
     };
     view! {
@@ -73,6 +69,166 @@ fn OpenFile(said: RwSignal<String>) -> impl IntoView {
             <input class="vh" type="file" accept=".json,application/json" on:change=chosen/>
             "Open a file"
         </label>
+    }
+}
+
+/// Takes over what was opened, and says so; what was refused changes nothing.
+fn took(draft: Draft, name: &str, found: Result<Opened, String>) -> String {
+    match found {
+        Ok(Opened::Tools(kept)) => {
+            let words = format!("Opened {name}: {}. Undo brings back what was here.", entries(kept.len()));
+            draft.edit(Edit::Open(kept));
+            words
+        }
+        Ok(Opened::Site(site)) => {
+            let words = format!("Opened {}: {} parts. It is on the Line.", named(&site.name), site.parts.len());
+            let key = draft.keeper().new_key();
+            draft.edit(Edit::Site(SiteEdit::Open(OpenSite { key, site })));
+            words
+        }
+        Err(why) => format!("Not opened, nothing changed: {why}."),
+    }
+}
+
+fn named(name: &str) -> &str {
+    if name.is_empty() { "a site without a name" } else { name }
+}
+
+/// The open site: saved, shared, and its earlier states.
+fn this_site(said: RwSignal<String>) -> AnyView {
+    let draft = use_draft();
+    let has = memo(move || draft.with(|pads| pads.site().is_some()));
+    let now = move || draft.with_now(|pads| pads.site().cloned());
+    let save = move |_| {
+        if let Some(open) = now() {
+            let name = format!("{}.json", file_name(&open.site.name));
+            said.set(match file::save_text(&name, &bridge::site::write(&open.site)) {
+                Ok(()) => format!("Saved as {name}."),
+                Err(_) => "Not saved: the browser makes no files here.".to_owned(),
+            });
+        }
+    };
+    let share = move |_| {
+        if let Some(open) = now() {
+            let link = link_of(&open.site);
+            said.set(if file::share(named(&open.site.name), &link) {
+                "Handed to the phone. The whole site is in the link; nothing of it goes to a server.".to_owned()
+            } else if file::copy(&link) {
+                "The link is copied. The whole site is in it; nothing of it goes to a server.".to_owned()
+            } else {
+                "This browser neither shares nor copies: take the link below, or save the file.".to_owned()
+            });
+        }
+    };
+    when(
+        move || has.get(),
+        move || {
+            let title = derived(move || {
+                draft.with(|pads| pads.site().map(|open| named(&open.site.name).to_owned())).unwrap_or_default()
+            });
+            let link =
+                derived(move || draft.with(|pads| pads.site().map(|open| link_of(&open.site))).unwrap_or_default());
+            view! {
+                <h2 class="sub">{title} <span>"the open site"</span></h2>
+                <div class="btns">
+                    <button class="btn solid" type="button" on:click=save>"Save the site"</button>
+                    <button class="btn" type="button" on:click=share>"Share a link"</button>
+                </div>
+                <label class="link-box">
+                    "Its link"
+                    <input type="text" readonly aria-label="Link that holds the site" prop:value=link/>
+                </label>
+                {earlier()}
+            }
+            .into_any()
+        },
+    )
+}
+
+/// This page's own address with the site behind `#`.
+fn link_of(site: &engine::site::Site) -> String {
+    let here = window().location().href().unwrap_or_default();
+    let here = here.split('#').next().unwrap_or_default();
+    format!("{here}#/site/{}", bridge::link::letters(site))
+}
+
+/// A name that every phone can keep a file under.
+fn file_name(name: &str) -> String {
+    let plain: String = named(name).chars().map(|letter| if letter.is_alphanumeric() { letter } else { '-' }).collect();
+    plain.trim_matches('-').to_owned()
+}
+
+/// Earlier states of the open site, read when they are unfolded.
+fn earlier() -> AnyView {
+    let draft = use_draft();
+    let states = RwSignal::new(Vec::<(f64, String)>::new());
+    let look = move |_| {
+        let Some(key) = draft.with_now(|pads| pads.site().map(|open| open.key)) else { return };
+        spawn_local(async move { states.set(draft.keeper().earlier(key).await) });
+    };
+    let rows = dynamic(move || {
+        states
+            .get()
+            .into_iter()
+            .map(|(when, text)| {
+                let restore = move |_| {
+                    let key = draft.with_now(|pads| pads.site().map(|open| open.key));
+                    if let (Some(key), Ok(site)) = (key, bridge::site::open(&text)) {
+                        draft.edit(Edit::Site(SiteEdit::Open(OpenSite { key, site })));
+                    }
+                };
+                let day = js_sys::Date::new(&when.into()).to_iso_string();
+                let words = String::from(day).get(..16).unwrap_or("earlier").replace('T', " ");
+                view! {
+                    <li><button class="btn small" type="button" on:click=restore>{format!("As of {words} UTC")}</button></li>
+                }
+                .into_any()
+            })
+            .collect::<Vec<AnyView>>()
+            .into_any()
+    });
+    view! {
+        <div class="btns">
+            <button class="btn plain" type="button" on:click=look>"Earlier states of it"</button>
+        </div>
+        <ul class="kept-sites">{rows}</ul>
+    }
+    .into_any()
+}
+
+/// Opens a pasted link or file text.
+fn paste(said: RwSignal<String>) -> AnyView {
+    let draft = use_draft();
+    let typed = RwSignal::new(String::new());
+    let open = move |_| {
+        let text = typed.get_untracked();
+        said.set(took(draft, "what was pasted", file::read(&text)));
+    };
+    view! {
+        <label class="link-box">
+            "Paste a link or the text of a file"
+            <input
+                type="text"
+                aria-label="Pasted link or file"
+                autocomplete="off"
+                prop:value=typed
+                on:input=move |event| typed.set(event_target_value(&event))
+            />
+        </label>
+        <div class="btns"><button class="btn" type="button" on:click=open>"Open what is pasted"</button></div>
+    }
+    .into_any()
+}
+
+/// Takes over the site that a link holds.
+pub fn open_link(draft: Draft, letters: &str) -> bool {
+    match bridge::link::site_of(letters) {
+        Ok(site) => {
+            let key = draft.keeper().new_key();
+            draft.edit(Edit::Site(SiteEdit::Open(OpenSite { key, site })));
+            true
+        }
+        Err(_) => false,
     }
 }
 

@@ -27,6 +27,15 @@ pub fn Shell(
     let route = route::follow();
     let keys = window_event_listener(ev::keydown, move |event| undo_keys(draft, &event));
     on_cleanup(move || keys.remove());
+    let refused = RwSignal::new(false);
+    Effect::new(move |_| {
+        if route.get() == Route::Link {
+            let hash = window().location().hash().unwrap_or_default();
+            let letters = hash.rsplit('/').next().unwrap_or_default().to_owned();
+            refused.set(!crate::sheet::open_link(draft, &letters));
+            route::go(Route::Line);
+        }
+    });
     Effect::new(move |_| {
         if let Some((_, key)) = draft.keeper().moved().get() {
             draft.moved(key);
@@ -41,7 +50,7 @@ pub fn Shell(
     });
     arrive(route);
     let view = move || match route.get() {
-        Route::Line => crate::line::line_view(None),
+        Route::Line | Route::Link => crate::line::line_view(None),
         Route::Part(subject) => crate::line::line_view(Some(subject)),
         Route::Checks => crate::checks_view::checks_view(),
         Route::Tools => view! { <FirstVisit/> }.into_any(),
@@ -51,7 +60,7 @@ pub fn Shell(
     view! {
         <Top route=route/>
         <main>{view}</main>
-        <Notices update=offline.update_ready/>
+        <Notices update=offline.update_ready refused=refused/>
         <BottomBar route=route/>
     }
 }
@@ -217,6 +226,8 @@ fn LightButton() -> impl IntoView {
 fn Notices(
     /// Whether a newer version waits.
     update: RwSignal<bool>,
+    /// Whether a link was refused.
+    refused: RwSignal<bool>,
 ) -> impl IntoView {
     let keeper = use_draft().keeper();
     let beside = RwSignal::new(false);
@@ -242,6 +253,11 @@ fn Notices(
                 on_act=Callback::new(reload)
             />
             <Notice
+                says="That link was cut or changed on the way. Nothing here was touched."
+                up=refused
+                close="Close"
+            />
+            <Notice
                 says="This site was changed in another tab too. Yours is kept beside it, under a name of its own."
                 up=beside
                 close="Close"
@@ -261,7 +277,7 @@ fn BottomBar(route: Memo<Route>) -> impl IntoView {
         let open = move || {
             let here = match route.get() {
                 Route::Tools | Route::Tool(_) => Route::Tools,
-                Route::Line | Route::Part(_) => Route::Line,
+                Route::Line | Route::Link | Route::Part(_) => Route::Line,
                 other => other,
             };
             (here == to).then_some("page")

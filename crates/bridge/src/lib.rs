@@ -17,6 +17,7 @@ pub mod browser;
 pub mod demo;
 pub mod file;
 mod kept;
+pub mod link;
 mod refused;
 pub mod report;
 pub mod site;

@@ -17,6 +17,7 @@ use crate::pads::{Edit, SiteEdit};
 use crate::route::Route;
 use crate::verdict::{CostMark, VerdictMark, tells_cost};
 
+pub use new_site::kept as kept_sites;
 pub use part::title;
 
 /// The open site, told wherever it changes.

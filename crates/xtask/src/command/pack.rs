@@ -8,9 +8,9 @@ use xshell::Shell;
 
 use crate::{one_file, page, root, stamp};
 
-/// What the page may weigh on the way to the phone, all files pressed by brotli. Six tools and the shelf weigh 376 kB; aimed
+/// What the page may weigh on the way to the phone, all files pressed by brotli. Six tools, the shelf and the line weigh 432 kB; aimed
 /// at are 330 kB.
-const LIMIT: usize = 420_000;
+const LIMIT: usize = 450_000;
 
 /// Writes `dist/` and `dist/linehut.html`.
 ///
