@@ -109,8 +109,12 @@ fn one(form: &'static Form, field: Field, hints: &Hints) -> AnyView {
             let note = told(&hints.note);
             view! { <NumberField tool=tool field=field label=label assumed=stands_in asks=asks note=note/> }.into_any()
         }
-        Takes::Whole { .. } => view! { <CountField tool=tool field=field label=label asks=asks/> }.into_any(),
-        Takes::Choice(_) => view! { <ChoiceField tool=tool field=field label=label assumed=stands_in/> }.into_any(),
+        Takes::Whole { .. } => {
+            view! { <CountField tool=tool field=field label=label assumed=stands_in asks=asks/> }.into_any()
+        }
+        Takes::Choice(_) => {
+            view! { <ChoiceField tool=tool field=field label=label assumed=stands_in asks=asks/> }.into_any()
+        }
         Takes::List { .. } => list_field(tool, field, label),
     }
 }

@@ -41,7 +41,7 @@ pub fn answer(pad: &impl Pad, ask: &Ask) -> Option<Answer> {
     Some(Answer {
         of: of(pad, ask, sizing),
         number: conductor.map_or_else(|| show::NONE.to_owned(), |one| one.to_string()),
-        unit: "",
+        unit: "".into(),
         verdict,
         cost,
         says: match &found {
