@@ -1,22 +1,22 @@
 //! The Air and water tool: fresh air, openings, distance from sparks, water a month, freezing.
 
-use std::sync::Arc;
-
-use engine::bank::{AirAndWater, Ask, Requirement, air_and_water, settled as with_counts, working};
-use engine::check::{Cost, Verdict};
+use engine::bank::{
+    AirAndWater, Ask, Requirement, air_and_water, assess, counts_lack, settled as with_counts, working,
+};
+use engine::check::{Check, Cost, FieldSet, Verdict};
 use engine::field::Field;
-use engine::quantity::Quantity;
+use engine::quantity::{Quantity, SquareCentimetres};
 use engine::show;
 use leptos::prelude::*;
 
 use crate::answer::Answer;
-use crate::cells::{bank, short, stands_in};
-use crate::check_row::check_row;
+use crate::cells::{against, bank, check_rows, hints, short};
 use crate::derived::memo;
-use crate::fold::Folds;
-use crate::form::{Form, Hints, names, waits};
+use crate::form::{Form, names};
 use crate::settled::settled;
-use crate::tool_page::{ToolPage, check_list, figures, section, tool_page};
+use crate::span_bar::Bar;
+use crate::span_bar::geometry::{Post, Ruler};
+use crate::tool_page::{ToolPage, figures, section, tool_page};
 use crate::tools::Tool;
 use crate::working::cited;
 
@@ -64,91 +64,116 @@ pub fn air_tool() -> AnyView {
     let ask = bank();
     let answer = memo(move || ask.with(|ask| Some(answer(ask))));
     let rested = settled(ask);
-    let hints = Hints {
-        stands_in: stands_in(ask),
-        waits: Arc::new(move |field| {
-            let missing = ask.with(crate::cells::missing);
-            waits(field, missing, ask.with(checks).iter().map(|check| check.asks))
-        }),
-        note: Arc::new(|_| None),
-    };
+    let judged = memo(move || rested.with(checks));
     let found = section(
         "What the room needs",
         "",
         move || rested.with(|ask| air_and_water(ask).is_some()),
         move || rested.with(|ask| air_and_water(ask).map(|found| told(&found))).unwrap_or_else(|| ().into_any()),
     );
-    let folds = expect_context::<Folds>();
-    let go = Callback::new(move |field: Field| FORM.go_to(folds, field));
-    let rows = move || {
-        rested.with(|ask| {
-            let row = |check: &engine::check::Check<Requirement>| {
-                let id = format!("air-and-water/{}", check.id.id());
-                check_row(id, check.id.name(), check, None, || working(ask, check.id), go)
-            };
-            checks(ask).iter().map(row).collect()
-        })
-    };
     tool_page(ToolPage {
         form: &FORM,
         answer,
         working: Box::new(move || ask.with(|ask| working(ask, Requirement::Air))),
-        hints,
+        hints: hints(ask, missing, judged),
         before: vec![found],
-        after: vec![check_list(rows)],
+        after: vec![check_rows(&FORM, rested, judged)],
         cautions: CAUTIONS,
     })
 }
 
-fn checks(ask: &Ask) -> Vec<engine::check::Check<Requirement>> {
-    let ask = with_counts(ask);
-    let mut checks: Vec<_> = CHECKS.iter().filter_map(|one| one.check(&ask)).collect();
-    engine::order::sort_short(&mut checks, |a, b| {
-        let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
-        group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
-    });
+/// What the answer waits for.
+fn missing(ask: &Ask) -> FieldSet {
+    let mut missing = counts_lack(ask);
+    if missing.is_empty() && air_and_water(ask).is_none() {
+        let asks = Requirement::Air.check(&with_counts(ask)).map(|check| check.asks).unwrap_or_default();
+        asks.iter().filter(|field| *field != Field::AirOpening).for_each(|field| missing.insert(field));
+        if missing.is_empty() {
+            missing.insert(Field::CellCapacity);
+        }
+    }
+    missing
+}
+
+/// What this tool judges, worst first.
+fn checks(ask: &Ask) -> Vec<Check<Requirement>> {
+    let mut checks = assess(ask);
+    checks.retain(|check| CHECKS.contains(&check.id));
     checks
 }
 
 fn answer(ask: &Ask) -> Answer {
     let found = air_and_water(ask);
-    let checks = checks(ask);
+    let checks = if found.is_some() { checks(ask) } else { Vec::new() };
     let top = checks.first();
-    let opening = found.as_ref().and_then(|found| found.opening).map(|opening| show::computed(opening.amount()));
+    let area = found.as_ref().and_then(|found| found.opening);
+    let opening = area.map(|opening| show::computed(opening.amount()));
     let no_gas = found.as_ref().is_some_and(|found| found.gassing.is_none());
+    let broken: Vec<&str> =
+        checks.iter().skip(1).filter(|check| check.verdict == Verdict::Breaks).map(|check| check.id.name()).collect();
     Answer {
-        of: "Free area of an inlet low, and as much of an outlet high".to_owned(),
+        of: if no_gas { "Opening for hydrogen" } else { "Free area of an inlet low, and as much of an outlet high" }
+            .to_owned(),
         number: match &opening {
             Some(shown) => crate::answer::without_unit(shown).to_owned(),
             None if no_gas => "none".to_owned(),
             None => show::NONE.to_owned(),
         },
-        unit: if opening.is_some() { "cm²" } else { "" },
+        unit: if opening.is_some() { "cm²" } else { "" }.into(),
         verdict: top.map_or(Verdict::Asks, |check| check.verdict),
         cost: top.map_or(Cost::Hazard, |check| check.cost),
-        says: match &found {
-            None => format!("Waits for {}.", names(crate::cells::missing(ask))),
-            Some(found) if found.gassing.is_none() => {
-                "Makes no hydrogen in use. It still burns: never where people sleep.".to_owned()
-            }
-            Some(found) => match (found.flow, found.keep_clear) {
-                (Some(flow), Some(clear)) => format!(
-                    "{} of fresh air; nothing that sparks within {}.",
-                    show::computed(flow.amount()),
-                    show::computed(clear.amount())
-                ),
-                _ => String::new(),
-            },
-        },
+        says: found.as_ref().map_or_else(|| format!("Waits for {}.", names(missing(ask))), |found| says(found, top)),
         most: found.as_ref().and_then(water),
         rests: found
             .filter(|found| !found.assumed.is_empty())
             .map(|found| format!("Rests on what is assumed: {}.", names(found.assumed))),
-        besides: None,
-        bar: top.and_then(|check| crate::check_row::bar(check.id.name(), check)),
+        besides: (!broken.is_empty()).then(|| format!("Breaks as well: {}.", broken.join("; "))),
+        bar: Some(bar(top, area)),
         second: None,
         offer: None,
     }
+}
+
+/// The worst check; where that asks, the ruler with what the opening must be.
+fn bar(top: Option<&Check<Requirement>>, opening: Option<SquareCentimetres>) -> Bar {
+    top.and_then(|check| crate::check_row::bar(check.id.name(), check)).unwrap_or_else(|| {
+        let low = opening.map(|opening| Post {
+            at: opening.get(),
+            reserve: 0.0,
+            name: "opening needed".to_owned(),
+            shown: show::computed(opening.amount()),
+        });
+        let says = low.as_ref().map_or_else(
+            || "What the room needs is not known yet.".to_owned(),
+            |low| format!("Needs {} of opening; what there is has not been entered.", low.shown),
+        );
+        let ruler = Ruler { low, high: None, covered: None, marks: Vec::new() };
+        Bar { ruler, verdict: Verdict::Asks, room: None, says }
+    })
+}
+
+fn says(found: &AirAndWater, top: Option<&Check<Requirement>>) -> String {
+    let mut parts = Vec::new();
+    match (found.flow, found.keep_clear) {
+        (Some(flow), Some(clear)) => parts.push(format!(
+            "{} of fresh air; nothing that sparks within {}.",
+            show::computed(flow.amount()),
+            show::computed(clear.amount())
+        )),
+        _ => parts.push("Makes no hydrogen in use. It still burns: never where people sleep.".to_owned()),
+    }
+    if let Some(check) = top {
+        let name = check.id.name();
+        match check.verdict {
+            Verdict::Asks => parts.push(format!("{name} waits for {}.", names(check.asks))),
+            Verdict::Breaks => parts.push(format!("{name}: {}.", against(check))),
+            Verdict::Close if !check.assumed.is_empty() => {
+                parts.push(format!("{name} rests on {}: confirm.", names(check.assumed)));
+            }
+            Verdict::Close | Verdict::Clears => {}
+        }
+    }
+    parts.join(" ")
 }
 
 fn water(found: &AirAndWater) -> Option<String> {
@@ -181,4 +206,57 @@ fn told(found: &AirAndWater) -> AnyView {
         <ul class="notes">{cautions}</ul>
     }
     .into_any()
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use engine::chemistry::Chemistry;
+    use engine::entry::Entry;
+
+    fn plain(text: &str) -> String {
+        text.replace([show::NARROW, '\u{a0}'], " ")
+    }
+
+    /// 24 vented lead cells of 500 Ah: IEC 62485-2, 7.2 and 7.3: 20 mA/Ah · 500 Ah = 10 A; 0.05 · 24 · 10 = 12 m³/h;
+    /// 28 · 12 = 336 cm².
+    fn lead() -> Ask {
+        Ask {
+            chemistry: Entry::Typed(Chemistry::VentedLead),
+            cell_voltage: Entry::of(2.0),
+            cell_capacity: Entry::of(500.0),
+            series: Entry::of(24.0),
+            ..Ask::default()
+        }
+    }
+
+    #[test]
+    fn the_opening_is_the_standards_and_one_that_is_too_small_breaks() {
+        let asked = answer(&lead());
+        assert_eq!((asked.number.as_str(), asked.unit.as_ref()), ("336", "cm²"));
+        assert_eq!(asked.verdict, Verdict::Asks);
+        assert!(plain(&asked.says).starts_with("12.0 m³/h of fresh air; nothing that sparks within 0.62 m."));
+        let post = asked.bar.expect("a bar").ruler.low.expect("a post");
+        assert!((post.at - 336.0).abs() < 1e-9);
+        let small = answer(&Ask { air_opening: Entry::of(300.0), coldest: Entry::of(-40.0), ..lead() });
+        assert_eq!(small.verdict, Verdict::Breaks);
+        let both = format!("{} {}", plain(&small.says), small.besides.unwrap_or_default());
+        assert!(both.contains("Air for the room") && both.contains("Freezing"), "{both}");
+    }
+
+    #[test]
+    fn lithium_needs_no_opening_and_nobody_sleeps_beside_it() {
+        let ask = Ask { chemistry: Entry::Typed(Chemistry::Lfp), cell_voltage: Entry::of(3.2), ..lead() };
+        let sleeps = Ask { sleeping_room: Entry::Typed(engine::bank::YesNo::Yes), ..ask };
+        assert_eq!(answer(&ask).number, "none");
+        assert_eq!(answer(&ask).most, None, "no water");
+        assert_eq!(answer(&sleeps).verdict, Verdict::Breaks);
+    }
+
+    #[test]
+    fn what_it_waits_for_is_named() {
+        let says = |ask: &Ask| answer(ask).says;
+        assert_eq!(says(&Ask::default()), "Waits for Chemistry, Cell voltage, Number of cells and Bus voltage.");
+        assert_eq!(says(&Ask { cell_capacity: Entry::Blank, ..lead() }), "Waits for Cell capacity.");
+    }
 }

@@ -2,6 +2,8 @@
 //!
 //! A tool's own `answer.rs` makes one, pure; here it is put on the page, the same for all.
 
+use std::borrow::Cow;
+
 use engine::check::{Cost, Verdict};
 use engine::show;
 use leptos::prelude::*;
@@ -20,7 +22,7 @@ pub struct Answer {
     /// The number without its unit, or a few words; a dash where it cannot be told.
     pub number: String,
     /// Its unit, set smaller beside it; empty where it has none.
-    pub unit: &'static str,
+    pub unit: Cow<'static, str>,
     /// The judgement.
     pub verdict: Verdict,
     /// What it costs where it breaks.
@@ -55,14 +57,14 @@ impl Answer {
     pub fn told(&self) -> String {
         let cost = if tells_cost(self.verdict) { format!(", {}", self.cost.word()) } else { String::new() };
         let number =
-            if self.number == show::NONE { String::new() } else { format!(" {} {}.", self.number, spoken(self.unit)) };
+            if self.number == show::NONE { String::new() } else { format!(" {} {}.", self.number, spoken(&self.unit)) };
         let most = self.most.as_ref().map_or_else(String::new, |most| format!(" {most}."));
         format!("{}{cost}.{number} {}{most}", self.verdict.word(), self.says)
     }
 }
 
 /// A unit as it is said.
-fn spoken(unit: &'static str) -> &'static str {
+fn spoken(unit: &str) -> &str {
     match unit {
         "V" => "volts",
         "A" => "amperes",
@@ -119,7 +121,7 @@ pub fn answer_view(answer: Memo<Option<Answer>>) -> AnyView {
 }
 
 /// The number with its unit set smaller; a dash has none.
-fn with_unit(number: String, unit: &'static str) -> AnyView {
+fn with_unit(number: String, unit: Cow<'static, str>) -> AnyView {
     let unit = (number != show::NONE && !unit.is_empty()).then(|| view! { <small>{format!(" {unit}")}</small> });
     view! { {number}{unit} }.into_any()
 }

@@ -2,16 +2,16 @@
 
 use std::sync::Arc;
 
-use engine::bank::{Ask, Setting, Settings, settings};
-use engine::check::{Cost, Verdict};
+use engine::bank::{Ask, Layout, Setting, Settings, counts_lack, settings, settings_working, settled as with_counts};
+use engine::check::{Cost, FieldSet, Verdict};
 use engine::field::Field;
 use engine::show;
 use leptos::prelude::*;
 
 use crate::answer::Answer;
-use crate::cells::{bank, short, stands_in};
+use crate::cells::{bank, empty_bar, short, stands_in, window_bar};
 use crate::derived::memo;
-use crate::form::{Form, Hints, names};
+use crate::form::{Form, Hints, names, waits};
 use crate::settled::settled;
 use crate::tool_page::{ToolPage, section, tool_page};
 use crate::tools::Tool;
@@ -62,7 +62,11 @@ pub fn settings_tool() -> AnyView {
     let ask = bank();
     let answer = memo(move || ask.with(|ask| Some(answer(ask))));
     let rested = settled(ask);
-    let hints = Hints { stands_in: stands_in(ask), waits: Arc::new(|_| None), note: Arc::new(|_| None) };
+    let hints = Hints {
+        stands_in: stands_in(ask),
+        waits: Arc::new(move |field| waits(field, ask.with(counts_lack), std::iter::empty::<FieldSet>())),
+        note: Arc::new(|_| None),
+    };
     let card = section(
         "The card",
         "key in, then read back",
@@ -72,7 +76,7 @@ pub fn settings_tool() -> AnyView {
     tool_page(ToolPage {
         form: &FORM,
         answer,
-        working: Box::new(move || ask.with(|ask| engine::bank::working(ask, engine::bank::Requirement::WindowHigh))),
+        working: Box::new(move || ask.with(settings_working)),
         hints,
         before: vec![card],
         after: Vec::new(),
@@ -82,6 +86,7 @@ pub fn settings_tool() -> AnyView {
 
 fn answer(ask: &Ask) -> Answer {
     let card = settings(ask);
+    let layout = Layout::of(&with_counts(ask)).filter(|_| card.is_some());
     let absorb = card.as_ref().and_then(|card| card.line("Absorb")).and_then(|line| line.amount);
     let shown = absorb.map(show::computed);
     let verdict = match &card {
@@ -90,24 +95,38 @@ fn answer(ask: &Ask) -> Answer {
         Some(_) => Verdict::Close,
     };
     Answer {
-        of: "Absorb voltage at 25 °C, and the whole card below".to_owned(),
+        of: layout.as_ref().map_or_else(|| "Absorb voltage at 25 °C".to_owned(), of),
         number: shown.map_or_else(|| show::NONE.to_owned(), |shown| crate::answer::without_unit(&shown).to_owned()),
-        unit: "V",
+        unit: "V".into(),
         verdict,
         cost: Cost::Loss,
-        says: match &card {
-            None => format!("Waits for {}.", names(crate::cells::missing(ask))),
-            Some(card) => format!("{} lines, by the chemistry’s usual figures and what you entered.", card.lines.len()),
-        },
+        says: card.as_ref().map_or_else(|| format!("Waits for {}.", names(counts_lack(ask))), says),
         most: None,
         rests: card
             .filter(|card| !card.assumed.is_empty())
             .map(|card| format!("Assumed until its data sheet says otherwise: {}.", names(card.assumed))),
         besides: None,
-        bar: None,
+        bar: Some(layout.as_ref().map_or_else(empty_bar, window_bar)),
         second: None,
         offer: None,
     }
+}
+
+/// "Absorb voltage at 25 °C, 16 cells in series × 2".
+fn of(layout: &Layout) -> String {
+    let strings = if layout.strings == 1 { String::new() } else { format!(" × {}", layout.strings) };
+    format!("Absorb voltage at 25 °C, {} cells in series{strings}", layout.cells)
+}
+
+/// The lines that are keyed in first: "Float 57.0 V. Equalise off. Cut-off 53.9 V."
+fn says(card: &Settings) -> String {
+    let one = |name: &str| {
+        let line = card.line(name)?;
+        let figure = line.amount.map_or_else(|| "off".to_owned(), show::computed);
+        Some(format!("{name} {figure}."))
+    };
+    let lines: Vec<String> = ["Float", "Equalise", "Cut-off"].into_iter().filter_map(one).collect();
+    lines.join(" ")
 }
 
 fn lines(card: &Settings) -> AnyView {
@@ -127,8 +146,49 @@ fn line(line: &Setting) -> AnyView {
             <span class="name">{line.name}</span>
             <b>{figure}</b>
             {(!small.is_empty()).then(|| view! { <span class="small">{small.join("; ")}</span> })}
-            <p class="why">{line.note} " " <span class="src">{cited(line.source)}</span></p>
+            <p class="why">{line.note}</p>
+            <p class="why src">{cited(line.source)}</p>
         </li>
     }
     .into_any()
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use engine::entry::Entry;
+
+    fn plain(text: &str) -> String {
+        text.replace([show::NARROW, '\u{a0}'], " ")
+    }
+
+    /// Sixteen cells of LiFePO4 for 48 V.
+    fn sixteen() -> Ask {
+        Ask {
+            chemistry: Entry::Typed(engine::chemistry::Chemistry::Lfp),
+            cell_voltage: Entry::of(3.2),
+            series: Entry::of(16.0),
+            ..Ask::default()
+        }
+    }
+
+    /// Common practice: 3.5 V a cell; lithium is never equalised, nor compensated.
+    #[test]
+    fn sixteen_lithium_cells_absorb_at_56_volts_and_are_never_equalised() {
+        let answer = answer(&sixteen());
+        assert_eq!((answer.number.as_str(), answer.verdict), ("56.0", Verdict::Close));
+        assert_eq!(plain(&answer.of), "Absorb voltage at 25 °C, 16 cells in series");
+        assert!(plain(&answer.says).starts_with("Float 53.6 V. Equalise off. Cut-off "), "{}", answer.says);
+        let card = settings(&sixteen()).expect("a card");
+        assert_eq!(card.line("Compensation").expect("a line").amount, None);
+    }
+
+    #[test]
+    fn no_card_is_made_for_a_count_that_nobody_chose() {
+        let waits = |ask: &Ask| answer(ask).says;
+        assert_eq!(waits(&Ask::default()), "Waits for Chemistry, Cell voltage, Number of cells and Bus voltage.");
+        let no_bus = Ask { series: Entry::Blank, count: Entry::of(16.0), ..sixteen() };
+        assert_eq!(waits(&no_bus), "Waits for Bus voltage.");
+        assert_eq!(answer(&no_bus).verdict, Verdict::Asks);
+    }
 }

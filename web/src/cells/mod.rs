@@ -3,24 +3,27 @@
 mod answer;
 mod layouts;
 mod reading;
+mod sharing;
 
-pub use answer::missing;
+pub use answer::{against, empty_bar, window_bar};
 
 use std::sync::Arc;
 
-use engine::bank::{Ask, assess, assumption, settled as with_counts, working};
+use engine::bank::{Ask, Requirement, assess, assumption, lacks, settled as with_counts, working};
+use engine::check::{Check, FieldSet, Step};
 use engine::field::Field;
 use leptos::prelude::*;
 
 use crate::check_row::check_row;
-use crate::derived::memo;
+use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::use_draft;
 use crate::field::StandIn;
-use crate::fold::Folds;
+use crate::fold::{Fold, Folds};
 use crate::form::{Form, Hints, waits};
 use crate::settled::settled;
 use crate::tool_page::{ToolPage, check_list, tool_page};
 use crate::tools::Tool;
+use crate::working::Working;
 
 /// The tool whose pad holds the bank; Settings and Air and water read it too.
 pub const TOOL: Tool = Tool::Cells;
@@ -120,6 +123,7 @@ pub fn short(field: Field) -> &'static str {
         Field::PackColdLock => "Cold lock",
         Field::OwnProtection => "Protection",
         Field::TieResistance => "Resistance",
+        Field::BankTemperature => "Temperature",
         other => other.name(),
     }
 }
@@ -130,9 +134,44 @@ pub fn bank() -> Memo<Ask> {
     memo(move || draft.with(crate::pads::Pads::bank_ask))
 }
 
-/// What stands in for the fields of a bank.
+/// What stands in for the fields of a bank, told of the bank with its counts: those entered, or the best.
 pub fn stands_in(ask: Memo<Ask>) -> Arc<dyn Fn(Field) -> Option<StandIn> + Send + Sync> {
-    Arc::new(move |field| ask.with(|ask| assumption(ask, field)).map(|assumption| StandIn::of(&assumption)))
+    let counted = memo(move || ask.with(with_counts));
+    Arc::new(move |field| {
+        let of = match field {
+            Field::CellsInSeries | Field::StringsOfCells => ask,
+            _ => counted,
+        };
+        of.with(|ask| assumption(ask, field)).map(|assumption| StandIn::of(&assumption))
+    })
+}
+
+/// What is said beside the fields of a bank, where `lacks` holds up the answer and `checks` hold up more.
+pub fn hints(ask: Memo<Ask>, lacks: fn(&Ask) -> FieldSet, checks: Memo<Vec<Check<Requirement>>>) -> Hints {
+    Hints {
+        stands_in: stands_in(ask),
+        waits: Arc::new(move |field| {
+            checks.with(|checks| waits(field, ask.with(lacks), checks.iter().map(|check| check.asks)))
+        }),
+        note: Arc::new(|_| None),
+    }
+}
+
+/// The rows of a bank's checks on the page of `form`.
+pub fn check_rows(form: &'static Form, ask: ReadSignal<Ask>, checks: Memo<Vec<Check<Requirement>>>) -> AnyView {
+    let folds = expect_context::<Folds>();
+    let go = Callback::new(move |field: Field| form.go_to(folds, field));
+    check_list(move || {
+        ask.with(|ask| {
+            checks.with(|checks| {
+                let row = |check: &Check<Requirement>| {
+                    let id = format!("{}/{}", form.tool.key(), check.id.id());
+                    check_row(id, check.id.name(), check, None, || working(ask, check.id), go)
+                };
+                checks.iter().map(row).collect()
+            })
+        })
+    })
 }
 
 /// The Cells tool.
@@ -142,39 +181,46 @@ pub fn cells_tool() -> AnyView {
     let answer = memo(move || draft.with(|pads| ask.with(|ask| answer::answer(&pads.of(TOOL), ask))));
     let rested = settled(ask);
     let checks = memo(move || rested.with(assess));
-    let hints = Hints {
-        stands_in: stands_in(ask),
-        waits: Arc::new(move |field| {
-            let missing = ask.with(answer::missing);
-            checks.with(|checks| waits(field, missing, checks.iter().map(|check| check.asks)))
-        }),
-        note: Arc::new(|_| None),
-    };
-    let folds = expect_context::<Folds>();
-    let go = Callback::new(move |field: Field| FORM.go_to(folds, field));
-    let rows = move || {
-        rested.with(|ask| {
-            checks.with(|checks| {
-                let row = |check: &engine::check::Check<engine::bank::Requirement>| {
-                    let id = format!("cells/{}", check.id.id());
-                    check_row(id, check.id.name(), check, None, || working(ask, check.id), go)
-                };
-                checks.iter().map(row).collect()
-            })
-        })
-    };
     tool_page(ToolPage {
         form: &FORM,
         answer,
-        working: Box::new(move || ask.with(|ask| engine::bank::energy_working(&with_counts(ask)))),
-        hints,
-        before: Vec::new(),
+        working: Box::new(move || ask.with(steps)),
+        hints: hints(ask, lacks, checks),
+        before: vec![energy(ask)],
         after: vec![
             layouts::layout_list(rested),
             crate::shelf::shelf_section(),
-            check_list(rows),
+            check_rows(&FORM, rested, checks),
+            sharing::sharing(rested),
             reading::reading(rested),
         ],
         cautions: CAUTIONS,
     })
+}
+
+/// The steps to the end of the window that holds least well.
+fn steps(ask: &Ask) -> Vec<Step> {
+    let layout = answer::chosen(ask, &engine::bank::layouts(ask));
+    let Some(layout) = layout else { return Vec::new() };
+    let on_top = answer::of_window(&layout).map_or(Requirement::WindowHigh, |check| check.id);
+    working(&ask.with_counts(layout.series, layout.strings), on_top)
+}
+
+/// How much of the bank can be used, step by step.
+fn energy(ask: Memo<Ask>) -> AnyView {
+    let counted = memo(move || ask.with(with_counts));
+    when(
+        move || counted.with(|ask| engine::bank::energy(ask).is_some()),
+        move || {
+            view! {
+                <Fold id="cells/energy" title="Energy" says=derived(|| "in this room, at this load".to_owned())>
+                    {dynamic(move || {
+                        let steps = counted.with(engine::bank::energy_working);
+                        view! { <Working steps=steps/> }.into_any()
+                    })}
+                </Fold>
+            }
+            .into_any()
+        },
+    )
 }

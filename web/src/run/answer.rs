@@ -54,7 +54,7 @@ pub fn answer(pad: &impl Pad, ask: &Ask) -> Option<Answer> {
     Some(Answer {
         of: of(pad, ask, sizing),
         number,
-        unit,
+        unit: unit.into(),
         verdict,
         cost,
         says: match &found {

@@ -47,7 +47,7 @@ pub fn answer(pad: &impl Pad, ask: &Ask) -> Answer {
     Answer {
         of: of(pad, ask, found.as_ref().ok()),
         number: shown.as_deref().map_or(show::NONE, without_unit).to_owned(),
-        unit: "A",
+        unit: "A".into(),
         verdict,
         cost,
         says: match &found {

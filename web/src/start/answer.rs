@@ -48,7 +48,7 @@ pub fn answer(ask: &Ask) -> Answer {
                 }
             },
         ),
-        unit: if sag.and_then(|check| check.value).is_some_and(|value| value.number > 0.0) { "V" } else { "" },
+        unit: if sag.and_then(|check| check.value).is_some_and(|value| value.number > 0.0) { "V" } else { "" }.into(),
         verdict,
         cost: engine::check::Cost::Loss,
         says: if missing.is_empty() { says(ask, top.as_ref()) } else { format!("Waits for {}.", names(missing)) },

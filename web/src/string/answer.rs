@@ -24,7 +24,7 @@ pub fn answer(pad: &impl Pad, ask: &Ask, checks: &[Check<Requirement>]) -> Optio
     Some(Answer {
         of: of(pad, ask),
         number: number(&check, volts),
-        unit: "V",
+        unit: "V".into(),
         verdict: check.verdict,
         cost: check.cost,
         says: says(&check, longest),

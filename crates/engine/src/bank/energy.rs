@@ -6,7 +6,7 @@ use super::devices::cut_off;
 use super::rates::{bank_capacity, usual_draw};
 use super::window::cells;
 use crate::check::{Basis, FieldSet, Origin, Step, Steps};
-use crate::chemistry::{RATED_AT, capacity_share, share_at};
+use crate::chemistry::{Figures, RATED_AT, capacity_share, share_at};
 use crate::entry::Entry;
 use crate::field::Field;
 use crate::quantity::{AmpHours, Amps, Percent, Quantity, Volts, WattHours};
@@ -57,6 +57,24 @@ pub fn energy_working(ask: &Ask) -> Vec<Step> {
     steps.into_steps()
 }
 
+/// Part of the capacity that is wanted, and the part that the cut-off allows of a string of `cells`.
+fn drawn(ask: &Ask, figures: &Figures, cells: f64, basis: &mut Basis) -> Option<(Percent, Percent)> {
+    let wanted = ask.depth(figures, basis)?;
+    let allowed = match cut_off(ask, basis) {
+        Some(stops) => Percent::new(100.0) - figures.charge_when_loaded_to(stops / cells),
+        None => Percent::new(100.0),
+    };
+    Some((wanted, allowed))
+}
+
+/// Part of the capacity that is drawn: the depth used, or what the cut-off allows where that is less. Needs no capacity.
+pub(super) fn depth(ask: &Ask) -> Option<Percent> {
+    let basis = &mut Basis::default();
+    let (_, figures) = ask.chemistry(basis)?;
+    let cells = cells(ask, basis, &mut Steps::silent())?;
+    drawn(ask, figures, cells, basis).map(|(wanted, allowed)| wanted.min(allowed))
+}
+
 fn figured(ask: &Ask, steps: &mut Steps) -> Option<Energy> {
     let basis = &mut Basis::default();
     let (chemistry, figures) = ask.chemistry(basis)?;
@@ -103,11 +121,7 @@ fn figured(ask: &Ask, steps: &mut Steps) -> Option<Energy> {
     } else {
         Percent::new(100.0)
     };
-    let wanted = ask.depth(figures, basis)?;
-    let allowed = match cut_off(ask, basis) {
-        Some(stops) => Percent::new(100.0) - figures.charge_when_loaded_to(stops / cells),
-        None => Percent::new(100.0),
-    };
+    let (wanted, allowed) = drawn(ask, figures, cells, basis)?;
     let cut_off_ends_it = allowed < wanted;
     let depth = if cut_off_ends_it {
         steps.step("Drawn before the cut-off", allowed, || {

@@ -9,6 +9,7 @@
 use core::cmp::Ordering;
 
 use super::ask::positive;
+use super::energy::depth;
 use super::requirement::worst_first;
 use super::{Ask, Energy, Requirement, Window, energy, lacks, window};
 use crate::check::{Basis, Check, Cost, Sense, Verdict};
@@ -31,6 +32,8 @@ pub struct Layout {
     pub short: u32,
     /// The span of its voltages.
     pub window: Window,
+    /// Part of its capacity that can be drawn: the depth used, or what the cut-off allows where that is less.
+    pub depth: Percent,
     /// What it gives; none where the capacity is not known.
     pub energy: Option<Energy>,
     /// Its capacity over the charge current; none where either is not known.
@@ -93,7 +96,7 @@ impl Layout {
     #[must_use]
     pub fn refused_by(&self) -> Option<&Check<Requirement>> {
         let hazard = self.broken().find(|check| check.cost == Cost::Hazard && check.id != Requirement::Touch);
-        let empty = self.energy.is_some_and(|energy| energy.usable.get() <= 0.0);
+        let empty = self.depth.get() <= 0.0;
         let starved = self.broken().find(|check| check.id == Requirement::ChargeCap);
         hazard.or(starved).or_else(|| self.check(Requirement::WindowLow).filter(|_| empty))
     }
@@ -117,8 +120,9 @@ impl Layout {
         let loss = |one: &Self| one.broken().any(|check| check.cost == Cost::Loss);
         let bare = |one: &Self| one.check(Requirement::Touch).is_some_and(|check| check.verdict == Verdict::Breaks);
         let gives = |one: &Self| {
-            // Without a capacity, the count of cells that can be used tells the same order.
-            one.energy.map_or(one.window.nominal.get() * f64::from(one.strings), |energy| energy.usable.get())
+            // Without a capacity, as if each cell had one ampere-hour: rate and cold apart, the order is the same.
+            let of_one = one.window.nominal.get() * f64::from(one.strings) * one.depth.share();
+            one.energy.map_or(of_one, |energy| energy.usable.get())
         };
         let margin = |one: &Self| {
             one.check(Requirement::WindowHigh).and_then(|check| check.margin).map_or(0.0, |margin| margin.get())
@@ -259,6 +263,7 @@ fn laid_out(ask: &Ask, series: u32, strings: u32, count: u32) -> Option<Layout> 
         left_over: count.saturating_sub(series * strings),
         short: (series * strings).saturating_sub(count),
         window,
+        depth: depth(ask)?,
         energy,
         charged_over: over(positive(ask.charge_current).typed()),
         drawn_over: over(draw),

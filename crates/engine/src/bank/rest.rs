@@ -14,7 +14,7 @@ pub const RESTED_AT: Celsius = RATED_AT;
 /// What rested cells or blocks tell.
 #[derive(Clone, Debug, PartialEq)]
 pub struct AtRest {
-    /// Mean of one cell; of blocks, of the cells inside.
+    /// The middle reading, and the mean of fewer than four; of blocks, for one of the cells inside.
     pub each: Volts,
     /// The charge that goes with it, and its band.
     pub charge: ChargeReading,
@@ -25,7 +25,7 @@ pub struct AtRest {
 /// Reads the voltages of cells or blocks that have rested, taken at `temperature`. `None` where there are none, or where
 /// the chemistry or what a block holds is missing.
 ///
-/// The charge is that of the mean: it says nothing of an odd one.
+/// The charge is that of the middle reading: an odd one neither drags it along nor is told by it.
 ///
 /// # Example
 ///
@@ -45,15 +45,16 @@ pub struct AtRest {
 pub fn at_rest(ask: &Ask, readings: &[Volts], temperature: Celsius) -> Option<AtRest> {
     let basis = &mut Basis::default();
     let (chemistry, _) = ask.chemistry(basis)?;
-    let cells = ask.block_cells(basis)?.get() * readings.len() as f64;
+    let in_block = ask.block_cells(basis)?.get();
+    let found = odd_cells(readings);
     let sum: Volts = readings.iter().copied().sum();
-    let each = sum / cells;
+    let middle = found.as_ref().map_or(sum / readings.len() as f64, |found| found.median);
+    let each = middle / in_block;
     if !each.get().is_finite() {
         return None;
     }
-    let meter = METER * (readings.len() as f64 / cells);
-    let odd = odd_cells(readings).map(|found| found.odd).unwrap_or_default();
-    Some(AtRest { each, charge: charge_at_rest(chemistry, each, temperature, meter), odd })
+    let charge = charge_at_rest(chemistry, each, temperature, METER / in_block);
+    Some(AtRest { each, charge, odd: found.map(|found| found.odd).unwrap_or_default() })
 }
 
 #[cfg(test)]

@@ -420,6 +420,18 @@ fn counts_that_were_entered_are_kept_and_what_is_left_over_or_short_is_said() {
     assert_eq!((best.series, best.strings, best.left_over), (9, 2, 3));
 }
 
+/// The order does not hang on the capacity, and a count that the cut-off lets nothing be drawn from never stands.
+#[test]
+fn without_a_capacity_the_same_layouts_stand() {
+    for ask in [iron(), packs(), lead(), Ask { count: Entry::of(40.0), ..lead() }] {
+        let without = layouts(&Ask { cell_capacity: Entry::Blank, ..ask });
+        let of = |found: &[Layout]| found.iter().map(|one| (one.series, one.strings)).collect::<Vec<_>>();
+        let with = layouts(&ask);
+        assert_eq!(of(&without.rejected), of(&with.rejected));
+        assert_eq!(without.best().map(|one| one.series), with.best().map(|one| one.series));
+    }
+}
+
 #[test]
 fn the_refused_that_come_nearest_stand_first() {
     let found = layouts(&iron());

@@ -1,0 +1,64 @@
+//! Strings side by side: what each carries, by where the bank's leads are taken off.
+
+use engine::bank::{Ask, shares};
+use engine::choice::words;
+use engine::field::Field;
+use engine::quantity::Percent;
+use engine::sharing::Arrangement;
+use engine::show;
+use leptos::prelude::*;
+
+use crate::derived::{derived, when};
+use crate::fold::Fold;
+use crate::tool_page::figures;
+
+/// The most strings that are told one by one.
+const TOLD: usize = 8;
+
+/// The shares for every take-off, where strings stand side by side.
+pub fn sharing(ask: ReadSignal<Ask>) -> AnyView {
+    when(
+        move || ask.with(|ask| shares(ask).is_some()),
+        move || {
+            view! {
+                <Fold
+                    id="cells/sharing"
+                    title="Sharing"
+                    says=derived(|| "what each string carries, by take-off".to_owned())
+                >
+                    {crate::derived::dynamic(move || ask.with(told))}
+                </Fold>
+            }
+            .into_any()
+        },
+    )
+}
+
+fn told(ask: &Ask) -> AnyView {
+    let rows = shares(ask).unwrap_or_default().into_iter().map(|one| {
+        let each: Vec<String> = one.over_even.iter().take(TOLD).map(|percent| plain(*percent)).collect();
+        let more = if one.over_even.len() > TOLD { " …" } else { "" };
+        (name(one.take_off), format!("{} %{more}", each.join(" · ")))
+    });
+    view! {
+        {figures(rows.collect())}
+        <p class="ranked-say">
+            "String by string along the bars, each as a part of an even share, at the start of a discharge: equal strings, \
+             new and warm, on equal ties. Above 120 % the hardest string ages first."
+        </p>
+    }
+    .into_any()
+}
+
+fn plain(percent: Percent) -> String {
+    show::number(percent.get(), 0)
+}
+
+fn name(take_off: Arrangement) -> String {
+    let key = match take_off {
+        Arrangement::SameEnd => "same-end",
+        Arrangement::OppositeEnds => "opposite-ends",
+        Arrangement::Middle => "middle",
+    };
+    format!("Take-off: {}", words(Field::TakeOff, key).unwrap_or_default())
+}
