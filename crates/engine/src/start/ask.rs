@@ -150,6 +150,40 @@ impl Ask {
         }
     }
 
+    /// The same with every number that cannot be meant taken for one that could not be read.
+    pub(super) fn sound(&self) -> Self {
+        Self {
+            running: positive(self.running),
+            how_many: positive(self.how_many),
+            multiple: positive(self.multiple),
+            motor: positive(self.motor),
+            starting_factor: positive(self.starting_factor),
+            running_factor: positive(self.running_factor),
+            seconds: not_negative(self.seconds),
+            already: not_negative(self.already),
+            inverter_continuous: positive(self.inverter_continuous),
+            inverter_surge: positive(self.inverter_surge),
+            surge_seconds: not_negative(self.surge_seconds),
+            efficiency: positive(self.efficiency),
+            cut_off: positive(self.cut_off),
+            inverter_air: finite(self.inverter_air),
+            height: finite(self.height),
+            bank_voltage: positive(self.bank_voltage),
+            bank_resistance: not_negative(self.bank_resistance),
+            cable: not_negative(self.cable),
+            charge: not_negative(self.charge),
+            bank_temperature: finite(self.bank_temperature),
+            packs: positive(self.packs),
+            pack_limit: positive(self.pack_limit),
+            pack_peak: positive(self.pack_peak),
+            pack_peak_time: not_negative(self.pack_peak_time),
+            breaker: positive(self.breaker),
+            generator: positive(self.generator),
+            charger: not_negative(self.charger),
+            ..*self
+        }
+    }
+
     /// The class of the load, where it was named.
     #[must_use]
     pub fn class(&self) -> Option<Class> {
@@ -192,6 +226,22 @@ impl Ask {
     /// *Chosen*: 2 mΩ, some two metres of 50 mm² and four lugs, there and back.
     pub(super) fn usual_cable(&self) -> Ohms {
         Ohms::new(0.002)
+    }
+}
+
+/// A number within reason that is not below zero, or nothing that was read.
+fn not_negative<Q: Quantity>(entry: Entry<Q>) -> Entry<Q> {
+    match entry {
+        Entry::Typed(value) if !(0.0..=1e12).contains(&value.number()) => Entry::Unread,
+        other => other,
+    }
+}
+
+/// A number within reason, or nothing that was read.
+fn finite<Q: Quantity>(entry: Entry<Q>) -> Entry<Q> {
+    match entry {
+        Entry::Typed(value) if !(-1e12..=1e12).contains(&value.number()) => Entry::Unread,
+        other => other,
     }
 }
 

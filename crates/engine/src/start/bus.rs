@@ -75,6 +75,7 @@ fn cold(temperature: Option<Celsius>) -> f64 {
 pub fn lowest_charge(ask: &Ask, watts: crate::quantity::Watts) -> Option<Percent> {
     let cut_off = ask.cut_off.typed()?;
     let cable = ask.cable.typed().unwrap_or(ask.usual_cable());
+    let ask = &ask.sound();
     let asked = Ask { bank_voltage: Entry::Blank, ..*ask };
     let holds = |charge: f64| {
         let bank = by_its_cells(&asked, Some(Percent::new(charge)), &mut Basis::default())?;

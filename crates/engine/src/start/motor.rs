@@ -90,14 +90,14 @@ const fn column(volts: f64, columns: usize) -> Option<usize> {
 #[must_use]
 pub fn full_load(horsepower: f64, volts: f64) -> Option<f64> {
     let at = column(volts, 4)?;
-    FULL_LOAD.iter().find(|row| row.0 >= horsepower - 1e-9).map(|row| row.1[at])
+    FULL_LOAD.iter().find(|row| row.0 >= horsepower - 1e-5).map(|row| row.1[at])
 }
 
 /// Locked-rotor amperes of the same.
 #[must_use]
 pub fn locked_rotor(horsepower: f64, volts: f64) -> Option<f64> {
     let at = column(volts, 3)?;
-    LOCKED_ROTOR.iter().find(|row| row.0 >= horsepower - 1e-9).map(|row| row.1[at])
+    LOCKED_ROTOR.iter().find(|row| row.0 >= horsepower - 1e-5).map(|row| row.1[at])
 }
 
 #[cfg(test)]

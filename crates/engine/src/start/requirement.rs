@@ -92,7 +92,7 @@ impl Requirement {
 
     fn judged(self, ask: &Ask, steps: &mut Steps) -> Option<Check<Self>> {
         let mut basis = Basis::default();
-        let outcome = self.outcome(ask, &mut basis, steps);
+        let outcome = self.outcome(&ask.sound(), &mut basis, steps);
         judge(self, self.cost(), self.reserve(), outcome, &basis)
     }
 
@@ -342,6 +342,7 @@ fn generator(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
 /// is none.
 #[must_use]
 pub fn volts(ask: &Ask) -> Option<[Option<Volts>; 3]> {
+    let ask = &ask.sound();
     let mut basis = Basis::default();
     let phases = phases(ask, &mut basis, &mut Steps::silent())?;
     let seen = bus::seen(ask, &mut basis, &mut Steps::silent())?;
@@ -353,12 +354,12 @@ pub fn volts(ask: &Ask) -> Option<[Option<Volts>; 3]> {
 /// What the start draws from the bus. `None` where an input is missing.
 #[must_use]
 pub fn drawn(ask: &Ask) -> Option<Watts> {
-    on_the_bus(ask, &mut Basis::default(), &mut Steps::silent()).map(|(watts, _)| watts)
+    on_the_bus(&ask.sound(), &mut Basis::default(), &mut Steps::silent()).map(|(watts, _)| watts)
 }
 
 /// Current of the start, for words.
 #[must_use]
 pub fn current(ask: &Ask) -> Option<Amps> {
-    let (loaded, _) = loaded(ask, &mut Basis::default(), &mut Steps::silent())?;
+    let (loaded, _) = loaded(&ask.sound(), &mut Basis::default(), &mut Steps::silent())?;
     loaded.ok().map(|found| found.current)
 }

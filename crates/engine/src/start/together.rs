@@ -61,7 +61,7 @@ pub struct Together {
 /// The load of `ask`, by itself. `None` where an input is missing.
 #[must_use]
 pub fn switched(ask: &Ask) -> Option<Switched> {
-    let alone = Ask { already: crate::entry::Entry::Typed(Watts::new(0.0)), ..*ask };
+    let alone = Ask { already: crate::entry::Entry::Typed(Watts::new(0.0)), ..ask.sound() };
     let found = phases(&alone, &mut Basis::default(), &mut Steps::silent())?;
     Some(Switched { running: found.running, starting: found.starting })
 }
@@ -70,6 +70,7 @@ impl Limits {
     /// Those of the inverter and the bus of `ask`, with what runs already. `None` where an input is missing.
     #[must_use]
     pub fn of(ask: &Ask) -> Option<Self> {
+        let ask = &ask.sound();
         let continuous = ask.inverter_continuous.typed().map(Watts::get);
         let surge = ask.inverter_surge.typed().map(crate::quantity::VoltAmps::get);
         let surge = surge.or(continuous)?;

@@ -4,4 +4,5 @@ mod bank;
 mod diode;
 mod draw;
 mod network;
+mod start;
 mod string;
