@@ -1,0 +1,164 @@
+//! A whole site as a person uses it: six taps, a part beside the line, kept, shared, undone, with no signal.
+
+use browser::{Result, Screen, Site, ensure, visit};
+
+async fn line(site: &Site) -> Result<()> {
+    site.load().await?;
+    site.press("Line").await?;
+    Ok(())
+}
+
+async fn six_taps(site: &Site) -> Result<()> {
+    for answer in ["IEC, metric", "−20 °C", "8", "LiFePO4", "48 V", "3 kW"] {
+        site.press(answer).await?;
+    }
+    site.element(".line .bus").await?;
+    Ok(())
+}
+
+fn plain(text: &str) -> String {
+    text.replace(['\u{202f}', '\u{a0}', '\u{2009}', '\n'], " ")
+}
+
+async fn shows(site: &Site, words: &str) -> Result<()> {
+    site.wait_for(&format!("the page to show \"{words}\""), async || {
+        Ok(plain(&site.text().await?).contains(words).then_some(()))
+    })
+    .await
+}
+
+async fn is_written(site: &Site) -> Result<()> {
+    site.element(".kept[data-state=kept]").await.map(drop)
+}
+
+#[test]
+fn six_taps_make_a_whole_assessed_line() {
+    for screen in [Screen::PHONE, Screen::NARROW] {
+        visit(screen, async |site| {
+            line(site).await?;
+            six_taps(site).await?;
+            for part in ["Array", "Controller", "Bank", "Inverter", "AC panel", "DC panel"] {
+                shows(site, part).await?;
+            }
+            shows(site, "typical: read your nameplate").await?;
+            ensure!(site.count(".line > li").await? > 10, "parts and runs stand on it");
+            ensure!(site.overflow().await? == 0, "{} px beyond the edge", site.overflow().await?);
+            Ok(())
+        });
+    }
+}
+
+#[test]
+fn the_hut_breaks_at_its_cold_string_and_the_part_is_mended_in_place() {
+    visit(Screen::PHONE, async |site| {
+        line(site).await?;
+        site.press("Kestrel Ridge hut").await?;
+        shows(site, "Cold string against the controller, 170.3 V, at most 150 V").await?;
+        site.press("Array").await?;
+        site.heading("Array").await?;
+        site.type_into("Modules in series", "2").await?;
+        site.type_into("Strings", "4").await?;
+        site.press("Line").await?;
+        site.wait_for("the worst to be another", async || {
+            Ok((!plain(&site.text().await?).contains("170.3 V, at most")).then_some(()))
+        })
+        .await?;
+        // Undo leads back through it.
+        site.press("Undo: Strings").await?;
+        site.press("Undo: Modules in series").await?;
+        shows(site, "170.3 V, at most 150 V").await?;
+        Ok(())
+    });
+}
+
+#[test]
+fn a_site_is_there_after_loading_again_with_the_server_stopped() {
+    visit(Screen::PHONE, async |site| {
+        line(site).await?;
+        six_taps(site).await?;
+        site.type_into("Name of the site", "Tern Point").await?;
+        site.leave().await?;
+        is_written(site).await?;
+        if site.attribute("[data-copy]", "data-copy").await?.as_deref() != Some("not-possible") {
+            site.is_kept().await?;
+            site.stop_server();
+        }
+        site.reload().await?;
+        site.element(".line .bus").await?;
+        ensure!(site.value_of("Name of the site").await? == "Tern Point");
+        Ok(())
+    });
+}
+
+#[test]
+fn a_link_holds_the_whole_site() {
+    visit(Screen::PHONE, async |site| {
+        line(site).await?;
+        site.press("Tarn cabin").await?;
+        site.press("Sheet").await?;
+        let link = site.value_of("Link that holds the site").await?;
+        ensure!(link.contains("#/site/"), "{link}");
+        site.press("Line").await?;
+        site.press("Close this site").await?;
+        site.element(".six-box").await?;
+        site.run("location.hash = arguments[0].split('#')[1];", &[link.clone().into()]).await?;
+        site.element(".line .bus").await?;
+        ensure!(site.value_of("Name of the site").await? == "Tarn cabin");
+        // Cut on the way: refused, and nothing touched.
+        let cut = link[..link.len() - 100].to_owned();
+        site.run("location.hash = arguments[0].split('#')[1];", &[cut.into()]).await?;
+        shows(site, "That link was cut or changed on the way").await?;
+        ensure!(site.value_of("Name of the site").await? == "Tarn cabin");
+        Ok(())
+    });
+}
+
+#[test]
+fn a_hostile_text_is_refused_and_changes_nothing() {
+    visit(Screen::PHONE, async |site| {
+        line(site).await?;
+        site.press("Two Rivers clinic").await?;
+        site.press("Sheet").await?;
+        let wide = format!(
+            r#"{{"linehut":"site","version":1,"name":"x","place":{{}},"parts":[{}]}}"#,
+            vec![r#"{"id":1,"kind":"array","entries":{}}"#; 5].join(",")
+        );
+        for text in ["{", "[]", r#"{"linehut":"site","version":9,"name":"","place":{},"parts":[]}"#, &wide] {
+            site.type_into("Pasted link or file", text).await?;
+            site.press("Open what is pasted").await?;
+            shows(site, "Not opened, nothing changed").await?;
+        }
+        site.press("Line").await?;
+        ensure!(site.value_of("Name of the site").await? == "Two Rivers clinic");
+        Ok(())
+    });
+}
+
+#[test]
+fn what_opens_is_told_and_closed_again() {
+    visit(Screen::PHONE, async |site| {
+        line(site).await?;
+        site.press("Two Rivers clinic").await?;
+        site.unfold("What if this opens? breaker, fuse, protection, bond").await?;
+        site.press("The packs’ own protection").await?;
+        shows(site, "In full sun").await?;
+        site.press("Close it again").await?;
+        ensure!(site.count(".whatif").await? == 0, "it is closed");
+        Ok(())
+    });
+}
+
+#[test]
+fn the_checks_stand_worst_first_with_their_working() {
+    visit(Screen::NARROW, async |site| {
+        line(site).await?;
+        site.press("Kestrel Ridge hut").await?;
+        site.press("All checks").await?;
+        site.heading("Checks").await?;
+        let first = site.element(".checks .check").await?.text().await?;
+        ensure!(first.contains("Cold string against the controller"), "{first}");
+        site.press("To do").await?;
+        ensure!(site.overflow().await? == 0, "{} px beyond the edge", site.overflow().await?);
+        Ok(())
+    });
+}
