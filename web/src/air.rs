@@ -1,7 +1,7 @@
 //! The Air and water tool: fresh air, openings, distance from sparks, water a month, freezing.
 
 use engine::bank::{
-    AirAndWater, Ask, Requirement, air_and_water, assess, counts_lack, settled as with_counts, working,
+    AirAndWater, Ask, Layout, Requirement, air_and_water, assess, counts_lack, settled as with_counts, working,
 };
 use engine::check::{Check, Cost, FieldSet, Verdict};
 use engine::field::Field;
@@ -10,7 +10,7 @@ use engine::show;
 use leptos::prelude::*;
 
 use crate::answer::Answer;
-use crate::cells::{against, bank, check_rows, hints, short};
+use crate::cells::{against, bank, check_rows, hints, in_series, short};
 use crate::derived::memo;
 use crate::form::{Form, names};
 use crate::settled::settled;
@@ -112,8 +112,7 @@ fn answer(ask: &Ask) -> Answer {
     let broken: Vec<&str> =
         checks.iter().skip(1).filter(|check| check.verdict == Verdict::Breaks).map(|check| check.id.name()).collect();
     Answer {
-        of: if no_gas { "Opening for hydrogen" } else { "Free area of an inlet low, and as much of an outlet high" }
-            .to_owned(),
+        of: of(ask, no_gas),
         number: match &opening {
             Some(shown) => crate::answer::without_unit(shown).to_owned(),
             None if no_gas => "none".to_owned(),
@@ -122,7 +121,9 @@ fn answer(ask: &Ask) -> Answer {
         unit: if opening.is_some() { "cm²" } else { "" }.into(),
         verdict: top.map_or(Verdict::Asks, |check| check.verdict),
         cost: top.map_or(Cost::Hazard, |check| check.cost),
-        says: found.as_ref().map_or_else(|| format!("Waits for {}.", names(missing(ask))), |found| says(found, top)),
+        says: found
+            .as_ref()
+            .map_or_else(|| format!("Waits for {}.", names(missing(ask))), |found| says(found, &checks)),
         most: found.as_ref().and_then(water),
         rests: found
             .filter(|found| !found.assumed.is_empty())
@@ -132,6 +133,12 @@ fn answer(ask: &Ask) -> Answer {
         second: None,
         offer: None,
     }
+}
+
+/// For what the number is, and for how many cells, as the count may be the best one's and not entered.
+fn of(ask: &Ask, no_gas: bool) -> String {
+    let what = if no_gas { "Opening for hydrogen" } else { "Each opening, inlet low and outlet high" };
+    Layout::of(&with_counts(ask)).map_or_else(|| what.to_owned(), |layout| format!("{what}: {}", in_series(&layout)))
 }
 
 /// The worst check; where that asks, the ruler with what the opening must be.
@@ -152,7 +159,7 @@ fn bar(top: Option<&Check<Requirement>>, opening: Option<SquareCentimetres>) -> 
     })
 }
 
-fn says(found: &AirAndWater, top: Option<&Check<Requirement>>) -> String {
+fn says(found: &AirAndWater, checks: &[Check<Requirement>]) -> String {
     let mut parts = Vec::new();
     match (found.flow, found.keep_clear) {
         (Some(flow), Some(clear)) => parts.push(format!(
@@ -162,15 +169,18 @@ fn says(found: &AirAndWater, top: Option<&Check<Requirement>>) -> String {
         )),
         _ => parts.push("Makes no hydrogen in use. It still burns: never where people sleep.".to_owned()),
     }
-    if let Some(check) = top {
+    let asks = checks.iter().fold(FieldSet::default(), |all, check| all.union(check.asks));
+    if !asks.is_empty() {
+        parts.push(format!("Enter {} to judge it.", names(asks)));
+    }
+    if let Some(check) = checks.first() {
         let name = check.id.name();
         match check.verdict {
-            Verdict::Asks => parts.push(format!("{name} waits for {}.", names(check.asks))),
             Verdict::Breaks => parts.push(format!("{name}: {}.", against(check))),
             Verdict::Close if !check.assumed.is_empty() => {
                 parts.push(format!("{name} rests on {}: confirm.", names(check.assumed)));
             }
-            Verdict::Close | Verdict::Clears => {}
+            Verdict::Asks | Verdict::Close | Verdict::Clears => {}
         }
     }
     parts.join(" ")
@@ -191,14 +201,9 @@ fn told(found: &AirAndWater) -> AnyView {
     put("Keep clear of sparks", found.keep_clear.map(|metres| show::computed(metres.amount())));
     put("Freezes at its lowest charge at", found.freezes_at.map(|cold| show::computed(cold.amount())));
     put("Freezes empty at", found.freezes_empty_at.map(|cold| show::computed(cold.amount())));
-    let source = found.gassing_source.map(|clause| {
-        let covered = if found.within_the_standard {
-            ""
-        } else {
-            " The standard does not cover this chemistry; the whole charge current is taken to gas."
-        };
-        view! { <p class="ranked-say">{format!("By {}.{covered}", cited(clause))}</p> }.into_any()
-    });
+    let source = found
+        .gassing_source
+        .map(|clause| view! { <p class="field-note">{format!("Source: {}.", cited(clause))}</p> }.into_any());
     let cautions: Vec<AnyView> = found.cautions.iter().map(|line| view! { <li>{*line}</li> }.into_any()).collect();
     view! {
         {figures(rows)}

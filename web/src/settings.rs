@@ -9,7 +9,7 @@ use engine::show;
 use leptos::prelude::*;
 
 use crate::answer::Answer;
-use crate::cells::{bank, empty_bar, short, stands_in, window_bar};
+use crate::cells::{bank, empty_bar, in_series, short, stands_in, window_bar};
 use crate::derived::memo;
 use crate::form::{Form, Hints, names, waits};
 use crate::settled::settled;
@@ -95,7 +95,10 @@ fn answer(ask: &Ask) -> Answer {
         Some(_) => Verdict::Close,
     };
     Answer {
-        of: layout.as_ref().map_or_else(|| "Absorb voltage at 25 °C".to_owned(), of),
+        of: layout.as_ref().map_or_else(
+            || "Absorb voltage at 25 °C".to_owned(),
+            |layout| format!("Absorb voltage at 25 °C: {}", in_series(layout)),
+        ),
         number: shown.map_or_else(|| show::NONE.to_owned(), |shown| crate::answer::without_unit(&shown).to_owned()),
         unit: "V".into(),
         verdict,
@@ -110,12 +113,6 @@ fn answer(ask: &Ask) -> Answer {
         second: None,
         offer: None,
     }
-}
-
-/// "Absorb voltage at 25 °C, 16 cells in series × 2".
-fn of(layout: &Layout) -> String {
-    let strings = if layout.strings == 1 { String::new() } else { format!(" × {}", layout.strings) };
-    format!("Absorb voltage at 25 °C, {} cells in series{strings}", layout.cells)
 }
 
 /// The lines that are keyed in first: "Float 57.0 V. Equalise off. Cut-off 53.9 V."
@@ -177,7 +174,7 @@ mod tests {
     fn sixteen_lithium_cells_absorb_at_56_volts_and_are_never_equalised() {
         let answer = answer(&sixteen());
         assert_eq!((answer.number.as_str(), answer.verdict), ("56.0", Verdict::Close));
-        assert_eq!(plain(&answer.of), "Absorb voltage at 25 °C, 16 cells in series");
+        assert_eq!(plain(&answer.of), "Absorb voltage at 25 °C: 16 in series");
         assert!(plain(&answer.says).starts_with("Float 53.6 V. Equalise off. Cut-off "), "{}", answer.says);
         let card = settings(&sixteen()).expect("a card");
         assert_eq!(card.line("Compensation").expect("a line").amount, None);

@@ -125,8 +125,20 @@ fn rests(worst: Option<&Check<Requirement>>, advice: &[Advice]) -> Option<String
             parts.push(format!("Close until that is confirmed: {}.", names(check.assumed)));
         }
     }
-    parts.extend(advice.iter().filter(|piece| matches!(piece, Advice::OrWiderWindow { .. })).map(ToString::to_string));
+    // Other devices are worth a word where these leave something to wish for.
+    let wider = |piece: &&Advice| {
+        matches!(piece, Advice::OrWiderWindow { .. }) && worst.is_some_and(|check| check.verdict == Verdict::Breaks)
+    };
+    parts.extend(advice.iter().filter(wider).map(ToString::to_string));
     (!parts.is_empty()).then(|| parts.join(" "))
+}
+
+/// "16 in series × 2".
+pub fn in_series(layout: &Layout) -> String {
+    match layout.strings {
+        1 => format!("{} in series", layout.series),
+        strings => format!("{} in series × {strings}", layout.series),
+    }
 }
 
 /// "18.5 V, at most 16 V".
@@ -193,7 +205,8 @@ pub fn window_bar(layout: &Layout) -> Bar {
         shown: show::computed(volts.amount()),
     };
     let mut marks = vec![mark(lowest, "empty")];
-    if window.rested > lowest && window.rested < highest {
+    // So far from the top that their labels stand clear of each other.
+    if window.rested > lowest && highest - window.rested > (highest - lowest) * 0.25 {
         marks.push(mark(window.rested, "full, at rest"));
     }
     marks.push(mark(highest, "highest"));

@@ -8,7 +8,7 @@ use engine::show;
 use leptos::prelude::*;
 
 use super::TOOL;
-use super::answer::{against, energy, window_bar};
+use super::answer::{against, energy, in_series, window_bar};
 use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
 use crate::fold::Fold;
@@ -88,7 +88,7 @@ fn row(layout: &Layout, ask: &Ask, refused: bool) -> AnyView {
     });
     view! {
         <li class:is-now=now class:refused=refused data-v=verdict.word()>
-            <span class="name">{shape(layout)}</span>
+            <span class="name">{in_series(layout)}</span>
             <span class="tags"><VerdictMark verdict=verdict/>{cost.map(|cost| view! { <CostMark cost=cost/> })}</span>
             <p class="why">{why(layout, now)}</p>
             {slim_bar(window_bar(layout))}
@@ -96,13 +96,6 @@ fn row(layout: &Layout, ask: &Ask, refused: bool) -> AnyView {
         </li>
     }
     .into_any()
-}
-
-fn shape(layout: &Layout) -> String {
-    match layout.strings {
-        1 => format!("{} in series", layout.series),
-        strings => format!("{} in series × {strings}", layout.series),
-    }
 }
 
 /// What it covers, what is left over, what it gives, how fast it is charged and drawn, and what stands against it.

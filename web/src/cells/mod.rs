@@ -5,7 +5,7 @@ mod layouts;
 mod reading;
 mod sharing;
 
-pub use answer::{against, empty_bar, window_bar};
+pub use answer::{against, empty_bar, in_series, window_bar};
 
 use std::sync::Arc;
 
@@ -122,6 +122,7 @@ pub fn short(field: Field) -> &'static str {
         Field::PackPeakTime => "Peak time",
         Field::PackColdLock => "Cold lock",
         Field::OwnProtection => "Protection",
+        Field::SleepingRoom => "Sleeping",
         Field::TieResistance => "Resistance",
         Field::BankTemperature => "Temperature",
         other => other.name(),

@@ -34,7 +34,7 @@ pub fn reading(ask: ReadSignal<Ask>) -> AnyView {
     };
     let hints = Hints { stands_in: Arc::new(stands_in), waits: Arc::new(|_| None), note: Arc::new(|_| None) };
     view! {
-        <Fold id="cells/rest" title="Cells at rest" says=derived(|| "what the meter reads, and the odd ones".to_owned())>
+        <Fold id="cells/rest" title="Cells at rest" says=derived(|| "charge, and the odd ones".to_owned())>
             <div class="fields">{fields_of(&FORM, &FIELDS, &hints)}</div>
             {dynamic(move || {
                 let told = use_draft().with(|pads| ask.with(|ask| told(&pads.of(TOOL), ask)));

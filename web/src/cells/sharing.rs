@@ -8,7 +8,7 @@ use engine::sharing::Arrangement;
 use engine::show;
 use leptos::prelude::*;
 
-use crate::derived::{derived, when};
+use crate::derived::{derived, dynamic, when};
 use crate::fold::Fold;
 use crate::tool_page::figures;
 
@@ -24,9 +24,9 @@ pub fn sharing(ask: ReadSignal<Ask>) -> AnyView {
                 <Fold
                     id="cells/sharing"
                     title="Sharing"
-                    says=derived(|| "what each string carries, by take-off".to_owned())
+                    says=derived(|| "string by string, by take-off".to_owned())
                 >
-                    {crate::derived::dynamic(move || ask.with(told))}
+                    {dynamic(move || ask.with(told))}
                 </Fold>
             }
             .into_any()
