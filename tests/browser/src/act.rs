@@ -3,7 +3,10 @@
 use std::path::Path;
 
 use anyhow::{Context, Result, bail, ensure};
-use fantoccini::{elements::Element, wd::WebDriverCompatibleCommand};
+use fantoccini::{
+    elements::Element,
+    wd::{WebDriverCompatibleCommand, WindowHandle},
+};
 use serde_json::{Value, json};
 
 use crate::{Kind, Site};
@@ -62,6 +65,20 @@ impl Site {
             field.send_keys(&format!("{END}{}", BACKSPACE.repeat(holds.chars().count()))).await?;
         }
         Ok(())
+    }
+
+    /// Opens the page in another tab of the same browser and goes there. Gives back the tab that was left.
+    pub async fn another_tab(&self, path: &str) -> Result<WindowHandle> {
+        let before = self.browser.window().await?;
+        let opened = self.browser.new_window(true).await?;
+        self.browser.switch_to_window(opened.handle).await?;
+        self.browser.goto(&format!("{}{path}", self.address())).await?;
+        Ok(before)
+    }
+
+    /// Goes to a tab that is open.
+    pub async fn go_to_tab(&self, tab: WindowHandle) -> Result<()> {
+        Ok(self.browser.switch_to_window(tab).await?)
     }
 
     /// Leaves the field that has the caret, as the tab key does.

@@ -162,3 +162,69 @@ fn the_checks_stand_worst_first_with_their_working() {
         Ok(())
     });
 }
+
+/// Two tabs on one site: what each wrote last is there, the later one beside the other under a name of its own.
+#[test]
+fn two_tabs_never_overwrite_each_other() {
+    visit(Screen::PHONE, async |site| {
+        line(site).await?;
+        site.press("Tarn cabin").await?;
+        is_written(site).await?;
+        let first = site.another_tab("#/line").await?;
+        site.element(".line .bus").await?;
+        site.type_into("Name of the site", "There").await?;
+        site.leave().await?;
+        is_written(site).await?;
+        site.go_to_tab(first).await?;
+        site.type_into("Name of the site", "Here").await?;
+        site.leave().await?;
+        shows(site, "Yours is kept beside it").await?;
+        is_written(site).await?;
+        site.press("Sheet").await?;
+        for name in ["There", "Here (this tab)"] {
+            site.button(name).await?;
+        }
+        Ok(())
+    });
+}
+
+/// The page is torn away right behind a keystroke, again and again: at most that keystroke is lost.
+#[test]
+fn a_page_torn_away_in_mid_typing_loses_one_keystroke_at_most() {
+    visit(Screen::PHONE, async |site| {
+        line(site).await?;
+        six_taps(site).await?;
+        is_written(site).await?;
+        let mut typed = String::new();
+        for letter in "Tern Point hut".chars() {
+            typed.push(letter);
+            site.type_on("Name of the site", &letter.to_string()).await?;
+            site.reload().await?;
+            site.element(".line .bus").await?;
+            let there = site.value_of("Name of the site").await?;
+            let mut before = typed.clone();
+            before.pop();
+            ensure!(there == typed || there == before, "\"{there}\" of \"{typed}\"");
+            typed = there;
+        }
+        Ok(())
+    });
+}
+
+#[test]
+fn undo_leads_back_to_where_there_was_no_site() {
+    visit(Screen::PHONE, async |site| {
+        line(site).await?;
+        site.press("Kestrel Ridge hut").await?;
+        site.press("Controller").await?;
+        site.type_into("Input limit", "250").await?;
+        site.press("Line").await?;
+        site.press("Undo: Input limit").await?;
+        site.press("Undo: the site").await?;
+        site.element(".six-box").await?;
+        site.press("Redo: the site").await?;
+        site.press("Redo: Input limit").await?;
+        site.element(".line .bus").await?;
+        Ok(())
+    });
+}
