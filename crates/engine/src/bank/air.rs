@@ -7,7 +7,7 @@ use super::window::cells;
 use super::{energy, settled};
 use crate::check::{Basis, Check, FieldSet, Limit, Origin, Outcome, Steps};
 use crate::chemistry::{
-    Family, Gas, Span, air_flow, freezing_point, gas_current, keep_clear, natural_opening, water_split,
+    Family, Freezing, Gas, Span, air_flow, freezing_point, gas_current, keep_clear, natural_opening, water_split,
 };
 use crate::entry::Entry;
 use crate::field::Field;
@@ -207,7 +207,11 @@ pub fn air_and_water(ask: &Ask) -> Option<AirAndWater> {
     let in_block = counted(ask.block_cells(basis)?.get());
     let gassing = gassing(ask, basis, &mut Steps::silent())?;
     let aired = gassing.as_ref().map(|gassing| aired(gassing, in_series, &mut Steps::silent()));
-    let lowest = ask.lowest_charge(figures, basis)?;
+    // Lye and lithium freeze, or not, whatever the charge.
+    let lowest = match figures.freezing {
+        Freezing::AcidByCharge => ask.lowest_charge(figures, basis)?,
+        Freezing::Lye(..) | Freezing::Nothing => Percent::new(0.0),
+    };
     Some(AirAndWater {
         gassing: gassing.as_ref().map(|gassing| gassing.current),
         flow: aired.map(|(flow, _)| flow),

@@ -7,8 +7,9 @@ use super::{Ask, settled};
 use crate::check::{Basis, FieldSet, Step, Steps};
 use crate::chemistry::{Figures, RATED_AT, Span};
 use crate::entry::Entry;
-use crate::quantity::{Amount, Celsius, Percent, Quantity, Volts};
+use crate::quantity::{Amount, Celsius, Percent, Quantity, Volts, VoltsPerKelvin};
 use crate::source::{self, Clause};
+use crate::unit::Unit;
 
 /// One line of the card.
 #[derive(Clone, Debug, PartialEq)]
@@ -61,11 +62,12 @@ pub fn settings(ask: &Ask) -> Option<Settings> {
     let per_kelvin = compensation(ask, figures, basis)?;
     lines.push(Setting {
         name: "Compensation",
-        amount: (per_kelvin.get() != 0.0).then(|| (per_kelvin * cells).amount()),
-        each: (per_kelvin.get() != 0.0).then(|| per_kelvin.amount()),
-        range: figures
-            .compensation
-            .map(|figure| Span { least: (figure.range.least * cells).amount(), greatest: (figure.range.greatest * cells).amount() }),
+        amount: (per_kelvin.get() != 0.0).then(|| millivolts(per_kelvin * cells)),
+        each: (per_kelvin.get() != 0.0).then(|| millivolts(per_kelvin)),
+        range: figures.compensation.map(|figure| Span {
+            least: millivolts(figure.range.least * cells),
+            greatest: millivolts(figure.range.greatest * cells),
+        }),
         note: if per_kelvin.get() == 0.0 {
             "Off: these cells are charged to the same voltage warm and cold."
         } else {
@@ -95,6 +97,11 @@ pub fn settings(ask: &Ask) -> Option<Settings> {
         source: figures.charging.lowest.source,
     });
     Some(Settings { lines, assumed: basis.assumed() })
+}
+
+/// As chargers ask for it.
+fn millivolts(per_kelvin: VoltsPerKelvin) -> Amount {
+    Amount { number: per_kelvin.get() * 1000.0, unit: Unit::MillivoltPerKelvin }
 }
 
 /// The steps to the absorb voltage at 25 °C, the first line of the card.

@@ -63,7 +63,8 @@ pub(super) fn cells(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<f
         (
             "blocks · cells in each",
             format!("{} × {}", show::number(series.get(), 0), show::number(in_block.get(), 0)),
-            Origin::Entered(Field::CellsInSeries),
+            // The count in series may be entered, or that of the best layout.
+            Origin::Before,
         )
     });
     Some(cells.get())
@@ -165,15 +166,14 @@ pub(super) fn held(
 /// Highest voltage of the string on charge, at the coldest, and its stage.
 pub(super) fn highest(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<(Volts, Stage)> {
     let at = coldest(ask, basis);
-    let equalise = held(ask, Stage::Equalise, at, basis, steps);
-    match equalise? {
-        // An equalise voltage below the absorb voltage is a slip that must not hide the higher one.
-        Some(equalise) => {
-            let absorb = held(ask, Stage::Absorb, at, basis, &mut Steps::silent())??;
-            Some(if equalise >= absorb { (equalise, Stage::Equalise) } else { (absorb, Stage::Absorb) })
-        }
-        None => Some((held(ask, Stage::Absorb, at, basis, steps)??, Stage::Absorb)),
-    }
+    let mut silent = |stage| held(ask, stage, at, basis, &mut Steps::silent());
+    let (equalise, absorb) = (silent(Stage::Equalise)?, silent(Stage::Absorb));
+    // An equalise voltage below the absorb voltage is a slip that must not hide the higher one.
+    let stage = match equalise {
+        Some(equalise) if equalise >= absorb?? => Stage::Equalise,
+        _ => Stage::Absorb,
+    };
+    Some((held(ask, stage, at, basis, steps)??, stage))
 }
 
 /// Voltage of the string at the end of discharge. V = n · V_end

@@ -57,11 +57,30 @@ pub fn bank_ask(site: &Site, part: &Part) -> bank::Ask {
     let inverters = |field| site.of_kind(PartKind::Inverter).map(move |part| part.entries.entry::<Volts>(field));
     ask.inverter_low = greatest(inverters(Field::InverterLow));
     ask.inverter_high = least(inverters(Field::InverterHigh));
+    if ask.greatest_load == Entry::Blank {
+        ask.greatest_load = inverters_at_full(site);
+    }
     ask.without_inverter = site.first(PartKind::Inverter).is_none();
     let panels = |field| site.of_kind(PartKind::DcPanel).map(move |part| part.entries.entry::<Volts>(field));
     ask.loads_low = greatest(panels(Field::LoadsLow));
     ask.loads_high = least(panels(Field::LoadsHigh));
     ask
+}
+
+/// What all inverters draw at their full power: the cautious end of the greatest steady load. Blank where there is none, or
+/// one does not tell.
+fn inverters_at_full(site: &Site) -> Entry<Watts> {
+    let mut all = None;
+    for part in site.of_kind(PartKind::Inverter) {
+        match part.entries.entry::<Watts>(Field::InverterContinuous) {
+            Entry::Typed(watts) => {
+                let drawn = watts / run::assumed::INVERTER_EFFICIENCY.share();
+                all = Some(all.unwrap_or_default() + drawn);
+            }
+            other => return other,
+        }
+    }
+    all.map_or(Entry::Blank, Entry::Typed)
 }
 
 /// The sum. Blank where one is blank, unread where one is unread.

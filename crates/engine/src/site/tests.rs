@@ -62,6 +62,14 @@ fn two_controllers_charge_together_and_the_worst_limit_counts() {
 }
 
 #[test]
+fn the_greatest_load_of_a_bank_is_its_inverter_at_full_power() {
+    let site = room();
+    let ask = bank_ask(&site, site.first(PartKind::Bank).unwrap());
+    // 3000 W over 0.90, by hand.
+    assert!((ask.greatest_load.typed().unwrap().get() - 3000.0 / 0.9).abs() < 1e-9);
+}
+
+#[test]
 fn exactly_one_bond_in_each_mode() {
     let mut site = room();
     let (inverter, panel) = (id(&site, PartKind::Inverter), id(&site, PartKind::AcPanel));
