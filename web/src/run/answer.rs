@@ -247,7 +247,7 @@ pub mod tests {
     fn four_entries_name_conductor_breaker_and_drop() {
         let answer = of_rows(PLATE);
         assert_eq!(plain(&answer.of), "Controller to bus, 3 ft one way, 120.0 A flows");
-        assert_eq!((answer.number.as_str(), answer.unit), ("1/0", "AWG"));
+        assert_eq!((answer.number.as_str(), answer.unit.as_ref()), ("1/0", "AWG"));
         assert_eq!(answer.most.as_deref().map(plain).as_deref(), Some("Breaker 150 A"));
         // By hand: 6 ft of 0.122 Ω a thousand feet at 75 °C, at 60 °C 0.116: 120 A lose 0.084 V, 10 W; of six cells each
         // 14 mV.
@@ -322,7 +322,7 @@ pub mod tests {
     fn where_one_is_not_enough_equal_ones_lie_side_by_side() {
         let rows = [PLATE, &[(Field::RunCurrent, "600")]].concat();
         let answer = of_rows(&rows);
-        assert_eq!((answer.number.as_str(), answer.unit), ("2 × 500", "kcmil"));
+        assert_eq!((answer.number.as_str(), answer.unit.as_ref()), ("2 × 500", "kcmil"));
         assert!(answer.says.ends_with("equal ones side by side for each pole."), "{}", answer.says);
     }
 

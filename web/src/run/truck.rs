@@ -136,7 +136,7 @@ mod tests {
     fn a_size_alone_tells_how_many_amperes() {
         let answer = of_rows(TRUCK);
         assert_eq!(plain(&answer.of), "2.5 mm² carries at most, DC panel to loads");
-        assert_eq!((plain(&answer.number).as_str(), answer.unit), ("20.0", "A"));
+        assert_eq!((plain(&answer.number).as_str(), answer.unit.as_ref()), ("20.0", "A"));
         assert_eq!(plain(&answer.says), "On 20 A. Enter Voltage to know how far.");
         assert_eq!((answer.verdict, answer.most), (Verdict::Close, None));
         assert_eq!(of_rows(&TRUCK[1..]).says, "Waits for Kind of run.");
