@@ -121,7 +121,7 @@ fn a_hostile_text_is_refused_and_changes_nothing() {
         site.press("Sheet").await?;
         let wide = format!(
             r#"{{"linehut":"site","version":1,"name":"x","place":{{}},"parts":[{}]}}"#,
-            vec![r#"{"id":1,"kind":"array","entries":{}}"#; 5].join(",")
+            [r#"{"id":1,"kind":"array","entries":{}}"#; 5].join(",")
         );
         for text in ["{", "[]", r#"{"linehut":"site","version":9,"name":"","place":{},"parts":[]}"#, &wide] {
             site.type_into("Pasted link or file", text).await?;
