@@ -9,7 +9,7 @@ use engine::show;
 use leptos::prelude::*;
 
 use crate::answer::Answer;
-use crate::cells::{bank, empty_bar, in_series, short, stands_in, window_bar};
+use crate::cells::{assumed, bank, empty_bar, in_series, short, stands_in, window_bar};
 use crate::derived::memo;
 use crate::form::{Form, Hints, names, waits};
 use crate::settled::settled;
@@ -25,16 +25,15 @@ static FORM: Form = Form {
         Field::CellVoltage,
         Field::CellCapacity,
         Field::NumberOfCells,
+        Field::BusVoltage,
+        Field::ColdestInTheRoom,
         Field::CellsInSeries,
         Field::StringsOfCells,
-        Field::ColdestInTheRoom,
-        Field::InverterLow,
     ],
     groups: &[(
         "By its maker",
         &[
             Field::CellsInABlock,
-            Field::BusVoltage,
             Field::CellEnd,
             Field::CellAbsorb,
             Field::CellFloat,
@@ -42,7 +41,9 @@ static FORM: Form = Form {
             Field::CellCompensation,
             Field::ChargeCap,
             Field::DepthUsed,
-            Field::ChargeCurrent,
+            Field::WarmestInTheRoom,
+            Field::PackChargeLimit,
+            Field::InverterLow,
             Field::InverterHigh,
             Field::LoadsHigh,
             Field::LoadsLow,
@@ -78,8 +79,9 @@ pub fn settings_tool() -> AnyView {
         answer,
         working: Box::new(move || ask.with(settings_working)),
         hints,
-        before: vec![card],
-        after: Vec::new(),
+        before: Vec::new(),
+        // Below the inputs: it comes while the last of them is typed, and must not push that away.
+        after: vec![card],
         cautions: CAUTIONS,
     })
 }
@@ -107,7 +109,7 @@ fn answer(ask: &Ask) -> Answer {
         most: None,
         rests: card
             .filter(|card| !card.assumed.is_empty())
-            .map(|card| format!("Assumed until its data sheet says otherwise: {}.", names(card.assumed))),
+            .map(|card| format!("Assumed until its data sheet says otherwise: {}.", assumed(card.assumed))),
         besides: None,
         bar: Some(layout.as_ref().map_or_else(empty_bar, window_bar)),
         second: None,

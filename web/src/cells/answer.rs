@@ -1,7 +1,7 @@
 //! The answer of the Cells tool, worded and drawn. Pure.
 
 use engine::bank::{Advice, Ask, Layout, Layouts, Requirement, Stage, advice_on, assess, lacks, layouts};
-use engine::check::{Check, Cost, Sense, Verdict};
+use engine::check::{Check, Cost, FieldSet, Sense, Verdict};
 use engine::field::Field;
 use engine::pad::Pad;
 use engine::quantity::{Amount, Quantity, Volts};
@@ -122,7 +122,7 @@ fn rests(worst: Option<&Check<Requirement>>, advice: &[Advice]) -> Option<String
         let room = check.room().map(show::room).unwrap_or_default();
         parts.push(format!("{}: {}, {room} left.", check.id.name(), against(check)));
         if !check.assumed.is_empty() {
-            parts.push(format!("Close until that is confirmed: {}.", names(check.assumed)));
+            parts.push(format!("Close until that is confirmed: {}.", assumed(check.assumed)));
         }
     }
     // Other devices are worth a word where these leave something to wish for.
@@ -139,6 +139,11 @@ pub fn in_series(layout: &Layout) -> String {
         1 => format!("{} in series", layout.series),
         strings => format!("{} in series × {strings}", layout.series),
     }
+}
+
+/// Names of what was assumed, as in "Absorb, Float and Depth used": all are of a cell, which need not be said each time.
+pub fn assumed(fields: FieldSet) -> String {
+    names(fields).replace(", a cell", "")
 }
 
 /// "18.5 V, at most 16 V".

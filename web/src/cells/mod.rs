@@ -5,7 +5,7 @@ mod layouts;
 mod reading;
 mod sharing;
 
-pub use answer::{against, empty_bar, in_series, window_bar};
+pub use answer::{against, assumed, empty_bar, in_series, window_bar};
 
 use std::sync::Arc;
 
@@ -187,9 +187,10 @@ pub fn cells_tool() -> AnyView {
         answer,
         working: Box::new(move || ask.with(steps)),
         hints: hints(ask, lacks, checks),
-        before: vec![energy(ask)],
+        before: Vec::new(),
         after: vec![
             layouts::layout_list(rested),
+            energy(ask),
             crate::shelf::shelf_section(),
             check_rows(&FORM, rested, checks),
             sharing::sharing(rested),
