@@ -98,7 +98,7 @@ impl Site {
             }
         }
         // The browser's own first page is not ours.
-        asked.retain(|it| !it.starts_with("chrome://") && !it.starts_with("about:"));
+        asked.retain(|it| !["chrome://", "chrome-untrusted://", "about:"].iter().any(|own| it.starts_with(own)));
         Ok(asked)
     }
 
