@@ -124,7 +124,10 @@ impl Storage {
         } else {
             (list.iter().map(|one| one.key).max().unwrap_or(0).max(site.key) + 1, 1)
         };
-        let name = if key == site.key { site.name.clone() } else { format!("{} (this tab)", site.name) };
+        // Once beside another tab's, always told apart from it in the list.
+        let beside = |one: &KeptSite| one.key == key && one.name.ends_with(BESIDE);
+        let apart = key != site.key || list.iter().any(beside);
+        let name = if apart { format!("{}{BESIDE}", site.name) } else { site.name.clone() };
         match list.iter_mut().find(|one| one.key == key) {
             Some(one) => one.name = name,
             None => list.push(KeptSite { key, name }),
@@ -159,6 +162,9 @@ impl Storage {
         Ok(())
     }
 }
+
+/// What stands behind the name of a site that was put beside another tab's.
+const BESIDE: &str = " (this tab)";
 
 /// The record that lists the sites: key and name, a line each.
 const SITES: &str = "sites";
