@@ -510,6 +510,8 @@ fields! {
         ("t", "T"),
         ("u", "U"),
     ]);
+    /// Current of a motor with its rotor standing still, from its nameplate.
+    LockedRotor, "Locked-rotor current", number(Unit::Amp, 0.1, 5000.0);
     /// Rated output of a motor.
     MotorSize, "Motor size", number(Unit::Horsepower, 1.0, 500_000.0);
     /// Power factor while it starts.

@@ -80,6 +80,7 @@ pub const fn home(field: F) -> Option<Home> {
         | F::StartsAs
         | F::StartingMultiple
         | F::CodeLetter
+        | F::LockedRotor
         | F::MotorSize
         | F::StartingPowerFactor
         | F::RunningPowerFactor

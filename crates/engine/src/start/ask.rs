@@ -56,6 +56,10 @@ pub struct Ask {
     pub multiple: Entry<Count>,
     /// Code letter of the motor.
     pub letter: Entry<Letter>,
+    /// Current with the rotor standing still.
+    pub locked_rotor: Entry<Amps>,
+    /// Voltage of the alternating side.
+    pub ac_volts: Entry<Volts>,
     /// Rated output of the motor.
     pub motor: Entry<Watts>,
     /// Power factor while it starts.
@@ -121,6 +125,8 @@ impl Ask {
             starts_as: pad.choice(Field::StartsAs),
             multiple: pad.entry(Field::StartingMultiple),
             letter: pad.choice(Field::CodeLetter),
+            locked_rotor: pad.entry(Field::LockedRotor),
+            ac_volts: pad.entry(Field::AcVolts),
             motor: pad.entry(Field::MotorSize),
             starting_factor: pad.entry(Field::StartingPowerFactor),
             running_factor: pad.entry(Field::RunningPowerFactor),
@@ -156,6 +162,8 @@ impl Ask {
             running: positive(self.running),
             how_many: positive(self.how_many),
             multiple: positive(self.multiple),
+            locked_rotor: positive(self.locked_rotor),
+            ac_volts: positive(self.ac_volts),
             motor: positive(self.motor),
             starting_factor: positive(self.starting_factor),
             running_factor: positive(self.running_factor),
@@ -201,6 +209,11 @@ impl Ask {
         }
     }
 
+    /// Whether the motor's nameplate told what it takes with its rotor standing still.
+    fn told_standing_still(&self) -> Option<()> {
+        (self.letter.typed().is_some() || self.locked_rotor.typed().is_some()).then_some(())
+    }
+
     /// Three quarters up the range: sources differ, and the high end is rare.
     pub(super) fn usual_multiple(&self) -> Option<Count> {
         let (least, most) = self.usual()?.multiple;
@@ -210,7 +223,7 @@ impl Ask {
     pub(super) fn usual_starting_factor(&self) -> Option<Count> {
         // A rotor that stands still, where a motor's nameplate was entered and nothing else is known.
         self.usual().map_or_else(
-            || self.letter.typed().map(|_| Count::new(0.5)),
+            || self.told_standing_still().map(|()| Count::new(0.5)),
             |usual| Some(Count::new(usual.starting_factor)),
         )
     }
@@ -220,7 +233,7 @@ impl Ask {
     }
 
     pub(super) fn usual_seconds(&self) -> Option<Seconds> {
-        self.usual().map_or_else(|| self.letter.typed().map(|_| Seconds::new(1.0)), |usual| Some(usual.seconds))
+        self.usual().map_or_else(|| self.told_standing_still().map(|()| Seconds::new(1.0)), |usual| Some(usual.seconds))
     }
 
     /// *Chosen*: 2 mΩ, some two metres of 50 mm² and four lugs, there and back.

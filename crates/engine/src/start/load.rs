@@ -68,8 +68,8 @@ pub struct Phases {
 
 /// What this load draws in each phase. `None` where an input is missing, which the basis then names.
 ///
-/// Starting apparent power: by code letter, kVA for each horsepower at its upper end; else the multiple of the running
-/// apparent power.
+/// Starting apparent power: by code letter, kVA for each horsepower at its upper end; else by the locked-rotor current;
+/// else the multiple of the running apparent power.
 ///
 /// # Source
 ///
@@ -134,6 +134,16 @@ fn starting(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<Draws> {
                     ("kVA/hp · hp", put_in, Origin::Published(source::NEC.at("Table 430.7(B), the letter’s upper end")))
                 },
             ))
+        }
+        // Amperes from the nameplate go before a multiple.
+        Entry::Blank if ask.locked_rotor != Entry::Blank => {
+            let amps = basis.need(Field::LockedRotor, ask.locked_rotor);
+            let volts = basis.need(Field::AcVolts, ask.ac_volts);
+            let (amps, volts) = (amps?, volts?);
+            Some(steps.step("Apparent power with the rotor standing still", volts.times_alternating(amps), || {
+                let put_in = format!("{} × {}", show::given(volts.amount()), show::given(amps.amount()));
+                ("V · I", put_in, Origin::Entered(Field::LockedRotor))
+            }))
         }
         Entry::Blank => {
             let run = running(ask, basis);

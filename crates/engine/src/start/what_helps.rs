@@ -31,8 +31,10 @@ pub fn what_helps(ask: &Ask) -> Vec<Help> {
     let mut tried = Vec::new();
     if ask.usual_multiple().is_some_and(|usual| ask.multiple.typed().unwrap_or(usual).get() > SOFT)
         || ask.letter != Entry::Blank
+        || ask.locked_rotor != Entry::Blank
     {
-        let soft = Ask { multiple: Entry::Typed(Count::new(SOFT)), letter: Entry::Blank, ..*ask };
+        let soft =
+            Ask { multiple: Entry::Typed(Count::new(SOFT)), letter: Entry::Blank, locked_rotor: Entry::Blank, ..*ask };
         tried.push(("A soft starter that holds the start to 3 times its running current", soft));
     }
     let packs = ask.packs.typed().or(ask.bank.strings.typed()).map_or(1.0, Count::get);

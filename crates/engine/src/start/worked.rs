@@ -89,6 +89,16 @@ fn a_second_pack_mends_the_packs_and_not_the_inverter() {
     assert!(!pack.enough);
 }
 
+/// 52.1 A at 230 V are 11.983 kVA: the same start as by its letter, within a part in a thousand.
+#[test]
+fn a_locked_rotor_current_counts_as_its_letter_does() {
+    let by_amps = Ask { letter: Entry::Blank, locked_rotor: Entry::of(52.1), ac_volts: Entry::of(230.0), ..pump() };
+    let (letter, amps) = (value(&pump(), Requirement::Surge).0, value(&by_amps, Requirement::Surge).0);
+    assert!((amps / letter - 1.0).abs() < 1e-3, "{letter} {amps}");
+    let no_volts = Ask { ac_volts: Entry::Blank, ..by_amps };
+    assert!(Requirement::Surge.check(&no_volts).unwrap().asks.contains(crate::field::Field::AcVolts));
+}
+
 #[test]
 fn a_start_that_outlasts_the_surge_has_the_continuous_rating_only() {
     let ask = Ask { surge_seconds: Entry::of(0.5), ..pump() };
