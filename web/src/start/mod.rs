@@ -95,7 +95,7 @@ fn short(field: Field) -> &'static str {
         Field::InverterSurge => "Surge",
         Field::BankResistance => "Resistance",
         Field::RunningPower => "Running",
-        Field::AlreadyRunning => "Running",
+        Field::AlreadyRunning => "Already",
         Field::StartingMultiple => "Multiple",
         Field::StartingPowerFactor | Field::RunningPowerFactor => "Power factor",
         Field::StartingSeconds => "Seconds",

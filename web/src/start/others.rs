@@ -85,8 +85,8 @@ pub fn together_with(ask: ReadSignal<Ask>) -> AnyView {
     let draft = use_draft();
     view! {
         <Fold id="start/others" title="Other loads" says=derived(|| "what may run or start together".to_owned())>
-            {OTHERS.map(|other| of_another(other, &OF_A_LOAD, super::short)).into_iter().collect::<Vec<AnyView>>()}
             {dynamic(move || ask.with(|ask| table(draft, ask)))}
+            {OTHERS.map(|other| of_another(other, &OF_A_LOAD, super::short)).into_iter().collect::<Vec<AnyView>>()}
         </Fold>
     }
     .into_any()
@@ -107,7 +107,7 @@ fn table(draft: Draft, ask: &Ask) -> AnyView {
         }
     });
     if loads.len() < 2 {
-        return say("Enter a second load above to see what may go together.");
+        return say("Enter a second load below to see what may go together.");
     }
     let Some(limits) = Limits::of(ask) else { return say("Waits for what the inverter and the bus are.") };
     let found = together(&loads, &limits);
