@@ -48,8 +48,14 @@ fn every_cell_and_link_is_drawn_on_both_screens() {
 fn one_link_at_a_time_and_a_wrong_reading_is_told_at_once() {
     visit(Screen::PHONE, async |site| {
         shelf(site).await?;
-        site.press("Fit them one by one").await?;
-        shows(site, "Link 1 of 15").await?;
+        // The layout is made again a moment after the last figure: a press just before that is lost with the old one.
+        site.wait_for("the first link", async || {
+            if site.has_button("Fit them one by one").await? {
+                site.press("Fit them one by one").await?;
+            }
+            Ok(plain(&site.text().await?).contains("Link 1 of 15").then_some(()))
+        })
+        .await?;
         // Two cells of LiFePO4 at rest.
         site.type_into("Reading after link 1", "6.58").await?;
         shows(site, "As it must be").await?;

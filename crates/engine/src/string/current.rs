@@ -29,16 +29,17 @@ pub(super) fn short_circuit(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> 
 
 /// pwm-match: a PWM controller carries the whole array current: strings · Isc · sunlight factor ≤ its rating.
 ///
-/// Its rating is its PV current limit where that was entered, else its output current: they are one path.
+/// Its rating is the lesser of its PV current limit and its output current, of those that were entered: they are one path.
 pub(super) fn pwm(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     match ask.kind(basis) {
         Some(ControllerKind::Pwm) => {}
         Some(ControllerKind::Mppt) => return Outcome::DoesNotArise,
         None => return Outcome::Asks,
     }
-    let limit = match ask.controller.pv_current_limit.typed() {
-        Some(limit) => Some(limit),
-        None => basis.need(Field::OutputCurrent, ask.controller.output_current),
+    let limit = match (ask.controller.pv_current_limit.typed(), ask.controller.output_current.typed()) {
+        (Some(input), Some(output)) => Some(input.min(output)),
+        (Some(limit), None) | (None, Some(limit)) => Some(limit),
+        (None, None) => basis.need(Field::OutputCurrent, ask.controller.output_current),
     };
     let total = total_current(ask, LimitHoldsFactor::No, basis, steps);
     match (total, limit) {

@@ -321,6 +321,15 @@ fn a_coefficient_typed_without_its_sign_still_rises_in_the_cold() {
     assert_eq!(check(&ask(&more(RIDGE, &[(Field::VocCoefficient, "0.27")])), Requirement::ColdController).value, with);
 }
 
+/// A PWM controller's input and output are one path: the lesser rating counts.
+#[test]
+fn the_lesser_rating_of_a_pwm_controller_counts() {
+    let ask =
+        more(WHOLE, &[(Field::ControllerKind, "pwm"), (Field::PvCurrentLimit, "60"), (Field::OutputCurrent, "30")]);
+    let limit = Requirement::PwmMatch.check(&ask).unwrap().limit.unwrap();
+    assert_eq!(limit.amount.number, 30.0);
+}
+
 #[test]
 fn pwm_is_judged_by_its_own_rules() {
     let rows =
