@@ -324,9 +324,9 @@ fn a_coefficient_typed_without_its_sign_still_rises_in_the_cold() {
 /// A PWM controller's input and output are one path: the lesser rating counts.
 #[test]
 fn the_lesser_rating_of_a_pwm_controller_counts() {
-    let ask =
+    let rows =
         more(WHOLE, &[(Field::ControllerKind, "pwm"), (Field::PvCurrentLimit, "60"), (Field::OutputCurrent, "30")]);
-    let limit = Requirement::PwmMatch.check(&ask).unwrap().limit.unwrap();
+    let limit = Requirement::PwmMatch.check(&ask(&rows)).unwrap().limit.unwrap();
     assert_eq!(limit.amount.number, 30.0);
 }
 
