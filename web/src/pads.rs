@@ -63,6 +63,8 @@ pub enum SiteEdit {
     Name(Option<PartId>, String),
     /// What a part is joined to.
     Join(PartId, Option<PartId>),
+    /// What was typed into a tool by itself is put on the line: into the first part that it asks about, or a new one.
+    Put(Tool),
 }
 
 /// A site, and what it is kept under.
@@ -403,6 +405,7 @@ impl Pads {
             (SiteEdit::Open(site), _) => after = Some(site),
             (SiteEdit::Close, _) => after = None,
             (_, None) => return false,
+            (SiteEdit::Put(tool), Some(open)) => self.put_on(tool, &mut open.site),
             (SiteEdit::Add(kind), Some(open)) => drop(open.site.add(kind)),
             (SiteEdit::Remove(id), Some(open)) => open.site.remove(id),
             (SiteEdit::Duplicate(id), Some(open)) => drop(open.site.duplicate(id)),
@@ -419,6 +422,32 @@ impl Pads {
             }
         }
         self.put_site(after, what, what == What::Name)
+    }
+
+    /// Puts what was typed into `tool` by itself onto `site`, each figure to where it stands.
+    fn put_on(&self, tool: Tool, site: &mut Site) {
+        let Some(kind) = tool.asks_about() else { return };
+        let there = site.first(kind).map(|part| part.id);
+        let Some(id) = there.or_else(|| site.add(kind)) else { return };
+        for ((_, field), typed) in self.typed.0.iter().filter(|((one, _), _)| *one == tool.pad()) {
+            let slot = View::new(site, Subject::Part(id)).slot(*field);
+            let typed = engine::site::Typed { text: typed.text.clone(), unit: typed.unit };
+            match slot {
+                Some(Slot::Place) => site.place.set(*field, typed),
+                Some(Slot::Part(id)) => {
+                    if let Some(part) = site.part_mut(id) {
+                        part.entries.set(*field, typed);
+                        part.typical = false;
+                    }
+                }
+                Some(Slot::Run(id)) => {
+                    if let Some(run) = site.part_mut(id).and_then(|part| part.run.as_mut()) {
+                        run.set(*field, typed);
+                    }
+                }
+                None => {}
+            }
+        }
     }
 
     fn put_site(&mut self, after: Option<OpenSite>, what: What, join: bool) -> bool {
@@ -589,6 +618,23 @@ mod tests {
         assert!(pads.site().is_none());
         assert!(pads.edit(Edit::Redo, 22.0) && pads.edit(Edit::Redo, 23.0));
         assert_eq!(at(&pads).as_deref(), Some("111"));
+    }
+
+    #[test]
+    fn what_was_typed_by_itself_is_put_on_the_line() {
+        let mut pads = room();
+        type_in(&mut pads, VOC, "40.5", 10.0);
+        type_in(&mut pads, LOW, "-33", 20.0);
+        type_in(&mut pads, (Tool::String, Field::InputLimit), "97", 30.0);
+        assert!(pads.edit(Edit::Site(SiteEdit::Put(Tool::String)), 40.0));
+        let site = &pads.site().unwrap().site;
+        let text = |entries: &engine::site::Entries, field| entries.get(field).map(|one| one.text.clone());
+        assert_eq!(text(&site.first(PartKind::Array).unwrap().entries, Field::Voc).as_deref(), Some("40.5"));
+        assert_eq!(text(&site.first(PartKind::Controller).unwrap().entries, Field::InputLimit).as_deref(), Some("97"));
+        assert_eq!(text(&site.place, Field::RecordLow).as_deref(), Some("-33"));
+        pads.edit(Edit::Undo, 50.0);
+        let site = &pads.site().unwrap().site;
+        assert_ne!(text(&site.place, Field::RecordLow).as_deref(), Some("-33"));
     }
 
     #[test]

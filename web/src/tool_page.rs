@@ -58,6 +58,7 @@ pub fn tool_page(page: ToolPage) -> AnyView {
                     }
                 </Fold>
                 {before}
+                {put_on_the_line(inputs.tool)}
             </div>
             <div class="tool-right">
                 {ride(answer)}
@@ -68,6 +69,23 @@ pub fn tool_page(page: ToolPage) -> AnyView {
         </div>
     }
     .into_any()
+}
+
+/// Carries what was typed into the open site, where one is open and the tool stands by itself.
+fn put_on_the_line(tool: crate::tools::Tool) -> AnyView {
+    let draft = crate::draft::use_draft();
+    let can =
+        move || tool.asks_about().is_some() && draft.with(|pads| pads.site().is_some() && pads.subject().is_none());
+    let put = move |_| {
+        draft.edit(crate::pads::Edit::Site(crate::pads::SiteEdit::Put(tool)));
+        crate::route::go(Route::Line);
+    };
+    when(can, move || {
+        view! {
+            <div class="btns"><button class="btn" type="button" on:click=put>"Put on the line"</button></div>
+        }
+        .into_any()
+    })
 }
 
 /// The name of the tool and the way back; of the part, where one is looked at.

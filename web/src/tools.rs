@@ -53,6 +53,17 @@ impl Tool {
         Self::SixthLoad,
     ];
 
+    /// The kind of part that it asks about; none for a run, which may be any of a site's.
+    pub const fn asks_about(self) -> Option<engine::site::PartKind> {
+        use engine::site::PartKind;
+        match self {
+            Self::String => Some(PartKind::Array),
+            Self::Cells | Self::Settings | Self::AirAndWater => Some(PartKind::Bank),
+            Self::Start => Some(PartKind::Load),
+            _ => None,
+        }
+    }
+
     /// Whether its entries are those of a part while one is looked at.
     pub const fn looks_at_sites(self) -> bool {
         matches!(self, Self::String | Self::Cells | Self::Run | Self::Start | Self::Settings | Self::AirAndWater)
