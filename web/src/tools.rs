@@ -31,6 +31,22 @@ pub enum Tool {
     FifthLoad,
     /// The sixth.
     SixthLoad,
+    /// The seventh.
+    SeventhLoad,
+    /// The eighth.
+    EighthLoad,
+    /// The ninth.
+    NinthLoad,
+    /// The tenth.
+    TenthLoad,
+    /// The eleventh.
+    EleventhLoad,
+    /// The twelfth.
+    TwelfthLoad,
+    /// The thirteenth.
+    ThirteenthLoad,
+    /// The fourteenth.
+    FourteenthLoad,
 }
 
 impl Tool {
@@ -51,6 +67,14 @@ impl Tool {
         Self::FourthLoad,
         Self::FifthLoad,
         Self::SixthLoad,
+        Self::SeventhLoad,
+        Self::EighthLoad,
+        Self::NinthLoad,
+        Self::TenthLoad,
+        Self::EleventhLoad,
+        Self::TwelfthLoad,
+        Self::ThirteenthLoad,
+        Self::FourteenthLoad,
     ];
 
     /// The kind of part that it asks about; none for a run, which may be any of a site's.
@@ -85,6 +109,14 @@ impl Tool {
             Self::FourthLoad => "start-fourth-load",
             Self::FifthLoad => "start-fifth-load",
             Self::SixthLoad => "start-sixth-load",
+            Self::SeventhLoad => "start-seventh-load",
+            Self::EighthLoad => "start-eighth-load",
+            Self::NinthLoad => "start-ninth-load",
+            Self::TenthLoad => "start-tenth-load",
+            Self::EleventhLoad => "start-eleventh-load",
+            Self::TwelfthLoad => "start-twelfth-load",
+            Self::ThirteenthLoad => "start-thirteenth-load",
+            Self::FourteenthLoad => "start-fourteenth-load",
         }
     }
 
@@ -122,6 +154,14 @@ impl Tool {
             Self::FourthLoad => "Fourth load",
             Self::FifthLoad => "Fifth load",
             Self::SixthLoad => "Sixth load",
+            Self::SeventhLoad => "Seventh load",
+            Self::EighthLoad => "Eighth load",
+            Self::NinthLoad => "Ninth load",
+            Self::TenthLoad => "Tenth load",
+            Self::EleventhLoad => "Eleventh load",
+            Self::TwelfthLoad => "Twelfth load",
+            Self::ThirteenthLoad => "Thirteenth load",
+            Self::FourteenthLoad => "Fourteenth load",
         }
     }
 
@@ -132,10 +172,9 @@ impl Tool {
             Self::Cells => "How do cells make a bank?",
             Self::Run => "Which cable and breaker?",
             Self::Settings => "What to key in?",
-            Self::Start | Self::SecondLoad | Self::ThirdLoad | Self::FourthLoad | Self::FifthLoad | Self::SixthLoad => {
-                "Will it start?"
-            }
             Self::AirAndWater => "What does its room need?",
+            // Start, and every load of it.
+            _ => "Will it start?",
         }
     }
 
@@ -146,11 +185,10 @@ impl Tool {
             Self::Cells => "s-cell",
             Self::Run => "s-run",
             Self::Settings => "s-inv",
-            Self::Start | Self::SecondLoad | Self::ThirdLoad | Self::FourthLoad | Self::FifthLoad | Self::SixthLoad => {
-                "s-motor"
-            }
             Self::AirAndWater => "s-bank",
             Self::SecondController | Self::ThirdController => "s-conv",
+            // Start, and every load of it.
+            _ => "s-motor",
         }
     }
 
@@ -160,11 +198,10 @@ impl Tool {
             Self::String | Self::SecondController | Self::ThirdController => crate::string::string_tool(),
             Self::Cells => crate::cells::cells_tool(),
             Self::Run => crate::run::run_tool(),
-            Self::Start | Self::SecondLoad | Self::ThirdLoad | Self::FourthLoad | Self::FifthLoad | Self::SixthLoad => {
-                crate::start::start_tool()
-            }
             Self::Settings => crate::settings::settings_tool(),
             Self::AirAndWater => crate::air::air_tool(),
+            // Start, and every load of it.
+            _ => crate::start::start_tool(),
         }
     }
 }

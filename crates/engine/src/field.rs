@@ -528,6 +528,21 @@ fields! {
     InverterSurge, "Inverter surge", number(Unit::VoltAmp, 1.0, 1_000_000.0);
     /// How long the surge lasts.
     SurgeSeconds, "Surge seconds", number(Unit::Second, 0.0, 1.0);
+    /// Apparent power that the inverter gives for a shorter time, where its nameplate tells two.
+    ShortSurge, "Short surge", number(Unit::VoltAmp, 1.0, 1_000_000.0);
+    /// How long that lasts.
+    ShortSurgeSeconds, "Short surge seconds", number(Unit::Second, 0.0, 1.0);
+    /// What feeds a load.
+    FedBy, "Fed by", Takes::Choice(&[
+        ("ac", "the inverter"),
+        ("dc", "the bus, direct current"),
+    ]);
+    /// How old the bank is, which decides its resistance.
+    BankAge, "Bank age", Takes::Choice(&[
+        ("new", "new"),
+        ("used", "some years"),
+        ("old", "old"),
+    ]);
     /// Efficiency of the inverter in a surge.
     InverterEfficiency, "Inverter efficiency", number(Unit::Percent, 10.0, 100.0);
     /// Voltage at which the inverter lets go.

@@ -38,6 +38,7 @@ static FORM: Form = Form {
         (
             "How it starts",
             &[
+                Field::FedBy,
                 Field::StartsAs,
                 Field::StartingMultiple,
                 Field::CodeLetter,
@@ -54,6 +55,8 @@ static FORM: Form = Form {
             "Inverter and breaker",
             &[
                 Field::SurgeSeconds,
+                Field::ShortSurge,
+                Field::ShortSurgeSeconds,
                 Field::InverterEfficiency,
                 Field::InverterAir,
                 Field::Height,
@@ -67,6 +70,7 @@ static FORM: Form = Form {
                 Field::CableResistance,
                 Field::Charge,
                 Field::BankTemperature,
+                Field::BankAge,
                 Field::Chemistry,
                 Field::CellVoltage,
                 Field::CellCapacity,
@@ -100,6 +104,7 @@ fn short(field: Field) -> &'static str {
         Field::StartingPowerFactor | Field::RunningPowerFactor => "Power factor",
         Field::StartingSeconds => "Seconds",
         Field::LockedRotor => "Locked-rotor",
+        Field::ShortSurgeSeconds => "Seconds",
         Field::InverterEfficiency => "Efficiency",
         Field::InverterAir => "Air",
         Field::CableResistance => "Cable",

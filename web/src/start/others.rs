@@ -9,7 +9,7 @@ use engine::start::{Ask, Help, Limits, Switched, Together, lowest_charge, switch
 use leptos::prelude::*;
 
 use super::TOOL;
-use crate::derived::{derived, dynamic};
+use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::{Draft, use_draft};
 use crate::fold::Fold;
 use crate::form::of_another;
@@ -18,7 +18,21 @@ use crate::tools::Tool;
 use crate::verdict::VerdictMark;
 
 /// Further loads, each in a pad of its own.
-const OTHERS: [Tool; 5] = [Tool::SecondLoad, Tool::ThirdLoad, Tool::FourthLoad, Tool::FifthLoad, Tool::SixthLoad];
+const OTHERS: [Tool; 13] = [
+    Tool::SecondLoad,
+    Tool::ThirdLoad,
+    Tool::FourthLoad,
+    Tool::FifthLoad,
+    Tool::SixthLoad,
+    Tool::SeventhLoad,
+    Tool::EighthLoad,
+    Tool::NinthLoad,
+    Tool::TenthLoad,
+    Tool::EleventhLoad,
+    Tool::TwelfthLoad,
+    Tool::ThirteenthLoad,
+    Tool::FourteenthLoad,
+];
 
 /// What is asked of each.
 const OF_A_LOAD: [Field; 6] = [
@@ -86,10 +100,24 @@ pub fn together_with(ask: ReadSignal<Ask>) -> AnyView {
     view! {
         <Fold id="start/others" title="Other loads" says=derived(|| "what may run or start together".to_owned())>
             {dynamic(move || ask.with(|ask| table(draft, ask)))}
-            {OTHERS.map(|other| of_another(other, &OF_A_LOAD, super::short)).into_iter().collect::<Vec<AnyView>>()}
+            {forms(draft)}
         </Fold>
     }
     .into_any()
+}
+
+/// A form for each load that was entered, and one more.
+fn forms(draft: Draft) -> Vec<AnyView> {
+    let wanted = memo(move || {
+        let entered =
+            |tool: &Tool| draft.with(|pads| OF_A_LOAD.iter().any(|field| !pads.typed((*tool, *field)).text.is_empty()));
+        OTHERS.iter().rposition(entered).map_or(1, |last| last + 2)
+    });
+    OTHERS
+        .into_iter()
+        .enumerate()
+        .map(|(place, other)| when(move || place < wanted.get(), move || of_another(other, &OF_A_LOAD, super::short)))
+        .collect()
 }
 
 fn table(draft: Draft, ask: &Ask) -> AnyView {

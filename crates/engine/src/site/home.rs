@@ -69,9 +69,13 @@ pub const fn home(field: F) -> Option<Home> {
         F::PanelBond | F::PanelLegs | F::Multiwire | F::GridFeeds | F::TransferSwitch => Home::Of(PartKind::AcPanel),
         F::GeneratorBond | F::NeutralSwitched => Home::Of(PartKind::Generator),
         F::SourcePower | F::OverspeedVolts | F::DumpLoad => Home::Of(PartKind::OtherSource),
-        F::InverterSurge | F::SurgeSeconds | F::InverterEfficiency | F::CutOff | F::InverterAir => {
-            Home::Of(PartKind::Inverter)
-        }
+        F::InverterSurge
+        | F::SurgeSeconds
+        | F::ShortSurge
+        | F::ShortSurgeSeconds
+        | F::InverterEfficiency
+        | F::CutOff
+        | F::InverterAir => Home::Of(PartKind::Inverter),
         F::GeneratorRating | F::ChargerDraw => Home::Of(PartKind::Generator),
         F::Height => Home::Place,
         F::Isolator
@@ -80,6 +84,8 @@ pub const fn home(field: F) -> Option<Home> {
         | F::StartsAs
         | F::StartingMultiple
         | F::CodeLetter
+        | F::FedBy
+        | F::BankAge
         | F::LockedRotor
         | F::MotorSize
         | F::StartingPowerFactor

@@ -41,6 +41,47 @@ impl Choice for Curve {
     }
 }
 
+/// What feeds a load.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum FedBy {
+    /// The inverter.
+    Inverter,
+    /// The bus itself.
+    Bus,
+}
+
+impl Choice for FedBy {
+    fn of_key(key: &str) -> Option<Self> {
+        Some(match key {
+            "ac" => Self::Inverter,
+            "dc" => Self::Bus,
+            _ => return None,
+        })
+    }
+}
+
+/// How old a bank is.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Age {
+    /// New: the least resistance of its chemistry.
+    New,
+    /// Some years: half-way.
+    Used,
+    /// Old: the greatest.
+    Old,
+}
+
+impl Choice for Age {
+    fn of_key(key: &str) -> Option<Self> {
+        Some(match key {
+            "new" => Self::New,
+            "used" => Self::Used,
+            "old" => Self::Old,
+            _ => return None,
+        })
+    }
+}
+
 /// One start, on one inverter, on one bus.
 #[derive(Clone, Copy, Debug, Default, PartialEq)]
 pub struct Ask {
@@ -76,6 +117,14 @@ pub struct Ask {
     pub inverter_surge: Entry<VoltAmps>,
     /// The surge time.
     pub surge_seconds: Entry<Seconds>,
+    /// What it gives for a shorter time.
+    pub short_surge: Entry<VoltAmps>,
+    /// That shorter time.
+    pub short_seconds: Entry<Seconds>,
+    /// What feeds the load.
+    pub fed_by: Entry<FedBy>,
+    /// How old the bank is.
+    pub age: Entry<Age>,
     /// Its efficiency meanwhile.
     pub efficiency: Entry<Percent>,
     /// The volts at which it lets go.
@@ -135,6 +184,10 @@ impl Ask {
             inverter_continuous: pad.entry(Field::InverterContinuous),
             inverter_surge: pad.entry(Field::InverterSurge),
             surge_seconds: pad.entry(Field::SurgeSeconds),
+            short_surge: pad.entry(Field::ShortSurge),
+            short_seconds: pad.entry(Field::ShortSurgeSeconds),
+            fed_by: pad.choice(Field::FedBy),
+            age: pad.choice(Field::BankAge),
             efficiency: pad.entry(Field::InverterEfficiency),
             cut_off: pad.entry(Field::CutOff),
             inverter_air: pad.entry(Field::InverterAir),
@@ -172,6 +225,8 @@ impl Ask {
             inverter_continuous: positive(self.inverter_continuous),
             inverter_surge: positive(self.inverter_surge),
             surge_seconds: not_negative(self.surge_seconds),
+            short_surge: positive(self.short_surge),
+            short_seconds: not_negative(self.short_seconds),
             efficiency: positive(self.efficiency),
             cut_off: positive(self.cut_off),
             inverter_air: finite(self.inverter_air),
@@ -212,6 +267,11 @@ impl Ask {
     /// Whether the motor's nameplate told what it takes with its rotor standing still.
     fn told_standing_still(&self) -> Option<()> {
         (self.letter.typed().is_some() || self.locked_rotor.typed().is_some()).then_some(())
+    }
+
+    /// Whether the bus feeds it, with no inverter between. Nobody asks for it where nothing was said.
+    pub(super) fn on_the_bus(&self) -> bool {
+        self.fed_by == Entry::Typed(FedBy::Bus)
     }
 
     /// Three quarters up the range: sources differ, and the high end is rare.

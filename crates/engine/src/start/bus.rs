@@ -1,6 +1,6 @@
 //! The bus as a start sees it: a force behind a resistance.
 
-use super::ask::positive;
+use super::ask::{Age, positive};
 use super::{AGED, Ask, CHARGE};
 use crate::bank;
 use crate::check::{Basis, Origin, Steps};
@@ -54,7 +54,13 @@ fn by_its_cells(ask: &Ask, charge: Option<Percent>, basis: &mut Basis) -> Option
     let resistance = match ask.bank_resistance {
         Entry::Blank => {
             let cold = cold(ask.bank_temperature.typed());
-            figures.resistance(capacity).greatest * (cells / strings * cold)
+            let span = figures.resistance(capacity);
+            let one = match basis.assume(Field::BankAge, ask.age, Age::Old)? {
+                Age::New => span.least,
+                Age::Used => (span.least + span.greatest) / 2.0,
+                Age::Old => span.greatest,
+            };
+            one * (cells / strings * cold)
         }
         entry => basis.need(Field::BankResistance, entry)?,
     };

@@ -16,7 +16,7 @@ mod what_helps;
 mod worked;
 
 pub use ask::Ask;
-pub use ask::{Curve, Letter};
+pub use ask::{Age, Curve, FedBy, Letter};
 pub use bus::{lowest_charge, seen, told};
 pub use class::{Class, Kind, usual};
 pub use load::{Draws, Phases, phases};
@@ -71,6 +71,12 @@ pub fn assumption(ask: &Ask, field: Field) -> Option<Assumption> {
         ),
         Field::CableResistance => amount(ask.usual_cable().amount(), "two metres of thick cable and its lugs"),
         Field::Charge => amount(CHARGE.amount(), "half full"),
+        Field::BankAge => Assumption {
+            amount: None,
+            choice: Some("old"),
+            why: "the greatest resistance of its chemistry",
+            source: chosen,
+        },
         Field::AlreadyRunning => amount(crate::quantity::Watts::new(0.0).amount(), "nothing else runs"),
         Field::HowMany => amount(crate::quantity::Count::new(1.0).amount(), "one"),
         Field::Packs => amount(crate::quantity::Count::new(1.0).amount(), "one"),

@@ -151,6 +151,9 @@ fn derated(ask: &Ask, basis: &mut Basis) -> Option<f64> {
 /// inverter-surge: apparent power of the start on top of what runs ≤ the surge, where that lasts as long as the start.
 fn surge(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let phases = phases(ask, basis, steps);
+    if ask.on_the_bus() {
+        return Outcome::DoesNotArise;
+    }
     let lasts = basis.assume(Field::SurgeSeconds, ask.surge_seconds, SURGE_SECONDS);
     let continuous = positive(ask.inverter_continuous);
     let surge = match (positive(ask.inverter_surge), continuous) {
@@ -163,8 +166,15 @@ fn surge(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
     let (Some(phases), Some(lasts), Some(surge), Some(derated)) = (phases, lasts, surge, derated) else {
         return Outcome::Asks;
     };
-    // A start that outlasts the surge has only what the inverter gives for long.
-    let rating = if phases.seconds <= lasts {
+    // Of two surges the shorter and greater counts where the start is that short. One that outlasts both has only what
+    // the inverter gives for long.
+    let short = match (ask.short_surge, ask.short_seconds) {
+        (Entry::Typed(short), Entry::Typed(time)) if phases.seconds <= time => Some(short),
+        _ => None,
+    };
+    let rating = if let Some(short) = short {
+        if phases.seconds <= lasts { short.max(surge) } else { short }
+    } else if phases.seconds <= lasts {
         surge
     } else {
         let Some(continuous) = basis.need(Field::InverterContinuous, continuous) else { return Outcome::Asks };
@@ -179,6 +189,9 @@ fn surge(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
 
 /// inverter-steady: everything running ≤ what the inverter gives for long.
 fn steady(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
+    if ask.on_the_bus() {
+        return Outcome::DoesNotArise;
+    }
     let phases = phases(ask, basis, steps);
     let continuous = basis.need(Field::InverterContinuous, positive(ask.inverter_continuous));
     let derated = derated(ask, basis);
@@ -198,6 +211,10 @@ fn steady(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
 /// The draw of the start on the bus: P / η.
 fn on_the_bus(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Option<(Watts, Seconds)> {
     let phases = phases(ask, basis, steps);
+    if ask.on_the_bus() {
+        let phases = phases?;
+        return Some((phases.starting.active(), phases.seconds));
+    }
     let efficiency = basis.assume(Field::InverterEfficiency, positive(ask.efficiency), SURGE_EFFICIENCY);
     let (phases, efficiency) = (phases?, efficiency?);
     let watts = phases.starting.active();
@@ -346,7 +363,7 @@ pub fn volts(ask: &Ask) -> Option<[Option<Volts>; 3]> {
     let mut basis = Basis::default();
     let phases = phases(ask, &mut basis, &mut Steps::silent())?;
     let seen = bus::seen(ask, &mut basis, &mut Steps::silent())?;
-    let efficiency = ask.efficiency.typed().unwrap_or(SURGE_EFFICIENCY).share();
+    let efficiency = if ask.on_the_bus() { 1.0 } else { ask.efficiency.typed().unwrap_or(SURGE_EFFICIENCY).share() };
     let under = |watts: Watts| seen.under(watts / efficiency, &mut Steps::silent()).ok().map(|found| found.volts);
     Some([under(phases.before.active()), under(phases.starting.active()), under(phases.running.active())])
 }

@@ -100,6 +100,40 @@ fn a_locked_rotor_current_counts_as_its_letter_does() {
 }
 
 #[test]
+fn of_two_surges_the_one_that_lasts_long_enough_counts() {
+    let two = Ask { short_surge: Entry::of(15_000.0), short_seconds: Entry::of(1.5), ..pump() };
+    let limit = |ask: &Ask| Requirement::Surge.check(ask).unwrap().limit.unwrap().amount.number;
+    assert!((limit(&two) - 15_000.0).abs() < 1e-9);
+    assert!((limit(&Ask { seconds: Entry::of(3.0), ..two }) - 12_000.0).abs() < 1e-9);
+    assert!((limit(&Ask { seconds: Entry::of(8.0), ..two }) - 6000.0).abs() < 1e-9);
+}
+
+/// By hand: 6592.5 W straight from 52 V behind 19.96 mΩ: V = (52 + √(2704 − 4 · 0.01996 · 6592.5)) / 2 = 49.331 V.
+#[test]
+fn a_load_of_direct_current_has_no_inverter_between() {
+    let ask = Ask { fed_by: Entry::Typed(FedBy::Bus), ..pump() };
+    assert_eq!(Requirement::Surge.check(&ask), None);
+    assert_eq!(Requirement::Steady.check(&ask), None);
+    let (volts, ..) = value(&ask, Requirement::Sag);
+    let by_hand = f64::midpoint(52.0, (52.0_f64 * 52.0 - 4.0 * 0.019_96 * 6592.5).sqrt());
+    assert!((volts - by_hand).abs() < 1e-3, "{volts} {by_hand}");
+}
+
+/// An older bank sags more.
+#[test]
+fn age_counts_where_the_bank_is_known_by_its_cells() {
+    use crate::chemistry::Chemistry;
+    let mut ask = Ask { bank_voltage: Entry::Blank, bank_resistance: Entry::Blank, ..pump() };
+    ask.bank.chemistry = Entry::Typed(Chemistry::Lfp);
+    ask.bank.cell_voltage = Entry::of(3.2);
+    ask.bank.cell_capacity = Entry::of(280.0);
+    ask.bank.series = Entry::of(16.0);
+    let volts = |age| value(&Ask { age: Entry::Typed(age), ..ask }, Requirement::Sag).0;
+    let (new, used, old) = (volts(Age::New), volts(Age::Used), volts(Age::Old));
+    assert!(new > used && used > old, "{new} {used} {old}");
+}
+
+#[test]
 fn a_start_that_outlasts_the_surge_has_the_continuous_rating_only() {
     let ask = Ask { surge_seconds: Entry::of(0.5), ..pump() };
     let check = Requirement::Surge.check(&ask).unwrap();
