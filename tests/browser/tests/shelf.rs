@@ -58,8 +58,11 @@ fn one_link_at_a_time_and_a_wrong_reading_is_told_at_once() {
         })
         .await?;
         // Two cells of LiFePO4 at rest.
-        site.type_into("Reading after link 1", "6.58").await?;
-        shows(site, "As it must be").await?;
+        site.wait_for("the reading to be told", async || {
+            site.type_into("Reading after link 1", "6.58").await?;
+            Ok(plain(&site.text().await?).contains("As it must be").then_some(()))
+        })
+        .await?;
         site.press("Next").await?;
         shows(site, "Link 2 of 15").await?;
         // One of three cells turned round: two cells' volts are missing.

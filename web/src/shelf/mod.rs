@@ -57,6 +57,7 @@ fn inside() -> AnyView {
     let rested = settled(found);
     let layout: Memo<Found> = memo(move || rested.get().and_then(|asked| laid(&asked)));
     let none = Hints { stands_in: Arc::new(|_| None), waits: Arc::new(|_| None), note: Arc::new(move |_| None) };
+    let at = RwSignal::new(None::<usize>);
     let body = dynamic(move || {
         layout.with(|found| match found {
             Err(why) => view! { <p class="ranked-say">{why.clone()}</p> }.into_any(),
@@ -64,7 +65,7 @@ fn inside() -> AnyView {
                 {drawing::figure(layout)}
                 {lists::remarks(layout)}
                 <div class="caution" role="note"><b>"Caution"</b><p>{BURNS}</p></div>
-                {one_by_one::one_by_one(layout)}
+                {one_by_one::one_by_one(layout, at)}
                 {lists::lists(layout)}
             }
             .into_any(),

@@ -13,12 +13,13 @@ use crate::draft::{Draft, use_draft};
 use crate::pads::Edit;
 
 /// The step-through.
-pub fn one_by_one(layout: &Layout) -> AnyView {
+///
+/// `at` is the step that is open; it outlives the layout, which is made anew with each figure of the shelf.
+pub fn one_by_one(layout: &Layout, at: RwSignal<Option<usize>>) -> AnyView {
     let all = StoredValue::new(steps(layout));
     let count = layout.links.len();
     let cell = layout.cell;
     let draft = use_draft();
-    let at = RwSignal::new(None::<usize>);
     let begin = move |_| at.set(Some(0));
     let shown = dynamic(move || {
         let step = at.get().and_then(|place| Some((place, all.with_value(|all| all.get(place).cloned())?)));
