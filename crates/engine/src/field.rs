@@ -567,6 +567,8 @@ fields! {
         ("c", "C"),
         ("d", "D"),
     ]);
+    /// Times its rating that the breaker surely lets pass for the length of the start, where its maker says.
+    TripMultiple, "Trip multiple", number(Unit::One, 1.0, 50.0);
     /// Rating of the generator.
     GeneratorRating, "Generator rating", number(Unit::VoltAmp, 100.0, 1_000_000.0);
     /// What the charger takes from the generator.

@@ -113,7 +113,7 @@ fn locked_rotor_currents_by_letter() {
     }
 }
 
-/// The closed form against roots found by halving.
+/// The closed form against roots found by a library for it.
 #[test]
 fn constant_power_on_a_bus() {
     let rows = table::<Draw>(MOTORS, "constant_power");

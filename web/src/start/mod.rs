@@ -62,6 +62,7 @@ static FORM: Form = Form {
                 Field::Height,
                 Field::Breaker,
                 Field::TripCurve,
+                Field::TripMultiple,
             ],
         ),
         (

@@ -95,7 +95,8 @@ pub const fn home(field: F) -> Option<Home> {
         | F::AlreadyRunning
         | F::BankEmf
         | F::CableResistance
-        | F::TripCurve => return None,
+        | F::TripCurve
+        | F::TripMultiple => return None,
         F::RunKind
         | F::RunCurrent
         | F::RunPower

@@ -155,6 +155,8 @@ pub struct Ask {
     pub breaker: Entry<Amps>,
     /// Its trip curve.
     pub curve: Entry<Curve>,
+    /// Times its rating that it surely lets pass for as long, by its maker.
+    pub trip_multiple: Entry<Count>,
     /// Rating of the generator.
     pub generator: Entry<VoltAmps>,
     /// What the charger takes from it.
@@ -203,6 +205,7 @@ impl Ask {
             pack_peak_time: pad.entry(Field::PackPeakTime),
             breaker: pad.entry(Field::Breaker),
             curve: pad.choice(Field::TripCurve),
+            trip_multiple: pad.entry(Field::TripMultiple),
             generator: pad.entry(Field::GeneratorRating),
             charger: pad.entry(Field::ChargerDraw),
             bank: bank::Ask::read(pad),
@@ -241,6 +244,7 @@ impl Ask {
             pack_peak: positive(self.pack_peak),
             pack_peak_time: not_negative(self.pack_peak_time),
             breaker: positive(self.breaker),
+            trip_multiple: positive(self.trip_multiple),
             generator: positive(self.generator),
             charger: not_negative(self.charger),
             ..*self

@@ -306,14 +306,25 @@ fn breaker(ask: &Ask, basis: &mut Basis, steps: &mut Steps) -> Outcome {
         return Outcome::DoesNotArise;
     }
     let rating = basis.need(Field::Breaker, positive(ask.breaker));
-    let curve = basis.assume(Field::TripCurve, ask.curve, Curve::C);
+    // What the maker says goes before the band of a curve.
+    let stated = match ask.trip_multiple {
+        Entry::Blank => Some(None),
+        entry => basis.need(Field::TripMultiple, entry).map(Some),
+    };
+    let curve = match stated {
+        Some(None) => basis.assume(Field::TripCurve, ask.curve, Curve::C),
+        _ => Some(Curve::C),
+    };
     let loaded = loaded(ask, basis, steps);
-    let (Some(rating), Some(curve), Some((loaded, seconds))) = (rating, curve, loaded) else { return Outcome::Asks };
-    let times = match curve {
+    let (Some(rating), Some(curve), Some(stated), Some((loaded, seconds))) = (rating, curve, stated, loaded) else {
+        return Outcome::Asks;
+    };
+    let times = match (stated, curve) {
+        (Some(stated), _) => stated.get(),
         _ if seconds.get() > 1.0 => 2.55,
-        Curve::B => 3.0,
-        Curve::C => 5.0,
-        Curve::D => 10.0,
+        (None, Curve::B) => 3.0,
+        (None, Curve::C) => 5.0,
+        (None, Curve::D) => 10.0,
     };
     let limit = steps.step("What it surely lets pass for as long", rating * times, || {
         let put_in = format!("{} × {}", show::number(times, 2), show::given(rating.amount()));

@@ -156,6 +156,9 @@ fn a_breaker_lets_a_short_start_pass_and_trips_on_a_long_one() {
     let long = Ask { seconds: Entry::of(3.0), breaker: Entry::of(50.0), ..pump() };
     // 153 A over 2.55 · 50 A = 127.5 A.
     assert_eq!(value(&long, Requirement::BreakerHold).2, Verdict::Breaks);
+    // Its maker says four times for that long: 200 A.
+    let stated = Ask { trip_multiple: Entry::of(4.0), ..long };
+    assert_eq!(value(&stated, Requirement::BreakerHold).2, Verdict::Clears);
 }
 
 #[test]
