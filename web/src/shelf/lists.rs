@@ -9,7 +9,7 @@ use engine::unit::Unit;
 use leptos::prelude::*;
 
 use crate::cells::TOOL;
-use crate::derived::derived;
+use crate::derived::{derived, dynamic, memo};
 use crate::draft::use_draft;
 use crate::fold::Fold;
 use crate::tool_page::figures;
@@ -41,27 +41,14 @@ pub fn remarks(layout: &Layout) -> AnyView {
 /// Links to cut, lugs, barriers, and the order of fitting in words.
 pub fn lists(layout: &Layout) -> AnyView {
     let draft = use_draft();
-    let size = draft.with(|pads| pads.of(TOOL).entry::<SquareMillimetres>(Field::LinkSize).typed());
-    let size_words = size.map_or_else(String::new, |size| format!(" of {}", show::given(size.amount())));
-    let cuts: Vec<(String, String)> = layout
-        .cuts
-        .iter()
-        .map(|cut| {
-            let millimetres = |metres: engine::quantity::Metres| {
-                show::computed(Amount { number: metres.get() * 1000.0, unit: Unit::Millimetre })
-            };
-            let name = format!("{} links{size_words}", cut.links.len());
-            (name, format!("cut {}, holes {} apart", millimetres(cut.cut), millimetres(cut.hole_to_hole)))
-        })
-        .collect();
-    let lugs = layout.links.len() * 2 + layout.ends.len() * 2;
-    let packing = vec![(format!("Lugs{size_words}"), format!("{lugs}: two a link, one a take-off post"))];
-    let barriers: Vec<(String, String)> = layout
-        .barriers
-        .iter()
-        .map(|one| (format!("Barrier between {} and {}", one.one, one.other), show::computed(one.volts.amount())))
-        .collect();
-    let order: Vec<AnyView> = steps(layout)
+    // Told only where the size changes: what else is typed must not make the lists, or the step beside them, anew.
+    let size = memo(move || {
+        let typed = draft.with(|pads| pads.of(TOOL).entry::<SquareMillimetres>(Field::LinkSize).typed());
+        typed.map_or_else(String::new, |size| format!(" of {}", show::given(size.amount())))
+    });
+    let layout = StoredValue::new(layout.clone());
+    let order: Vec<AnyView> = layout
+        .with_value(steps)
         .into_iter()
         .map(|step| {
             let now = step.now;
@@ -78,7 +65,7 @@ pub fn lists(layout: &Layout) -> AnyView {
         .collect();
     view! {
         <Fold id="cells/links" title="Links to cut" says=derived(|| "by length, and lugs to pack".to_owned())>
-            {figures([cuts.clone(), packing.clone(), barriers.clone()].concat())}
+            {dynamic(move || figures(layout.with_value(|layout| packing(layout, &size.get()))))}
         </Fold>
         <details class="in-words">
             <summary>"Every link in words"</summary>
@@ -86,4 +73,22 @@ pub fn lists(layout: &Layout) -> AnyView {
         </details>
     }
     .into_any()
+}
+
+/// Links by length, lugs and barriers.
+fn packing(layout: &Layout, size: &str) -> Vec<(String, String)> {
+    let millimetres = |metres: engine::quantity::Metres| {
+        show::computed(Amount { number: metres.get() * 1000.0, unit: Unit::Millimetre })
+    };
+    let cuts = layout.cuts.iter().map(|cut| {
+        let name = format!("{} links{size}", cut.links.len());
+        (name, format!("cut {}, holes {} apart", millimetres(cut.cut), millimetres(cut.hole_to_hole)))
+    });
+    let lugs = layout.links.len() * 2 + layout.ends.len() * 2;
+    let lugs = (format!("Lugs{size}"), format!("{lugs}: two a link, one a take-off post"));
+    let barriers = layout
+        .barriers
+        .iter()
+        .map(|one| (format!("Barrier between {} and {}", one.one, one.other), show::computed(one.volts.amount())));
+    cuts.chain([lugs]).chain(barriers).collect()
 }
