@@ -203,8 +203,12 @@ fields! {
     /// Where on a cell its posts stand.
     Posts, "Posts", Takes::Choice(&[
         ("ends", "one at each end"),
-        ("same-side", "both along one long side"),
-        ("corners", "at opposite corners"),
+        ("same-side", "both at one long side, plus left"),
+        ("corners", "opposite corners, plus left"),
+        ("same-side-right", "both at one long side, plus right"),
+        ("short-side", "both at one short side, plus left"),
+        ("short-side-right", "both at one short side, plus right"),
+        ("corners-right", "opposite corners, plus right"),
     ]);
     /// Cross-section of the links between cells.
     LinkSize, "Link size", number(Unit::SquareMillimetre, 0.5, 2000.0);
@@ -578,6 +582,27 @@ fields! {
         ("no", "none"),
         ("yes", "opens under load"),
     ]);
+    /// From the edge of a cell to the middle of a post.
+    PostInset, "Post from edge", number(Unit::Millimetre, 0.001, 1.0);
+    /// Between two cells of a row of the shelf.
+    CellGap, "Between cells", number(Unit::Millimetre, 0.0, 1.0);
+    /// Between two rows of the shelf.
+    RowGap, "Between rows", number(Unit::Millimetre, 0.0, 3.0);
+    /// Which way the cells stand on the shelf.
+    CellsStand, "Cells stand", Takes::Choice(&[
+        ("side-by-side", "side by side"),
+        ("end-to-end", "end to end"),
+        ("either-way", "either way"),
+    ]);
+    /// Where the bank's two posts should stand on the shelf.
+    TakeOffPosts, "Take-off posts", Takes::Choice(&[
+        ("anywhere", "anywhere"),
+        ("same-side", "same side"),
+        ("opposite-ends", "opposite ends"),
+        ("front", "front row"),
+    ]);
+    /// What a meter reads across one cell as the links are fitted.
+    CellNow, "Each cell now", number(Unit::Volt, 0.2, 60.0);
 }
 
 /// What a range in percent for each kelvin is multiplied by where volts or amps for each kelvin are typed:

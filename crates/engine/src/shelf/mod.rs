@@ -25,13 +25,13 @@ mod refused;
 mod turns;
 mod wiring;
 
-pub use asked::{Asked, Lacks, asked, usual};
+pub use asked::{Asked, Lacks, asked, assumption, usual};
 pub use board::{MOST_PLACES, Shelf, Stand};
 pub use cell::{Cell, CellVolts, PlusOn, Pole, Posts, Spot, Turn};
 pub use cost::Cost;
 pub use fitting::{BURNS, Caution, Meter, Step, steps};
 pub use layout::{Barrier, Cut, Ends, Layout, Link, LinkKind, Lug, Place, Remark, Touch};
-pub use reading::{Says, says};
+pub use reading::{Says, judged, says};
 pub use refused::ShelfError;
 pub use wiring::{ADVICE, Advice, Family, Parallel, TakeOff, Wiring, advice};
 

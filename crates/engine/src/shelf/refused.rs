@@ -1,6 +1,8 @@
 //! Why a shelf, a cell or a wiring was refused.
 
-use crate::quantity::Metres;
+use crate::quantity::{Amount, Metres, Quantity, Volts};
+use crate::show;
+use crate::unit::Unit;
 
 /// Input for which no layout exists.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -47,6 +49,13 @@ pub enum ShelfError {
     },
     /// A cell's voltages are not in order, or not above zero.
     VoltsOutOfOrder,
+    /// What was measured is no reading of such a cell.
+    NotThisCell {
+        /// What was measured.
+        read: Volts,
+        /// Its nominal voltage.
+        nominal: Volts,
+    },
 }
 
 impl core::fmt::Display for ShelfError {
@@ -56,14 +65,18 @@ impl core::fmt::Display for ShelfError {
             Self::NotAGap { what, given } => write!(f, "{what}: {} m is not a gap", given.get()),
             Self::PostsMeet { inset, below } => write!(
                 f,
-                "posts {} m from the edge would meet; less than {} m, half of that side",
-                inset.get(),
-                below.get()
+                "posts {} from the edge would meet; less than {}, half of that side",
+                millimetres(*inset),
+                millimetres(*below)
             ),
             Self::NoPlaces => write!(f, "a shelf needs a row and a column"),
             Self::NoCells => write!(f, "a bank needs a cell"),
             Self::TooManyPlaces { places, most } => write!(f, "{places} places; at most {most}"),
             Self::TooFewPlaces { cells, places } => write!(f, "{cells} cells do not fit on {places} places"),
+            Self::NotThisCell { read, nominal } => {
+                let [read, nominal] = [read, nominal].map(|volts| show::given(volts.amount()));
+                write!(f, "each cell now: {read} is no reading of a {nominal} cell")
+            }
             Self::VoltsOutOfOrder => {
                 write!(f, "lowest, expected and highest volts of a cell must rise from above zero")
             }
@@ -72,6 +85,10 @@ impl core::fmt::Display for ShelfError {
 }
 
 impl core::error::Error for ShelfError {}
+
+fn millimetres(length: Metres) -> String {
+    show::computed(Amount { number: length.get() * 1e3, unit: Unit::Millimetre })
+}
 
 /// `given`, where it is a length.
 pub(super) fn length(what: &'static str, given: Metres) -> Result<Metres, ShelfError> {

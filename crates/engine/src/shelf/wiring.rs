@@ -2,6 +2,7 @@
 
 use super::board::Shelf;
 use super::refused::ShelfError;
+use crate::chemistry;
 use crate::source::{self, Clause};
 
 /// The two ways of having cells in parallel.
@@ -41,6 +42,19 @@ pub enum Family {
     BareLithium,
     /// Packs that hold their own protection.
     ProtectedPack,
+}
+
+impl Family {
+    /// The family of a chemistry; `packs` where the blocks hold their own protection.
+    #[must_use]
+    pub const fn of(made_of: chemistry::Chemistry, packs: bool) -> Self {
+        match (made_of.family(), packs) {
+            (_, true) => Self::ProtectedPack,
+            (chemistry::Family::Lead, _) => Self::Lead,
+            (chemistry::Family::Nickel, _) => Self::Nickel,
+            (chemistry::Family::Lithium, _) => Self::BareLithium,
+        }
+    }
 }
 
 /// Which way is wise for a family, and why.
