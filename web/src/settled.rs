@@ -10,6 +10,11 @@ const MOMENT: Duration = Duration::from_millis(30);
 
 /// `value`, told only once it has rested.
 pub fn settled<T: Clone + PartialEq + Send + Sync + 'static>(value: Memo<T>) -> ReadSignal<T> {
+    rested(value, MOMENT)
+}
+
+/// `value`, told only once it has rested so long.
+pub fn rested<T: Clone + PartialEq + Send + Sync + 'static>(value: Memo<T>, moment: Duration) -> ReadSignal<T> {
     let (settled, settle) = signal(value.get_untracked());
     let timer = StoredValue::new(None::<TimeoutHandle>);
     let stop = move || {
@@ -21,7 +26,7 @@ pub fn settled<T: Clone + PartialEq + Send + Sync + 'static>(value: Memo<T>) -> 
         let now = value.get();
         stop();
         if before.is_some() {
-            timer.set_value(set_timeout_with_handle(move || settle.set(now.clone()), MOMENT).ok());
+            timer.set_value(set_timeout_with_handle(move || settle.set(now.clone()), moment).ok());
         }
     });
     on_cleanup(stop);

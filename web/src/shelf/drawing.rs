@@ -1,234 +1,469 @@
-//! The picture of the shelf, seen from above: every cell with its number and its poles, every link with its number and
-//! the volts after it. Units: the shelf is 296 wide, so that 12 units are 12 px on the smallest screen.
+//! Where everything stands in the picture of the shelf. Pure.
+//!
+//! Seen from above, not to scale: cells keep about their shape, and there is room for figures everywhere. A unit is a
+//! pixel on the smallest screen, where the picture is 296 wide; a long row makes it wider, and it is then scrolled.
 
-use engine::quantity::Quantity;
-use engine::shelf::{Ends, Layout, Link, LinkKind, Place, Pole, Spot, Touch};
+use engine::shelf::{Ends, Layout, LinkKind, Place, Pole, Posts, Shelf, Stand, Touch};
 use engine::show;
-use leptos::prelude::*;
 
+/// The picture is at least this wide.
 const WIDE: f64 = 296.0;
 const EDGE: f64 = 8.0;
-/// Room above and below for the take-off plates.
-const PLATES: f64 = 24.0;
+/// A plate is this high; so is the room for a row of them.
+const PLATE: f64 = 18.0;
+/// Between two rows of cells, where no plate stands: room for the number on a bar across it.
+const LANE: f64 = 16.0;
+/// A post's middle from the edge of its cell.
+const INSET: (f64, f64) = (10.0, 11.0);
 
-/// From metres to units.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub struct Scale {
-    units_a_metre: f64,
-    left: f64,
-    top: f64,
-    /// Height of the whole picture.
-    pub high: f64,
+/// A point.
+pub type At = (f64, f64);
+
+/// A rectangle: left, top, width, height.
+pub type Area = [f64; 4];
+
+/// One cell.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Cell {
+    /// Its number.
+    pub cell: u32,
+    /// Its string.
+    pub string: u32,
+    /// Where it stands.
+    pub area: Area,
+    /// Where the band at its plus end stands.
+    pub band: Area,
+    /// Its plus and minus post.
+    pub posts: [At; 2],
+    /// What the meter reads from the string's minus post to its plus post, once it is linked that far.
+    pub volts: String,
+    /// Whether that may be past 60 V.
+    pub past: bool,
 }
 
-impl Scale {
-    /// The scale at which all of `layout` fits across.
-    pub fn of(layout: &Layout) -> Self {
-        let half = layout.places.first().map_or((0.05, 0.05), half);
-        let bounds = layout.places.iter().fold((f64::MAX, f64::MIN, f64::MAX, f64::MIN), |(l, r, t, b), place| {
-            let (x, y) = (place.middle.across.get(), place.middle.forward.get());
-            (l.min(x - half.0), r.max(x + half.0), t.min(y - half.1), b.max(y + half.1))
+/// One link.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Bar {
+    /// Its number.
+    pub number: u32,
+    /// From post to post.
+    pub ends: [At; 2],
+    /// The signs of those posts.
+    pub signs: [&'static str; 2],
+    /// Whether it joins like to like.
+    pub beside: bool,
+    /// Whether it joins the two halves, last of all.
+    pub last: bool,
+}
+
+/// One take-off post.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Plate {
+    /// The post.
+    pub post: At,
+    /// Where it stands.
+    pub area: Area,
+    /// What stands on it.
+    pub words: String,
+}
+
+/// The picture.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Drawing {
+    /// Its width and height.
+    pub size: At,
+    /// The board.
+    pub board: Area,
+    /// Places without a cell.
+    pub free: Vec<Area>,
+    /// The cells.
+    pub cells: Vec<Cell>,
+    /// Barriers, from point to point.
+    pub barriers: Vec<[At; 2]>,
+    /// The links.
+    pub bars: Vec<Bar>,
+    /// The take-off posts.
+    pub plates: Vec<Plate>,
+}
+
+/// How large a cell is drawn that lies along the row, and one that does not.
+struct Sizes {
+    pitch: f64,
+    lying: At,
+    upright: At,
+}
+
+impl Sizes {
+    fn of(shelf: &Shelf) -> Self {
+        let (length, width) = (shelf.cell().length().get(), shelf.cell().width().get());
+        // Poles side by side, or at the ends of a lying cell, need more than a number does.
+        let (across, least) = match (shelf.stand(), shelf.cell().posts()) {
+            (Stand::SideBySide, Posts::Ends) => (width, 30.0),
+            (Stand::SideBySide, _) => (width, 44.0),
+            (Stand::EndToEnd, _) => (length, 68.0),
+            (Stand::EitherWay, _) => (length.max(width), 76.0),
+        };
+        let pitch = ((WIDE - 2.0 * EDGE) / f64::from(shelf.columns())).clamp(least, 76.0);
+        let scale = (pitch - 2.0) / across;
+        let of = |across: f64, forward: f64, least: At| {
+            let (across, forward) = (across * scale, forward * scale);
+            (across.clamp(least.0, (pitch - 2.0).max(least.0)), forward.clamp(least.1, 112.0))
+        };
+        Self { pitch, lying: of(length, width, (66.0, 54.0)), upright: of(width, length, (28.0, 76.0)) }
+    }
+
+    fn cell(&self, lies: bool) -> At {
+        if lies { self.lying } else { self.upright }
+    }
+
+    fn row(&self, stand: Stand) -> f64 {
+        match stand {
+            Stand::SideBySide => self.upright.1,
+            Stand::EndToEnd => self.lying.1,
+            Stand::EitherWay => self.upright.1.max(self.lying.1),
+        }
+    }
+}
+
+/// A post in the picture, from its cell's middle.
+fn post(sizes: &Sizes, place: &Place, pole: Pole) -> At {
+    let spot = place.post(pole);
+    let side = |from: f64, to: f64, size: f64, inset: f64| {
+        let off = to - from;
+        if off.abs() < 1e-6 { 0.0 } else { off.signum() * (size / 2.0 - inset) }
+    };
+    let (wide, high) = sizes.cell(place.turn.lies_along_the_row());
+    (
+        side(place.middle.across.get(), spot.across.get(), wide, INSET.0),
+        side(place.middle.forward.get(), spot.forward.get(), high, INSET.1),
+    )
+}
+
+impl Drawing {
+    /// The picture of `layout` on `shelf`.
+    pub fn of(shelf: &Shelf, layout: &Layout) -> Self {
+        let sizes = Sizes::of(shelf);
+        let (rows, columns) = (shelf.rows() as usize, f64::from(shelf.columns()));
+        let wide = (sizes.pitch * columns + 2.0 * EDGE).max(WIDE);
+        let left = (wide - sizes.pitch * columns) / 2.0;
+        let row_high = sizes.row(shelf.stand());
+
+        // Lanes: above each row, and below the last. In each, plates of the row above it and of the row below it.
+        let posts = |ends: &Ends| [(Pole::Minus, ends.minus.cell), (Pole::Plus, ends.plus.cell)];
+        let off = |place: &Place, pole| post(&sizes, place, pole);
+        let band = |place: &Place, pole| {
+            let down = off(place, pole).1;
+            let down = down > 0.0 || down == 0.0 && place.row as usize * 2 >= rows;
+            (place.row as usize + usize::from(down), usize::from(!down))
+        };
+        let mut plated = vec![[false; 2]; rows + 1];
+        for (pole, cell) in layout.ends.iter().flat_map(posts) {
+            if let Some((lane, side)) = layout.place(cell).map(|place| band(place, pole)) {
+                plated[lane][side] = true;
+            }
+        }
+        let mut lanes = Vec::with_capacity(rows + 1);
+        let mut y = 2.0;
+        for (lane, used) in plated.iter().enumerate() {
+            let least = if lane == 0 || lane == rows { EDGE } else { LANE };
+            let high = used.iter().filter(|used| **used).count() as f64 * (PLATE + 3.0) + least;
+            lanes.push((y, high));
+            y += high + row_high;
+        }
+        let high = y - row_high + 2.0;
+        let top = |row: usize| lanes[row].0 + lanes[row].1;
+        let middle = |row: u32, column: u32| {
+            (left + sizes.pitch * (f64::from(column) + 0.5), top(row as usize) + row_high / 2.0)
+        };
+        let at = |place: &Place, pole| {
+            let ((x, y), (dx, dy)) = (middle(place.row, place.column), off(place, pole));
+            (x + dx, y + dy)
+        };
+
+        let mut free = Vec::new();
+        for row in 0..shelf.rows() {
+            for column in 0..shelf.columns() {
+                if !layout.places.iter().any(|place| (place.row, place.column) == (row, column)) {
+                    let (x, y) = middle(row, column);
+                    let (w, h) = (sizes.pitch - 2.0, row_high);
+                    free.push([x - w / 2.0, y - h / 2.0, w, h]);
+                }
+            }
+        }
+        let passes = |string: u32| {
+            let past = |link: &&engine::shelf::Link| link.string == string && link.touch == Touch::Passes;
+            layout.links.iter().find(past).map_or(u32::MAX, |link| link.after + 1)
+        };
+        let cells = layout.places.iter().map(|place| {
+            let (x, y) = middle(place.row, place.column);
+            let (w, h) = sizes.cell(place.turn.lies_along_the_row());
+            let area = [x - w / 2.0, y - h / 2.0, w, h];
+            let posts = [Pole::Plus, Pole::Minus].map(|pole| at(place, pole));
+            Cell {
+                cell: place.cell,
+                string: place.string,
+                area,
+                band: plus_end(area, posts),
+                posts,
+                volts: format!("{:.1}", (layout.cell.expected() * f64::from(place.position)).get()),
+                past: place.position >= passes(place.string),
+            }
         });
-        let (left, right, top, bottom) = bounds;
-        // A few cells are not blown up past what a hand would draw.
-        let units_a_metre = ((WIDE - 2.0 * EDGE) / (right - left).max(0.01)).min(420.0);
-        Self { units_a_metre, left, top, high: (bottom - top) * units_a_metre + 2.0 * (EDGE + PLATES) }
-    }
-
-    /// Where a spot stands.
-    pub fn at(self, spot: Spot) -> (f64, f64) {
-        (
-            (spot.across.get() - self.left) * self.units_a_metre + EDGE,
-            (spot.forward.get() - self.top) * self.units_a_metre + EDGE + PLATES,
-        )
-    }
-}
-
-/// Half of a cell's size as it stands: half the way between its posts at least, and a margin around them.
-fn half(place: &Place) -> (f64, f64) {
-    let across = (place.plus.across - place.minus.across).get().abs() / 2.0;
-    let forward = (place.plus.forward - place.minus.forward).get().abs() / 2.0;
-    let long = across.max(forward) / 0.7;
-    (if across > forward { long } else { long * 0.42 }, if across > forward { long * 0.42 } else { long })
-}
-
-fn number(value: f64) -> String {
-    format!("{value:.1}")
-}
-
-/// The figure.
-pub fn figure(layout: &Layout) -> AnyView {
-    let scale = Scale::of(layout);
-    // Figures shrink where cells are small, never under what can be read in print.
-    let step = pitch(layout, scale);
-    let size = (step * 0.42).clamp(6.0, 13.0);
-    let cells: Vec<AnyView> = layout.places.iter().map(|place| cell(place, layout, scale, size)).collect();
-    let links: Vec<AnyView> = layout.links.iter().filter_map(|one| link(one, layout, scale, size)).collect();
-    let ends: Vec<AnyView> = layout.ends.iter().flat_map(|end| plates(end, scale)).collect();
-    let high = number(scale.high);
-    let board = number(scale.high - 2.0 * PLATES);
-    view! {
-        <figure class="shelf">
-            <svg viewBox=format!("0 0 296 {high}") role="img" aria-label=words(layout)>
-                <rect class="board" x="2" y=number(PLATES) width="292" height=board rx="2"/>
-                {cells}
-                {links}
-                {ends}
-            </svg>
-            <figcaption>"Seen from above; the back is at the top. Volts at the likely charge."</figcaption>
-        </figure>
-    }
-    .into_any()
-}
-
-/// Units from one cell to its neighbour.
-fn pitch(layout: &Layout, scale: Scale) -> f64 {
-    let first = layout.places.first();
-    let next =
-        first.and_then(|first| layout.places.iter().find(|one| one.row == first.row && one.column != first.column));
-    match (first, next) {
-        (Some(one), Some(other)) => {
-            let apart = f64::from(one.column.abs_diff(other.column));
-            (scale.at(one.middle).0 - scale.at(other.middle).0).abs() / apart
+        let bars = layout.links.iter().filter_map(|link| {
+            let end = |lug: engine::shelf::Lug| layout.place(lug.cell).map(|place| at(place, lug.pole));
+            Some(Bar {
+                number: link.number,
+                ends: [end(link.from)?, end(link.to)?],
+                signs: [link.from, link.to].map(|lug| lug.pole.sign()),
+                beside: link.kind == LinkKind::Parallel,
+                last: link.fitted_last,
+            })
+        });
+        let barriers = layout.barriers.iter().filter_map(|barrier| {
+            let (one, other) = (layout.place(barrier.one)?, layout.place(barrier.other)?);
+            let (a, b) = (middle(one.row, one.column), middle(other.row, other.column));
+            let half = (sizes.pitch / 2.0, row_high / 2.0);
+            Some(if one.row == other.row {
+                let x = f64::midpoint(a.0, b.0);
+                [(x, a.1 - half.1), (x, a.1 + half.1)]
+            } else {
+                let lane = one.row.max(other.row) as usize;
+                // Between the plates of the row above and those of the row below.
+                let above = if plated[lane][0] { PLATE + 3.0 } else { 0.0 };
+                let y = lanes[lane].0 + above + LANE / 2.0;
+                [(a.0 - half.0, y), (a.0 + half.0, y)]
+            })
+        });
+        let mut plates = Vec::new();
+        for (lane, used) in plated.iter().enumerate() {
+            for (side, used) in used.iter().enumerate() {
+                if !used {
+                    continue;
+                }
+                let (from, to) = (lanes[lane].0, lanes[lane].0 + lanes[lane].1);
+                let y = if side == 0 { from + 2.0 } else { to - PLATE - 2.0 };
+                let here = layout.ends.iter().flat_map(|ends| posts(ends).map(|(pole, cell)| (ends, pole, cell)));
+                let mut row: Vec<Plate> = here
+                    .filter_map(|(ends, pole, cell)| {
+                        let place = layout.place(cell).filter(|place| band(place, pole) == (lane, side))?;
+                        Some(plate(ends, pole, layout.ends.len() > 1, at(place, pole), y))
+                    })
+                    .collect();
+                spread(&mut row, wide);
+                plates.append(&mut row);
+            }
         }
-        _ => 30.0,
+        let board = [left - 5.0, top(0) - 5.0, sizes.pitch * columns + 10.0, top(rows - 1) + row_high - top(0) + 10.0];
+        Self {
+            size: (wide, high),
+            board,
+            free,
+            cells: cells.collect(),
+            barriers: barriers.collect(),
+            bars: bars.collect(),
+            plates,
+        }
     }
 }
 
-fn cell(place: &Place, layout: &Layout, scale: Scale, size: f64) -> AnyView {
-    let (x, y) = scale.at(place.middle);
-    let step = pitch(layout, scale);
-    let (half_x, half_y) = half(place);
-    let (w, h) = ((half_x * 2.0 * scale.units_a_metre).min(step - 2.0), half_y * 2.0 * scale.units_a_metre);
-    let pole = |pole: Pole| {
-        let (px, py) = scale.at(place.post(pole));
-        let class = if pole == Pole::Plus { "post plus" } else { "post" };
-        view! {
-            <circle class=class cx=number(px) cy=number(py) r=number(size * 0.62)/>
-            <text class="pole" x=number(px) y=number(py + size * 0.36) font-size=number(size)>{pole.sign()}</text>
-        }
-        .into_any()
+/// The band at the plus end: along the edge that the plus post is nearer to than the minus post.
+fn plus_end([x, y, w, h]: Area, [plus, minus]: [At; 2]) -> Area {
+    const THICK: f64 = 4.0;
+    if (plus.1 - minus.1).abs() >= (plus.0 - minus.0).abs() {
+        [x, if plus.1 < minus.1 { y } else { y + h - THICK }, w, THICK]
+    } else {
+        [if plus.0 < minus.0 { x } else { x + w - THICK }, y, THICK, h]
+    }
+}
+
+fn plate(ends: &Ends, pole: Pole, many: bool, post: At, y: f64) -> Plate {
+    let volts = match pole {
+        Pole::Minus => "0\u{202f}V".to_owned(),
+        Pole::Plus => format!("{:.1}{}V", ends.volts.get(), show::NARROW),
     };
-    let (left, top) = (number(x - w / 2.0), number(y - h / 2.0));
-    view! {
-        <rect class="cell" x=left y=top width=number(w) height=number(h) data-string=place.string.to_string()/>
-        <text class="num" x=number(x) y=number(y + size * 0.4) font-size=number(size * 1.15)>{place.cell}</text>
-        {pole(Pole::Plus)}
-        {pole(Pole::Minus)}
+    let string = if many { format!("{}: ", ends.string) } else { String::new() };
+    let words = format!("{string}{} {volts}", pole.sign());
+    let wide = words.chars().count() as f64 * 6.2 + 10.0;
+    Plate { post, area: [post.0 - wide / 2.0, y, wide, PLATE], words }
+}
+
+/// Moves the plates of one row apart, and into the picture.
+fn spread(row: &mut [Plate], wide: f64) {
+    engine::order::sort_short(row, |a, b| a.post.0.total_cmp(&b.post.0));
+    let mut from = 2.0;
+    for plate in &mut *row {
+        plate.area[0] = plate.area[0].max(from);
+        from = plate.area[0] + plate.area[2] + 2.0;
     }
-    .into_any()
-}
-
-fn link(link: &Link, layout: &Layout, scale: Scale, size: f64) -> Option<AnyView> {
-    let from = scale.at(layout.place(link.from.cell)?.post(link.from.pole));
-    let to = scale.at(layout.place(link.to.cell)?.post(link.to.pole));
-    let (x, y) = ((from.0 + to.0) / 2.0, (from.1 + to.1) / 2.0);
-    // The bar stops short of the signs at its ends, so that both poles stay readable.
-    let long = (to.0 - from.0).hypot(to.1 - from.1).max(0.1);
-    let cut = (size * 0.7).min(long * 0.3);
-    let (ux, uy) = ((to.0 - from.0) / long * cut, (to.1 - from.1) / long * cut);
-    let d = format!("M{:.1} {:.1}L{:.1} {:.1}", from.0 + ux, from.1 + uy, to.0 - ux, to.1 - uy);
-    let class = match (link.kind, link.fitted_last, link.touch) {
-        (_, true, _) => "link last",
-        (LinkKind::Parallel, ..) => "link beside",
-        (_, _, Touch::Passes | Touch::Above) => "link high",
-        _ => "link",
-    };
-    let volts = show::number(link.running.get(), 1);
-    // Volts stand in the free lane: outside the cells beside a level bar, right of an upright one.
-    let level = (to.0 - from.0).abs() >= (to.1 - from.1).abs();
-    let middle = scale.at(layout.place(link.from.cell)?.middle).1;
-    let (vx, vy, anchor) = match (level, y < middle) {
-        (true, true) => (x, y - size * 1.55, "middle"),
-        (true, false) => (x, y + size * 2.2, "middle"),
-        (false, _) => (x + size * 0.62, y + size * 0.3, "start"),
-    };
-    let running = (link.kind == LinkKind::Series).then(|| {
-        view! {
-            <text class="volts" x=number(vx) y=number(vy) font-size=number(size * 0.74) style:text-anchor=anchor>
-                {volts}
-            </text>
-        }
-        .into_any()
-    });
-    Some(
-        view! {
-            <path class=class d=d stroke-width=number(size * 0.95)/>
-            <text class="link-n" x=number(x) y=number(y + size * 0.33) font-size=number(size * 0.9)>{link.number}</text>
-            {running}
-        }
-        .into_any(),
-    )
-}
-
-/// The two take-off posts, as plates above or below the shelf.
-fn plates(ends: &Ends, scale: Scale) -> Vec<AnyView> {
-    let plate = |spot: Spot, sign: &str, volts: String| {
-        let (x, y) = scale.at(spot);
-        let up = y < scale.high / 2.0;
-        let plate_y = if up { 2.0 } else { scale.high - 20.0 };
-        let left = (x - 31.0).clamp(2.0, WIDE - 64.0);
-        let end = if up { plate_y + 18.0 } else { plate_y };
-        view! {
-            <path class="lead" d=format!("M{x:.1} {y:.1}V{end:.1}")/>
-            <rect class="plate" x=number(left) y=number(plate_y) width="62" height="18" rx="2"/>
-            <text class="plate-t" x=number(left + 31.0) y=number(plate_y + 13.0)>{format!("{sign} {volts}")}</text>
-        }
-        .into_any()
-    };
-    vec![plate(ends.minus_at, "−", "0 V".to_owned()), plate(ends.plus_at, "+", show::computed(ends.volts.amount()))]
-}
-
-/// The picture in words.
-pub fn words(layout: &Layout) -> String {
-    let rows = layout.places.iter().map(|place| place.row).max().map_or(0, |row| row + 1);
-    let volts = layout.ends.first().map_or_else(String::new, |ends| show::computed(ends.volts.amount()));
-    format!(
-        "Shelf seen from above, {rows} {}, {} cells, {} links. The meter rises with each link to {volts} at the plus post.",
-        if rows == 1 { "row" } else { "rows" },
-        layout.places.len(),
-        layout.links.len(),
-    )
+    let mut to = wide - 2.0;
+    for plate in row.iter_mut().rev() {
+        plate.area[0] = plate.area[0].min(to - plate.area[2]);
+        to = plate.area[0] - 2.0;
+    }
 }
 
 #[cfg(test)]
 mod tests {
     use super::*;
     use engine::quantity::{Metres, Volts};
-    use engine::shelf::{Cell, CellVolts, Parallel, Posts, Shelf, Stand, Wiring, Wish, lay_out};
+    use engine::shelf::{self, CellVolts, Parallel, PlusOn, TakeOff, Turn, Wiring, Wish, lay_out};
 
-    fn layout(rows: u32, columns: u32, series: u32, strings: u32) -> Layout {
+    /// A bar is this thick.
+    const BAR: f64 = 17.0;
+
+    type Of = (u32, u32, Posts, Stand, u32, u32, Parallel, TakeOff);
+
+    fn drawn((rows, columns, posts, stand, series, strings, parallel, take_off): Of) -> (Layout, Drawing) {
         let mm = |mm: f64| Metres::new(mm / 1000.0);
-        let cell = Cell::new(mm(174.0), mm(72.0), Posts::Ends, mm(26.0)).unwrap();
-        let shelf = Shelf::new(rows, columns, cell, Stand::SideBySide, mm(2.0), mm(60.0)).unwrap();
-        let wiring = Wiring::new(series, strings, Parallel::SeparateStrings).unwrap();
-        let volts = CellVolts::new(Volts::new(3.2), Volts::new(3.3), Volts::new(3.35)).unwrap();
-        lay_out(&shelf, &wiring, volts, Wish::default()).unwrap()
+        let cell = shelf::Cell::new(mm(174.0), mm(72.0), posts, mm(20.0)).unwrap();
+        let shelf = Shelf::new(rows, columns, cell, stand, mm(2.0), mm(60.0)).unwrap();
+        let wiring = Wiring::new(series, strings, parallel).unwrap();
+        let volts = CellVolts::new(Volts::new(3.2), Volts::new(3.3), Volts::new(3.4)).unwrap();
+        let layout = lay_out(&shelf, &wiring, volts, Wish { take_off, ..Wish::default() }).unwrap();
+        let drawing = Drawing::of(&shelf, &layout);
+        (layout, drawing)
+    }
+
+    const CASES: &[Of] = &[
+        (1, 1, Posts::Ends, Stand::SideBySide, 1, 1, Parallel::SeparateStrings, TakeOff::Anywhere),
+        (1, 4, Posts::Ends, Stand::SideBySide, 4, 1, Parallel::SeparateStrings, TakeOff::Anywhere),
+        (2, 8, Posts::Ends, Stand::SideBySide, 16, 1, Parallel::SeparateStrings, TakeOff::SameSide),
+        (2, 8, Posts::Ends, Stand::SideBySide, 16, 1, Parallel::SeparateStrings, TakeOff::OppositeEnds),
+        (4, 6, Posts::Ends, Stand::SideBySide, 24, 1, Parallel::SeparateStrings, TakeOff::Front),
+        (2, 8, Posts::Ends, Stand::SideBySide, 8, 2, Parallel::Groups, TakeOff::Anywhere),
+        (2, 6, Posts::Ends, Stand::SideBySide, 4, 3, Parallel::SeparateStrings, TakeOff::Anywhere),
+        (2, 3, Posts::LongEdge(PlusOn::Left), Stand::SideBySide, 4, 1, Parallel::SeparateStrings, TakeOff::Anywhere),
+        (2, 2, Posts::ShortEdge(PlusOn::Right), Stand::EndToEnd, 4, 1, Parallel::SeparateStrings, TakeOff::Anywhere),
+        (2, 4, Posts::Ends, Stand::EndToEnd, 8, 1, Parallel::SeparateStrings, TakeOff::Anywhere),
+        (3, 3, Posts::Diagonal(PlusOn::Left), Stand::EitherWay, 8, 1, Parallel::SeparateStrings, TakeOff::Anywhere),
+        (2, 20, Posts::Ends, Stand::SideBySide, 40, 1, Parallel::SeparateStrings, TakeOff::Anywhere),
+    ];
+
+    fn inside([x, y, w, h]: Area, (wide, high): At) -> bool {
+        x >= 0.0 && y >= 0.0 && x + w <= wide + 0.01 && y + h <= high + 0.01
+    }
+
+    fn overlap(a: Area, b: Area) -> bool {
+        a[0] + a[2] > b[0] + 0.01 && b[0] + b[2] > a[0] + 0.01 && a[1] + a[3] > b[1] + 0.01 && b[1] + b[3] > a[1] + 0.01
+    }
+
+    /// The post that stands at a point of the picture.
+    fn post_at(drawing: &Drawing, (x, y): At) -> (usize, Pole) {
+        let mut found = Vec::new();
+        for (index, cell) in drawing.cells.iter().enumerate() {
+            for (pole, (px, py)) in [Pole::Plus, Pole::Minus].into_iter().zip(cell.posts) {
+                if (px - x).hypot(py - y) < 0.01 {
+                    found.push((index, pole));
+                }
+            }
+        }
+        assert_eq!(found.len(), 1, "one post at {x} {y}");
+        found[0]
     }
 
     #[test]
-    fn everything_stands_inside_the_picture() {
-        for (rows, columns, series, strings) in [(1, 4, 4, 1), (2, 8, 16, 1), (4, 10, 20, 2), (1, 1, 1, 1)] {
-            let layout = layout(rows, columns, series, strings);
-            let scale = Scale::of(&layout);
-            for place in &layout.places {
-                for spot in [place.middle, place.plus, place.minus] {
-                    let (x, y) = scale.at(spot);
-                    assert!((0.0..=WIDE).contains(&x) && (0.0..=scale.high).contains(&y), "{x} {y} {}", scale.high);
+    fn every_cell_is_drawn_once_with_room_of_its_own() {
+        for case in CASES {
+            let (layout, drawing) = drawn(*case);
+            let mut numbers: Vec<u32> = drawing.cells.iter().map(|cell| cell.cell).collect();
+            numbers.sort_unstable();
+            assert_eq!(numbers, (1..=case.4 * case.5).collect::<Vec<u32>>(), "{case:?}");
+            assert_eq!(drawing.bars.len(), layout.links.len());
+            assert_eq!(drawing.free.len() as u32 + case.4 * case.5, case.0 * case.1);
+            let mut areas: Vec<Area> = drawing.cells.iter().map(|cell| cell.area).collect();
+            areas.extend(&drawing.free);
+            let plates: Vec<Area> = drawing.plates.iter().map(|plate| plate.area).collect();
+            for (index, area) in areas.iter().enumerate() {
+                assert!(inside(*area, drawing.size), "{case:?} {area:?} in {:?}", drawing.size);
+                assert!(!areas[index + 1..].iter().any(|other| overlap(*area, *other)), "{case:?}");
+                assert!(!plates.iter().any(|plate| overlap(*area, *plate)), "{case:?} a plate on a cell");
+            }
+            for (index, plate) in plates.iter().enumerate() {
+                assert!(inside(*plate, drawing.size), "{case:?} {plate:?} in {:?}", drawing.size);
+                assert!(!plates[index + 1..].iter().any(|other| overlap(*plate, *other)), "{case:?} plates");
+            }
+        }
+    }
+
+    /// Volts from the picture alone: from the minus plate over plus and minus signs and bars, 3.3 V a cell.
+    #[test]
+    fn the_volts_in_the_cells_follow_from_the_signs_and_the_bars_drawn() {
+        for case in CASES {
+            let (_, drawing) = drawn(*case);
+            let mut volts: Vec<Option<f64>> = vec![None; drawing.cells.len()];
+            for plate in drawing.plates.iter().filter(|plate| plate.words.contains('−')) {
+                let (cell, pole) = post_at(&drawing, plate.post);
+                assert_eq!(pole, Pole::Minus);
+                volts[cell] = Some(3.3);
+            }
+            for _ in 0..drawing.cells.len() {
+                for bar in &drawing.bars {
+                    let [a, b] = bar.ends.map(|end| post_at(&drawing, end));
+                    assert_eq!(a.1 == b.1, bar.beside, "like to like only beside one another");
+                    assert_eq!([a, b].map(|(_, pole)| pole.sign()), bar.signs, "{case:?}");
+                    for ((from, pole), (to, other)) in [(a, b), (b, a)] {
+                        let Some(known) = volts[from] else { continue };
+                        let post = if pole == Pole::Plus { known } else { known - 3.3 };
+                        let plus = if other == Pole::Plus { post } else { post + 3.3 };
+                        assert!(
+                            volts[to].is_none_or(|before| (before - plus).abs() < 1e-6),
+                            "{case:?} a short circuit"
+                        );
+                        volts[to] = Some(plus);
+                    }
+                }
+            }
+            for (cell, volts) in drawing.cells.iter().zip(&volts) {
+                assert_eq!(cell.volts, format!("{:.1}", volts.expect("every cell is reached")), "{case:?}");
+                assert_eq!(cell.past, volts.unwrap() / 3.3 * 3.4 > 60.0, "{case:?}");
+            }
+            for plate in drawing.plates.iter().filter(|plate| plate.words.contains('+')) {
+                let (cell, pole) = post_at(&drawing, plate.post);
+                assert_eq!(pole, Pole::Plus);
+                assert!(plate.words.contains(&drawing.cells[cell].volts), "{case:?}");
+            }
+        }
+    }
+
+    #[test]
+    fn the_band_is_at_the_plus_end_and_posts_stand_where_the_turn_brings_them() {
+        for case in CASES {
+            let (layout, drawing) = drawn(*case);
+            for (cell, place) in drawing.cells.iter().zip(&layout.places) {
+                let [plus, minus] = cell.posts;
+                let middle = (cell.band[0] + cell.band[2] / 2.0, cell.band[1] + cell.band[3] / 2.0);
+                let far = |post: At| (post.0 - middle.0).hypot(post.1 - middle.1);
+                assert!(far(plus) < far(minus), "{case:?}");
+                if (case.2, place.turn) == (Posts::Ends, Turn::None) {
+                    assert!(plus.1 < minus.1 && plus.0 == minus.0, "plus at the back");
+                }
+                if (case.2, place.turn) == (Posts::Ends, Turn::Quarter) {
+                    assert!(plus.0 > minus.0 && plus.1 == minus.1, "plus at the right");
                 }
             }
         }
     }
 
-    /// The running volts, added up from the drawing alone: each link leads from a plus post to the minus post of the next.
     #[test]
-    fn the_volts_beside_the_links_are_those_of_the_posts_drawn() {
-        let layout = layout(2, 8, 16, 1);
-        for link in &layout.links {
-            assert_eq!((link.from.pole, link.to.pole), (Pole::Plus, Pole::Minus));
-            let at = layout.volts_at(link.to).unwrap();
-            assert!((at.get() - 3.3 * f64::from(link.after)).abs() < 1e-9, "{link:?}");
-            assert!((link.running.get() - 3.3 * f64::from(link.after + 1)).abs() < 1e-9, "{link:?}");
+    fn numbers_and_volts_stand_clear_of_the_bars_of_cells_with_a_post_at_each_end() {
+        for case in CASES.iter().filter(|case| case.2 == Posts::Ends && case.3 == Stand::SideBySide) {
+            let (_, drawing) = drawn(*case);
+            for cell in &drawing.cells {
+                let [x, y, w, h] = cell.area;
+                // Two lines of figures about the middle.
+                let figures = [x, y + h / 2.0 - 13.0, w, 26.0];
+                for bar in &drawing.bars {
+                    let [a, b] = bar.ends;
+                    if a.0 != b.0 && a.1 != b.1 {
+                        // One across a cell, where posts are to stand apart: the figures then stand on top.
+                        continue;
+                    }
+                    let half = BAR / 2.0;
+                    let (left, top) = (a.0.min(b.0) - half, a.1.min(b.1) - half);
+                    let area = [left, top, (a.0 - b.0).abs() + BAR, (a.1 - b.1).abs() + BAR];
+                    assert!(!overlap(figures, area), "{case:?} bar {} on cell {}", bar.number, cell.cell);
+                }
+            }
         }
     }
 }

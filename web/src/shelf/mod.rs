@@ -4,40 +4,49 @@ mod drawing;
 mod lists;
 mod matching;
 mod one_by_one;
+mod picture;
 
 use std::sync::Arc;
+use std::time::Duration;
 
-use engine::bank::Ask;
+use engine::bank::{Ask, settled as with_counts};
 use engine::field::Field;
-use engine::shelf::{Asked, BURNS, Lacks, Layout, asked, lay_out, usual};
+use engine::shelf::{Asked, Family, Lacks, Layout, Parallel, Step, advice, asked, assumption, lay_out, steps};
 use leptos::prelude::*;
 
 use crate::cells::{TOOL, bank, short};
-use crate::derived::{derived, dynamic, memo};
+use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::use_draft;
+use crate::field::StandIn;
 use crate::fold::Fold;
 use crate::form::{Form, Hints, fields_of, names};
-use crate::settled::settled;
+use crate::settled::rested;
 
 static FORM: Form = Form {
     tool: TOOL,
     title: ("", ""),
-    first: &[
-        Field::Rows,
-        Field::Columns,
-        Field::CellLength,
-        Field::CellWidth,
-        Field::Posts,
-        Field::TakeOff,
-        Field::LinkSize,
-        Field::ParallelAs,
-    ],
+    first: &[Field::CellLength, Field::CellWidth, Field::Rows, Field::Columns, Field::Posts, Field::TakeOffPosts],
     groups: &[],
     short,
 };
 
+/// What lengths and bands hang on, with something to stand in for each.
+const MORE: &[Field] =
+    &[Field::PostInset, Field::CellGap, Field::RowGap, Field::CellsStand, Field::CellNow, Field::LinkSize];
+
+/// How long the inputs rest before the shelf is laid out anew: a search of up to half a second.
+const REST: Duration = Duration::from_millis(250);
+
+/// A bank on its shelf, and how it is put together.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Laid {
+    asked: Asked,
+    layout: Layout,
+    steps: Vec<Step>,
+}
+
 /// A layout, or what there is to say instead.
-type Found = Result<Layout, String>;
+type Found = Result<Arc<Laid>, String>;
 
 /// The shelf, folded until it is wanted: a second step after the counts are chosen.
 pub fn shelf_section() -> AnyView {
@@ -52,60 +61,79 @@ pub fn shelf_section() -> AnyView {
 fn inside() -> AnyView {
     let draft = use_draft();
     let ask = bank();
-    let found =
-        memo(move || draft.with(|pads| ask.with(|ask| asked(&pads.of(TOOL), ask).map_err(|lacks| lacking(&lacks)))));
-    let rested = settled(found);
-    let layout: Memo<Found> = memo(move || rested.get().and_then(|asked| laid(&asked)));
-    let none = Hints { stands_in: Arc::new(|_| None), waits: Arc::new(|_| None), note: Arc::new(move |_| None) };
+    let found = memo(move || draft.with(|pads| ask.with(|ask| asked(&pads.of(TOOL), ask))));
+    let calm = rested(found, REST);
+    let layout: Memo<Found> = memo(move || calm.with(laid));
+    let stands_in = move |field| {
+        draft.with(|pads| ask.with(|ask| assumption(&pads.of(TOOL), ask, field))).map(|stands| StandIn::of(&stands))
+    };
+    let waits = move |field| {
+        let lacks = |found: &Result<Asked, Lacks>| matches!(found, Err(Lacks::Fields(all)) if all.contains(field));
+        found.with(lacks).then(|| "the layout waits for this".to_owned())
+    };
+    let hints = Hints { stands_in: Arc::new(stands_in), waits: Arc::new(waits), note: Arc::new(|_| None) };
+    let (beside, more) = (hints.clone(), hints.clone());
+    // Which step is open outlives the layout, which is made anew with each figure of the shelf.
     let at = RwSignal::new(None::<usize>);
     let body = dynamic(move || {
         layout.with(|found| match found {
             Err(why) => view! { <p class="ranked-say">{why.clone()}</p> }.into_any(),
-            Ok(layout) => view! {
-                {drawing::figure(layout)}
-                {lists::remarks(layout)}
-                <div class="caution" role="note"><b>"Caution"</b><p>{BURNS}</p></div>
-                {one_by_one::one_by_one(layout, at)}
-                {lists::lists(layout)}
+            Ok(laid) => view! {
+                {picture::figure(&laid.asked.shelf, &laid.layout)}
+                {lists::caution(&laid.layout)}
+                {lists::remarks(&laid.layout)}
+                {one_by_one::one_by_one(laid.clone(), at)}
+                {lists::lists(laid.clone())}
             }
             .into_any(),
         })
     });
     view! {
-        <div class="fields">{fields_of(&FORM, FORM.first, &none)}</div>
-        {dynamic(move || ask.with(wise).into_any())}
+        <div class="fields">{fields_of(&FORM, FORM.first, &hints)}</div>
+        {when(
+            move || ask.with(|ask| with_counts(ask).strings.typed().is_some_and(|strings| strings.get() > 1.0)),
+            move || view! {
+                <div class="fields">{fields_of(&FORM, &[Field::ParallelAs], &beside)}</div>
+                {dynamic(move || {
+                    let way = found.with(|found| found.as_ref().ok().map(|asked| asked.wiring.parallel()));
+                    ask.with(|ask| wise(ask, way)).into_any()
+                })}
+            }
+            .into_any(),
+        )}
+        <Fold id="cells/shelf-more" title="Gaps and posts" says=derived(|| "links are cut by them".to_owned())>
+            <div class="fields">{fields_of(&FORM, MORE, &more)}</div>
+        </Fold>
         {body}
         {matching::matching()}
     }
     .into_any()
 }
 
-fn lacking(lacks: &Lacks) -> String {
-    match lacks {
-        Lacks::Fields(fields) => format!("Waits for {}.", names(*fields)),
-        Lacks::Refused(why) => format!("No layout: {why}."),
+fn laid(found: &Result<Asked, Lacks>) -> Found {
+    match found {
+        Err(Lacks::Fields(fields)) => Err(format!("Waits for {}.", names(*fields))),
+        Err(Lacks::Refused(why)) => Err(format!("No layout: {why}.")),
+        Ok(asked) => {
+            let layout = lay_out(&asked.shelf, &asked.wiring, asked.volts, asked.wish)
+                .map_err(|why| format!("No layout: {why}."))?;
+            let steps = steps(&layout);
+            Ok(Arc::new(Laid { asked: *asked, layout, steps }))
+        }
     }
 }
 
-fn laid(asked: &Asked) -> Found {
-    lay_out(&asked.shelf, &asked.wiring, asked.volts, asked.wish).map_err(|why| format!("No layout: {why}."))
-}
-
-/// What whole strings and groups mean, and which is wise for these cells. Said where there are several side by side.
-fn wise(ask: &Ask) -> Option<AnyView> {
-    let ask = engine::bank::settled(ask);
-    let (made_of, strings) = (ask.chemistry.typed()?, ask.strings.typed()?);
-    if strings.get() < 2.0 {
-        return None;
-    }
-    let packs = ask.guards_itself() == Some(true);
-    let way = usual(made_of, packs);
-    let family = match (made_of.family(), packs) {
-        (_, true) => engine::shelf::Family::ProtectedPack,
-        (engine::chemistry::Family::Lead, _) => engine::shelf::Family::Lead,
-        (engine::chemistry::Family::Nickel, _) => engine::shelf::Family::Nickel,
-        (engine::chemistry::Family::Lithium, _) => engine::shelf::Family::BareLithium,
+/// What the way taken means, and which is wise for these cells.
+fn wise(ask: &Ask, way: Option<Parallel>) -> Option<AnyView> {
+    let advice = advice(Family::of(ask.chemistry.typed()?, ask.guards_itself() == Some(true)));
+    let word = |way| match way {
+        Parallel::SeparateStrings => "Whole strings",
+        Parallel::Groups => "Groups of cells",
     };
-    let advice = engine::shelf::advice(family);
-    Some(view! { <p class="ranked-say">{advice.why} " " {way.meaning()}</p> }.into_any())
+    let way = way.unwrap_or(advice.wise);
+    let against = (way != advice.wise).then(|| format!(" {} are wiser here.", word(advice.wise)));
+    Some(
+        view! { <p class="ranked-say"><b>{word(way)} ": "</b>{way.meaning()} " " {advice.why} {against}</p> }
+            .into_any(),
+    )
 }

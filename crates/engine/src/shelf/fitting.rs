@@ -5,8 +5,9 @@ use super::layout::{Layout, Link, LinkKind, Lug, TOUCH};
 use crate::quantity::Volts;
 
 /// Stands over every bank, whatever its volts.
-pub const BURNS: &str = "At any voltage a bank welds a wrench and burns: insulate tools, take off rings, cover the \
-                         posts you are not working on. Local codes and licensed practice come first.";
+pub const BURNS: &str = "At any voltage a bank welds a wrench and burns, and nothing switches it off: insulate tools, \
+                         one wrench in hand and none left on the bank, take off rings, cover the posts you are not \
+                         working on. Local codes and licensed practice come first.";
 
 /// Before the loop of two parallel cells is closed they must read alike within this.
 ///

@@ -96,7 +96,7 @@ pub fn judged(steps: &[Step], place: usize, readings: &[Option<Volts>], cell: Ce
     let same = |part: &Meter| earlier().find(|(meter, _)| (meter.black, meter.red) == (part.black, part.red));
     let parts: Vec<(Meter, Volts)> = match &step.before[..] {
         [one, other] => [one, other].into_iter().filter_map(same).collect(),
-        _ => earlier().filter(|(meter, _)| meter.black == step.now.black).next_back().into_iter().collect(),
+        _ => earlier().rfind(|(meter, _)| meter.black == step.now.black).into_iter().collect(),
     };
     let [as_read, as_expected] = parts
         .iter()
