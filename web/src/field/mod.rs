@@ -110,13 +110,14 @@ struct Said {
 
 /// Half-typed entries are not scolded: only a pause or leaving the field turns one to "not understood".
 #[derive(Clone, Copy)]
-struct Patience {
+pub struct Patience {
     over: RwSignal<bool>,
     timer: StoredValue<Option<TimeoutHandle>>,
 }
 
 impl Patience {
-    fn new() -> Self {
+    /// Of a field that stands as it was left.
+    pub(crate) fn new() -> Self {
         let patience = Self { over: RwSignal::new(true), timer: StoredValue::new(None) };
         on_cleanup(move || patience.stop());
         patience
@@ -129,7 +130,7 @@ impl Patience {
     }
 
     /// A key was pressed: wait again.
-    fn begin(self) {
+    pub fn begin(self) {
         self.stop();
         self.over.set(false);
         let pause = Duration::from_millis(PAUSE as u64);
@@ -137,8 +138,13 @@ impl Patience {
         self.timer.set_value(timer);
     }
 
+    /// Whether what stands there may be judged.
+    pub fn is_over(self) -> bool {
+        self.over.get()
+    }
+
     /// The field was left.
-    fn end(self) {
+    pub fn end(self) {
         self.stop();
         self.over.set(true);
     }

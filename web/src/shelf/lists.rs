@@ -70,8 +70,8 @@ pub fn lists(laid: Arc<Laid>) -> AnyView {
         .iter()
         .map(|step| {
             let mut says = vec![step.what.clone()];
-            says.extend(step.before.iter().map(|meter| format!("Before it: {}", reads(meter))));
-            says.push(format!("Then {}", reads(&step.now)));
+            says.extend(step.before.iter().map(|meter| format!("Before it: {}: {}.", leads(meter), band(meter))));
+            says.push(format!("Then {}: {}.", leads(&step.now), band(&step.now)));
             says.extend(step.cautions.iter().filter(|one| **one != Caution::Burns).map(|one| one.text().to_owned()));
             view! { <li value=step.link.to_string()>{says.join(" ")}</li> }.into_any()
         })
@@ -133,10 +133,10 @@ fn millimetres(metres: Metres) -> String {
     show::computed(Amount { number: metres.get() * 1000.0, unit: Unit::Millimetre })
 }
 
-/// Where the leads go and what the meter must read.
-pub fn reads(meter: &Meter) -> String {
+/// Where the leads go.
+pub fn leads(meter: &Meter) -> String {
     let at = |lug: engine::shelf::Lug| format!("{} of cell {}", lug.pole.word(), lug.cell);
-    format!("black on {}, red on {}: {}.", at(meter.black), at(meter.red), band(meter))
+    format!("black on {}, red on {}", at(meter.black), at(meter.red))
 }
 
 /// Between what the meter must read.

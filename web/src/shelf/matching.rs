@@ -8,7 +8,7 @@ use engine::show;
 use leptos::prelude::*;
 
 use crate::cells::{TOOL, bank};
-use crate::derived::{derived, dynamic, memo};
+use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
 use crate::field::list_field;
 use crate::fold::Fold;
@@ -18,16 +18,17 @@ use crate::tool_page::figures;
 pub fn matching() -> AnyView {
     let typed = use_draft().typed((TOOL, Field::Capacities));
     let ask = bank();
-    let counts = memo(move || {
-        let ask = settled(&ask.get());
-        [ask.series, ask.strings].map(|count| count.typed().map_or(1.0, engine::quantity::Count::get))
-    });
-    // The search is made once for each list, not at each key in any field.
-    let dealt = memo(move || typed.with(|typed| dealt(&typed.text, counts.get())));
+    // Only a change of the list or of the bank deals anew.
+    let found = move || {
+        let counts = ask.with(settled);
+        let counts =
+            [counts.series, counts.strings].map(|count| count.typed().map_or(1.0, engine::quantity::Count::get));
+        typed.with(|typed| dealt(&typed.text, counts))
+    };
     view! {
         <Fold id="cells/matching" title="Match measured cells" says=derived(|| "salvaged ones, dealt to groups".to_owned())>
             <div class="fields">{list_field(TOOL, Field::Capacities, "Measured capacities")}</div>
-            {dynamic(move || match dealt.get() {
+            {dynamic(move || match found() {
                 Ok(rows) => figures(rows),
                 Err(words) => view! { <p class="ranked-say">{words}</p> }.into_any(),
             })}

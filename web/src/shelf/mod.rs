@@ -38,15 +38,12 @@ const MORE: &[Field] =
 const REST: Duration = Duration::from_millis(250);
 
 /// A bank on its shelf, and how it is put together.
-#[derive(Clone, Debug, PartialEq)]
+#[derive(Debug)]
 pub struct Laid {
     asked: Asked,
     layout: Layout,
     steps: Vec<Step>,
 }
-
-/// A layout, or what there is to say instead.
-type Found = Result<Arc<Laid>, String>;
 
 /// The shelf, folded until it is wanted: a second step after the counts are chosen.
 pub fn shelf_section() -> AnyView {
@@ -63,7 +60,6 @@ fn inside() -> AnyView {
     let ask = bank();
     let found = memo(move || draft.with(|pads| ask.with(|ask| asked(&pads.of(TOOL), ask))));
     let calm = rested(found, REST);
-    let layout: Memo<Found> = memo(move || calm.with(laid));
     let stands_in = move |field| {
         draft.with(|pads| ask.with(|ask| assumption(&pads.of(TOOL), ask, field))).map(|stands| StandIn::of(&stands))
     };
@@ -75,18 +71,16 @@ fn inside() -> AnyView {
     let (beside, more) = (hints.clone(), hints.clone());
     // Which step is open outlives the layout, which is made anew with each figure of the shelf.
     let at = RwSignal::new(None::<usize>);
-    let body = dynamic(move || {
-        layout.with(|found| match found {
-            Err(why) => view! { <p class="ranked-say">{why.clone()}</p> }.into_any(),
-            Ok(laid) => view! {
-                {picture::figure(&laid.asked.shelf, &laid.layout)}
-                {lists::caution(&laid.layout)}
-                {lists::remarks(&laid.layout)}
-                {one_by_one::one_by_one(laid.clone(), at)}
-                {lists::lists(laid.clone())}
-            }
-            .into_any(),
-        })
+    let body = dynamic(move || match calm.with(laid) {
+        Err(why) => view! { <p class="ranked-say">{why}</p> }.into_any(),
+        Ok(laid) => view! {
+            {picture::figure(&laid.asked.shelf, &laid.layout)}
+            {lists::caution(&laid.layout)}
+            {lists::remarks(&laid.layout)}
+            {one_by_one::one_by_one(laid.clone(), at)}
+            {lists::lists(laid.clone())}
+        }
+        .into_any(),
     });
     view! {
         <div class="fields">{fields_of(&FORM, FORM.first, &hints)}</div>
@@ -110,7 +104,7 @@ fn inside() -> AnyView {
     .into_any()
 }
 
-fn laid(found: &Result<Asked, Lacks>) -> Found {
+fn laid(found: &Result<Asked, Lacks>) -> Result<Arc<Laid>, String> {
     match found {
         Err(Lacks::Fields(fields)) => Err(format!("Waits for {}.", names(*fields))),
         Err(Lacks::Refused(why)) => Err(format!("No layout: {why}.")),

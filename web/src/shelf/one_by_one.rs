@@ -1,7 +1,6 @@
 //! One link at a time, big, for gloved hands: what to do, what the meter must read now, and what it did read.
 
 use std::sync::Arc;
-use std::time::Duration;
 
 use engine::field::Field;
 use engine::quantity::Volts;
@@ -11,12 +10,12 @@ use engine::unit::Unit;
 use leptos::prelude::*;
 
 use super::Laid;
-use super::lists::{band, reads};
+use super::lists::{band, leads};
 use crate::cells::TOOL;
-use crate::derived::{derived, dynamic, memo, when};
-use crate::draft::{Draft, use_draft};
-use crate::pads::{Edit, PAUSE, Place};
-use crate::settled::rested;
+use crate::derived::{derived, dynamic, when};
+use crate::draft::use_draft;
+use crate::field::Patience;
+use crate::pads::{Edit, Place, Typed};
 
 /// All readings, a line for each link.
 const READINGS: Place = (TOOL, Field::LinkReadings);
@@ -28,31 +27,26 @@ const HEAD: &str = "shelf-step";
 pub fn one_by_one(laid: Arc<Laid>, at: RwSignal<Option<usize>>) -> AnyView {
     let draft = use_draft();
     let count = laid.steps.len();
-    if count == 0 {
-        return ().into_any();
-    }
-    let typed = draft.typed(READINGS);
-    let begin = move |_| {
-        let first = typed.with_untracked(|typed| (0..count).find(|place| line(&typed.text, *place).trim().is_empty()));
-        open(at, Some(first.unwrap_or(0)));
-    };
-    let clear = move |_| draft.edit(Edit::Type(READINGS, String::new()));
-    let shown = dynamic(move || match at.get() {
-        Some(place) if place < count => one(place, laid.clone(), at, draft),
-        _ => ().into_any(),
-    });
-    view! {
-        {when(move || at.get().is_none_or(|place| place >= count), move || view! {
-            <div class="btns">
-                <button class="btn solid" type="button" on:click=begin>"Fit them one by one"</button>
-                {when(move || typed.with(|typed| !typed.text.is_empty()), move || view! {
-                    <button class="btn" type="button" on:click=clear>"Clear the readings"</button>
-                }.into_any())}
-            </div>
-        }.into_any())}
-        {shown}
-    }
-    .into_any()
+    let all = draft.typed(READINGS);
+    dynamic(move || match at.get() {
+        Some(place) if place < count => one(place, laid.clone(), at, all),
+        _ if count == 0 => ().into_any(),
+        _ => {
+            let begin = move || {
+                let blank = |place: &usize| all.with_untracked(|all| line(&all.text, *place).trim().is_empty());
+                open(at, Some((0..count).find(blank).unwrap_or(0)));
+            };
+            let clear = move || draft.edit(Edit::Type(READINGS, String::new()));
+            let any = move || all.with(|all| !all.text.is_empty());
+            view! {
+                <div class="btns">
+                    {button("btn solid", "Fit them one by one".into_any(), Box::new(begin))}
+                    {when(any, move || button("btn", "Clear the readings".into_any(), Box::new(clear)))}
+                </div>
+            }
+            .into_any()
+        }
+    })
 }
 
 /// Goes to a step, and brings it under the eyes.
@@ -61,82 +55,95 @@ fn open(at: RwSignal<Option<usize>>, place: Option<usize>) {
     request_animation_frame(|| crate::field::focus(HEAD));
 }
 
-fn one(place: usize, laid: Arc<Laid>, at: RwSignal<Option<usize>>, draft: Draft) -> AnyView {
-    let step = laid.steps[place].clone();
+/// A button. Boxed, as what listens is large.
+fn button(class: &'static str, words: AnyView, press: Box<dyn Fn()>) -> AnyView {
+    view! { <button class=class type="button" on:click=move |_| press()>{words}</button> }.into_any()
+}
+
+fn one(place: usize, laid: Arc<Laid>, at: RwSignal<Option<usize>>, all: Memo<Typed>) -> AnyView {
+    let draft = use_draft();
+    let step = &laid.steps[place];
     let count = laid.steps.len();
-    let cautions: Vec<AnyView> = step.cautions.iter().map(|one| view! { <p>{one.text()}</p> }.into_any()).collect();
-    let cautions = (!cautions.is_empty())
-        .then(|| view! { <div class="caution" role="note"><b>"Caution"</b>{cautions}</div> }.into_any());
-    let before: Vec<AnyView> =
-        step.before.iter().map(|meter| view! { <p class="meter">"Before: " {reads(meter)}</p> }.into_any()).collect();
-    let now = step.now;
-    let all = draft.typed(READINGS);
-    let value = memo(move || all.with(|typed| line(&typed.text, place).to_owned()));
-    let told = memo(move || all.with(|typed| tell(&laid, &typed.text, place)));
-    // Half a reading is not scolded: on a pause, on leaving the field, or on going on.
-    let calm = rested(value, Duration::from_millis(PAUSE as u64));
-    let asked = RwSignal::new(false);
-    let off = move || told.with(|told| told.as_ref().is_some_and(|told| told.off));
-    let wrong = memo(move || off() && (asked.get() || calm.get() == value.get()));
-    let told = dynamic(move || match told.get() {
+    let head = format!("Link {} of {count}", step.link);
+    let mut lines: Vec<AnyView> = Vec::new();
+    if !step.cautions.is_empty() {
+        let cautions: Vec<AnyView> = step.cautions.iter().map(|one| view! { <p>{one.text()}</p> }.into_any()).collect();
+        lines.push(view! { <div class="caution" role="note"><b>"Caution"</b>{cautions}</div> }.into_any());
+    }
+    let meters = step.before.iter().map(|meter| ("Before", meter)).chain([("Now", &step.now)]);
+    lines.extend(meters.map(|(when, meter)| {
+        let leads = format!("{when}: {} must read", leads(meter));
+        view! { <p class="meter">{leads} " " <b>{band(meter)}</b></p> }.into_any()
+    }));
+    let what = step.what.clone();
+    let named = format!("Reading after link {}", step.link);
+
+    // Half a reading is not scolded: on a pause, or on going on.
+    let patience = Patience::new();
+    let told = move || all.with(|all| tell(&laid, &all.text, place));
+    let stops = {
+        let told = told.clone();
+        move || told().is_some_and(|told| told.off)
+    };
+    let said = dynamic(move || match told() {
         Some(told) if !told.off => view! { <p class="told">{told.words}</p> }.into_any(),
-        Some(told) if wrong.get() => view! { <p class="told off">{told.words}</p> }.into_any(),
+        Some(told) if patience.is_over() => view! { <p class="told off">{told.words}</p> }.into_any(),
         _ => ().into_any(),
     });
     let write = move |text: &str| {
-        asked.set(false);
-        let before = draft.with_now(|pads| pads.typed(READINGS).text);
-        draft.edit(Edit::Type(READINGS, with_line(&before, place, text)));
+        patience.begin();
+        let before = all.with_untracked(|all| with_line(&all.text, place, text));
+        draft.edit(Edit::Type(READINGS, before));
     };
-    let sign = move |_| {
-        let before = value.get_untracked();
+    let turn = move || {
+        let before = all.with_untracked(|all| line(&all.text, place).to_owned());
         let text = before.trim_start_matches(['-', '−']);
         write(&if text.len() == before.len() { format!("-{text}") } else { text.to_owned() });
     };
-    let next = move |_| {
-        if off() && !wrong.get_untracked() {
-            asked.set(true);
+    // What stands on it changes, it does not: a press would be lost with it.
+    let wrong = {
+        let stops = stops.clone();
+        move || patience.is_over() && stops()
+    };
+    let words = dynamic(move || {
+        let words = match (wrong(), place + 1 == count) {
+            (true, _) => "On all the same",
+            (_, true) => "Done",
+            _ => "Next",
+        };
+        words.into_any()
+    });
+    let next = move || {
+        if untrack(|| !patience.is_over() && stops()) {
+            patience.end();
         } else {
             open(at, (place + 1 < count).then_some(place + 1));
         }
     };
-    let on = derived(move || match (wrong.get(), place + 1 == count) {
-        (true, _) => "On all the same",
-        (_, true) => "Done",
-        _ => "Next",
-    });
+    let back = move || open(at, place.checked_sub(1));
+    let back = button("btn", if place == 0 { "Leave" } else { "Back" }.into_any(), Box::new(back));
+    let on = button("btn solid next", words, Box::new(next));
     view! {
-        <section class="one" aria-label=format!("Link {} of {count}", step.link)>
-            <p class="one-n" id=HEAD tabindex="-1">{format!("Link {} of {count}", step.link)}</p>
-            <p class="one-what">{step.what}</p>
-            {cautions}
-            {before}
-            <p class="meter">"Now: " {reads(&now)}</p>
-            <p class="one-band" aria-hidden="true">{band(&now)}</p>
-            <label class="one-read">
+        <section class="one" aria-labelledby=HEAD>
+            <p class="one-n" id=HEAD tabindex="-1">{head}</p>
+            <p class="one-what">{what}</p>
+            {lines}
+            <div class="one-read">
                 "It reads"
                 <input
                     type="text"
                     inputmode="decimal"
                     autocomplete="off"
-                    aria-label=format!("Reading after link {}", step.link)
-                    prop:value=derived(move || value.get())
+                    aria-label=named
+                    prop:value=derived(move || all.with(|all| line(&all.text, place).to_owned()))
                     on:input=move |event| write(&event_target_value(&event))
-                    on:blur=move |_| {
-                        asked.set(true);
-                        draft.leave();
-                    }
+                    on:blur=move |_| draft.leave()
                 />
                 "V"
-                <button class="btn" type="button" aria-label="Below zero, or above" on:click=sign>"±"</button>
-            </label>
-            <div role="status">{told}</div>
-            <div class="btns">
-                <button class="btn" type="button" on:click=move |_| open(at, place.checked_sub(1))>
-                    {if place == 0 { "Leave" } else { "Back" }}
-                </button>
-                <button class="btn solid next" type="button" on:click=next>{on}</button>
+                {button("btn", "±".into_any(), Box::new(turn))}
             </div>
+            <div role="status">{said}</div>
+            <div class="btns">{back}{on}</div>
         </section>
     }
     .into_any()

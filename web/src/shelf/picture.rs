@@ -23,8 +23,8 @@ pub fn figure(shelf: &Shelf, layout: &Layout) -> AnyView {
                 ></svg>
             </div>
             <figcaption>
-                "From above, back at the top, not to scale. Solid band: plus end. Bars are numbered in the order to fit. In \
-                 each cell: what the meter reads from the minus post to its plus, at the likely charge."
+                "From above, back at the top, not to scale. Solid band: plus end. Bars: in the order to fit, the last with \
+                 a rim. In each cell: volts from the minus post to its plus, at the likely charge."
                 {past.then_some(" Dark: past 60 V, where touch is dangerous.")}
             </figcaption>
         </figure>
@@ -55,15 +55,10 @@ fn marks(drawing: &Drawing) -> String {
     }
     for bar in &drawing.bars {
         let [from, to] = bar.ends;
-        marks.line(
-            match (bar.last, bar.beside) {
-                (true, _) => "link last",
-                (_, true) => "link beside",
-                _ => "link",
-            },
-            from,
-            to,
-        );
+        if bar.last {
+            marks.line("rim", from, to);
+        }
+        marks.line(if bar.beside { "link beside" } else { "link" }, from, to);
     }
     // Signs and numbers over all bars: where two meet at a post, both stay readable.
     for bar in &drawing.bars {
