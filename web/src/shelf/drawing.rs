@@ -3,24 +3,10 @@
 //! Seen from above, not to scale: cells keep about their shape, and there is room for figures everywhere. A unit is a
 //! pixel on the smallest screen, where the picture is 296 wide; a long row makes it wider, and it is then scrolled.
 
-use engine::shelf::{Ends, Layout, LinkKind, Place, Pole, Posts, Shelf, Stand, Touch};
+use engine::shelf::{Ends, Layout, LinkKind, Lug, Pole, Shelf, Touch};
 use engine::show;
 
-/// The picture is at least this wide.
-const WIDE: f64 = 296.0;
-const EDGE: f64 = 8.0;
-/// A plate is this high; so is the room for a row of them.
-const PLATE: f64 = 18.0;
-/// Between two rows of cells, where no plate stands: room for the number on a bar across it.
-const LANE: f64 = 16.0;
-/// A post's middle from the edge of its cell.
-const INSET: (f64, f64) = (10.0, 11.0);
-
-/// A point.
-pub type At = (f64, f64);
-
-/// A rectangle: left, top, width, height.
-pub type Area = [f64; 4];
+use super::board::{Area, At, Board, PLATE};
 
 /// One cell.
 #[derive(Clone, Debug, PartialEq)]
@@ -86,183 +72,53 @@ pub struct Drawing {
     pub plates: Vec<Plate>,
 }
 
-/// How large a cell is drawn that lies along the row, and one that does not.
-struct Sizes {
-    pitch: f64,
-    lying: At,
-    upright: At,
-}
-
-impl Sizes {
-    fn of(shelf: &Shelf) -> Self {
-        let (length, width) = (shelf.cell().length().get(), shelf.cell().width().get());
-        // Poles side by side, or at the ends of a lying cell, need more than a number does.
-        let (across, least) = match (shelf.stand(), shelf.cell().posts()) {
-            (Stand::SideBySide, Posts::Ends) => (width, 30.0),
-            (Stand::SideBySide, _) => (width, 44.0),
-            (Stand::EndToEnd, _) => (length, 68.0),
-            (Stand::EitherWay, _) => (length.max(width), 76.0),
-        };
-        let pitch = ((WIDE - 2.0 * EDGE) / f64::from(shelf.columns())).clamp(least, 76.0);
-        let scale = (pitch - 2.0) / across;
-        let of = |across: f64, forward: f64, least: At| {
-            let (across, forward) = (across * scale, forward * scale);
-            (across.clamp(least.0, (pitch - 2.0).max(least.0)), forward.clamp(least.1, 112.0))
-        };
-        Self { pitch, lying: of(length, width, (66.0, 54.0)), upright: of(width, length, (28.0, 76.0)) }
-    }
-
-    fn cell(&self, lies: bool) -> At {
-        if lies { self.lying } else { self.upright }
-    }
-
-    fn row(&self, stand: Stand) -> f64 {
-        match stand {
-            Stand::SideBySide => self.upright.1,
-            Stand::EndToEnd => self.lying.1,
-            Stand::EitherWay => self.upright.1.max(self.lying.1),
-        }
-    }
-}
-
-/// A post in the picture, from its cell's middle.
-fn post(sizes: &Sizes, place: &Place, pole: Pole) -> At {
-    let spot = place.post(pole);
-    let side = |from: f64, to: f64, size: f64, inset: f64| {
-        let off = to - from;
-        if off.abs() < 1e-6 { 0.0 } else { off.signum() * (size / 2.0 - inset) }
-    };
-    let (wide, high) = sizes.cell(place.turn.lies_along_the_row());
-    (
-        side(place.middle.across.get(), spot.across.get(), wide, INSET.0),
-        side(place.middle.forward.get(), spot.forward.get(), high, INSET.1),
-    )
-}
-
 impl Drawing {
     /// The picture of `layout` on `shelf`.
     pub fn of(shelf: &Shelf, layout: &Layout) -> Self {
-        let sizes = Sizes::of(shelf);
-        let (rows, columns) = (shelf.rows() as usize, f64::from(shelf.columns()));
-        let wide = (sizes.pitch * columns + 2.0 * EDGE).max(WIDE);
-        let left = (wide - sizes.pitch * columns) / 2.0;
-        let row_high = sizes.row(shelf.stand());
-
-        // Lanes: above each row, and below the last. In each, plates of the row above it and of the row below it.
-        let posts = |ends: &Ends| [(Pole::Minus, ends.minus.cell), (Pole::Plus, ends.plus.cell)];
-        let off = |place: &Place, pole| post(&sizes, place, pole);
-        let band = |place: &Place, pole| {
-            let down = off(place, pole).1;
-            let down = down > 0.0 || down == 0.0 && place.row as usize * 2 >= rows;
-            (place.row as usize + usize::from(down), usize::from(!down))
-        };
-        let mut plated = vec![[false; 2]; rows + 1];
-        for (pole, cell) in layout.ends.iter().flat_map(posts) {
-            if let Some((lane, side)) = layout.place(cell).map(|place| band(place, pole)) {
-                plated[lane][side] = true;
-            }
-        }
-        let mut lanes = Vec::with_capacity(rows + 1);
-        let mut y = 2.0;
-        for (lane, used) in plated.iter().enumerate() {
-            let least = if lane == 0 || lane == rows { EDGE } else { LANE };
-            let high = used.iter().filter(|used| **used).count() as f64 * (PLATE + 3.0) + least;
-            lanes.push((y, high));
-            y += high + row_high;
-        }
-        let high = y - row_high + 2.0;
-        let top = |row: usize| lanes[row].0 + lanes[row].1;
-        let middle = |row: u32, column: u32| {
-            (left + sizes.pitch * (f64::from(column) + 0.5), top(row as usize) + row_high / 2.0)
-        };
-        let at = |place: &Place, pole| {
-            let ((x, y), (dx, dy)) = (middle(place.row, place.column), off(place, pole));
-            (x + dx, y + dy)
-        };
-
-        let mut free = Vec::new();
-        for row in 0..shelf.rows() {
-            for column in 0..shelf.columns() {
-                if !layout.places.iter().any(|place| (place.row, place.column) == (row, column)) {
-                    let (x, y) = middle(row, column);
-                    let (w, h) = (sizes.pitch - 2.0, row_high);
-                    free.push([x - w / 2.0, y - h / 2.0, w, h]);
-                }
-            }
-        }
-        let passes = |string: u32| {
-            let past = |link: &&engine::shelf::Link| link.string == string && link.touch == Touch::Passes;
-            layout.links.iter().find(past).map_or(u32::MAX, |link| link.after + 1)
-        };
-        let cells = layout.places.iter().map(|place| {
-            let (x, y) = middle(place.row, place.column);
-            let (w, h) = sizes.cell(place.turn.lies_along_the_row());
-            let area = [x - w / 2.0, y - h / 2.0, w, h];
-            let posts = [Pole::Plus, Pole::Minus].map(|pole| at(place, pole));
-            Cell {
+        let board = Board::of(shelf, layout);
+        let mut cells = Vec::new();
+        for place in &layout.places {
+            let area = board.cell(place);
+            let posts = [board.post(place, Pole::Plus), board.post(place, Pole::Minus)];
+            let past = |link: &engine::shelf::Link| {
+                link.touch == Touch::Passes && link.string == place.string && link.after < place.position
+            };
+            cells.push(Cell {
                 cell: place.cell,
                 string: place.string,
                 area,
                 band: plus_end(area, posts),
                 posts,
                 volts: format!("{:.1}", (layout.cell.expected() * f64::from(place.position)).get()),
-                past: place.position >= passes(place.string),
-            }
-        });
-        let bars = layout.links.iter().filter_map(|link| {
-            let end = |lug: engine::shelf::Lug| layout.place(lug.cell).map(|place| at(place, lug.pole));
-            Some(Bar {
+                past: layout.links.iter().any(past),
+            });
+        }
+        let post = |lug: Lug| layout.place(lug.cell).map_or((0.0, 0.0), |place| board.post(place, lug.pole));
+        let mut bars = Vec::new();
+        for link in &layout.links {
+            bars.push(Bar {
                 number: link.number,
-                ends: [end(link.from)?, end(link.to)?],
-                signs: [link.from, link.to].map(|lug| lug.pole.sign()),
+                ends: [post(link.from), post(link.to)],
+                signs: [link.from.pole.sign(), link.to.pole.sign()],
                 beside: link.kind == LinkKind::Parallel,
                 last: link.fitted_last,
-            })
-        });
-        let barriers = layout.barriers.iter().filter_map(|barrier| {
-            let (one, other) = (layout.place(barrier.one)?, layout.place(barrier.other)?);
-            let (a, b) = (middle(one.row, one.column), middle(other.row, other.column));
-            let half = (sizes.pitch / 2.0, row_high / 2.0);
-            Some(if one.row == other.row {
-                let x = f64::midpoint(a.0, b.0);
-                [(x, a.1 - half.1), (x, a.1 + half.1)]
-            } else {
-                let lane = one.row.max(other.row) as usize;
-                // Between the plates of the row above and those of the row below.
-                let above = if plated[lane][0] { PLATE + 3.0 } else { 0.0 };
-                let y = lanes[lane].0 + above + LANE / 2.0;
-                [(a.0 - half.0, y), (a.0 + half.0, y)]
-            })
-        });
-        let mut plates = Vec::new();
-        for (lane, used) in plated.iter().enumerate() {
-            for (side, used) in used.iter().enumerate() {
-                if !used {
-                    continue;
-                }
-                let (from, to) = (lanes[lane].0, lanes[lane].0 + lanes[lane].1);
-                let y = if side == 0 { from + 2.0 } else { to - PLATE - 2.0 };
-                let here = layout.ends.iter().flat_map(|ends| posts(ends).map(|(pole, cell)| (ends, pole, cell)));
-                let mut row: Vec<Plate> = here
-                    .filter_map(|(ends, pole, cell)| {
-                        let place = layout.place(cell).filter(|place| band(place, pole) == (lane, side))?;
-                        Some(plate(ends, pole, layout.ends.len() > 1, at(place, pole), y))
-                    })
-                    .collect();
-                spread(&mut row, wide);
-                plates.append(&mut row);
+            });
+        }
+        let mut barriers = Vec::new();
+        for barrier in &layout.barriers {
+            if let (Some(one), Some(other)) = (layout.place(barrier.one), layout.place(barrier.other)) {
+                barriers.push(board.between(one, other));
             }
         }
-        let board = [left - 5.0, top(0) - 5.0, sizes.pitch * columns + 10.0, top(rows - 1) + row_high - top(0) + 10.0];
-        Self {
-            size: (wide, high),
-            board,
-            free,
-            cells: cells.collect(),
-            barriers: barriers.collect(),
-            bars: bars.collect(),
-            plates,
+        let mut plates = Vec::new();
+        for ends in &layout.ends {
+            for lug in [ends.minus, ends.plus] {
+                let y = layout.place(lug.cell).map_or(0.0, |place| board.plate(place, lug.pole));
+                plates.push(plate(ends, lug.pole, layout.ends.len() > 1, post(lug), y));
+            }
         }
+        spread(&mut plates, board.size.0);
+        Self { size: board.size, board: board.area, free: board.free(layout), cells, barriers, bars, plates }
     }
 }
 
@@ -277,28 +133,32 @@ fn plus_end([x, y, w, h]: Area, [plus, minus]: [At; 2]) -> Area {
 }
 
 fn plate(ends: &Ends, pole: Pole, many: bool, post: At, y: f64) -> Plate {
-    let volts = match pole {
-        Pole::Minus => "0\u{202f}V".to_owned(),
-        Pole::Plus => format!("{:.1}{}V", ends.volts.get(), show::NARROW),
-    };
+    let volts = if pole == Pole::Plus { format!("{:.1}", ends.volts.get()) } else { "0".to_owned() };
     let string = if many { format!("{}: ", ends.string) } else { String::new() };
-    let words = format!("{string}{} {volts}", pole.sign());
+    let words = format!("{string}{} {volts}{}V", pole.sign(), show::NARROW);
     let wide = words.chars().count() as f64 * 6.2 + 10.0;
     Plate { post, area: [post.0 - wide / 2.0, y, wide, PLATE], words }
 }
 
-/// Moves the plates of one row apart, and into the picture.
-fn spread(row: &mut [Plate], wide: f64) {
-    engine::order::sort_short(row, |a, b| a.post.0.total_cmp(&b.post.0));
-    let mut from = 2.0;
-    for plate in &mut *row {
-        plate.area[0] = plate.area[0].max(from);
-        from = plate.area[0] + plate.area[2] + 2.0;
+/// Moves plates at one height apart, and into the picture.
+fn spread(plates: &mut [Plate], wide: f64) {
+    engine::order::sort_short(plates, |a, b| {
+        a.area[1].total_cmp(&b.area[1]).then_with(|| a.post.0.total_cmp(&b.post.0))
+    });
+    let (mut height, mut from) = (0.0, 0.0);
+    for plate in &mut *plates {
+        let [x, y, w, _] = plate.area;
+        from = if y == height { x.max(from) } else { x.max(2.0) };
+        (plate.area[0], height) = (from, y);
+        from += w + 2.0;
     }
-    let mut to = wide - 2.0;
-    for plate in row.iter_mut().rev() {
-        plate.area[0] = plate.area[0].min(to - plate.area[2]);
-        to = plate.area[0] - 2.0;
+    let mut to = 0.0;
+    height = 0.0;
+    for plate in plates.iter_mut().rev() {
+        let [x, y, w, _] = plate.area;
+        to = x.min(if y == height { to } else { wide - 2.0 } - w);
+        (plate.area[0], height) = (to, y);
+        to -= 2.0;
     }
 }
 
@@ -306,7 +166,7 @@ fn spread(row: &mut [Plate], wide: f64) {
 mod tests {
     use super::*;
     use engine::quantity::{Metres, Volts};
-    use engine::shelf::{self, CellVolts, Parallel, PlusOn, TakeOff, Turn, Wiring, Wish, lay_out};
+    use engine::shelf::{self, CellVolts, Parallel, PlusOn, Posts, Stand, TakeOff, Turn, Wiring, Wish, lay_out};
 
     /// A bar is this thick.
     const BAR: f64 = 17.0;

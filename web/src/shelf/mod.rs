@@ -1,5 +1,6 @@
 //! The shelf: where each cell stands, which link goes where, and the meter after each.
 
+mod board;
 mod drawing;
 mod lists;
 mod matching;

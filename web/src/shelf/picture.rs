@@ -5,7 +5,8 @@ use engine::shelf::{Layout, Shelf};
 use engine::show;
 use leptos::prelude::*;
 
-use super::drawing::{Area, At, Drawing};
+use super::board::{Area, At};
+use super::drawing::Drawing;
 
 /// The figure.
 pub fn figure(shelf: &Shelf, layout: &Layout) -> AnyView {

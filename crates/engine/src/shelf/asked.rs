@@ -12,7 +12,7 @@ use crate::field::Field;
 use crate::pad::Pad;
 use crate::quantity::{Count, Metres, Percent, Quantity, Volts};
 use crate::sharing::Arrangement;
-use crate::source::{self, Clause};
+use crate::source;
 
 /// Everything that a layout is made from.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -173,52 +173,41 @@ pub fn asked(pad: &impl Pad, bank: &bank::Ask) -> Result<Asked, Lacks> {
 /// What stands in for `field` of the shelf while it is blank. `None` where nothing can.
 #[must_use]
 pub fn assumption(pad: &impl Pad, bank: &bank::Ask, field: Field) -> Option<Assumption> {
-    const CHOSEN: Clause = source::CHOSEN.at("");
     let bank = bank::settled(bank);
-    let stands = |amount, choice, why| Some(Assumption { amount, choice, why, source: CHOSEN });
-    let number = |field: Field| pad.entry::<Metres>(field).typed();
-    match field {
+    let metres = |field: Field| pad.entry::<Metres>(field).typed();
+    let (amount, choice, why) = match field {
         Field::Rows | Field::Columns => {
             let cells = whole(bank.series.typed()?) * bank.strings.typed().map_or(1, whole);
             let [rows, columns] = [Field::Rows, Field::Columns].map(|field| pad.entry::<Count>(field).typed());
             let (rows, columns) = places(rows, columns, cells);
-            let count = Count::new(f64::from(if field == Field::Rows { rows } else { columns }));
-            stands(Some(count.amount()), None, "as many as the cells need")
+            let count = if field == Field::Rows { rows } else { columns };
+            (Some(Count::new(f64::from(count)).amount()), None, "as many as the cells need")
         }
-        Field::Posts => stands(None, Some("ends"), "as most large cells have them"),
+        Field::Posts => (None, Some("ends"), "as most large cells have them"),
         Field::PostInset => {
             let posts = pad.choice(Field::Posts).typed().unwrap_or(Posts::Ends);
-            let inset = usual_inset(posts, number(Field::CellLength)?, number(Field::CellWidth)?);
-            stands(Some(inset.amount()), None, "links are cut by it: measure one cell")
+            let inset = usual_inset(posts, metres(Field::CellLength)?, metres(Field::CellWidth)?);
+            (Some(inset.amount()), None, "links are cut by it: measure one cell")
         }
-        Field::CellGap => stands(Some(BESIDE.amount()), None, "a sheet of insulation: links are cut by it"),
-        Field::RowGap => stands(Some(BETWEEN_ROWS.amount()), None, "room for a barrier: links are cut by it"),
-        Field::CellsStand => stands(None, Some("side-by-side"), "the narrow side along the row"),
-        Field::TakeOffPosts => {
-            let key = match fed_from(pad) {
-                TakeOff::SameSide => "same-side",
-                TakeOff::OppositeEnds => "opposite-ends",
-                TakeOff::Anywhere | TakeOff::Front => "anywhere",
-            };
-            stands(
-                None,
-                Some(key),
-                if key == "anywhere" { "wherever links are shortest" } else { "as the strings are fed" },
-            )
-        }
+        Field::CellGap => (Some(BESIDE.amount()), None, "a sheet of insulation: links are cut by it"),
+        Field::RowGap => (Some(BETWEEN_ROWS.amount()), None, "room for a barrier: links are cut by it"),
+        Field::CellsStand => (None, Some("side-by-side"), "the narrow side along the row"),
+        Field::TakeOffPosts => match fed_from(pad) {
+            TakeOff::SameSide => (None, Some("same-side"), "as the strings are fed"),
+            TakeOff::OppositeEnds => (None, Some("opposite-ends"), "as the strings are fed"),
+            TakeOff::Anywhere | TakeOff::Front => (None, Some("anywhere"), "wherever links are shortest"),
+        },
         Field::ParallelAs => {
-            let key = match usual(bank.chemistry.typed()?, bank.guards_itself() == Some(true)) {
-                Parallel::SeparateStrings => "strings",
-                Parallel::Groups => "groups",
-            };
-            stands(None, Some(key), "as is wise for these cells")
+            let groups = usual(bank.chemistry.typed()?, bank.guards_itself() == Some(true)) == Parallel::Groups;
+            (None, Some(if groups { "groups" } else { "strings" }), "as is wise for these cells")
         }
         Field::CellNow => {
             let volts = reads(bank.chemistry.typed()?, bank.cell_voltage.typed()?, None).ok()?;
-            stands(Some(volts.expected().amount()), None, "rested, half full: measure one, for narrower bands")
+            (Some(volts.expected().amount()), None, "rested, half full: measure one, for narrower bands")
         }
-        _ => None,
-    }
+        _ => return None,
+    };
+    Some(Assumption { amount, choice, why, source: source::CHOSEN.at("") })
 }
 
 /// Rows and columns: those that were typed, else as many as `cells` need, two rows or more where there are four cells.
