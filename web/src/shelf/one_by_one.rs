@@ -65,6 +65,7 @@ fn one(place: usize, laid: Arc<Laid>, at: RwSignal<Option<usize>>, all: Memo<Typ
     let step = &laid.steps[place];
     let count = laid.steps.len();
     let head = format!("Link {} of {count}", step.link);
+    let name = head.clone();
     let mut lines: Vec<AnyView> = Vec::new();
     if !step.cautions.is_empty() {
         let cautions: Vec<AnyView> = step.cautions.iter().map(|one| view! { <p>{one.text()}</p> }.into_any()).collect();
@@ -124,7 +125,7 @@ fn one(place: usize, laid: Arc<Laid>, at: RwSignal<Option<usize>>, all: Memo<Typ
     let back = button("btn", if place == 0 { "Leave" } else { "Back" }.into_any(), Box::new(back));
     let on = button("btn solid next", words, Box::new(next));
     view! {
-        <section class="one" aria-labelledby=HEAD>
+        <section class="one" aria-label=name>
             <p class="one-n" id=HEAD tabindex="-1">{head}</p>
             <p class="one-what">{what}</p>
             {lines}
