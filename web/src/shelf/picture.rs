@@ -13,12 +13,14 @@ pub fn figure(shelf: &Shelf, layout: &Layout) -> AnyView {
     let drawing = Drawing::of(shelf, layout);
     let past = drawing.cells.iter().any(|cell| cell.past);
     let past = if past { " Dark: past 60 V, where touch is dangerous." } else { "" };
+    let beside = if drawing.bars.iter().any(|bar| bar.beside) { " Grey bars join like to like." } else { "" };
     view! {
         <figure class="shelf">
             <div class="shelf-scroll" inner_html=svg(&drawing, &words(layout))></div>
             <figcaption>
                 "From above, back at the top, not to scale. Solid band: plus end. Bars: in the order to fit, the last with \
                  a rim. In each cell: volts from the minus post to its plus, at the likely charge."
+                {beside}
                 {past}
             </figcaption>
         </figure>
