@@ -1,5 +1,6 @@
 //! A value a moment after it last changed. The answer is painted at once; what else hangs on it may follow.
 
+use std::sync::Arc;
 use std::time::Duration;
 
 use leptos::leptos_dom::helpers::TimeoutHandle;
@@ -16,6 +17,12 @@ pub fn settled<T: Clone + PartialEq + Send + Sync + 'static>(value: Memo<T>) -> 
 /// `value`, told only once it has rested so long.
 pub fn rested<T: Clone + PartialEq + Send + Sync + 'static>(value: Memo<T>, moment: Duration) -> ReadSignal<T> {
     let (settled, settle) = signal(value.get_untracked());
+    on_rest(Box::new(move || value.track()), Arc::new(move || settle.set(value.get_untracked())), moment);
+    settled
+}
+
+/// Does `then` once what `watch` reads has rested. Boxed, as what waits is large.
+fn on_rest(watch: Box<dyn Fn()>, then: Arc<dyn Fn() + Send + Sync>, moment: Duration) {
     let timer = StoredValue::new(None::<TimeoutHandle>);
     let stop = move || {
         if let Some(earlier) = timer.try_update_value(Option::take).flatten() {
@@ -23,12 +30,12 @@ pub fn rested<T: Clone + PartialEq + Send + Sync + 'static>(value: Memo<T>, mome
         }
     };
     Effect::new(move |before: Option<()>| {
-        let now = value.get();
+        watch();
         stop();
         if before.is_some() {
-            timer.set_value(set_timeout_with_handle(move || settle.set(now.clone()), moment).ok());
+            let then = then.clone();
+            timer.set_value(set_timeout_with_handle(move || then(), moment).ok());
         }
     });
     on_cleanup(stop);
-    settled
 }

@@ -211,7 +211,7 @@ fn paste(said: RwSignal<String>) -> AnyView {
                 type="text"
                 aria-label="Pasted link or file"
                 autocomplete="off"
-                prop:value=typed
+                prop:value=derived(move || typed.get())
                 on:input=move |event| typed.set(event_target_value(&event))
             />
         </label>

@@ -103,17 +103,17 @@ fn list(
                     aria-label=name
                     aria-describedby=derived(move || parts.described_by())
                     aria-invalid=derived(move || parts.invalid())
-                    prop:value=text
+                    prop:value=derived(text)
                     on:change=move |event| choose(event_target_value(&event))
                 >
-                    <option value="" selected=move || text().is_empty()>{none}</option>
+                    <option value="" selected=derived(move || text().is_empty())>{none}</option>
                     {choices
                         .iter()
                         .map(|(key, words)| {
-                            view! { <option value=*key selected=move || text() == *key>{*words}</option> }
+                            view! { <option value=*key selected=derived(move || text() == *key)>{*words}</option> }
                         })
                         .collect_view()}
-                    {move || strange().map(|text| view! { <option value=text.clone() selected=true>{text.clone()}</option> })}
+                    {move || strange().map(|text| view! { <option value=text.clone() selected=derived(|| true)>{text.clone()}</option> })}
                 </select>
             </div>
             {parts.foot()}

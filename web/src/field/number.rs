@@ -54,7 +54,7 @@ pub fn NumberField(
                     autocomplete="off"
                     autocapitalize="off"
                     spellcheck="false"
-                    placeholder=stand_in
+                    placeholder=derived(stand_in)
                     aria-describedby=derived(move || parts.described_by())
                     aria-invalid=derived(move || parts.invalid())
                     prop:value=derived(move || parts.typed.with(|typed| typed.text.clone()))
