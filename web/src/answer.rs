@@ -93,13 +93,13 @@ pub fn answer_view(answer: Memo<Option<Answer>>) -> AnyView {
                 <p class="answer-num">{with_unit(number, unit)}</p>
                 <p class="answer-tags">
                     <VerdictMark verdict=verdict big=true/>
-                    {tells_cost(verdict).then(|| view! { <CostMark cost=cost/> })}
+                    {tells_cost(verdict).then(|| view! { <CostMark cost=cost/> }.into_any())}
                 </p>
             </div>
             <p class="answer-say">{says}</p>
-            {most.map(|most| view! { <p class="answer-most">{most}</p> })}
-            {rests.map(|rests| view! { <p class="answer-note">{rests}</p> })}
-            {besides.map(|besides| view! { <p class="answer-besides">{besides}</p> })}
+            {most.map(|most| view! { <p class="answer-most">{most}</p> }.into_any())}
+            {rests.map(|rests| view! { <p class="answer-note">{rests}</p> }.into_any())}
+            {besides.map(|besides| view! { <p class="answer-besides">{besides}</p> }.into_any())}
         }
         .into_any()
     });
@@ -122,7 +122,8 @@ pub fn answer_view(answer: Memo<Option<Answer>>) -> AnyView {
 
 /// The number with its unit set smaller; a dash has none.
 fn with_unit(number: String, unit: Cow<'static, str>) -> AnyView {
-    let unit = (number != show::NONE && !unit.is_empty()).then(|| view! { <small>{format!(" {unit}")}</small> });
+    let unit =
+        (number != show::NONE && !unit.is_empty()).then(|| view! { <small>{format!(" {unit}")}</small> }.into_any());
     view! { {number}{unit} }.into_any()
 }
 
@@ -189,7 +190,7 @@ pub fn ride(answer: Memo<Option<Answer>>) -> AnyView {
         view! {
             <span class="num">{with_unit(number, unit)}</span>
             <VerdictMark verdict=verdict/>
-            {tells_cost(verdict).then(|| view! { <CostMark cost=cost/> })}
+            {tells_cost(verdict).then(|| view! { <CostMark cost=cost/> }.into_any())}
             {bar.map(slim_bar)}
         }
         .into_any()

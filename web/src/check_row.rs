@@ -62,7 +62,7 @@ pub fn check_row<Id>(
                 <span class="name">{name}</span>
                 <span class="tags">
                     <VerdictMark verdict=verdict/>
-                    {tells_cost(verdict).then(|| view! { <CostMark cost=check.cost/> })}
+                    {tells_cost(verdict).then(|| view! { <CostMark cost=check.cost/> }.into_any())}
                 </span>
                 {figures}
                 {slim}
@@ -88,6 +88,7 @@ fn missing(fields: engine::check::FieldSet, on_ask: Callback<Field>) -> Option<A
                     {format!("Enter {}", field.name())}
                 </button>
             }
+            .into_any()
         });
         view! { <div class="btns">{buttons.collect_view()}</div> }.into_any()
     })

@@ -32,7 +32,7 @@ pub fn FirstVisit() -> impl IntoView {
                                         </span>
                                     </a>
                                 </li>
-                            }
+                            }.into_any()
                         })
                         .collect_view()}
                 </ul>

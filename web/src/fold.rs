@@ -77,7 +77,7 @@ pub fn Fold(
                 aria-controls=derived(move || open.get().then(body))
                 on:click=move |_| id.with_value(|id| folds.turn(id))
             >
-                {icon.map(|name| view! { <Icon name=name/> })}
+                {icon.map(|name| view! { <Icon name=name/> }.into_any())}
                 {title}
                 <span>{derived(move || says.get())}</span>
             </button>

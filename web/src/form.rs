@@ -85,7 +85,7 @@ pub fn form(form: &'static Form, hints: &Hints) -> AnyView {
     view! {
         <h2 class="sub">{form.title.0} " " <span>{form.title.1}</span></h2>
         <div class="fields">{first}</div>
-        {(!form.groups.is_empty()).then(|| view! { <Fold id=form.more() title="More" says=says>{groups()}</Fold> })}
+        {(!form.groups.is_empty()).then(|| view! { <Fold id=form.more() title="More" says=says>{groups()}</Fold> }.into_any())}
     }
     .into_any()
 }

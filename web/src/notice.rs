@@ -26,7 +26,7 @@ pub fn Notice(
                 <p>{move || says.get()}</p>
                 <div class="notice-acts">
                     <button type="button" class="quiet" on:click=move |_| up.set(false)>{close}</button>
-                    {on_act.map(|on_act| view! { <button type="button" on:click=move |_| on_act.run(())>{act}</button> })}
+                    {on_act.map(|on_act| view! { <button type="button" on:click=move |_| on_act.run(())>{act}</button> }.into_any())}
                 </div>
             </div> }.into_any())}
     }

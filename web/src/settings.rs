@@ -144,7 +144,7 @@ fn line(line: &Setting) -> AnyView {
         <li>
             <span class="name">{line.name}</span>
             <b>{figure}</b>
-            {(!small.is_empty()).then(|| view! { <span class="small">{small.join("; ")}</span> })}
+            {(!small.is_empty()).then(|| view! { <span class="small">{small.join("; ")}</span> }.into_any())}
             <p class="why">{line.note}</p>
             <p class="why src">{cited(line.source)}</p>
         </li>

@@ -41,7 +41,7 @@ pub fn Sheet() -> impl IntoView {
             <ul class="signal">
                 {Tool::ALL
                     .iter()
-                    .map(|tool| view! { <li><span>{tool.name()}</span><b>{move || works(offline::copy())}</b></li> })
+                    .map(|tool| view! { <li><span>{tool.name()}</span><b>{move || works(offline::copy())}</b></li> }.into_any())
                     .collect_view()}
             </ul>
             <h2 class="sub">"Forget"</h2>

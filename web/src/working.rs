@@ -21,10 +21,11 @@ pub fn Working(
             <li class:last=place == last>
                 <span class="what">{step.what}</span>
                 <span class="out">{show::step(step.result)}</span>
-                {(!how.is_empty()).then(|| view! { <span class="how">{how}</span> })}
-                {source(step.origin).map(|source| view! { <span class="src">{source}</span> })}
+                {(!how.is_empty()).then(|| view! { <span class="how">{how}</span> }.into_any())}
+                {source(step.origin).map(|source| view! { <span class="src">{source}</span> }.into_any())}
             </li>
         }
+        .into_any()
     });
     view! { <ol class="working">{steps.collect_view()}</ol> }
 }

@@ -89,7 +89,7 @@ fn row(layout: &Layout, ask: &Ask, refused: bool) -> AnyView {
     view! {
         <li class:is-now=now class:refused=refused data-v=verdict.word()>
             <span class="name">{in_series(layout)}</span>
-            <span class="tags"><VerdictMark verdict=verdict/>{cost.map(|cost| view! { <CostMark cost=cost/> })}</span>
+            <span class="tags"><VerdictMark verdict=verdict/>{cost.map(|cost| view! { <CostMark cost=cost/> }.into_any())}</span>
             <p class="why">{why(layout, now)}</p>
             {slim_bar(window_bar(layout))}
             {button}

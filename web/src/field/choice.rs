@@ -1,6 +1,6 @@
 //! A field that takes one of a short list.
 
-use crate::derived::{derived, memo, when};
+use crate::derived::{derived, dynamic, memo, when};
 use engine::field::{Field, Takes};
 use engine::typed::Refusal;
 use leptos::prelude::*;
@@ -110,10 +110,10 @@ fn list(
                     {choices
                         .iter()
                         .map(|(key, words)| {
-                            view! { <option value=*key selected=derived(move || text() == *key)>{*words}</option> }
+                            view! { <option value=*key selected=derived(move || text() == *key)>{*words}</option> }.into_any()
                         })
                         .collect_view()}
-                    {move || strange().map(|text| view! { <option value=text.clone() selected=derived(|| true)>{text.clone()}</option> })}
+                    {dynamic(move || strange().map(|text| view! { <option value=text.clone() selected=derived(|| true)>{text.clone()}</option> }.into_any()).into_any())}
                 </select>
             </div>
             {parts.foot()}
@@ -159,7 +159,7 @@ fn pick(
                                 />
                                 {*words}
                             </label>
-                        }
+                        }.into_any()
                     })
                     .collect_view()}
             </div>

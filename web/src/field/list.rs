@@ -4,7 +4,7 @@ use engine::field::Field;
 use leptos::prelude::*;
 
 use super::{Parts, Said};
-use crate::derived::derived;
+use crate::derived::{derived, dynamic};
 use crate::pads::Edit;
 use crate::tools::Tool;
 
@@ -33,7 +33,7 @@ pub fn list_field(tool: Tool, field: Field, label: &'static str) -> AnyView {
                     on:blur=move |_| parts.draft.leave()
                 ></textarea>
             </div>
-            {move || wrong.get().map(|words| view! { <p class="field-note" id=format!("{}-note", parts.id())>{words}</p> })}
+            {dynamic(move || wrong.get().map(|words| view! { <p class="field-note" id=format!("{}-note", parts.id())>{words}</p> }.into_any()).into_any())}
         </div>
     }
     .into_any()

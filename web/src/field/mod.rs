@@ -15,7 +15,7 @@ pub use number::NumberField;
 
 use std::time::Duration;
 
-use crate::derived::{memo, when};
+use crate::derived::{dynamic, memo, when};
 use engine::check::Assumption;
 use engine::field::Field;
 use engine::quantity::Amount;
@@ -239,7 +239,7 @@ impl Parts {
 
     fn foot(self) -> AnyView {
         view! {
-            {move || self.note.get().map(|note| view! { <p class="field-note" id=format!("{}-note", self.id())>{note}</p> })}
+            {dynamic(move || self.note.get().map(|note| view! { <p class="field-note" id=format!("{}-note", self.id())>{note}</p> }.into_any()).into_any())}
         }
         .into_any()
     }

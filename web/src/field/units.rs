@@ -92,7 +92,7 @@ pub fn UnitList(parts: Parts, usual: Unit, open: RwSignal<bool>) -> impl IntoVie
                         <button type="button" aria-pressed=move || chosen(other) on:click=move |_| choose(other)>
                             {other.symbol()}
                         </button>
-                    }
+                    }.into_any()
                 })
                 .collect_view()}
         </div>

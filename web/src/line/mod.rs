@@ -104,7 +104,7 @@ fn worst(site: &Site, found: &Assessment) -> AnyView {
         <section class="worst" aria-label="The worst check">
             <p class="worst-tag">
                 <VerdictMark verdict=check.verdict big=true/>
-                {tells_cost(check.verdict).then(|| view! { <CostMark cost=check.cost/> })}
+                {tells_cost(check.verdict).then(|| view! { <CostMark cost=check.cost/> }.into_any())}
             </p>
             <p class="worst-say">{sentence(site, one)}</p>
             <p class="tally">{tally} <a href=Route::Checks.href()>"All checks"</a></p>

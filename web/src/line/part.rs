@@ -131,7 +131,7 @@ pub fn part_page(subject: Subject, site: Memo<Option<Site>>) -> AnyView {
     let inside = match tool {
         Some(tool) => view! {
             {tool.page()}
-            {(!fields.is_empty()).then(|| view! { <div class="fields">{fields}</div> })}
+            {(!fields.is_empty()).then(|| view! { <div class="fields">{fields}</div> }.into_any())}
         }
         .into_any(),
         None => view! {

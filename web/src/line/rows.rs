@@ -129,19 +129,20 @@ fn part_row(site: &Site, part: &Part, found: &Assessment, open: Option<Subject>)
     let worst = found.worst_at(place).map(|one| one.check);
     let is_open = open == Some(Subject::Part(part.id));
     let wide = width(site, part);
-    let typical = part.typical.then(|| view! { <span class="typical">"typical: read your nameplate"</span> });
+    let typical =
+        part.typical.then(|| view! { <span class="typical">"typical: read your nameplate"</span> }.into_any());
     let torn = worst.is_some_and(|check| check.verdict == engine::check::Verdict::Breaks);
     view! {
         <li class:is-open=is_open class:hangs=hangs(site, part)>
             <div class="rail">
                 <i class="wire" style=("--w", wide)></i>
-                {torn.then(|| view! { <i class="tear"></i> })}
+                {torn.then(|| view! { <i class="tear"></i> }.into_any())}
                 <span class="node"><Icon class="sym" name=symbol(part.kind)/></span>
             </div>
             <div class="part">
                 <div class="part-head">
                     <h2 class="part-name"><a href=link(place).href() aria-current=is_open.then_some("true")>{part.title().to_owned()}</a></h2>
-                    {worst.map(|check| view! { <VerdictMark verdict=check.verdict/> })}
+                    {worst.map(|check| view! { <VerdictMark verdict=check.verdict/> }.into_any())}
                 </div>
                 <p class="part-key">{key(site, part)} " " {typical}</p>
                 {worst.and_then(|check| bar(check.id.name(), &check)).map(slim_bar)}
@@ -178,7 +179,7 @@ fn run_row(site: &Site, part: &Part, found: &Assessment, open: Option<Subject>) 
             <div class="run">
                 <div class="run-head">
                     <h3 class="run-name"><a href=link(place).href() aria-current=is_open.then_some("true")>{name}</a></h3>
-                    {worst.map(|check| view! { <VerdictMark verdict=check.verdict/> })}
+                    {worst.map(|check| view! { <VerdictMark verdict=check.verdict/> }.into_any())}
                 </div>
                 <p class="run-key">{run_key(site, part)}</p>
             </div>

@@ -99,7 +99,7 @@ fn effects(site: &Site, effects: &[Effect]) -> AnyView {
                     ": "
                     {words(one)}
                     " "
-                    {cost.map(|cost| view! { <CostMark cost=cost/> })}
+                    {cost.map(|cost| view! { <CostMark cost=cost/> }.into_any())}
                 </li>
             }
             .into_any()

@@ -32,7 +32,7 @@ pub fn caution(layout: &Layout) -> AnyView {
     view! {
         <div class="caution" role="note">
             <b>{title}</b>
-            {layout.last_link_reason.clone().map(|why| view! { <p>{why}</p> })}
+            {layout.last_link_reason.clone().map(|why| view! { <p>{why}</p> }.into_any())}
             {past}
             <p>{BURNS}</p>
         </div>

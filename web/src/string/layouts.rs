@@ -58,7 +58,7 @@ fn Laid(question: ReadSignal<Question>) -> impl IntoView {
                                     .chain(found.rejected.iter().take(SHOWN).map(|one| rejected(one, question)))
                                     .collect_view();
                                 view! {
-                                    {words(found, question).map(|words| view! { <p class="ranked-say">{words}</p> })}
+                                    {words(found, question).map(|words| view! { <p class="ranked-say">{words}</p> }.into_any())}
                                     <ol class="ranked">{rows}</ol>
                                 }
                                 .into_any()
@@ -133,7 +133,7 @@ fn ranked(layout: &Layout, question: &Question) -> AnyView {
                     >
                         "Take this"
                     </button>
-                }
+                }.into_any()
             })}
         </li>
     }
@@ -271,15 +271,18 @@ fn picture(groups: &[Group], left_over: u32) -> AnyView {
     let mut rects = Vec::new();
     let mut column = 0_u32;
     let mut rect = |column: u32, place: u32, spare: bool| {
-        rects.push(view! {
-            <rect
-                class:spare=spare
-                x=format!("{:.1}", left + step * f64::from(column))
-                y=format!("{:.1}", top + row * f64::from(place))
-                width=format!("{width:.1}")
-                height=format!("{height:.1}")
-            ></rect>
-        });
+        rects.push(
+            view! {
+                <rect
+                    class:spare=spare
+                    x=format!("{:.1}", left + step * f64::from(column))
+                    y=format!("{:.1}", top + row * f64::from(place))
+                    width=format!("{width:.1}")
+                    height=format!("{height:.1}")
+                ></rect>
+            }
+            .into_any(),
+        );
     };
     for group in groups {
         for _ in 0..group.strings {
