@@ -4,7 +4,7 @@ use std::sync::Arc;
 
 use engine::field::Field;
 use engine::quantity::Volts;
-use engine::shelf::{Says, judged};
+use engine::shelf::judged;
 use engine::typed::read;
 use engine::unit::Unit;
 use leptos::prelude::*;
@@ -170,7 +170,7 @@ fn tell(laid: &Laid, lines: &str, place: usize) -> Option<Told> {
     }
     let readings: Vec<Option<Volts>> = (0..laid.steps.len()).map(|place| volts(line(lines, place))).collect();
     let says = judged(&laid.steps, place, &readings, laid.layout.cell)?;
-    Some(Told { words: says.words().to_owned(), off: says != Says::AsItMust })
+    Some(Told { words: says.words().to_owned(), off: says.stops() })
 }
 
 /// What stands on the line of a link: each has one of its own in the kept text.

@@ -8,6 +8,8 @@ use crate::quantity::Volts;
 pub enum Says {
     /// As it must be.
     AsItMust,
+    /// As it must be, but where so many cells may read so differently that one more or less would not show.
+    Wide,
     /// The meter's leads stand the other way round.
     LeadsSwapped,
     /// Two cells' volts are missing: a cell stands turned round.
@@ -23,11 +25,21 @@ pub enum Says {
 }
 
 impl Says {
+    /// Whether the work stops here.
+    #[must_use]
+    pub const fn stops(self) -> bool {
+        !matches!(self, Self::AsItMust | Self::Wide)
+    }
+
     /// In words.
     #[must_use]
     pub const fn words(self) -> &'static str {
         match self {
             Self::AsItMust => "As it must be. Go on.",
+            Self::Wide => {
+                "Within the band, but the band is wider than one cell. Read after every link, or enter what each cell \
+                 reads now."
+            }
             Self::LeadsSwapped => {
                 "Below zero: the meter’s leads are swapped, or the whole part stands the other way round."
             }
@@ -102,7 +114,8 @@ pub fn judged(steps: &[Step], place: usize, readings: &[Option<Volts>], cell: Ce
         .iter()
         .fold([Volts::new(0.0); 2], |[read, expected], (meter, volts)| [read + *volts, expected + meter.expected]);
     if parts.is_empty() {
-        return Some(said);
+        let wide = step.now.highest - step.now.lowest >= cell.lowest();
+        return Some(if wide && said == Says::AsItMust { Says::Wide } else { said });
     }
     let share = as_read / as_expected;
     Some(fault(step.now.expected * share, cell.expected() * share, read).unwrap_or(said))
@@ -146,9 +159,13 @@ mod tests {
                 }
             }
         }
-        // By the band alone it would have passed.
+        // By the band alone it would have passed; so where nothing else was read, that is said.
         let short = steps[last].now.expected - cell.expected();
         assert_eq!(says(&steps[last].now, cell, short), Says::AsItMust);
+        let mut alone = vec![None; steps.len()];
+        alone[last] = Some(short);
+        assert_eq!(judged(&steps, last, &alone, cell), Some(Says::Wide));
+        assert!(!Says::Wide.stops() && Says::OneMissing.stops() && !Says::AsItMust.stops());
     }
 
     #[test]
