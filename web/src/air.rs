@@ -9,8 +9,9 @@ use engine::quantity::{Quantity, SquareCentimetres};
 use engine::show;
 use leptos::prelude::*;
 
-use crate::answer::Answer;
-use crate::cells::{against, bank, check_rows, hints, in_series, short};
+use crate::answer::{Answer, besides, rests_on};
+use crate::cells::{bank, check_rows, hints, in_series, short};
+use crate::check_row::against;
 use crate::derived::memo;
 use crate::form::{Form, names};
 use crate::settled::settled;
@@ -109,8 +110,6 @@ fn answer(ask: &Ask) -> Answer {
     let area = found.as_ref().and_then(|found| found.opening);
     let opening = area.map(|opening| show::computed(opening.amount()));
     let no_gas = found.as_ref().is_some_and(|found| found.gassing.is_none());
-    let broken: Vec<&str> =
-        checks.iter().skip(1).filter(|check| check.verdict == Verdict::Breaks).map(|check| check.id.name()).collect();
     Answer {
         of: of(ask, no_gas),
         number: match &opening {
@@ -125,10 +124,8 @@ fn answer(ask: &Ask) -> Answer {
             .as_ref()
             .map_or_else(|| format!("Waits for {}.", names(missing(ask))), |found| says(found, &checks)),
         most: found.as_ref().and_then(water),
-        rests: found
-            .filter(|found| !found.assumed.is_empty())
-            .map(|found| format!("Rests on what is assumed: {}.", names(found.assumed))),
-        besides: (!broken.is_empty()).then(|| format!("Breaks as well: {}.", broken.join("; "))),
+        rests: found.and_then(|found| rests_on(found.assumed)),
+        besides: besides(&checks, top.map(|check| check.id), Requirement::name),
         bar: Some(bar(top, area)),
         second: None,
         offer: None,
@@ -216,12 +213,9 @@ fn told(found: &AirAndWater) -> AnyView {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::testing::plain;
     use engine::chemistry::Chemistry;
     use engine::entry::Entry;
-
-    fn plain(text: &str) -> String {
-        text.replace([show::NARROW, '\u{a0}'], " ")
-    }
 
     /// 24 vented lead cells of 500 Ah: IEC 62485-2, 7.2 and 7.3: 20 mA/Ah · 500 Ah = 10 A; 0.05 · 24 · 10 = 12 m³/h;
     /// 28 · 12 = 336 cm².

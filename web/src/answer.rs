@@ -4,12 +4,13 @@
 
 use std::borrow::Cow;
 
-use engine::check::{Cost, Verdict};
+use engine::check::{Check, Cost, FieldSet, Verdict};
 use engine::show;
 use leptos::prelude::*;
 
 use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::use_draft;
+use crate::form::names;
 use crate::pads::{Edit, Place, Typed};
 use crate::span_bar::{Bar, slim_bar, span_bar};
 use crate::verdict::{CostMark, VerdictMark, tells_cost};
@@ -61,6 +62,22 @@ impl Answer {
         let most = self.most.as_ref().map_or_else(String::new, |most| format!(" {most}."));
         format!("{}{cost}.{number} {}{most}", self.verdict.word(), self.says)
     }
+}
+
+/// What else breaks, but for the check that stands on top.
+pub fn besides<Id: Copy + PartialEq>(
+    checks: &[Check<Id>],
+    top: Option<Id>,
+    name: fn(Id) -> &'static str,
+) -> Option<String> {
+    let broken = checks.iter().filter(|check| check.verdict == Verdict::Breaks && Some(check.id) != top);
+    let broken: Vec<&str> = broken.map(|check| name(check.id)).collect();
+    (!broken.is_empty()).then(|| format!("Breaks as well: {}.", broken.join("; ")))
+}
+
+/// What a value rests on, where something was assumed.
+pub fn rests_on(assumed: FieldSet) -> Option<String> {
+    (!assumed.is_empty()).then(|| format!("Rests on what is assumed: {}.", names(assumed)))
 }
 
 /// A unit as it is said.

@@ -2,11 +2,13 @@
 
 use engine::check::{Check, Sense, Step, Verdict};
 use engine::field::Field;
-use engine::quantity::{Amount, Quantity};
+use engine::quantity::Quantity;
 use engine::show;
 use leptos::prelude::*;
 
+use crate::answer::rests_on;
 use crate::fold::Folds;
+use crate::form::names;
 use crate::span_bar::geometry::{From, Post, Ruler};
 use crate::span_bar::{Bar, slim_bar};
 use crate::verdict::{CostMark, VerdictMark, tells_cost};
@@ -45,7 +47,7 @@ pub fn check_row<Id>(
     let note =
         note.filter(|_| open || verdict == Verdict::Asks).map(|note| view! { <p class="note">{note}</p> }.into_any());
     let body = open.then(|| {
-        let assumed = assumed(check).map(|assumed| view! { <p class="note">{assumed}</p> }.into_any());
+        let assumed = rests_on(check.assumed).map(|assumed| view! { <p class="note">{assumed}</p> }.into_any());
         view! {
             <div class="check-body">
                 {missing(check.asks, on_ask)}
@@ -74,7 +76,7 @@ pub fn check_row<Id>(
     .into_any()
 }
 
-/// "asks: Voc, Record low", where it asks.
+/// "asks: Voc and Record low", where it asks.
 pub fn asks_for<Id>(check: &Check<Id>) -> Option<String> {
     (check.verdict == Verdict::Asks).then(|| format!("asks: {}", names(check.asks)))
 }
@@ -94,14 +96,6 @@ fn missing(fields: engine::check::FieldSet, on_ask: Callback<Field>) -> Option<A
     })
 }
 
-fn assumed<Id>(check: &Check<Id>) -> Option<String> {
-    (!check.assumed.is_empty()).then(|| format!("Rests on what is assumed: {}.", names(check.assumed)))
-}
-
-fn names(fields: engine::check::FieldSet) -> String {
-    fields.iter().map(engine::field::Field::name).collect::<Vec<_>>().join(", ")
-}
-
 /// A check's value and limit, with so many digits that they differ where the values do.
 pub fn apart<Id>(check: &Check<Id>) -> (String, String) {
     match (check.value, check.limit) {
@@ -113,12 +107,21 @@ pub fn apart<Id>(check: &Check<Id>) -> (String, String) {
     }
 }
 
+/// "18.5 V, at most 16 V"; nothing where the check asks.
+pub fn against<Id>(check: &Check<Id>) -> String {
+    check.value.zip(check.limit).map_or_else(String::new, |(value, limit)| {
+        let (value, bound) = show::apart(value, limit.amount);
+        let side = if limit.sense == Sense::AtMost { "at most" } else { "needs" };
+        format!("{value}, {side} {bound}")
+    })
+}
+
 /// The slim bar of a check; none where it asks.
 pub fn bar<Id>(name: &str, check: &Check<Id>) -> Option<Bar> {
     let (value, limit, room) = (check.value?, check.limit?, check.room()?);
     let (shown, limit_shown) = apart(check);
     let at_most = limit.sense == Sense::AtMost;
-    let distance = show::room(Amount { number: room.number.abs(), ..room });
+    let distance = check.distance().map(show::room).unwrap_or_default();
     let (bound, side) = match (at_most, room.number < 0.0) {
         (true, false) => ("at most", "left"),
         (true, true) => ("at most", "over"),

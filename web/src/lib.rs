@@ -35,6 +35,8 @@ pub mod shell;
 pub mod span_bar;
 pub mod start;
 pub mod string;
+#[cfg(test)]
+mod testing;
 pub mod theme;
 pub mod tool_page;
 pub mod tools;

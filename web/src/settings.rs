@@ -155,11 +155,8 @@ fn line(line: &Setting) -> AnyView {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::testing::plain;
     use engine::entry::Entry;
-
-    fn plain(text: &str) -> String {
-        text.replace([show::NARROW, '\u{a0}'], " ")
-    }
 
     /// Sixteen cells of LiFePO4 for 48 V.
     fn sixteen() -> Ask {

@@ -1,14 +1,15 @@
 //! The answer of the Cells tool, worded and drawn. Pure.
 
 use engine::bank::{Advice, Ask, Layout, Layouts, Requirement, Stage, advice_on, assess, lacks, layouts};
-use engine::check::{Check, Cost, FieldSet, Sense, Verdict};
+use engine::check::{Check, Cost, FieldSet, Verdict};
 use engine::field::Field;
 use engine::pad::Pad;
 use engine::quantity::{Amount, Quantity, Volts};
 use engine::show;
 use engine::unit::Unit;
 
-use crate::answer::Answer;
+use crate::answer::{Answer, besides};
+use crate::check_row::against;
 use crate::form::{as_entered, names};
 use crate::span_bar::Bar;
 use crate::span_bar::geometry::{From, Mark, Post, Ruler};
@@ -43,7 +44,7 @@ pub fn answer(pad: &impl Pad, ask: &Ask) -> Option<Answer> {
         says: layout.map_or_else(|| format!("Waits for {}.", names(lacks(ask))), |one| says(ask, one, worst, &advice)),
         most: layout.and_then(energy),
         rests: layout.and_then(|_| rests(worst, &advice)),
-        besides: layout.and_then(|_| besides(ask, worst)),
+        besides: layout.and_then(|_| besides(&assess(ask), worst.map(|check| check.id), Requirement::name)),
         bar: Some(layout.map_or_else(empty_bar, window_bar)),
         second: None,
         offer: None,
@@ -146,15 +147,6 @@ pub fn assumed(fields: FieldSet) -> String {
     names(fields).replace(", a cell", "")
 }
 
-/// "18.5 V, at most 16 V".
-pub fn against(check: &Check<Requirement>) -> String {
-    check.value.zip(check.limit).map_or_else(String::new, |(value, limit)| {
-        let (value, bound) = show::apart(value, limit.amount);
-        let side = if limit.sense == Sense::AtMost { "at most" } else { "needs" };
-        format!("{value}, {side} {bound}")
-    })
-}
-
 /// "6.30 kWh usable of 8.40 kWh".
 pub fn energy(layout: &Layout) -> Option<String> {
     let energy = layout.energy?;
@@ -162,21 +154,9 @@ pub fn energy(layout: &Layout) -> Option<String> {
     Some(format!("{} usable of {}", kilo(energy.usable.get()), kilo(energy.in_all.get())))
 }
 
-/// Whatever else breaks, also what does not tell one layout from another.
-fn besides(ask: &Ask, worst: Option<&Check<Requirement>>) -> Option<String> {
-    let on_top = |check: &Check<Requirement>| worst.is_some_and(|worst| worst.id == check.id);
-    let broken: Vec<&str> = assess(ask)
-        .iter()
-        .filter(|check| check.verdict == Verdict::Breaks && !on_top(check))
-        .map(|check| check.id.name())
-        .collect();
-    (!broken.is_empty()).then(|| format!("Breaks as well: {}.", broken.join("; ")))
-}
-
 /// The ruler before anything is known.
 pub fn empty_bar() -> Bar {
-    let ruler = Ruler { low: None, high: None, covered: None, marks: Vec::new() };
-    Bar { ruler, verdict: Verdict::Asks, room: None, says: "The bank’s window is not known yet.".to_owned() }
+    Bar::unknown("The bank’s window is not known yet.")
 }
 
 /// The check of the bank's window that holds least well: at its top, or at its bottom.
@@ -216,7 +196,7 @@ pub fn window_bar(layout: &Layout) -> Bar {
     }
     marks.push(mark(highest, "highest"));
     let worst = of_window(layout);
-    let room = worst.and_then(Check::room).map(|room| show::room(Amount { number: room.number.abs(), ..room }));
+    let room = worst.and_then(Check::distance).map(show::room);
     let judged = worst.map_or_else(String::new, |check| {
         format!(" {}: {}, {}.", check.id.name(), against(check), check.verdict.word())
     });
@@ -246,18 +226,7 @@ fn bound(check: &Check<Requirement>) -> f64 {
 #[cfg(test)]
 mod tests {
     use super::*;
-
-    struct Rows<'a>(&'a [(Field, &'a str)]);
-
-    impl Pad for Rows<'_> {
-        fn typed(&self, field: Field) -> (&str, Option<Unit>) {
-            (self.0.iter().rev().find(|(one, _)| *one == field).map_or("", |(_, text)| text), None)
-        }
-    }
-
-    fn plain(text: &str) -> String {
-        text.replace([show::NARROW, '\u{a0}'], " ")
-    }
+    use crate::testing::{Rows, plain};
 
     fn of_rows(rows: &[(Field, &str)]) -> Answer {
         answer(&Rows(rows), &Ask::read(&Rows(rows))).expect("there is always an answer")

@@ -8,7 +8,8 @@ use engine::show;
 use leptos::prelude::*;
 
 use super::TOOL;
-use super::answer::{against, energy, in_series, window_bar};
+use super::answer::{energy, in_series, window_bar};
+use crate::check_row::against;
 use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
 use crate::fold::Fold;

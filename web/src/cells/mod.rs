@@ -5,7 +5,7 @@ mod layouts;
 mod reading;
 mod sharing;
 
-pub use answer::{against, assumed, empty_bar, in_series, window_bar};
+pub use answer::{assumed, empty_bar, in_series, window_bar};
 
 use std::sync::Arc;
 

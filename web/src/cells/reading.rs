@@ -96,15 +96,7 @@ fn charge(found: &AtRest) -> String {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use engine::unit::Unit;
-
-    struct Rows<'a>(&'a [(Field, &'a str)]);
-
-    impl Pad for Rows<'_> {
-        fn typed(&self, field: Field) -> (&str, Option<Unit>) {
-            (self.0.iter().rev().find(|(one, _)| *one == field).map_or("", |(_, text)| text), None)
-        }
-    }
+    use crate::testing::Rows;
 
     fn of_rows(rows: &[(Field, &str)]) -> Result<Vec<(String, String)>, String> {
         told(&Rows(rows), &Ask::read(&Rows(rows)))

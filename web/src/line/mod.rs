@@ -6,7 +6,6 @@ mod rows;
 mod what_if;
 
 use engine::check::Verdict;
-use engine::quantity::Amount;
 use engine::show;
 use engine::site::{Assessment, PartId, PartKind, Place, Site, SiteCheck, Subject, assess, place_name};
 use leptos::prelude::*;
@@ -122,7 +121,7 @@ pub fn sentence(site: &Site, one: &SiteCheck) -> String {
         (Some(value), Some(limit), Some(room)) => {
             let (value, bound) = show::apart(value, limit.amount);
             let side = if limit.sense == engine::check::Sense::AtMost { "at most" } else { "at least" };
-            let size = show::room(Amount { number: room.number.abs(), ..room });
+            let size = check.distance().map(show::room).unwrap_or_default();
             let end = if room.number < 0.0 { format!("{size} past it") } else { format!("{size} in hand") };
             format!("{place}: {name}, {value}, {side} {bound}, {end}.")
         }

@@ -1,6 +1,6 @@
 //! The answer of the Run tool, worded and drawn. Pure.
 
-use engine::check::{Check, Cost, FieldSet, Sense, Verdict};
+use engine::check::{Check, Cost, FieldSet, Verdict};
 use engine::entry::Entry;
 use engine::field::Field;
 use engine::pad::Pad;
@@ -10,7 +10,8 @@ use engine::show;
 use engine::unit::Unit;
 
 use super::{TOOL, bars, truck};
-use crate::answer::{Answer, Offer};
+use crate::answer::{Answer, Offer, besides};
+use crate::check_row::against;
 use crate::form::{as_entered, names};
 use crate::pads::Typed;
 
@@ -33,10 +34,7 @@ pub fn on_top(ask: &Ask) -> Option<Check<Requirement>> {
 /// The worst of some requirements.
 pub fn worst_of(requirements: &[Requirement], ask: &Ask) -> Option<Check<Requirement>> {
     let checks = requirements.iter().filter_map(|one| one.check(ask));
-    checks.min_by(|a, b| {
-        let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
-        group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
-    })
+    checks.min_by(Check::order)
 }
 
 /// The answer to what was typed into `pad`.
@@ -66,7 +64,7 @@ pub fn answer(pad: &impl Pad, ask: &Ask) -> Option<Answer> {
         },
         most: sizing.map(breaker),
         rests: top.as_ref().and_then(rests),
-        besides: besides(&checks, top.map(|check| check.id)),
+        besides: besides(&checks, top.map(|check| check.id), Requirement::name),
         bar: Some(bars::amps(sizing, &checks)),
         second: bars::drop(sizing, &checks),
         offer: offer(ask, &checks),
@@ -159,28 +157,10 @@ fn asks_for_drop(ask: &Ask) -> String {
     format!("Enter {} for the drop.", names(missing))
 }
 
-/// "120 A, needs 150 A".
-pub fn against(check: &Check<Requirement>) -> String {
-    check.value.zip(check.limit).map_or_else(String::new, |(value, limit)| {
-        let (value, bound) = show::apart(value, limit.amount);
-        let side = if limit.sense == Sense::AtMost { "at most" } else { "needs" };
-        format!("{value}, {side} {bound}")
-    })
-}
-
 /// What it rests on, where something was assumed.
 pub fn rests(check: &Check<Requirement>) -> Option<String> {
     let close = check.verdict == Verdict::Close && !check.assumed.is_empty();
     close.then(|| format!("Close until that is confirmed: {}.", names(check.assumed)))
-}
-
-fn besides(checks: &[Check<Requirement>], top: Option<Requirement>) -> Option<String> {
-    let broken: Vec<&str> = checks
-        .iter()
-        .filter(|check| check.verdict == Verdict::Breaks && Some(check.id) != top)
-        .map(|check| check.id.name())
-        .collect();
-    (!broken.is_empty()).then(|| format!("Breaks as well: {}.", broken.join("; ")))
 }
 
 /// What else there is to say of a check, under its name.
@@ -212,20 +192,7 @@ pub fn precharge(how: &Precharge) -> String {
 pub mod tests {
     use super::*;
     use crate::span_bar::geometry::Stand;
-
-    /// What stands in the fields, the last of each counting.
-    pub struct Rows<'a>(pub &'a [(Field, &'a str)]);
-
-    impl Pad for Rows<'_> {
-        fn typed(&self, field: Field) -> (&str, Option<Unit>) {
-            (self.0.iter().rev().find(|(one, _)| *one == field).map_or("", |(_, text)| text), None)
-        }
-    }
-
-    /// The text with plain spaces.
-    pub fn plain(text: &str) -> String {
-        text.replace([show::NARROW, '\u{a0}'], " ")
-    }
+    use crate::testing::{Rows, plain};
 
     /// The answer to some rows.
     #[track_caller]

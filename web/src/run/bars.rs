@@ -16,12 +16,7 @@ fn find(checks: &[Check<Requirement>], id: Requirement) -> Option<&Check<Require
 /// Amperes: what is asked of the conductor against what it carries, or the breaker against its own limit where only
 /// that breaks.
 pub fn amps(found: Option<&Sizing>, checks: &[Check<Requirement>]) -> Bar {
-    drawn(found, checks).unwrap_or_else(|| Bar {
-        ruler: Ruler { low: None, high: None, covered: None, marks: Vec::new() },
-        verdict: Verdict::Asks,
-        room: None,
-        says: "What flows is not known yet.".to_owned(),
-    })
+    drawn(found, checks).unwrap_or_else(|| Bar::unknown("What flows is not known yet."))
 }
 
 fn drawn(found: Option<&Sizing>, checks: &[Check<Requirement>]) -> Option<Bar> {
@@ -50,7 +45,7 @@ fn conductor(found: &Sizing, check: &Check<Requirement>) -> Option<Bar> {
     }
     let breaker = format!("the {} is {}", found.protection.protects.word(), show::given(rating.amount()));
     let carries_shown = show::apart(carries, asked).0;
-    let room = check.room()?;
+    let room = show::room(check.distance()?);
     let rule = if by_rule { format!("the rule asks for {}, ", show::computed(asked)) } else { String::new() };
     let says =
         format!("Amperes. The conductor carries {carries_shown}; {rule}{} flows, {breaker}.", marks[0].shown.clone());
@@ -67,7 +62,7 @@ fn conductor(found: &Sizing, check: &Check<Requirement>) -> Option<Bar> {
             marks,
         },
         verdict: check.verdict,
-        room: Some(show::room(Amount { number: room.number.abs(), ..room })),
+        room: Some(room),
         says,
     })
 }

@@ -119,7 +119,7 @@ fn rows(found: &Along) -> Vec<(String, String)> {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::run::answer::tests::{Rows, plain};
+    use crate::testing::{Rows, plain};
 
     const CORRIDOR: &[(Field, &str)] = &[
         (Field::RunKind, "dc-branch"),

@@ -6,8 +6,9 @@ use engine::run::{Ask, BreakerType, Landing, Protection, Sizing, Thinner, reach,
 use engine::show;
 use leptos::prelude::*;
 
-use super::answer::{against, precharge};
+use super::answer::precharge;
 use super::{fault, truck};
+use crate::check_row::against;
 use crate::derived::{derived, dynamic};
 use crate::fold::Fold;
 use crate::form::names;
@@ -192,7 +193,7 @@ fn why(one: &Thinner) -> (Verdict, String) {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::run::answer::tests::{Rows, plain};
+    use crate::testing::{Rows, plain};
     use engine::field::Field;
 
     #[track_caller]

@@ -65,7 +65,7 @@ fn also_breaks(check: &Check<Requirement>, device: &str) -> Option<String> {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::run::answer::tests::{Rows, plain};
+    use crate::testing::{Rows, plain};
     use engine::check::Verdict;
     use engine::field::Field;
     use engine::run::size;

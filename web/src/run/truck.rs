@@ -127,7 +127,8 @@ pub fn rows(reach: &Reach, ask: &Ask) -> Vec<(String, String)> {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::run::answer::tests::{Rows, of_rows, plain};
+    use crate::run::answer::tests::of_rows;
+    use crate::testing::{Rows, plain};
 
     const TRUCK: &[(Field, &str)] = &[(Field::RunKind, "dc-branch"), (Field::ConductorSize, "2.5")];
 

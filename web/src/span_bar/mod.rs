@@ -20,6 +20,14 @@ pub struct Bar {
     pub says: String,
 }
 
+impl Bar {
+    /// The ruler before a limit or a value is known; `says` tells which.
+    pub fn unknown(says: &str) -> Self {
+        let ruler = Ruler { low: None, high: None, covered: None, marks: Vec::new() };
+        Self { ruler, verdict: Verdict::Asks, room: None, says: says.to_owned() }
+    }
+}
+
 /// The full span bar, with labels above and below.
 pub fn span_bar(Bar { ruler, verdict, room, says }: Bar) -> AnyView {
     let drawn = ruler.geometry();

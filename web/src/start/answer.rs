@@ -1,11 +1,11 @@
 //! The answer of the Start tool, worded and drawn. Pure.
 
 use engine::check::{Check, FieldSet, Verdict};
-use engine::quantity::{Amount, Quantity};
+use engine::quantity::Quantity;
 use engine::show;
 use engine::start::{Ask, Requirement, current, volts};
 
-use crate::answer::Answer;
+use crate::answer::{Answer, besides, rests_on};
 use crate::check_row::bar;
 use crate::form::names;
 use crate::span_bar::Bar;
@@ -21,10 +21,7 @@ pub fn missing(ask: &Ask) -> FieldSet {
 
 /// The worse of the two.
 pub fn on_top(ask: &Ask) -> Option<Check<Requirement>> {
-    JUDGING.iter().filter_map(|one| one.check(ask)).min_by(|a, b| {
-        let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
-        group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
-    })
+    JUDGING.iter().filter_map(|one| one.check(ask)).min_by(Check::order)
 }
 
 /// The answer.
@@ -56,10 +53,8 @@ pub fn answer(ask: &Ask) -> Answer {
             let (value, bound) = show::apart(value, limit.amount);
             format!("Start {value} of {bound} surge")
         }),
-        rests: top
-            .filter(|check| !check.assumed.is_empty() && check.value.is_some())
-            .map(|check| format!("Rests on what is assumed: {}.", names(check.assumed))),
-        besides: besides(&all, top.map(|check| check.id)),
+        rests: top.filter(|check| check.value.is_some()).and_then(|check| rests_on(check.assumed)),
+        besides: besides(&all, top.map(|check| check.id), Requirement::name),
         bar: Some(sag_bar(ask, sag)),
         second: surge.and_then(surge_bar),
         offer: None,
@@ -70,7 +65,7 @@ fn says(ask: &Ask, top: Option<&Check<Requirement>>) -> String {
     let Some(check) = top else { return String::new() };
     let amps = current(ask)
         .map_or_else(String::new, |amps| format!(" {} flows from the bank.", show::computed(amps.amount())));
-    let room = check.room().map(|room| show::room(Amount { number: room.number.abs(), ..room })).unwrap_or_default();
+    let room = check.distance().map(show::room).unwrap_or_default();
     match (check.id, check.verdict) {
         (Requirement::Sag, Verdict::Breaks) if volts(ask).is_some_and(|volts| volts[1].is_none()) => {
             "The bus collapses: the start asks for more than the bank can give at any volts.".to_owned()
@@ -86,21 +81,11 @@ fn says(ask: &Ask, top: Option<&Check<Requirement>>) -> String {
     }
 }
 
-fn besides(all: &[Check<Requirement>], top: Option<Requirement>) -> Option<String> {
-    let broken: Vec<&str> = all
-        .iter()
-        .filter(|check| check.verdict == Verdict::Breaks && Some(check.id) != top)
-        .map(|check| check.id.name())
-        .collect();
-    (!broken.is_empty()).then(|| format!("Breaks as well: {}.", broken.join("; ")))
-}
-
 /// Volts over the start, from before it down to its lowest, against the cut-off.
 fn sag_bar(ask: &Ask, sag: Option<&Check<Requirement>>) -> Bar {
     let told = sag.and_then(|check| check.limit.zip(volts(ask))).map(|(limit, volts)| (limit.amount, volts));
     let Some((cut_off, [before, start, running])) = told else {
-        let ruler = Ruler { low: None, high: None, covered: None, marks: Vec::new() };
-        return Bar { ruler, verdict: Verdict::Asks, room: None, says: "The volts are not known yet.".to_owned() };
+        return Bar::unknown("The volts are not known yet.");
     };
     let rest = before.map_or(cut_off.number, |volts| volts.get());
     let lowest = start.map_or(cut_off.number * 0.8, |volts| volts.get());
@@ -114,8 +99,7 @@ fn sag_bar(ask: &Ask, sag: Option<&Check<Requirement>>) -> Bar {
     // The volts once it runs stand in the sentence: three figures would stand on one another.
     mark("before", before);
     let check = sag.copied();
-    let room =
-        check.and_then(|check| check.room()).map(|room| show::room(Amount { number: room.number.abs(), ..room }));
+    let room = check.as_ref().and_then(Check::distance).map(show::room);
     let reserve = check.map_or(0.0, |check| cut_off.number * check.reserve.share());
     Bar {
         ruler: Ruler {
@@ -153,24 +137,11 @@ fn surge_bar(check: &Check<Requirement>) -> Option<Bar> {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::testing::{Rows, plain};
     use engine::field::Field;
-    use engine::pad::Pad;
-    use engine::unit::Unit;
-
-    struct Rows<'a>(&'a [(Field, &'a str)]);
-
-    impl Pad for Rows<'_> {
-        fn typed(&self, field: Field) -> (&str, Option<Unit>) {
-            (self.0.iter().rev().find(|(one, _)| *one == field).map_or("", |(_, text)| text), None)
-        }
-    }
 
     fn of_rows(rows: &[(Field, &str)]) -> Answer {
         answer(&Ask::read(&Rows(rows)))
-    }
-
-    fn plain(text: &str) -> String {
-        text.replace([show::NARROW, '\u{a0}'], " ")
     }
 
     const PUMP: &[(Field, &str)] = &[

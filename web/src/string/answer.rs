@@ -3,12 +3,12 @@
 use engine::check::{Check, Verdict};
 use engine::field::Field;
 use engine::pad::Pad;
-use engine::quantity::{Amount, Count, Quantity, Volts};
+use engine::quantity::{Count, Quantity, Volts};
 use engine::show;
 use engine::string::{self, Ask, Requirement};
 
 use super::TOOL;
-use crate::answer::{Answer, Offer, without_unit};
+use crate::answer::{Answer, Offer, besides, without_unit};
 use crate::form::{as_entered, names};
 use crate::pads::Typed;
 use crate::span_bar::Bar;
@@ -30,7 +30,7 @@ pub fn answer(pad: &impl Pad, ask: &Ask, checks: &[Check<Requirement>]) -> Optio
         says: says(&check, longest),
         most: longest.map(longest_words),
         rests: rests(&check, ask),
-        besides: besides(checks),
+        besides: besides(checks, Some(Requirement::ColdController), Requirement::name),
         bar: Some(bar(pad, ask, &check, volts)),
         second: None,
         offer: offer(&check),
@@ -68,8 +68,8 @@ fn number(check: &Check<Requirement>, volts: Option<Volts>) -> String {
 }
 
 fn says(check: &Check<Requirement>, longest: Option<u32>) -> String {
-    let Some((room, limit)) = check.room().zip(check.limit) else { return asks(check, longest) };
-    let size = show::room(Amount { number: room.number.abs(), ..room });
+    let Some((distance, limit)) = check.distance().zip(check.limit) else { return asks(check, longest) };
+    let size = show::room(distance);
     let share = check.margin.map_or_else(String::new, |margin| show::room(margin.abs().amount()));
     let limit = show::given(limit.amount);
     match check.verdict {
@@ -128,15 +128,6 @@ fn longest_words(longest: u32) -> String {
     }
 }
 
-fn besides(checks: &[Check<Requirement>]) -> Option<String> {
-    let broken: Vec<&str> = checks
-        .iter()
-        .filter(|check| check.verdict == Verdict::Breaks && check.id != Requirement::ColdController)
-        .map(|check| check.id.name())
-        .collect();
-    (!broken.is_empty()).then(|| format!("Breaks as well: {}.", broken.join("; ")))
-}
-
 fn bar(pad: &impl Pad, ask: &Ask, check: &Check<Requirement>, cold: Option<Volts>) -> Bar {
     let limit = ask.controller.input_limit.typed();
     let hot = string::hottest_working(ask);
@@ -164,7 +155,7 @@ fn bar(pad: &impl Pad, ask: &Ask, check: &Check<Requirement>, cold: Option<Volts
         let name = as_entered(pad, Field::RecordLow).map_or_else(|| "cold".to_owned(), |low| format!("cold {low}"));
         marks.push(Mark { at: cold.get(), name, shown: shown(cold) });
     }
-    let room = check.room().map(|room| show::room(Amount { number: room.number.abs(), ..room }));
+    let room = check.distance().map(show::room);
     let says = sentence(low.as_ref(), high.as_ref(), hot, cold, check, room.as_deref(), ask.series.typed());
     Bar {
         ruler: Ruler {
@@ -266,24 +257,10 @@ fn fuse_note(ask: &Ask) -> Option<String> {
     ))
 }
 
-/// The text with plain spaces.
-#[cfg(test)]
-fn plain(text: &str) -> String {
-    text.replace([show::NARROW, '\u{a0}'], " ")
-}
-
 #[cfg(test)]
 mod tests {
     use super::*;
-    use engine::unit::Unit;
-
-    struct Rows<'a>(&'a [(Field, &'a str)]);
-
-    impl Pad for Rows<'_> {
-        fn typed(&self, field: Field) -> (&str, Option<Unit>) {
-            (self.0.iter().rev().find(|(one, _)| *one == field).map_or("", |(_, text)| text), None)
-        }
-    }
+    use crate::testing::{Rows, plain};
 
     #[track_caller]
     fn of_rows(rows: &[(Field, &str)]) -> Answer {

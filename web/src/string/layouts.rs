@@ -13,7 +13,7 @@ use leptos::prelude::*;
 
 use super::TOOL;
 use super::question::Question;
-use crate::check_row::bar;
+use crate::check_row::{against, bar};
 use crate::draft::use_draft;
 use crate::fold::Fold;
 use crate::pads::{Edit, Typed};
@@ -149,23 +149,11 @@ fn rejected(one: &Rejected, question: &Question) -> AnyView {
             {picture(&[one.group], 0)}
             <span class="name">{shape(&[one.group])}</span>
             <VerdictMark verdict=one.check.verdict/>
-            <p class="why">{format!("{}{where_on}: {}", one.check.id.name(), against(&one.check))}</p>
+            <p class="why">{format!("{}{where_on}: {}.", one.check.id.name(), against(&one.check))}</p>
             {slim.map(slim_bar)}
         </li>
     }
     .into_any()
-}
-
-/// "170.3 V, limit 150 V".
-fn against<Id>(check: &engine::check::Check<Id>) -> String {
-    check.value.zip(check.limit).map_or_else(String::new, |(value, limit)| {
-        let (value, limit_shown) = show::apart(value, limit.amount);
-        let side = match limit.sense {
-            engine::check::Sense::AtMost => "limit",
-            engine::check::Sense::AtLeast => "needs",
-        };
-        format!("{value}, {side} {limit_shown}.")
-    })
 }
 
 /// "2 × 4", and "2 × 4 and 1 × 3" over two controllers: modules in series × strings.
@@ -190,7 +178,7 @@ fn why(layout: &Layout, question: &Question, now: bool) -> String {
     let modules = if layout.used == 1 { "module" } else { "modules" };
     parts.push(format!("{} {modules}{left}{}.", layout.used, kept.unwrap_or_default()));
     if let Some(check) = layout.worst.filter(|check| check.verdict != Verdict::Clears) {
-        parts.push(format!("{}: {}", check.id.name(), against(&check)));
+        parts.push(format!("{}: {}.", check.id.name(), against(&check)));
     }
     if let Some(fuse) = layout.fuse {
         parts.push(format!("Fuse every string: {}.", show::given(fuse.amount())));

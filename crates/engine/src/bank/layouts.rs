@@ -10,9 +10,8 @@ use core::cmp::Ordering;
 
 use super::ask::positive;
 use super::energy::depth;
-use super::requirement::worst_first;
 use super::{Ask, Energy, Requirement, Window, energy, lacks, window};
-use crate::check::{Basis, Check, Cost, Sense, Verdict};
+use crate::check::{Basis, Check, Cost, Sense, Verdict, worst_first};
 use crate::entry::Entry;
 use crate::quantity::{Amps, Hours, Percent, Quantity};
 use crate::show;

@@ -2,8 +2,8 @@
 
 use super::protection::{self, Packs};
 use super::{Ask, air, cold, devices, parallel, rates, settled, touch};
-use crate::check::{Basis, Check, Cost, Limit, Outcome, Sense, Step, Steps, judge};
-use crate::quantity::{Amount, Percent, Quantity};
+use crate::check::{Basis, Check, Cost, Limit, Outcome, Step, Steps, judge, worst_first};
+use crate::quantity::{Amount, Percent};
 use crate::show;
 use crate::unit::Unit;
 
@@ -266,34 +266,12 @@ pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
     checks
 }
 
-pub(super) fn worst_first(checks: &mut [Check<Requirement>]) {
-    crate::order::sort_short(checks, |a, b| {
-        let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
-        group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
-    });
-}
-
 /// The steps of one requirement, made by the same code as its value. The last is the margin to its limit.
 #[must_use]
 pub fn working(ask: &Ask, requirement: Requirement) -> Vec<Step> {
     let ask = settled(ask);
     let mut steps = Steps::written();
     let Some(check) = requirement.judged(&ask, &mut steps) else { return steps.into_steps() };
-    if let (Some(value), Some(limit), Some(margin)) = (check.value, check.limit, check.margin) {
-        steps.step("Margin to the limit", margin, || {
-            let (value, bound) = (show::step(value), show::given(limit.amount));
-            let (formula, put_in) = match (limit.sense, value.ends_with("°C")) {
-                (_, true) => ("(T − limit) / limit, from absolute zero", format!("{value} against {bound}")),
-                (Sense::AtMost, false) => ("(limit − value) / limit", format!("({bound} − {value}) / {bound}")),
-                (Sense::AtLeast, false) => ("(value − limit) / limit", format!("({value} − {bound}) / {bound}")),
-            };
-            let put_in = if check.reserve.get() > 0.0 {
-                format!("{put_in}; reserve wanted {}", show::given(check.reserve.amount()))
-            } else {
-                put_in
-            };
-            (formula, put_in, crate::check::Origin::Before)
-        });
-    }
+    steps.margin(&check, show::given);
     steps.into_steps()
 }

@@ -8,5 +8,5 @@ pub mod verdict;
 pub mod working;
 
 pub use basis::{Assumption, Basis, FieldSet};
-pub use verdict::{Check, Cost, Limit, Outcome, Sense, Verdict, judge};
+pub use verdict::{Check, Cost, Limit, Outcome, Sense, Verdict, judge, worst_first};
 pub use working::{Origin, Step, Steps};

@@ -1,6 +1,9 @@
 //! Verdicts: what a value says when it is set against its limit.
 
+use core::cmp::Ordering;
+
 use super::basis::{Basis, FieldSet};
+use crate::order::sort_short;
 use crate::quantity::{Amount, Percent, Quantity};
 
 /// Whether a requirement holds.
@@ -197,6 +200,12 @@ impl<Id> Check<Id> {
         (group, self.margin.map_or(0.0, Percent::get))
     }
 
+    /// How two checks stand in a list that runs from worst to best, by [`rank`](Self::rank).
+    pub fn order(&self, other: &Self) -> Ordering {
+        let ((group, margin), (other_group, other_margin)) = (self.rank(), other.rank());
+        group.cmp(&other_group).then(margin.total_cmp(&other_margin))
+    }
+
     /// The same check under another name.
     pub fn named<Other>(self, id: Other) -> Check<Other> {
         let Self { id: _, cost, verdict, value, limit, margin, reserve, asks, assumed } = self;
@@ -212,6 +221,16 @@ impl<Id> Check<Id> {
         };
         Some(Amount { number, unit: value.unit })
     }
+
+    /// [`room`](Self::room) without its sign: how far inside the limit, or how far past it.
+    pub fn distance(&self) -> Option<Amount> {
+        self.room().map(|room| Amount { number: room.number.abs(), ..room })
+    }
+}
+
+/// Puts checks in the order of reading: worst first, equals as they stand.
+pub fn worst_first<Id>(checks: &mut [Check<Id>]) {
+    sort_short(checks, Check::order);
 }
 
 #[cfg(test)]

@@ -3,9 +3,12 @@
 //! A method is handed [`Steps`]. Silent, they leave nothing but the number, and the closures that would word the steps
 //! are never called. Written, the same run records each step.
 
+use super::verdict::{Check, Sense};
 use crate::field::Field;
 use crate::quantity::{Amount, Quantity};
+use crate::show;
 use crate::source::Clause;
+use crate::unit::Unit;
 
 /// Where a number of a step comes from.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -78,5 +81,25 @@ impl Steps {
             kept.push(Step { what, formula, put_in, result: result.amount(), origin });
         }
         result
+    }
+
+    /// The last step of a check that was judged: its margin to the limit, which is written by `bound`.
+    pub fn margin<Id>(&mut self, check: &Check<Id>, bound: fn(Amount) -> String) {
+        let (Some(value), Some(limit), Some(margin)) = (check.value, check.limit, check.margin) else { return };
+        self.step("Margin to the limit", margin, || {
+            let (value, bound) = (show::step(value), bound(limit.amount));
+            let (formula, mut put_in) = match (limit.sense, limit.amount.unit) {
+                // Judged from absolute zero, shown in degrees.
+                (_, Unit::DegreeCelsius) => {
+                    ("(T − limit) / limit, from absolute zero", format!("{value} against {bound}"))
+                }
+                (Sense::AtMost, _) => ("(limit − value) / limit", format!("({bound} − {value}) / {bound}")),
+                (Sense::AtLeast, _) => ("(value − limit) / limit", format!("({value} − {bound}) / {bound}")),
+            };
+            if check.reserve.get() > 0.0 {
+                put_in += &format!("; reserve wanted {}", show::given(check.reserve.amount()));
+            }
+            (formula, put_in, Origin::Before)
+        });
     }
 }

@@ -3,9 +3,8 @@
 use super::known::Known;
 use super::voltage_drop::{Way, by_length};
 use super::{Ask, Candidate, bank_fault, poles, precharge, voltage_drop};
-use crate::check::{Basis, Check, Cost, FieldSet, Origin, Outcome, Sense, Step, Steps, judge};
+use crate::check::{Basis, Check, Cost, FieldSet, Outcome, Step, Steps, judge, worst_first};
 use crate::field::Field;
-use crate::order::sort_short;
 use crate::quantity::{Metres, Ohms, Percent};
 use crate::show;
 
@@ -182,19 +181,13 @@ fn candidate(conductor: Result<Candidate, FieldSet>, basis: &mut Basis) -> Optio
     }
 }
 
-/// The order of reading.
-pub(super) fn worst_first(a: &Check<Requirement>, b: &Check<Requirement>) -> core::cmp::Ordering {
-    let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
-    group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
-}
-
 /// Every requirement that arises, worst first. Where no size was entered, the smallest conductor that holds is judged.
 #[must_use]
 pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
     let conductor = conductor(ask);
     let mut checks: Vec<_> =
         Requirement::ALL.iter().filter_map(|requirement| requirement.check_with(ask, conductor)).collect();
-    sort_short(&mut checks, worst_first);
+    worst_first(&mut checks);
     checks
 }
 
@@ -207,15 +200,6 @@ pub fn working(ask: &Ask, requirement: Requirement) -> Vec<Step> {
     let Some(check) = judge(requirement, requirement.cost(), Requirement::reserve(), outcome, &basis) else {
         return steps.into_steps();
     };
-    if let (Some(value), Some(limit), Some(margin)) = (check.value, check.limit, check.margin) {
-        steps.step("Margin to the limit", margin, || {
-            let (value, bound) = (show::step(value), show::step(limit.amount));
-            let (formula, put_in) = match limit.sense {
-                Sense::AtMost => ("(limit − value) / limit", format!("({bound} − {value}) / {bound}")),
-                Sense::AtLeast => ("(value − limit) / limit", format!("({value} − {bound}) / {bound}")),
-            };
-            (formula, put_in, Origin::Before)
-        });
-    }
+    steps.margin(&check, show::step);
     steps.into_steps()
 }

@@ -6,9 +6,8 @@ use super::precharge::{Precharge, advice};
 use super::voltage_drop::{Drop, Way, by_length, drop};
 use super::{Ampacity, Ask, BreakerType, Candidate, Fault, Kind, Load, Requirement, bank_fault, carry, poles, protect};
 use crate::ampacity::{Insulation, tabled};
-use crate::check::{Basis, Check, FieldSet, Steps, Verdict};
+use crate::check::{Basis, Check, FieldSet, Steps, Verdict, worst_first};
 use crate::family::CodeFamily;
-use crate::order::sort_short;
 use crate::quantity::{Amps, Celsius, Metres, Volts};
 
 /// The breaker or fuse to ask for.
@@ -127,7 +126,7 @@ fn two_thinner(ask: &Ask, known: &Known, conductor: Candidate) -> Vec<Thinner> {
                 .filter_map(|requirement| requirement.check_on(ask, candidate))
                 .filter(|check| check.verdict == Verdict::Breaks)
                 .collect();
-            sort_short(&mut breaks, super::requirement::worst_first);
+            worst_first(&mut breaks);
             Thinner { candidate, breaks }
         })
         .collect()

@@ -143,10 +143,7 @@ pub fn assess(site: &Site) -> Assessment {
             }
         }
     }
-    sort_short(&mut checks, |a, b| {
-        let ((group_a, margin_a), (group_b, margin_b)) = (a.check.rank(), b.check.rank());
-        group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
-    });
+    sort_short(&mut checks, |a, b| a.check.order(&b.check));
     Assessment { checks }
 }
 

@@ -2,11 +2,10 @@
 
 use super::ask::{Curve, positive};
 use super::{Ask, SURGE_EFFICIENCY, SURGE_SECONDS, bus, phases};
-use crate::check::{Basis, Check, Cost, Limit, Origin, Outcome, Sense, Step, Steps, judge};
+use crate::check::{Basis, Check, Cost, Limit, Origin, Outcome, Step, Steps, judge, worst_first};
 use crate::entry::Entry;
 use crate::field::Field;
 use crate::network::Loaded;
-use crate::order::sort_short;
 use crate::quantity::{Amps, Celsius, Count, Metres, Percent, Quantity, Seconds, VoltAmps, Volts, Watts};
 use crate::show;
 use crate::source;
@@ -107,10 +106,7 @@ impl Requirement {
 #[must_use]
 pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
     let mut checks: Vec<_> = Requirement::ALL.iter().filter_map(|requirement| requirement.check(ask)).collect();
-    sort_short(&mut checks, |a, b| {
-        let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
-        group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
-    });
+    worst_first(&mut checks);
     checks
 }
 
@@ -119,21 +115,7 @@ pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
 pub fn working(ask: &Ask, requirement: Requirement) -> Vec<Step> {
     let mut steps = Steps::written();
     let Some(check) = requirement.judged(ask, &mut steps) else { return steps.into_steps() };
-    if let (Some(value), Some(limit), Some(margin)) = (check.value, check.limit, check.margin) {
-        steps.step("Margin to the limit", margin, || {
-            let (value, bound) = (show::step(value), show::given(limit.amount));
-            let (formula, put_in) = match limit.sense {
-                Sense::AtMost => ("(limit − value) / limit", format!("({bound} − {value}) / {bound}")),
-                Sense::AtLeast => ("(value − limit) / limit", format!("({value} − {bound}) / {bound}")),
-            };
-            let put_in = if check.reserve.get() > 0.0 {
-                format!("{put_in}; reserve wanted {}", show::given(check.reserve.amount()))
-            } else {
-                put_in
-            };
-            (formula, put_in, Origin::Before)
-        });
-    }
+    steps.margin(&check, show::given);
     steps.into_steps()
 }
 

@@ -352,10 +352,7 @@ fn laid_out(
             .collect(),
         used,
         left_over: modules - used,
-        worst: picked().filter_map(|(_, group)| group.worst).min_by(|a, b| {
-            let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
-            group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
-        }),
+        worst: picked().filter_map(|(_, group)| group.worst).min_by(Check::order),
         kept: power_known.then(|| Watts::new(partial.kept)),
         margin: Percent::new(partial.margin),
         fuse: picked().filter_map(|(_, group)| group.fuse).reduce(Amps::max),

@@ -1,9 +1,8 @@
 //! The requirements of a string, each by its id, judged and worked.
 
 use super::{Ask, clip, cold, current, fuse, hot};
-use crate::check::{Basis, Check, Cost, Outcome, Sense, Step, Steps, judge};
-use crate::order::sort_short;
-use crate::quantity::{Percent, Quantity};
+use crate::check::{Basis, Check, Cost, Outcome, Step, Steps, judge, worst_first};
+use crate::quantity::Percent;
 use crate::show;
 
 /// A requirement of strings on a controller.
@@ -130,10 +129,7 @@ impl Requirement {
 #[must_use]
 pub fn assess(ask: &Ask) -> Vec<Check<Requirement>> {
     let mut checks: Vec<_> = Requirement::ALL.iter().filter_map(|requirement| requirement.check(ask)).collect();
-    sort_short(&mut checks, |a, b| {
-        let ((group_a, margin_a), (group_b, margin_b)) = (a.rank(), b.rank());
-        group_a.cmp(&group_b).then(margin_a.total_cmp(&margin_b))
-    });
+    worst_first(&mut checks);
     checks
 }
 
@@ -146,20 +142,6 @@ pub fn working(ask: &Ask, requirement: Requirement) -> Vec<Step> {
     let Some(check) = judge(requirement, requirement.cost(), requirement.reserve(ask), outcome, &basis) else {
         return steps.into_steps();
     };
-    if let (Some(value), Some(limit), Some(margin)) = (check.value, check.limit, check.margin) {
-        steps.step("Margin to the limit", margin, || {
-            let (value, bound) = (show::step(value), show::given(limit.amount));
-            let (formula, put_in) = match limit.sense {
-                Sense::AtMost => ("(limit − value) / limit", format!("({bound} − {value}) / {bound}")),
-                Sense::AtLeast => ("(value − limit) / limit", format!("({value} − {bound}) / {bound}")),
-            };
-            let put_in = if check.reserve.get() > 0.0 {
-                format!("{put_in}; reserve wanted {}", show::given(check.reserve.amount()))
-            } else {
-                put_in
-            };
-            (formula, put_in, crate::check::Origin::Before)
-        });
-    }
+    steps.margin(&check, show::given);
     steps.into_steps()
 }
