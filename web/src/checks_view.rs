@@ -57,7 +57,7 @@ pub fn checks_view() -> AnyView {
                     let place = link(one.place);
                     let go = Callback::new(move |_: Field| crate::route::go(place));
                     let id = format!("checks/{:?}/{}", one.place, one.check.id.id());
-                    let note = format!("{}.", place_name(&site, one.place));
+                    let note = place_name(&site, one.place);
                     let row = check_row(
                         id,
                         one.check.id.name(),

@@ -2,13 +2,15 @@
 
 use std::sync::Arc;
 
-use engine::bank::{Ask, Layout, Setting, Settings, counts_lack, settings, settings_working, settled as with_counts};
+use engine::bank::{
+    Ask, Layout, Requirement, Setting, Settings, counts_lack, settings, settings_working, settled as with_counts,
+};
 use engine::check::{Cost, FieldSet, Verdict};
 use engine::field::Field;
 use engine::show;
 use leptos::prelude::*;
 
-use crate::answer::Answer;
+use crate::answer::{Answer, besides};
 use crate::cells::{assumed, bank, empty_bar, in_series, short, stands_in, window_bar};
 use crate::derived::memo;
 use crate::form::{Form, Hints, names, waits};
@@ -110,7 +112,7 @@ fn answer(ask: &Ask) -> Answer {
         rests: card
             .filter(|card| !card.assumed.is_empty())
             .map(|card| format!("Assumed until its data sheet says otherwise: {}.", assumed(card.assumed))),
-        besides: None,
+        besides: layout.as_ref().and_then(|layout| besides(&layout.checks, None, Requirement::name)),
         bar: Some(layout.as_ref().map_or_else(empty_bar, window_bar)),
         second: None,
         offer: None,

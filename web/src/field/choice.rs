@@ -76,6 +76,9 @@ pub fn ChoiceField(
     }
 }
 
+/// Words longer than this take the whole width of the form.
+const LONG: usize = 13;
+
 type Choices = &'static [(&'static str, &'static str)];
 
 fn list(
@@ -94,8 +97,10 @@ fn list(
     };
     // A choice of another release is shown as it is, and nothing is put in its place.
     let strange = move || Some(text()).filter(|text| parts.state.get() == State::Unread && !text.is_empty());
+    // Half the width of a phone would cut the words short.
+    let wide = choices.iter().any(|(_, words)| words.len() > LONG);
     view! {
-        <div class=move || parts.class()>
+        <div class=derived(move || format!("{}{}", parts.class(), if wide { " wide" } else { "" }))>
             {parts.head(label)}
             <div class="field-box">
                 <select

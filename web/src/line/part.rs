@@ -18,7 +18,7 @@ use crate::tool_page::{caution, check_list};
 use crate::tools::Tool;
 
 const fn form(tool: Tool, first: &'static [Field]) -> Form {
-    Form { tool, title: ("", ""), first, groups: &[], short: crate::cells::short }
+    Form { tool, title: ("", ""), first, groups: &[], short: Field::name }
 }
 
 static PLACE: Form = form(

@@ -11,7 +11,7 @@ pub const LOWER: f64 = 10.0;
 pub const LOWER_ALONE: f64 = 28.0;
 /// Half the gap that a broken post leaves between what is allowed and what is past it.
 const BREAK: f64 = 0.6;
-/// How near two labels may come before one of them drops.
+/// How much of the ruler a label takes: nearer ones clash.
 const CROWDED: f64 = 22.0;
 /// Sums of decimal fractions end in the last bit: what is over by less than this part of the limit is not over.
 const LAST_BIT: f64 = 1e-9;
@@ -307,22 +307,56 @@ impl Geometry {
         self.unclash();
     }
 
-    /// Of labels that would lie on one another, drops every other one: the outer ones stay where they can.
+    /// Of labels that would lie on one another: two by themselves hang away from each other where the ruler leaves
+    /// room; else every other one drops, the outer ones staying where they can.
     fn unclash(&mut self) {
         let mut order: Vec<usize> = (0..self.marks.len()).collect();
         engine::order::sort_short(&mut order, |a, b| self.marks[*a].0.total_cmp(&self.marks[*b].0));
-        let place = |marks: &[(f64, TickKind, Hang)], index: usize| marks[order[index]].0;
+        for pair in 1..order.len() {
+            self.part(&order, pair);
+        }
         let mut dropped_before = false;
         for index in 0..order.len() {
-            let here = place(&self.marks, index);
-            let clash_before = index > 0 && !dropped_before && here - place(&self.marks, index - 1) < CROWDED;
-            let clash_after = index > 0 && index + 1 < order.len() && place(&self.marks, index + 1) - here < CROWDED;
-            let drops = !dropped_before && (clash_before || clash_after);
+            let after = index + 1 < order.len() && self.clash(&order, index);
+            // What hangs at the right edge would drop off the page: the one before it gives way, be it the first.
+            let yields = after && (index > 0 || self.marks[order[index + 1]].2 == Hang::End);
+            let drops = !dropped_before && (yields || (index > 0 && self.clash(&order, index - 1)));
             if drops {
                 self.marks[order[index]].2 = Hang::Drops;
             }
             dropped_before = drops;
         }
+    }
+
+    /// Hangs the label at `right` in `order` and the one before it away from each other, where that mends a clash and
+    /// makes none.
+    fn part(&mut self, order: &[usize], right: usize) {
+        let (a, b) = (order[right - 1], order[right]);
+        let centred = self.marks[a].2 == Hang::Middle && self.marks[b].2 == Hang::Middle;
+        let room = self.marks[a].0 >= CROWDED && self.marks[b].0 <= 100.0 - CROWDED;
+        if !centred || !room || !self.clash(order, right - 1) {
+            return;
+        }
+        (self.marks[a].2, self.marks[b].2) = (Hang::End, Hang::Start);
+        let outer =
+            (right > 1 && self.clash(order, right - 2)) || (right + 1 < order.len() && self.clash(order, right));
+        if outer {
+            (self.marks[a].2, self.marks[b].2) = (Hang::Middle, Hang::Middle);
+        }
+    }
+
+    /// Whether the label at `index` in `order` would lie on the next one. What has dropped lies on none.
+    fn clash(&self, order: &[usize], index: usize) -> bool {
+        let ends = |index: usize| {
+            let (at, _, hang) = self.marks[order[index]];
+            match hang {
+                Hang::Start => Some((at, at + CROWDED)),
+                Hang::End => Some((at - CROWDED, at)),
+                Hang::Middle => Some((at - CROWDED / 2.0, at + CROWDED / 2.0)),
+                Hang::Drops => None,
+            }
+        };
+        ends(index).zip(ends(index + 1)).is_some_and(|(left, right)| left.1 > right.0)
     }
 }
 
@@ -427,6 +461,24 @@ mod tests {
         let drawn = ruler(None, post(100.0, 2.0), 120.0, 130.0).geometry();
         assert_eq!(drawn.solid, None);
         near(drawn.over, (86.4, 93.6));
+    }
+
+    fn hung(at: &[f64]) -> Vec<Hang> {
+        let ruler = Ruler { marks: marks(at), ..ruler(None, post(72.0, 0.0), 0.0, 60.0) };
+        ruler.geometry().marks.iter().map(|mark| mark.2).collect()
+    }
+
+    #[test]
+    fn two_near_labels_hang_away_from_each_other_and_never_off_the_ruler() {
+        assert_eq!(hung(&[33.0, 36.0]), [Hang::End, Hang::Start]);
+        assert_eq!(hung(&[36.0, 33.0]), [Hang::Start, Hang::End]);
+        assert_eq!(hung(&[15.0, 30.0]), [Hang::Middle, Hang::Drops], "no room to the left");
+        assert_eq!(hung(&[30.0, 60.0]), [Hang::Middle, Hang::Middle]);
+        // One that begins at the left edge reaches further than half its width.
+        assert_eq!(hung(&[8.0, 31.0, 61.0]), [Hang::Start, Hang::Drops, Hang::Middle]);
+        // What hangs at the right edge stays; the one before it drops.
+        assert_eq!(hung(&[70.0, 95.0]), [Hang::Drops, Hang::End]);
+        assert_eq!(hung(&[40.0, 50.0, 60.0]), [Hang::Middle, Hang::Drops, Hang::Middle], "three are not parted");
     }
 
     #[test]

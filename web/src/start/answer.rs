@@ -1,6 +1,8 @@
 //! The answer of the Start tool, worded and drawn. Pure.
 
 use engine::check::{Check, FieldSet, Verdict};
+use engine::entry::Entry;
+use engine::field::Field;
 use engine::quantity::Quantity;
 use engine::show;
 use engine::start::{Ask, Requirement, current, volts};
@@ -14,9 +16,20 @@ use crate::span_bar::geometry::{From, Mark, Post, Ruler};
 /// What the answer is judged by: the inverter and the bus.
 const JUDGING: [Requirement; 2] = [Requirement::Surge, Requirement::Sag];
 
-/// What the answer waits for.
+/// What naming the load tells.
+const OF_LOAD: [Field; 3] = [Field::StartingMultiple, Field::StartingPowerFactor, Field::StartingSeconds];
+
+/// What the answer waits for: the load itself, while nothing is known of how it starts.
 pub fn missing(ask: &Ask) -> FieldSet {
-    JUDGING.iter().filter_map(|one| one.check(ask)).fold(FieldSet::default(), |all, check| all.union(check.asks))
+    let all = JUDGING.iter().filter_map(|one| one.check(ask)).fold(FieldSet::default(), |all, one| all.union(one.asks));
+    let unnamed = ask.load == Entry::Blank && ask.starts_as == Entry::Blank;
+    if !unnamed || !OF_LOAD.iter().all(|field| all.contains(*field)) {
+        return all;
+    }
+    let mut missing = FieldSet::default();
+    missing.insert(Field::StartLoad);
+    all.iter().filter(|field| !OF_LOAD.contains(field)).for_each(|field| missing.insert(field));
+    missing
 }
 
 /// The worse of the two.
@@ -194,5 +207,12 @@ mod tests {
         let answer = of_rows(&[]);
         assert_eq!(answer.verdict, Verdict::Asks);
         assert!(answer.says.contains("Bank voltage") && answer.says.contains("Running power"), "{}", answer.says);
+        assert!(
+            answer.says.contains("Load") && !answer.says.contains("Starting"),
+            "one choice tells them: {}",
+            answer.says
+        );
+        let by_letter = of_rows(&[(Field::CodeLetter, "j"), (Field::MotorSize, "1.5")]);
+        assert!(by_letter.says.contains("Starting seconds") && !by_letter.says.contains("Load"), "{}", by_letter.says);
     }
 }
