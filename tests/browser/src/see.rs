@@ -8,33 +8,16 @@ use serde_json::{Value, json};
 use crate::{Kind, Site};
 
 impl Site {
-    /// What the first `role="status"` region of the main part says now.
+    /// What the first `role="status"` region of the main part says now, every kind of space made plain.
     pub async fn status(&self) -> Result<String> {
         let region = self.role("status").await?;
-        Ok(region.prop("textContent").await?.unwrap_or_default().trim().to_owned())
+        Ok(plain(region.prop("textContent").await?.unwrap_or_default().trim()))
     }
 
-    /// Waits until the status says these words among others, and gives all it says.
-    pub async fn status_says(&self, words: &str) -> Result<String> {
-        self.wait_for(&format!("the status to say \"{words}\""), async || {
-            let status = self.status().await?;
-            if status.contains(words) { Ok(Some(status)) } else { anyhow::bail!("it says \"{status}\"") }
-        })
-        .await
-    }
-
-    /// Waits until the whole page shows these words somewhere.
-    pub async fn shows(&self, words: &str) -> Result<()> {
-        self.wait_for(&format!("the page to show \"{words}\""), async || {
-            Ok(self.text().await?.contains(words).then_some(()))
-        })
-        .await
-    }
-
-    /// All words shown now.
+    /// All words shown now, every kind of space made plain.
     pub async fn text(&self) -> Result<String> {
         let text = self.browser.execute("return document.body.innerText", vec![]).await?;
-        text.as_str().map(str::to_owned).context("the page has no text")
+        text.as_str().map(plain).context("the page has no text")
     }
 
     /// What is marked by that `data-testid` says now.
@@ -107,6 +90,10 @@ impl Site {
         let script = "caches.keys().then(arguments[arguments.length - 1])";
         Ok(strings(&self.browser.execute_async(script, vec![]).await?).collect())
     }
+}
+
+fn plain(text: &str) -> String {
+    text.replace(['\u{202f}', '\u{a0}', '\u{2009}', '\n'], " ")
 }
 
 fn strings(list: &Value) -> impl Iterator<Item = String> + '_ {

@@ -13,8 +13,7 @@ fn starts_with_nothing_to_complain_of() {
     visit(Screen::PHONE, async |site| {
         site.heading(HEAD).await?;
         site.is_kept().await?;
-        let complaints = site.console_errors().await?;
-        ensure!(complaints.is_empty(), "{complaints:#?}");
+        site.no_complaints().await?;
         Ok(())
     });
 }
@@ -26,7 +25,7 @@ fn fits_the_screens_it_is_made_for() {
             let size = site.size().await?;
             let wanted = (u64::from(screen.width), u64::from(screen.height));
             ensure!(size == wanted || site.kind != Kind::Chromium, "{size:?} instead of {wanted:?}");
-            ensure!(site.overflow().await? == 0, "{} px beyond the edge", site.overflow().await?);
+            site.fits().await?;
             Ok(())
         });
     }
@@ -179,8 +178,7 @@ fn the_one_file_opens_from_the_file_system() {
         site.open_file(&file).await?;
         site.heading(HEAD).await?;
         site.element("[data-copy=one-file]").await?;
-        let complaints = site.console_errors().await?;
-        ensure!(complaints.is_empty(), "{complaints:#?}");
+        site.no_complaints().await?;
         let asked = site.requests().await?;
         let elsewhere: Vec<_> = asked
             .iter()

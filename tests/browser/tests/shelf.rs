@@ -7,18 +7,13 @@ const FOLD: &str = "The shelf where each cell stands, which link goes where";
 
 /// A bank of so many cells of LiFePO4 for a bus, on the shelf of `fields`.
 async fn on_shelf(site: &Site, cells: &str, bus: &str, fields: &[(&str, &str)]) -> Result<()> {
-    site.load().await?;
-    site.press("How do cells make a bank? Cells").await?;
+    site.open_tool("Cells").await?;
     site.choose("Chemistry", "LiFePO4").await?;
-    for (name, text) in
-        [("Cell voltage", "3.2"), ("Cell capacity", "280"), ("Number of cells", cells), ("Bus voltage", bus)]
-    {
-        site.type_into(name, text).await?;
-    }
+    site.enter(&[("Cell voltage", "3.2"), ("Cell capacity", "280"), ("Number of cells", cells), ("Bus voltage", bus)])
+        .await?;
     site.unfold(FOLD).await?;
-    for (name, text) in [("Cell length", "174"), ("Cell width", "72")].iter().chain(fields) {
-        site.type_into(name, text).await?;
-    }
+    site.enter(&[("Cell length", "174"), ("Cell width", "72")]).await?;
+    site.enter(fields).await?;
     site.element(".shelf svg").await?;
     Ok(())
 }
@@ -34,18 +29,7 @@ async fn begin(site: &Site) -> Result<()> {
         if site.has_button("Fit them one by one").await? {
             site.press("Fit them one by one").await?;
         }
-        Ok(plain(&site.text().await?).contains("Link 1 of 15").then_some(()))
-    })
-    .await
-}
-
-fn plain(text: &str) -> String {
-    text.replace(['\u{202f}', '\u{a0}', '\u{2009}', '\n'], " ")
-}
-
-async fn shows(site: &Site, words: &str) -> Result<()> {
-    site.wait_for(&format!("the page to show \"{words}\""), async || {
-        Ok(plain(&site.text().await?).contains(words).then_some(()))
+        Ok(site.text().await?.contains("Link 1 of 15").then_some(()))
     })
     .await
 }
@@ -58,7 +42,7 @@ fn every_cell_and_link_is_drawn_on_both_screens() {
             ensure!(site.count(".shelf .cell").await? == 16, "sixteen cells");
             ensure!(site.count(".shelf .link").await? == 15, "fifteen links");
             ensure!(site.count(".shelf .plate").await? == 2, "two take-off posts");
-            ensure!(site.overflow().await? == 0, "{} px beyond the edge", site.overflow().await?);
+            site.fits().await?;
             Ok(())
         });
     }
@@ -72,14 +56,14 @@ fn one_link_at_a_time_and_a_wrong_reading_is_told_at_once() {
         // Two cells of LiFePO4 at rest.
         site.wait_for("the reading to be told", async || {
             site.type_into("Reading after link 1", "6.58").await?;
-            Ok(plain(&site.text().await?).contains("As it must be").then_some(()))
+            Ok(site.text().await?.contains("As it must be").then_some(()))
         })
         .await?;
         site.press("Next").await?;
-        shows(site, "Link 2 of 15").await?;
+        site.shows("Link 2 of 15").await?;
         // One of three cells turned round: two cells' volts are missing.
         site.type_into("Reading after link 2", "3.3").await?;
-        shows(site, "turned round").await?;
+        site.shows("turned round").await?;
         site.press("Back").await?;
         ensure!(site.value_of("Reading after link 1").await? == "6.58", "what was read is kept");
         Ok(())
@@ -90,12 +74,10 @@ fn one_link_at_a_time_and_a_wrong_reading_is_told_at_once() {
 fn it_is_there_with_the_server_stopped() {
     visit(Screen::NARROW, async |site| {
         shelf(site).await?;
-        if site.attribute("[data-copy]", "data-copy").await?.as_deref() == Some("not-possible") {
+        if !site.keeps_a_copy().await? {
             return Ok(());
         }
-        site.is_kept().await?;
-        site.element(".kept[data-state=kept]").await?;
-        site.stop_server();
+        site.lose_signal().await?;
         site.reload().await?;
         site.unfold(FOLD).await?;
         site.element(".shelf svg").await?;
@@ -131,7 +113,7 @@ fn rows_and_columns_stand_in_and_a_wrong_figure_is_told_and_kept() {
         ensure!(site.count(".shelf .cell").await? == 16, "two rows of eight stand in");
         site.unfold("Gaps and posts links are cut by them").await?;
         site.type_into("Post from edge", "90").await?;
-        shows(site, "posts 90 mm from the edge would meet").await?;
+        site.shows("posts 90 mm from the edge would meet").await?;
         ensure!(site.value_of("Post from edge").await? == "90", "what was typed is kept");
         site.clear("Post from edge").await?;
         site.element(".shelf svg").await?;
@@ -146,21 +128,21 @@ fn a_wrong_reading_stops_next_and_what_was_read_outlives_the_page() {
         begin(site).await?;
         site.type_into("Reading after link 1", "3.29").await?;
         site.press("Next").await?;
-        shows(site, "One cell’s volts are missing").await?;
-        ensure!(plain(&site.text().await?).contains("Link 1 of 15"), "it stays at the link");
+        site.shows("One cell’s volts are missing").await?;
+        ensure!(site.text().await?.contains("Link 1 of 15"), "it stays at the link");
         site.press("On all the same").await?;
-        shows(site, "Link 2 of 15").await?;
+        site.shows("Link 2 of 15").await?;
         site.press("Back").await?;
         site.type_into("Reading after link 1", "6.58").await?;
-        shows(site, "As it must be").await?;
-        ensure!(site.overflow().await? == 0, "{} px beyond the edge", site.overflow().await?);
+        site.shows("As it must be").await?;
+        site.fits().await?;
         site.is_kept().await?;
         site.reload().await?;
         site.unfold(FOLD).await?;
         site.element(".shelf svg").await?;
         // It goes on where the readings end.
         site.press("Fit them one by one").await?;
-        shows(site, "Link 2 of 15").await?;
+        site.shows("Link 2 of 15").await?;
         site.press("Back").await?;
         ensure!(site.value_of("Reading after link 1").await? == "6.58", "what was read is kept");
         Ok(())
@@ -171,15 +153,15 @@ fn a_wrong_reading_stops_next_and_what_was_read_outlives_the_page() {
 fn links_to_cut_and_the_last_link_are_told_for_groups() {
     visit(Screen::PHONE, async |site| {
         on_shelf(site, "32", "48", &[("Rows", "4"), ("Columns", "8")]).await?;
-        shows(site, "Groups of cells: Cells joined plus to plus").await?;
+        site.shows("Groups of cells: Cells joined plus to plus").await?;
         ensure!(site.count(".shelf .link").await? == 47, "32 within groups, 15 from group to group");
         ensure!(site.count(".shelf .rim").await? == 1, "one link is the last");
-        shows(site, "Fit link 47 last").await?;
+        site.shows("Fit link 47 last").await?;
         site.unfold("Links to cut by length, and lugs to pack").await?;
-        shows(site, "96: 94 on links, 2 on take-off leads").await?;
+        site.shows("96: 94 on links, 2 on take-off leads").await?;
         site.choose("Parallel as", "whole strings").await?;
-        shows(site, "Groups of cells are wiser here").await?;
-        shows(site, "64: 60 on links, 4 on take-off leads").await?;
+        site.shows("Groups of cells are wiser here").await?;
+        site.shows("64: 60 on links, 4 on take-off leads").await?;
         Ok(())
     });
 }
@@ -190,7 +172,7 @@ fn past_sixty_volts_is_marked_and_cautioned() {
         on_shelf(site, "24", "72", &[("Rows", "3"), ("Columns", "8")]).await?;
         // From the eighteenth cell on, at the highest that a rested cell may read.
         ensure!(site.count(".shelf .past").await? == 7, "{} cells", site.count(".shelf .past").await?);
-        shows(site, "past 60 V d.c., which shocks").await
+        site.shows("past 60 V d.c., which shocks").await
     });
 }
 
@@ -201,10 +183,10 @@ fn measured_cells_are_dealt_and_what_is_not_understood_is_named() {
         site.unfold("Match measured cells salvaged ones, dealt to groups").await?;
         let cells: Vec<String> = (0..32).map(|cell| (250 + cell * 7 % 32).to_string()).collect();
         site.type_into("Measured capacities", &cells.join(" ")).await?;
-        shows(site, "Groups differ by").await?;
-        shows(site, "Group 16").await?;
+        site.shows("Groups differ by").await?;
+        site.shows("Group 16").await?;
         site.type_into("Measured capacities", "280 2.7.9 281").await?;
-        shows(site, "Waits for number 2 of the capacities").await?;
+        site.shows("Waits for number 2 of the capacities").await?;
         ensure!(site.value_of("Measured capacities").await? == "280 2.7.9 281", "what was typed is kept");
         let none: Value = site.run("return document.querySelectorAll('.fold-body .figures').length;", &[]).await?;
         ensure!(none == 0, "no figures beside what is not understood");

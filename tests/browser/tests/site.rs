@@ -16,21 +16,6 @@ async fn six_taps(site: &Site) -> Result<()> {
     Ok(())
 }
 
-fn plain(text: &str) -> String {
-    text.replace(['\u{202f}', '\u{a0}', '\u{2009}', '\n'], " ")
-}
-
-async fn shows(site: &Site, words: &str) -> Result<()> {
-    site.wait_for(&format!("the page to show \"{words}\""), async || {
-        Ok(plain(&site.text().await?).contains(words).then_some(()))
-    })
-    .await
-}
-
-async fn is_written(site: &Site) -> Result<()> {
-    site.element(".kept[data-state=kept]").await.map(drop)
-}
-
 #[test]
 fn six_taps_make_a_whole_assessed_line() {
     for screen in [Screen::PHONE, Screen::NARROW] {
@@ -38,11 +23,11 @@ fn six_taps_make_a_whole_assessed_line() {
             line(site).await?;
             six_taps(site).await?;
             for part in ["Array", "Controller", "Bank", "Inverter", "AC panel", "DC panel"] {
-                shows(site, part).await?;
+                site.shows(part).await?;
             }
-            shows(site, "typical: read your nameplate").await?;
+            site.shows("typical: read your nameplate").await?;
             ensure!(site.count(".line > li").await? > 10, "parts and runs stand on it");
-            ensure!(site.overflow().await? == 0, "{} px beyond the edge", site.overflow().await?);
+            site.fits().await?;
             Ok(())
         });
     }
@@ -53,20 +38,20 @@ fn the_hut_breaks_at_its_cold_string_and_the_part_is_mended_in_place() {
     visit(Screen::PHONE, async |site| {
         line(site).await?;
         site.press("Kestrel Ridge hut").await?;
-        shows(site, "Cold string against the controller, 170.3 V, at most 150 V").await?;
+        site.shows("Cold string against the controller, 170.3 V, at most 150 V").await?;
         site.press("Array").await?;
         site.heading("Array").await?;
         site.type_into("Modules in series", "2").await?;
         site.type_into("Strings", "4").await?;
         site.press("Line").await?;
         site.wait_for("the worst to be another", async || {
-            Ok((!plain(&site.text().await?).contains("170.3 V, at most")).then_some(()))
+            Ok((!site.text().await?.contains("170.3 V, at most")).then_some(()))
         })
         .await?;
         // Undo leads back through it.
         site.press("Undo: Strings").await?;
         site.press("Undo: Modules in series").await?;
-        shows(site, "170.3 V, at most 150 V").await?;
+        site.shows("170.3 V, at most 150 V").await?;
         Ok(())
     });
 }
@@ -78,9 +63,8 @@ fn a_site_is_there_after_loading_again_with_the_server_stopped() {
         six_taps(site).await?;
         site.type_into("Name of the site", "Tern Point").await?;
         site.leave().await?;
-        is_written(site).await?;
-        if site.attribute("[data-copy]", "data-copy").await?.as_deref() != Some("not-possible") {
-            site.is_kept().await?;
+        site.is_written().await?;
+        if site.keeps_a_copy().await? {
             site.stop_server();
         }
         site.reload().await?;
@@ -107,7 +91,7 @@ fn a_link_holds_the_whole_site() {
         // Cut on the way: refused, and nothing touched.
         let cut = link[..link.len() - 100].to_owned();
         site.run("location.hash = arguments[0].split('#')[1];", &[cut.into()]).await?;
-        shows(site, "That link was cut or changed on the way").await?;
+        site.shows("That link was cut or changed on the way").await?;
         ensure!(site.value_of("Name of the site").await? == "Tarn cabin");
         Ok(())
     });
@@ -126,7 +110,7 @@ fn a_hostile_text_is_refused_and_changes_nothing() {
         for text in ["{", "[]", r#"{"linehut":"site","version":9,"name":"","place":{},"parts":[]}"#, &wide] {
             site.type_into("Pasted link or file", text).await?;
             site.press("Open what is pasted").await?;
-            shows(site, "Not opened, nothing changed").await?;
+            site.shows("Not opened, nothing changed").await?;
         }
         site.press("Line").await?;
         ensure!(site.value_of("Name of the site").await? == "Two Rivers clinic");
@@ -141,7 +125,7 @@ fn what_opens_is_told_and_closed_again() {
         site.press("Two Rivers clinic").await?;
         site.unfold("What if this opens? breaker, fuse, protection, bond").await?;
         site.press("The packs’ own protection").await?;
-        shows(site, "In full sun").await?;
+        site.shows("In full sun").await?;
         site.press("Close it again").await?;
         ensure!(site.count(".whatif").await? == 0, "it is closed");
         Ok(())
@@ -158,7 +142,7 @@ fn the_checks_stand_worst_first_with_their_working() {
         let first = site.element(".checks .check").await?.text().await?;
         ensure!(first.contains("Cold string against the controller"), "{first}");
         site.press("To do").await?;
-        ensure!(site.overflow().await? == 0, "{} px beyond the edge", site.overflow().await?);
+        site.fits().await?;
         Ok(())
     });
 }
@@ -169,17 +153,17 @@ fn two_tabs_never_overwrite_each_other() {
     visit(Screen::PHONE, async |site| {
         line(site).await?;
         site.press("Tarn cabin").await?;
-        is_written(site).await?;
+        site.is_written().await?;
         let first = site.another_tab("#/line").await?;
         site.element(".line .bus").await?;
         site.type_into("Name of the site", "There").await?;
         site.leave().await?;
-        is_written(site).await?;
+        site.is_written().await?;
         site.go_to_tab(first).await?;
         site.type_into("Name of the site", "Here").await?;
         site.leave().await?;
-        shows(site, "Yours is kept beside it").await?;
-        is_written(site).await?;
+        site.shows("Yours is kept beside it").await?;
+        site.is_written().await?;
         site.press("Sheet").await?;
         for name in ["There", "Here (this tab)"] {
             site.button(name).await?;
@@ -194,7 +178,7 @@ fn a_page_torn_away_in_mid_typing_loses_one_keystroke_at_most() {
     visit(Screen::PHONE, async |site| {
         line(site).await?;
         six_taps(site).await?;
-        is_written(site).await?;
+        site.is_written().await?;
         let mut typed = String::new();
         for letter in "Tern Point hut".chars() {
             typed.push(letter);

@@ -1,15 +1,7 @@
 //! The String tool as a person uses it: how many in series, in ten seconds, with no signal.
 
-use browser::{Kind, Result, Screen, Site, ensure, visit};
+use browser::{Kind, Screen, ensure, visit};
 use xtask::{one_file, root};
-
-/// Opens the tool from the first page, as a thumb does.
-async fn open(site: &Site) -> Result<()> {
-    site.load().await?;
-    site.press("How many in series? String").await?;
-    site.heading("String").await?;
-    Ok(())
-}
 
 /// The four entries and the coefficient of the ridge's module.
 const RIDGE: [(&str, &str); 5] = [
@@ -20,42 +12,21 @@ const RIDGE: [(&str, &str); 5] = [
     ("Modules in series", "3"),
 ];
 
-async fn enter(site: &Site, entries: &[(&str, &str)]) -> Result<()> {
-    for (name, text) in entries {
-        site.type_into(name, text).await?;
-    }
-    Ok(())
-}
-
-/// The status with every kind of space made plain.
-async fn says(site: &Site, words: &str) -> Result<()> {
-    site.wait_for(&format!("the status to say \"{words}\""), async || {
-        let status = plain(&site.status().await?);
-        if status.contains(words) { Ok(Some(())) } else { browser::bail!("it says \"{status}\"") }
-    })
-    .await
-}
-
-fn plain(text: &str) -> String {
-    text.replace(['\u{202f}', '\u{a0}', '\u{2009}'], " ")
-}
-
 #[test]
 fn three_in_series_break_and_two_are_the_longest() {
     for screen in [Screen::PHONE, Screen::NARROW] {
         visit(screen, async |site| {
-            open(site).await?;
-            says(site, "asks").await?;
-            enter(site, &RIDGE).await?;
-            says(site, "175.4").await?;
-            says(site, "breaks").await?;
-            says(site, "25.4 V (16.9 %) over the input limit of 150 V").await?;
-            says(site, "170.3 V by the nameplate").await?;
-            says(site, "Longest safe string: 2").await?;
-            ensure!(site.overflow().await? == 0, "{} px beyond the edge", site.overflow().await?);
+            site.open_tool("String").await?;
+            site.says("asks").await?;
+            site.enter(&RIDGE).await?;
+            site.says("175.4").await?;
+            site.says("breaks").await?;
+            site.says("25.4 V (16.9 %) over the input limit of 150 V").await?;
+            site.says("170.3 V by the nameplate").await?;
+            site.says("Longest safe string: 2").await?;
+            site.fits().await?;
             ensure!(site.count("[role=status]").await? == 1, "there is one status");
-            let complaints = site.console_errors().await?;
-            ensure!(complaints.is_empty(), "{complaints:#?}");
+            site.no_complaints().await?;
             Ok(())
         });
     }
@@ -64,13 +35,13 @@ fn three_in_series_break_and_two_are_the_longest() {
 #[test]
 fn the_four_entries_and_a_unit_of_ones_own_are_enough() {
     visit(Screen::PHONE, async |site| {
-        open(site).await?;
-        enter(site, &[("Voc", "41,2"), ("Record low", "-36.4 F"), ("Input limit", "150"), ("Modules in series", "2")])
+        site.open_tool("String").await?;
+        site.enter(&[("Voc", "41,2"), ("Record low", "-36.4 F"), ("Input limit", "150"), ("Modules in series", "2")])
             .await?;
         // −38 °C: the code's table, 1.25, and the assumed 3 %: 2 × 41.2 × 1.25 × 1.03.
-        says(site, "106.1").await?;
-        says(site, "close").await?;
-        says(site, "cold table").await?;
+        site.says("106.1").await?;
+        site.says("close").await?;
+        site.says("cold table").await?;
         ensure!(site.value_of("Voc").await? == "41,2" && site.value_of("Record low").await? == "-36.4 F");
         Ok(())
     });
@@ -79,7 +50,7 @@ fn the_four_entries_and_a_unit_of_ones_own_are_enough() {
 #[test]
 fn worked_case_a_in_millivolts() {
     visit(Screen::PHONE, async |site| {
-        open(site).await?;
+        site.open_tool("String").await?;
         let entries = [
             ("Voc", "41.2"),
             ("Voc coefficient", "-118 mV/K"),
@@ -87,16 +58,16 @@ fn worked_case_a_in_millivolts() {
             ("Input limit", "150"),
             ("Modules in series", "3"),
         ];
-        enter(site, &entries).await?;
-        says(site, "150.3").await?;
-        says(site, "breaks").await?;
-        says(site, "145.9 V by the nameplate").await?;
-        says(site, "Longest safe string: 2").await?;
+        site.enter(&entries).await?;
+        site.says("150.3").await?;
+        site.says("breaks").await?;
+        site.says("145.9 V by the nameplate").await?;
+        site.says("Longest safe string: 2").await?;
         site.unfold("More each lets more checks speak").await?;
         site.type_into("Voc tolerance", "0").await?;
-        says(site, "145.9").await?;
-        says(site, "clears").await?;
-        says(site, "Longest safe string: 3").await?;
+        site.says("145.9").await?;
+        site.says("clears").await?;
+        site.says("Longest safe string: 3").await?;
         Ok(())
     });
 }
@@ -104,18 +75,16 @@ fn worked_case_a_in_millivolts() {
 #[test]
 fn worked_case_b_fuses_every_string() {
     visit(Screen::PHONE, async |site| {
-        open(site).await?;
+        site.open_tool("String").await?;
         site.unfold("More each lets more checks speak").await?;
-        enter(site, &[("Isc", "10.6"), ("Series fuse rating", "20"), ("Strings", "4")]).await?;
+        site.enter(&[("Isc", "10.6"), ("Series fuse rating", "20"), ("Strings", "4")]).await?;
         site.wait_for("the fuses that fit", async || {
-            Ok(plain(&site.text().await?)
-                .contains("Fuse every string: 16 or 20 A fits by the rule; 20 A where")
-                .then_some(()))
+            Ok(site.text().await?.contains("Fuse every string: 16 or 20 A fits by the rule; 20 A where").then_some(()))
         })
         .await?;
         site.choose("Code family", "North America").await?;
         site.wait_for("the fuse of the other family", async || {
-            Ok(plain(&site.text().await?).contains("Fuse every string: 20 A fits by the rule").then_some(()))
+            Ok(site.text().await?.contains("Fuse every string: 20 A fits by the rule").then_some(()))
         })
         .await?;
         Ok(())
@@ -125,16 +94,16 @@ fn worked_case_b_fuses_every_string() {
 #[test]
 fn one_tap_confirms_what_was_assumed_and_undo_takes_it_back() {
     visit(Screen::PHONE, async |site| {
-        open(site).await?;
-        enter(site, &RIDGE[..4]).await?;
+        site.open_tool("String").await?;
+        site.enter(&RIDGE[..4]).await?;
         site.press("Modules in series: one more").await?;
         site.press("Modules in series: one more").await?;
-        says(site, "116.9").await?;
-        says(site, "Close until that is confirmed: Voc tolerance").await?;
+        site.says("116.9").await?;
+        site.says("Close until that is confirmed: Voc tolerance").await?;
         site.press("The nameplate says +3 %").await?;
-        says(site, "clears").await?;
+        site.says("clears").await?;
         site.press("Undo: several fields").await?;
-        says(site, "close").await?;
+        site.says("close").await?;
         Ok(())
     });
 }
@@ -142,8 +111,8 @@ fn one_tap_confirms_what_was_assumed_and_undo_takes_it_back() {
 #[test]
 fn a_wrong_entry_stays_as_typed_with_its_reason_and_the_answer_asks() {
     visit(Screen::PHONE, async |site| {
-        open(site).await?;
-        enter(site, &RIDGE).await?;
+        site.open_tool("String").await?;
+        site.enter(&RIDGE).await?;
         for (name, text, reason) in [
             ("Record low", "-400", "below absolute zero"),
             ("Voc", "12,,4", "12.4"),
@@ -151,14 +120,10 @@ fn a_wrong_entry_stays_as_typed_with_its_reason_and_the_answer_asks() {
             ("Modules in series", "2.5", "whole"),
         ] {
             let before = site.value_of(name).await?;
-            site.type_into(name, text).await?;
-            site.leave().await?;
-            site.shows(reason).await?;
-            ensure!(site.value_of(name).await? == text, "{name} keeps what was typed");
-            says(site, "asks").await?;
-            says(site, name).await?;
+            site.refuses(name, text, reason).await?;
+            site.says(name).await?;
             site.type_into(name, &before).await?;
-            says(site, "breaks").await?;
+            site.says("breaks").await?;
         }
         Ok(())
     });
@@ -167,11 +132,11 @@ fn a_wrong_entry_stays_as_typed_with_its_reason_and_the_answer_asks() {
 #[test]
 fn the_working_unfolds_step_by_step() {
     visit(Screen::PHONE, async |site| {
-        open(site).await?;
-        enter(site, &RIDGE).await?;
+        site.open_tool("String").await?;
+        site.enter(&RIDGE).await?;
         site.unfold("Working how this number is made").await?;
         site.wait_for("the steps", async || {
-            let text = plain(&site.text().await?);
+            let text = site.text().await?;
             let steps = ["25 − (−31)", "15.12 %", "56.754 V", "IEC 60891", "Margin to the limit"];
             Ok(steps.iter().all(|step| text.contains(step)).then_some(()))
         })
@@ -182,8 +147,8 @@ fn the_working_unfolds_step_by_step() {
 #[test]
 fn layouts_of_nine_modules_put_two_by_four_first_and_a_tap_takes_it() {
     visit(Screen::PHONE, async |site| {
-        open(site).await?;
-        enter(site, &RIDGE).await?;
+        site.open_tool("String").await?;
+        site.enter(&RIDGE).await?;
         site.unfold("More each lets more checks speak").await?;
         let more = [
             ("Vmp", "41.1"),
@@ -195,14 +160,14 @@ fn layouts_of_nine_modules_put_two_by_four_first_and_a_tap_takes_it() {
             ("Output current", "80"),
             ("Modules at hand", "9"),
         ];
-        enter(site, &more).await?;
+        site.enter(&more).await?;
         site.shows("Every layout of 9 modules").await?;
         site.press("Take 2 in series, 4 strings").await?;
-        says(site, "116.9").await?;
+        site.says("116.9").await?;
         ensure!(site.value_of("Strings").await? == "4");
         site.unfold("What would use them all one change").await?;
         site.wait_for("the smallest change", async || {
-            Ok(plain(&site.text().await?).contains("one with an input limit of at least 175.4 V").then_some(()))
+            Ok(site.text().await?.contains("one with an input limit of at least 175.4 V").then_some(()))
         })
         .await
     });
@@ -211,13 +176,13 @@ fn layouts_of_nine_modules_put_two_by_four_first_and_a_tap_takes_it() {
 #[test]
 fn what_was_typed_is_there_after_loading_again() {
     visit(Screen::PHONE, async |site| {
-        open(site).await?;
-        enter(site, &RIDGE).await?;
+        site.open_tool("String").await?;
+        site.enter(&RIDGE).await?;
         site.type_into("Voc", "49,3 V").await?;
-        says(site, "175.4").await?;
-        is_written(site).await?;
+        site.says("175.4").await?;
+        site.is_written().await?;
         site.reload().await?;
-        says(site, "175.4").await?;
+        site.says("175.4").await?;
         for (name, text) in RIDGE {
             let wanted = if name == "Voc" { "49,3 V" } else { text };
             ensure!(site.value_of(name).await? == wanted, "{name} is as it was typed");
@@ -226,27 +191,19 @@ fn what_was_typed_is_there_after_loading_again() {
     });
 }
 
-/// Every write has been answered: the badge says kept.
-async fn is_written(site: &Site) -> Result<()> {
-    site.element(".kept[data-state=kept]").await.map(drop)
-}
-
 #[test]
 fn with_the_server_stopped_it_loads_again_and_still_answers() {
     visit(Screen::PHONE, async |site| {
-        open(site).await?;
-        if site.attribute("[data-copy]", "data-copy").await?.as_deref() == Some("not-possible") {
+        site.open_tool("String").await?;
+        if !site.keeps_a_copy().await? {
             return Ok(());
         }
-        site.is_kept().await?;
-        enter(site, &RIDGE).await?;
-        is_written(site).await?;
-        site.stop_server();
-        ensure!(!site.server_answers(), "the server still answers");
+        site.enter(&RIDGE).await?;
+        site.lose_signal().await?;
         site.reload().await?;
-        says(site, "175.4").await?;
+        site.says("175.4").await?;
         site.type_into("Modules in series", "2").await?;
-        says(site, "116.9").await?;
+        site.says("116.9").await?;
         Ok(())
     });
 }
@@ -255,10 +212,10 @@ fn with_the_server_stopped_it_loads_again_and_still_answers() {
 fn the_one_file_answers_with_no_server() {
     visit(Screen::PHONE, async |site| {
         site.open_file(&root::dist().join(one_file::NAME)).await?;
-        site.press("How many in series? String").await?;
-        enter(site, &RIDGE).await?;
-        says(site, "175.4").await?;
-        says(site, "Longest safe string: 2").await?;
+        site.press_tool("String").await?;
+        site.enter(&RIDGE).await?;
+        site.says("175.4").await?;
+        site.says("Longest safe string: 2").await?;
         Ok(())
     });
 }
@@ -270,8 +227,8 @@ fn one_keystroke_to_the_painted_answer() {
         if site.kind != Kind::Chromium {
             return Ok(());
         }
-        open(site).await?;
-        enter(site, &RIDGE).await?;
+        site.open_tool("String").await?;
+        site.enter(&RIDGE).await?;
         site.slow_down(6.0).await?;
         let mut times = Vec::new();
         for key in ['1', '2', '3', '4', '5'] {
