@@ -8,7 +8,6 @@ use leptos::prelude::*;
 
 use crate::answer::rests_on;
 use crate::fold::Folds;
-use crate::form::names;
 use crate::span_bar::geometry::{From, Post, Ruler};
 use crate::span_bar::{Bar, slim_bar};
 use crate::verdict::{CostMark, VerdictMark, tells_cost};
@@ -76,9 +75,10 @@ pub fn check_row<Id>(
     .into_any()
 }
 
-/// "asks: Voc and Record low", where it asks.
+/// "asks: Voc, Record low", where it asks.
 pub fn asks_for<Id>(check: &Check<Id>) -> Option<String> {
-    (check.verdict == Verdict::Asks).then(|| format!("asks: {}", names(check.asks)))
+    let names = || check.asks.iter().map(Field::name).collect::<Vec<_>>().join(", ");
+    (check.verdict == Verdict::Asks).then(|| format!("asks: {}", names()))
 }
 
 /// A button for each field that is missing.

@@ -213,6 +213,6 @@ mod tests {
             answer.says
         );
         let by_letter = of_rows(&[(Field::CodeLetter, "j"), (Field::MotorSize, "1.5")]);
-        assert!(by_letter.says.contains("Starting seconds") && !by_letter.says.contains("Load"), "{}", by_letter.says);
+        assert!(by_letter.says.contains("Cut-off") && !by_letter.says.contains("Load"), "{}", by_letter.says);
     }
 }
