@@ -21,23 +21,24 @@ const fn form(tool: Tool, first: &'static [Field]) -> Form {
     Form { tool, title: ("", ""), first, groups: &[], short: Field::name }
 }
 
+// What takes the whole width stands last, so that no half row is left empty.
 static PLACE: Form = form(
     Tool::Run,
     &[
         Field::CodeFamily,
         Field::RecordLow,
         Field::RecordHigh,
-        Field::StandsOn,
+        Field::Height,
         Field::ColdestInTheRoom,
         Field::WarmestInTheRoom,
-        Field::Height,
         Field::WetRoom,
-        Field::SleepingRoom,
         Field::AirOpening,
         Field::UsedADay,
+        Field::GroundFault,
+        Field::StandsOn,
+        Field::SleepingRoom,
         Field::Earthing,
         Field::FramesBonded,
-        Field::GroundFault,
         Field::Arresters,
     ],
 );
@@ -67,8 +68,8 @@ static INVERTER: Form = form(
         Field::InverterHigh,
         Field::InverterEfficiency,
         Field::AcVolts,
-        Field::InverterBond,
         Field::InverterAir,
+        Field::InverterBond,
     ],
 );
 static OTHER_SOURCE: Form = form(
