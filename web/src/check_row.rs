@@ -30,6 +30,7 @@ pub fn check_row<Id>(
     let verdict = check.verdict;
     let figures = match asks_for(check) {
         Some(asks) => view! { <span class="asks-for">{asks}</span> }.into_any(),
+        None if check.is_count() => ().into_any(),
         None => {
             let (value, limit) = apart(check);
             let margin = check.margin.map_or_else(|| show::NONE.to_owned(), |margin| show::room(margin.amount()));
@@ -116,8 +117,11 @@ pub fn against<Id>(check: &Check<Id>) -> String {
     })
 }
 
-/// The slim bar of a check; none where it asks.
+/// The slim bar of a check; none where it asks, or only counts.
 pub fn bar<Id>(name: &str, check: &Check<Id>) -> Option<Bar> {
+    if check.is_count() {
+        return None;
+    }
     let (value, limit, room) = (check.value?, check.limit?, check.room()?);
     let (shown, limit_shown) = apart(check);
     let at_most = limit.sense == Sense::AtMost;

@@ -118,6 +118,14 @@ pub fn sentence(site: &Site, one: &SiteCheck) -> String {
     let check = &one.check;
     let name = check.id.name();
     match (check.value, check.limit, check.room()) {
+        (Some(_), Some(_), Some(_)) if check.is_count() => {
+            let holds = match check.verdict {
+                Verdict::Breaks => ": does not hold.".to_owned(),
+                _ => crate::answer::rests_on(check.assumed)
+                    .map_or_else(|| ": holds.".to_owned(), |rests| format!(". {rests}")),
+            };
+            format!("{place}: {name}{holds}")
+        }
         (Some(value), Some(limit), Some(room)) => {
             let (value, bound) = show::apart(value, limit.amount);
             let side = if limit.sense == engine::check::Sense::AtMost { "at most" } else { "at least" };
@@ -180,4 +188,30 @@ pub fn subject_of(word: &str, run: bool) -> Option<Subject> {
     });
     let id = PartId(id.filter(|_| !word.is_empty())?);
     Some(if run { Subject::Run(id) } else { Subject::Part(id) })
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::testing::plain;
+
+    fn says(name: &str, id: &str) -> String {
+        let site = bridge::demo::demo(name).unwrap();
+        let found = engine::site::assess(&site);
+        plain(&sentence(&site, found.checks.iter().find(|one| one.check.id.id() == id).unwrap()))
+    }
+
+    #[test]
+    fn a_check_is_told_with_its_figures_and_one_that_counts_without() {
+        let ridge = "Kestrel Ridge hut";
+        assert_eq!(
+            says(ridge, "string-cold-controller"),
+            "Array: Cold string against the controller, 170.3 V, at most 150 V, 20.3 V past it."
+        );
+        assert_eq!(
+            says("Two Rivers clinic", "breaker-poles"),
+            "East roof to East controller: Breaker opens both directions. Rests on what is assumed: Breaker type."
+        );
+        assert_eq!(says(ridge, "neutral-bond"), "Inverter: One bond of the neutral, inverting: holds.");
+    }
 }

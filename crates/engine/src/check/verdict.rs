@@ -5,6 +5,7 @@ use core::cmp::Ordering;
 use super::basis::{Basis, FieldSet};
 use crate::order::sort_short;
 use crate::quantity::{Amount, Percent, Quantity};
+use crate::unit::Unit;
 
 /// Whether a requirement holds.
 ///
@@ -220,6 +221,12 @@ impl<Id> Check<Id> {
             Sense::AtLeast => value.number - limit.amount.number,
         };
         Some(Amount { number, unit: value.unit })
+    }
+
+    /// Whether it sets a count of things against the count that must be, as of bonds or directions: its figures say less
+    /// than its verdict.
+    pub fn is_count(&self) -> bool {
+        self.limit.is_some_and(|limit| limit.amount.unit == Unit::One)
     }
 
     /// [`room`](Self::room) without its sign: how far inside the limit, or how far past it.
