@@ -1,5 +1,6 @@
 //! The Air and water tool: fresh air, openings, distance from sparks, water a month, freezing.
 
+use crate::piece::{Piece, view};
 use engine::bank::{
     AirAndWater, Ask, Layout, Requirement, air_and_water, assess, counts_lack, settled as with_counts, working,
 };
@@ -61,7 +62,7 @@ const CHECKS: [Requirement; 5] =
     [Requirement::Air, Requirement::AirSleeping, Requirement::Cold, Requirement::ColdCharge, Requirement::ColdLock];
 
 /// The Air and water tool.
-pub fn air_tool() -> AnyView {
+pub fn air_tool() -> Piece {
     let ask = bank();
     let answer = memo(move || ask.with(|ask| Some(answer(ask))));
     let rested = settled(ask);
@@ -70,7 +71,7 @@ pub fn air_tool() -> AnyView {
         "What the room needs",
         "",
         move || rested.with(|ask| air_and_water(ask).is_some()),
-        move || rested.with(|ask| air_and_water(ask).map(|found| told(&found))).unwrap_or_else(|| ().into_any()),
+        move || rested.with(|ask| air_and_water(ask).map(|found| told(&found))).unwrap_or_else(|| Piece::Nothing),
     );
     tool_page(ToolPage {
         form: &FORM,
@@ -189,7 +190,7 @@ fn water(found: &AirAndWater) -> Option<String> {
     Some(format!("Water: {least} to {most} a month"))
 }
 
-fn told(found: &AirAndWater) -> AnyView {
+fn told(found: &AirAndWater) -> Piece {
     let mut rows: Vec<(String, String)> = Vec::new();
     let mut put = |name: &str, figure: Option<String>| rows.extend(figure.map(|figure| (name.to_owned(), figure)));
     put("Current that makes gas", found.gassing.map(|amps| show::computed(amps.amount())));
@@ -198,16 +199,14 @@ fn told(found: &AirAndWater) -> AnyView {
     put("Keep clear of sparks", found.keep_clear.map(|metres| show::computed(metres.amount())));
     put("Freezes at its lowest charge at", found.freezes_at.map(|cold| show::computed(cold.amount())));
     put("Freezes empty at", found.freezes_empty_at.map(|cold| show::computed(cold.amount())));
-    let source = found
-        .gassing_source
-        .map(|clause| view! { <p class="field-note">{format!("Source: {}.", cited(clause))}</p> }.into_any());
-    let cautions: Vec<AnyView> = found.cautions.iter().map(|line| view! { <li>{*line}</li> }.into_any()).collect();
+    let source =
+        found.gassing_source.map(|clause| view! { <p class="field-note">{format!("Source: {}.", cited(clause))}</p> });
+    let cautions: Vec<Piece> = found.cautions.iter().map(|line| view! { <li>{*line}</li> }).collect();
     view! {
         {figures(rows)}
         {source}
         <ul class="notes">{cautions}</ul>
     }
-    .into_any()
 }
 
 #[cfg(test)]

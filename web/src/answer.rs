@@ -4,6 +4,7 @@
 
 use std::borrow::Cow;
 
+use crate::piece::{Piece, view};
 use engine::check::{Check, Cost, FieldSet, Verdict};
 use engine::show;
 use leptos::prelude::*;
@@ -13,7 +14,7 @@ use crate::draft::use_draft;
 use crate::form::names;
 use crate::pads::{Edit, Place, Typed};
 use crate::span_bar::{Bar, slim_bar, span_bar};
-use crate::verdict::{CostMark, VerdictMark, tells_cost};
+use crate::verdict::{cost_mark, tells_cost, verdict_mark};
 
 /// Everything that stands on top of a tool.
 #[derive(Clone, Debug, PartialEq)]
@@ -100,28 +101,27 @@ pub fn without_unit(shown: &str) -> &str {
 }
 
 /// The answer: number, verdict, what it means, picture. The one region of the page with the role of a status.
-pub fn answer_view(answer: Memo<Option<Answer>>) -> AnyView {
+pub fn answer_view(answer: Memo<Option<Answer>>) -> Piece {
     let words = dynamic(move || {
-        let Some(answer) = answer.get() else { return ().into_any() };
+        let Some(answer) = answer.get() else { return Piece::Nothing };
         let Answer { of, number, unit, verdict, cost, says, most, rests, besides, .. } = answer;
         view! {
             <p class="answer-for">{of}</p>
             <div class="answer-row">
                 <p class="answer-num">{with_unit(number, unit)}</p>
                 <p class="answer-tags">
-                    <VerdictMark verdict=verdict big=true/>
-                    {tells_cost(verdict).then(|| view! { <CostMark cost=cost/> }.into_any())}
+                    {verdict_mark(verdict, true)}
+                    {tells_cost(verdict).then(|| view! { {cost_mark(cost)} })}
                 </p>
             </div>
             <p class="answer-say">{says}</p>
-            {most.map(|most| view! { <p class="answer-most">{most}</p> }.into_any())}
-            {rests.map(|rests| view! { <p class="answer-note">{rests}</p> }.into_any())}
-            {besides.map(|besides| view! { <p class="answer-besides">{besides}</p> }.into_any())}
+            {most.map(|most| view! { <p class="answer-most">{most}</p> })}
+            {rests.map(|rests| view! { <p class="answer-note">{rests}</p> })}
+            {besides.map(|besides| view! { <p class="answer-besides">{besides}</p> })}
         }
-        .into_any()
     });
     let drawn = move |of: fn(&Answer) -> Option<Bar>| {
-        dynamic(move || answer.with(|answer| answer.as_ref().and_then(of)).map_or_else(|| ().into_any(), span_bar))
+        dynamic(move || answer.with(|answer| answer.as_ref().and_then(of)).map_or_else(|| Piece::Nothing, span_bar))
     };
     let (bar, second) = (drawn(|answer| answer.bar.clone()), drawn(|answer| answer.second.clone()));
     view! {
@@ -134,18 +134,16 @@ pub fn answer_view(answer: Memo<Option<Answer>>) -> AnyView {
             {told(answer)}
         </section>
     }
-    .into_any()
 }
 
 /// The number with its unit set smaller; a dash has none.
-fn with_unit(number: String, unit: Cow<'static, str>) -> AnyView {
-    let unit =
-        (number != show::NONE && !unit.is_empty()).then(|| view! { <small>{format!(" {unit}")}</small> }.into_any());
-    view! { {number}{unit} }.into_any()
+fn with_unit(number: String, unit: Cow<'static, str>) -> Piece {
+    let unit = (number != show::NONE && !unit.is_empty()).then(|| view! { <small>{format!(" {unit}")}</small> });
+    view! { {number}{unit} }
 }
 
 /// What a screen reader says once typing has rested.
-fn told(answer: Memo<Option<Answer>>) -> AnyView {
+fn told(answer: Memo<Option<Answer>>) -> Piece {
     let said = RwSignal::new(String::new());
     let waiting = StoredValue::new(None::<leptos::leptos_dom::helpers::TimeoutHandle>);
     let stop = move || {
@@ -166,11 +164,11 @@ fn told(answer: Memo<Option<Answer>>) -> AnyView {
         }
         now
     });
-    view! { <p class="vh" aria-live="polite">{said}</p> }.into_any()
+    view! { <p class="vh" aria-live="polite">{said}</p> }
 }
 
 /// One tap turns what was assumed into what is entered.
-fn offer(answer: Memo<Option<Answer>>) -> AnyView {
+fn offer(answer: Memo<Option<Answer>>) -> Piece {
     let draft = use_draft();
     let offered = memo(move || answer.with(|answer| answer.as_ref().and_then(|answer| answer.offer.clone())));
     let take = move |_| {
@@ -187,13 +185,12 @@ fn offer(answer: Memo<Option<Answer>>) -> AnyView {
                     <button class="btn small" type="button" on:click=take>{words}</button>
                 </div>
             }
-            .into_any()
         },
     )
 }
 
 /// The answer once more, at the top of the screen, once the answer itself has been scrolled out of it.
-pub fn ride(answer: Memo<Option<Answer>>) -> AnyView {
+pub fn ride(answer: Memo<Option<Answer>>) -> Piece {
     let away = RwSignal::new(false);
     let look = move |_: ()| away.set(answer_is_away());
     let scrolled = window_event_listener_untyped("scroll", move |_| look(()));
@@ -203,16 +200,15 @@ pub fn ride(answer: Memo<Option<Answer>>) -> AnyView {
         resized.remove();
     });
     let shown = dynamic(move || {
-        let Some(Answer { number, unit, verdict, cost, bar, .. }) = answer.get() else { return ().into_any() };
+        let Some(Answer { number, unit, verdict, cost, bar, .. }) = answer.get() else { return Piece::Nothing };
         view! {
             <span class="num">{with_unit(number, unit)}</span>
-            <VerdictMark verdict=verdict/>
-            {tells_cost(verdict).then(|| view! { <CostMark cost=cost/> }.into_any())}
+            {verdict_mark(verdict, false)}
+            {tells_cost(verdict).then(|| view! { {cost_mark(cost)} })}
             {bar.map(slim_bar)}
         }
-        .into_any()
     });
-    view! { <div class="ride" aria-hidden="true" hidden=move || !away.get()>{shown}</div> }.into_any()
+    view! { <div class="ride" aria-hidden="true" hidden=move || !away.get()>{shown}</div> }
 }
 
 /// Whether the verdict on top has left the screen.

@@ -1,15 +1,8 @@
 //! Cautions: what can hurt, said before the act it concerns. Never closable.
 
-use leptos::prelude::*;
+use crate::piece::{IntoPiece, Piece, view};
 
-/// A caution.
-#[component]
-pub fn Caution(
-    /// What it is about.
-    #[prop(default = "Caution")]
-    title: &'static str,
-    /// What to know and what to do.
-    children: Children,
-) -> impl IntoView {
-    view! { <div class="caution" role="note"><b>{title}</b>{children()}</div> }
+/// A caution: what to know and what to do.
+pub fn caution(says: impl IntoPiece) -> Piece {
+    view! { <div class="caution" role="note"><b>"Caution"</b>{says}</div> }
 }

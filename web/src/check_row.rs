@@ -1,5 +1,6 @@
 //! A check in a list: verdict, value, limit and margin, a slim bar, and the working behind a fold.
 
+use crate::piece::{Piece, view};
 use engine::check::{Check, Sense, Step, Verdict};
 use engine::field::Field;
 use engine::quantity::Quantity;
@@ -10,8 +11,7 @@ use crate::answer::rests_on;
 use crate::fold::Folds;
 use crate::span_bar::geometry::{From, Post, Ruler};
 use crate::span_bar::{Bar, slim_bar};
-use crate::verdict::{CostMark, VerdictMark, tells_cost};
-use crate::working::Working;
+use crate::verdict::{cost_mark, tells_cost, verdict_mark};
 
 /// A check in a list. Read within whatever renders the list: it is drawn anew at each change, in place.
 ///
@@ -24,13 +24,13 @@ pub fn check_row<Id>(
     note: Option<String>,
     working: impl FnOnce() -> Vec<Step>,
     on_ask: Callback<Field>,
-) -> AnyView {
+) -> Piece {
     let folds = expect_context::<Folds>();
     let open = folds.is_open(&id);
     let verdict = check.verdict;
     let figures = match asks_for(check) {
-        Some(asks) => view! { <span class="asks-for">{asks}</span> }.into_any(),
-        None if check.is_count() => ().into_any(),
+        Some(asks) => view! { <span class="asks-for">{asks}</span> },
+        None if check.is_count() => Piece::Nothing,
         None => {
             let (value, limit) = apart(check);
             let margin = check.margin.map_or_else(|| show::NONE.to_owned(), |margin| show::room(margin.amount()));
@@ -41,21 +41,18 @@ pub fn check_row<Id>(
                     <span><small>"margin"</small>" "<b>{margin}</b></span>
                 </span>
             }
-            .into_any()
         }
     };
-    let note =
-        note.filter(|_| open || verdict == Verdict::Asks).map(|note| view! { <p class="note">{note}</p> }.into_any());
+    let note = note.filter(|_| open || verdict == Verdict::Asks).map(|note| view! { <p class="note">{note}</p> });
     let body = open.then(|| {
-        let assumed = rests_on(check.assumed).map(|assumed| view! { <p class="note">{assumed}</p> }.into_any());
+        let assumed = rests_on(check.assumed).map(|assumed| view! { <p class="note">{assumed}</p> });
         view! {
             <div class="check-body">
                 {missing(check.asks, on_ask)}
                 {assumed}
-                <Working steps=working()/>
+                {crate::working::list(working())}
             </div>
         }
-        .into_any()
     });
     let slim = bar(name, check).map(slim_bar);
     view! {
@@ -63,8 +60,8 @@ pub fn check_row<Id>(
             <button class="check-head" type="button" aria-expanded=open.to_string() on:click=move |_| folds.turn(&id)>
                 <span class="name">{name}</span>
                 <span class="tags">
-                    <VerdictMark verdict=verdict/>
-                    {tells_cost(verdict).then(|| view! { <CostMark cost=check.cost/> }.into_any())}
+                    {verdict_mark(verdict, false)}
+                    {tells_cost(verdict).then(|| view! { {cost_mark(check.cost)} })}
                 </span>
                 {figures}
                 {slim}
@@ -73,7 +70,6 @@ pub fn check_row<Id>(
             {body}
         </li>
     }
-    .into_any()
 }
 
 /// "asks: Voc, Record low", where it asks.
@@ -83,7 +79,7 @@ pub fn asks_for<Id>(check: &Check<Id>) -> Option<String> {
 }
 
 /// A button for each field that is missing.
-fn missing(fields: engine::check::FieldSet, on_ask: Callback<Field>) -> Option<AnyView> {
+fn missing(fields: engine::check::FieldSet, on_ask: Callback<Field>) -> Option<Piece> {
     (!fields.is_empty()).then(|| {
         let buttons = fields.iter().map(|field| {
             view! {
@@ -91,9 +87,8 @@ fn missing(fields: engine::check::FieldSet, on_ask: Callback<Field>) -> Option<A
                     {format!("Enter {}", field.name())}
                 </button>
             }
-            .into_any()
         });
-        view! { <div class="btns">{buttons.collect_view()}</div> }.into_any()
+        view! { <div class="btns">{buttons.collect::<Vec<Piece>>()}</div> }
     })
 }
 

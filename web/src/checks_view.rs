@@ -1,5 +1,6 @@
 //! The Checks view: every check of the open site, worst first.
 
+use crate::piece::{Piece, view};
 use engine::check::{Cost, Verdict};
 use engine::field::Field;
 use engine::site::{place_name, working};
@@ -19,7 +20,7 @@ enum Shows {
 }
 
 /// The Checks view.
-pub fn checks_view() -> AnyView {
+pub fn checks_view() -> Piece {
     let site = open_site();
     let found = assessed(site);
     let shows = RwSignal::new(Shows::All);
@@ -34,17 +35,15 @@ pub fn checks_view() -> AnyView {
                 {words}
             </button>
         }
-        .into_any()
     };
     let rows = dynamic(move || {
         let Some(site) = site.get() else {
             return view! {
                 <p class="ranked-say">"No site is open. " <a href=Route::Line.href()>"Make or open one."</a></p>
-            }
-            .into_any();
+            };
         };
         let which = shows.get();
-        let rows: Vec<AnyView> = found.with(|found| {
+        let rows: Vec<Piece> = found.with(|found| {
             found
                 .checks
                 .iter()
@@ -66,14 +65,14 @@ pub fn checks_view() -> AnyView {
                         || working(&site, one.place, one.check.id),
                         go,
                     );
-                    view! { <li class="at"><a href=place.href()>{note}</a></li>{row} }.into_any()
+                    view! { <li class="at"><a href=place.href()>{note}</a></li>{row} }
                 })
                 .collect()
         });
         if rows.is_empty() {
-            return view! { <p class="ranked-say">"Nothing of that kind."</p> }.into_any();
+            return view! { <p class="ranked-say">"Nothing of that kind."</p> };
         }
-        view! { <ol class="checks">{rows}</ol> }.into_any()
+        view! { <ol class="checks">{rows}</ol> }
     });
     view! {
         <div class="one-column">
@@ -82,5 +81,4 @@ pub fn checks_view() -> AnyView {
             {rows}
         </div>
     }
-    .into_any()
 }

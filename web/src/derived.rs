@@ -3,6 +3,7 @@
 //! The computing closure is boxed: the graph's code is then made once for each kind of value, not once for each closure.
 //! That is a tenth of the page.
 
+use crate::piece::Piece;
 use leptos::prelude::*;
 
 /// A value that is computed again at each change, and tells only where it differs.
@@ -24,23 +25,12 @@ fn boxed_signal<T: Send + Sync + 'static>(compute: Box<dyn Fn() -> T + Send + Sy
 }
 
 /// What `view` gives, while `holds` does. Made when it begins to hold, and taken away when it ends.
-pub fn when(
-    holds: impl Fn() -> bool + Send + Sync + 'static,
-    view: impl Fn() -> AnyView + Send + Sync + 'static,
-) -> AnyView {
-    boxed_when(Box::new(holds), Box::new(view))
-}
-
-/// What `view` gives, made again at each change of what it reads. Boxed, as the code that renders it is large.
-pub fn dynamic(view: impl Fn() -> AnyView + Send + Sync + 'static) -> AnyView {
-    boxed_dynamic(Box::new(view))
-}
-
-fn boxed_dynamic(view: Box<dyn Fn() -> AnyView + Send + Sync>) -> AnyView {
-    (move || view()).into_any()
-}
-
-fn boxed_when(holds: Box<dyn Fn() -> bool + Send + Sync>, view: Box<dyn Fn() -> AnyView + Send + Sync>) -> AnyView {
+pub fn when(holds: impl Fn() -> bool + Send + Sync + 'static, view: impl Fn() -> Piece + 'static) -> Piece {
     let holds = memo(holds);
-    dynamic(move || if holds.get() { view() } else { ().into_any() })
+    dynamic(move || if holds.get() { view() } else { Piece::Nothing })
+}
+
+/// What `view` gives, made again at each change of what it reads.
+pub fn dynamic(view: impl Fn() -> Piece + 'static) -> Piece {
+    Piece::Live(Box::new(view))
 }

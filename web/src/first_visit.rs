@@ -1,15 +1,14 @@
 //! The first page: what can be asked.
 
-use leptos::prelude::*;
+use crate::piece::{Piece, view};
 
-use crate::icon::Icon;
+use crate::icon::icon;
 use crate::offline::{self, Copy};
 use crate::route::Route;
 use crate::tools::Tool;
 
 /// The first page: one line of what this is, and the tools there are.
-#[component]
-pub fn FirstVisit() -> impl IntoView {
+pub fn first_visit() -> Piece {
     view! {
         <div class="first">
             <section class="hello">
@@ -25,16 +24,16 @@ pub fn FirstVisit() -> impl IntoView {
                             view! {
                                 <li>
                                     <a href=Route::Tool(*tool).href()>
-                                        <Icon class="sym" name=tool.symbol()/>
+                                        {icon(tool.symbol(), "sym")}
                                         <span>
                                             <span class="ask">{tool.question()}</span>
                                             <span class="name">{tool.name()}</span>
                                         </span>
                                     </a>
                                 </li>
-                            }.into_any()
+                            }
                         })
-                        .collect_view()}
+                        .collect::<Vec<Piece>>()}
                 </ul>
             </section>
         </div>

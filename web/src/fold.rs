@@ -1,9 +1,12 @@
 //! Folds: unfold in place, and stay as they were left.
 
 use crate::derived::{derived, memo, when};
+use crate::piece::{Piece, view};
+use std::rc::Rc;
+
 use leptos::prelude::*;
 
-use crate::icon::Icon;
+use crate::icon::icon;
 
 /// Which folds are open, while the page is.
 #[derive(Clone, Copy)]
@@ -47,23 +50,26 @@ impl Default for Folds {
     }
 }
 
-/// A fold. What is in it is made when it is opened, not before.
-#[component]
-pub fn Fold(
-    /// What it is remembered by; one of its own on the page.
-    #[prop(into)]
-    id: String,
-    /// Its head.
+/// A fold: what it is remembered by, one of its own on the page; its head; what lies in it, in a few words; and that.
+///
+/// What is in it is made when it is opened, not before.
+pub fn fold(
+    id: impl Into<String>,
     title: &'static str,
-    /// What lies in it, in a few words.
-    #[prop(into, optional)]
-    says: MaybeProp<String>,
-    /// A symbol before the head.
-    #[prop(optional)]
-    icon: Option<&'static str>,
-    /// What unfolds.
-    children: ChildrenFn,
-) -> impl IntoView {
+    says: Signal<String>,
+    inside: impl Fn() -> Piece + 'static,
+) -> Piece {
+    marked_fold(None, id.into(), title, says, Rc::new(inside))
+}
+
+/// The same with a symbol before its head.
+pub fn marked_fold(
+    symbol: Option<&'static str>,
+    id: String,
+    title: &'static str,
+    says: Signal<String>,
+    inside: Rc<dyn Fn() -> Piece>,
+) -> Piece {
     let folds = expect_context::<Folds>();
     let id = StoredValue::new(id);
     let open = memo(move || id.with_value(|id| folds.is_open(id)));
@@ -77,11 +83,11 @@ pub fn Fold(
                 aria-controls=derived(move || open.get().then(body))
                 on:click=move |_| id.with_value(|id| folds.turn(id))
             >
-                {icon.map(|name| view! { <Icon name=name/> }.into_any())}
+                {symbol.map(|name| icon(name, ""))}
                 {title}
-                <span>{derived(move || says.get())}</span>
+                <span>{says}</span>
             </button>
-            {when(move || open.get(), move || view! { <div class="fold-body" id=body>{children()}</div> }.into_any())}
+            {when(move || open.get(), move || view! { <div class="fold-body" id=body()>{inside()}</div> })}
         </div>
     }
 }

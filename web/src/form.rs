@@ -2,14 +2,15 @@
 
 use std::sync::Arc;
 
+use crate::piece::{Piece, view};
 use engine::check::FieldSet;
-use engine::field::{Field, Takes};
+use engine::field::Field;
 use leptos::prelude::*;
 
 use crate::derived::derived;
 use crate::draft::use_draft;
-use crate::field::{ChoiceField, CountField, NumberField, StandIn, list_field};
-use crate::fold::{Fold, Folds};
+use crate::field::{FieldOf, Said, StandIn};
+use crate::fold::{Folds, fold};
 use crate::tools::Tool;
 
 /// Which inputs a tool has, and where they stand.
@@ -59,7 +60,7 @@ impl Form {
 }
 
 /// The inputs of a tool.
-pub fn form(form: &'static Form, hints: &Hints) -> AnyView {
+pub fn form(form: &'static Form, hints: &Hints) -> Piece {
     let draft = use_draft();
     let says = derived(move || {
         let blank = |field: &&Field| draft.with(|pads| pads.typed((form.tool.pad(), **field)).text.is_empty());
@@ -73,29 +74,27 @@ pub fn form(form: &'static Form, hints: &Hints) -> AnyView {
     let hints = hints.clone();
     let groups = move || {
         let group = |(title, fields): &(&'static str, &'static [Field])| {
-            let fields: Vec<AnyView> = fields.iter().map(|field| one(form, *field, &hints)).collect();
+            let fields: Vec<Piece> = fields.iter().map(|field| one(form, *field, &hints)).collect();
             view! {
                 <h3 class="group">{*title}</h3>
                 <div class="fields">{fields}</div>
             }
-            .into_any()
         };
-        form.groups.iter().map(group).collect::<Vec<AnyView>>()
+        form.groups.iter().map(group).collect::<Vec<Piece>>()
     };
     view! {
         <h2 class="sub">{form.title.0} " " <span>{form.title.1}</span></h2>
         <div class="fields">{first}</div>
-        {(!form.groups.is_empty()).then(|| view! { <Fold id=form.more() title="More" says=says>{groups()}</Fold> }.into_any())}
+        {(!form.groups.is_empty()).then(|| view! { {fold(form.more(), "More", says, move || view! { {groups()} })} })}
     }
-    .into_any()
 }
 
 /// Some fields of a form by themselves.
-pub fn fields_of(form: &'static Form, fields: &[Field], hints: &Hints) -> Vec<AnyView> {
+pub fn fields_of(form: &'static Form, fields: &[Field], hints: &Hints) -> Vec<Piece> {
     fields.iter().map(|field| one(form, *field, hints)).collect()
 }
 
-fn one(form: &'static Form, field: Field, hints: &Hints) -> AnyView {
+fn one(form: &'static Form, field: Field, hints: &Hints) -> Piece {
     let (tool, label) = (form.tool.pad(), (form.short)(field));
     let told = |told: &Told<String>| {
         let told = told.clone();
@@ -104,42 +103,19 @@ fn one(form: &'static Form, field: Field, hints: &Hints) -> AnyView {
     let stands_in = hints.stands_in.clone();
     let stands_in = derived(move || stands_in(field));
     let asks = told(&hints.waits);
-    match field.takes() {
-        Takes::Number { .. } => {
-            let note = told(&hints.note);
-            view! { <NumberField tool=tool field=field label=label assumed=stands_in asks=asks note=note/> }.into_any()
-        }
-        Takes::Whole { .. } => {
-            view! { <CountField tool=tool field=field label=label assumed=stands_in asks=asks/> }.into_any()
-        }
-        Takes::Choice(_) => {
-            view! { <ChoiceField tool=tool field=field label=label assumed=stands_in asks=asks/> }.into_any()
-        }
-        Takes::List { .. } => list_field(tool, field, label),
-    }
+    let note = told(&hints.note);
+    FieldOf { tool, field, label: Some(label), of: None, said: Said { assumed: stands_in, asks, note } }.shown()
 }
 
 /// The same fields once more, of something else of the same kind, such as a second controller: in a pad of its own.
-pub fn of_another(other: Tool, fields: &[Field], short: fn(Field) -> &'static str) -> AnyView {
-    let one = |field: &Field| {
-        let (field, label) = (*field, short(*field));
-        match field.takes() {
-            Takes::Number { .. } => {
-                view! { <NumberField tool=other field=field label=label of=other.name()/> }.into_any()
-            }
-            Takes::Whole { .. } => {
-                view! { <CountField tool=other field=field label=label of=other.name()/> }.into_any()
-            }
-            Takes::Choice(_) => view! { <ChoiceField tool=other field=field label=label of=other.name()/> }.into_any(),
-            Takes::List { .. } => list_field(other, field, label),
-        }
-    };
-    let fields: Vec<AnyView> = fields.iter().map(one).collect();
+pub fn of_another(other: Tool, fields: &[Field], short: fn(Field) -> &'static str) -> Piece {
+    let one =
+        |field: &Field| FieldOf { of: Some(other.name()), ..FieldOf::new(other, *field).called(short(*field)) }.shown();
+    let fields: Vec<Piece> = fields.iter().map(one).collect();
     view! {
         <h3 class="group">{other.name()}</h3>
         <div class="fields">{fields}</div>
     }
-    .into_any()
 }
 
 /// What waits for `field`: the answer, where `answer` lacks it, else a check that lacks nothing but it.

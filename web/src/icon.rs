@@ -1,15 +1,10 @@
 //! A symbol from the sheet of symbols in the page.
 
-use leptos::prelude::*;
+use crate::piece::{Piece, view};
 
-/// A symbol. It says nothing to a screen reader: the word beside it does.
-#[component]
-pub fn Icon(
-    /// Its name in `symbols.svg`.
-    name: &'static str,
-    /// The class that sizes it, where its surroundings do not.
-    #[prop(optional)]
-    class: &'static str,
-) -> impl IntoView {
+/// The symbol `name` of `symbols.svg`, with the class that sizes it where its surroundings do not.
+///
+/// It says nothing to a screen reader: the word beside it does.
+pub fn icon(name: &'static str, class: &'static str) -> Piece {
     view! { <svg class=class aria-hidden="true"><use href=format!("#{name}")></use></svg> }
 }

@@ -25,6 +25,7 @@ pub mod line;
 pub mod notice;
 pub mod offline;
 pub mod pads;
+pub mod piece;
 pub mod route;
 pub mod run;
 pub mod settings;
@@ -51,7 +52,7 @@ use wasm_bindgen_futures::spawn_local;
 
 use draft::Draft;
 use keep::Keeper;
-use shell::Shell;
+use shell::shell;
 
 /// Reads what was kept, then puts the page up. Storage that does not answer is not waited for.
 pub fn begin() {
@@ -63,7 +64,7 @@ pub fn begin() {
     let up = Rc::new(Cell::new(false));
     let put_up = move || {
         if !up.replace(true) {
-            mount_to_body(move || view! { <Shell draft=draft/> });
+            std::mem::forget(piece::mount(&document().body().expect("the page has a body"), move || shell(draft)));
         }
     };
     let waited = put_up.clone();

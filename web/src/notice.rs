@@ -1,33 +1,25 @@
 //! Notices: above the bottom bar, with what can be done about them. Never over a field in use.
 
 use crate::derived::when;
+use crate::piece::{Piece, view};
 use leptos::prelude::*;
 
-/// A notice.
-#[component]
-pub fn Notice(
-    /// What is the matter, in a sentence.
-    #[prop(into)]
-    says: Signal<String>,
-    /// Whether it is up.
-    up: RwSignal<bool>,
-    /// The word on the button that acts; none where there is nothing to do but know.
-    #[prop(optional)]
-    act: &'static str,
-    /// What that button does.
-    #[prop(optional)]
-    on_act: Option<Callback<()>>,
-    /// The word on the button that only closes it.
-    #[prop(default = "Later")]
-    close: &'static str,
-) -> impl IntoView {
-    view! {
-        {when(move || up.get(), move || view! { <div class="notice">
-                <p>{move || says.get()}</p>
-                <div class="notice-acts">
-                    <button type="button" class="quiet" on:click=move |_| up.set(false)>{close}</button>
-                    {on_act.map(|on_act| view! { <button type="button" on:click=move |_| on_act.run(())>{act}</button> }.into_any())}
+/// A notice: what is the matter, in a sentence, and whether it is up; then, where something can be done about it, the word on
+/// the button and what it does.
+pub fn notice(says: &'static str, up: RwSignal<bool>, act: Option<(&'static str, fn())>) -> Piece {
+    let close = if act.is_some() { "Later" } else { "Close" };
+    when(
+        move || up.get(),
+        move || {
+            view! {
+                <div class="notice">
+                    <p>{says}</p>
+                    <div class="notice-acts">
+                        <button type="button" class="quiet" on:click=move |_| up.set(false)>{close}</button>
+                        {act.map(|(word, act)| view! { <button type="button" on:click=move |_| act()>{word}</button> })}
+                    </div>
                 </div>
-            </div> }.into_any())}
-    }
+            }
+        },
+    )
 }

@@ -2,6 +2,7 @@
 
 use std::sync::Arc;
 
+use crate::piece::{Piece, view};
 use engine::bank::{
     Ask, Layout, Requirement, Setting, Settings, counts_lack, settings, settings_working, settled as with_counts,
 };
@@ -61,7 +62,7 @@ const CAUTIONS: &[&str] = &[
 ];
 
 /// The Settings tool.
-pub fn settings_tool() -> AnyView {
+pub fn settings_tool() -> Piece {
     let ask = bank();
     let answer = memo(move || ask.with(|ask| Some(answer(ask))));
     let rested = settled(ask);
@@ -74,7 +75,7 @@ pub fn settings_tool() -> AnyView {
         "The card",
         "key in, then read back",
         move || rested.with(|ask| settings(ask).is_some()),
-        move || rested.with(|ask| settings(ask).map(|card| lines(&card))).unwrap_or_else(|| ().into_any()),
+        move || rested.with(|ask| settings(ask).map(|card| lines(&card))).unwrap_or_else(|| Piece::Nothing),
     );
     tool_page(ToolPage {
         form: &FORM,
@@ -130,12 +131,12 @@ fn says(card: &Settings) -> String {
     lines.join(" ")
 }
 
-fn lines(card: &Settings) -> AnyView {
-    let rows: Vec<AnyView> = card.lines.iter().map(line).collect();
-    view! { <ol class="card">{rows}</ol> }.into_any()
+fn lines(card: &Settings) -> Piece {
+    let rows: Vec<Piece> = card.lines.iter().map(line).collect();
+    view! { <ol class="card">{rows}</ol> }
 }
 
-fn line(line: &Setting) -> AnyView {
+fn line(line: &Setting) -> Piece {
     let figure = line.amount.map_or_else(|| "off".to_owned(), show::computed);
     let each = line.each.map(|each| format!("{} a cell", show::computed(each)));
     let range = line
@@ -146,12 +147,11 @@ fn line(line: &Setting) -> AnyView {
         <li>
             <span class="name">{line.name}</span>
             <b>{figure}</b>
-            {(!small.is_empty()).then(|| view! { <span class="small">{small.join("; ")}</span> }.into_any())}
+            {(!small.is_empty()).then(|| view! { <span class="small">{small.join("; ")}</span> })}
             <p class="why">{line.note}</p>
             <p class="why src">{cited(line.source)}</p>
         </li>
     }
-    .into_any()
 }
 
 #[cfg(test)]

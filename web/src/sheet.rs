@@ -1,6 +1,7 @@
 //! The Sheet view: what is kept on this phone, saved to a file, opened from one, or forgotten.
 
 use crate::derived::{derived, dynamic, memo, when};
+use crate::piece::{IntoPiece, Piece, view};
 use leptos::prelude::*;
 use wasm_bindgen_futures::spawn_local;
 use web_sys::HtmlInputElement;
@@ -13,8 +14,7 @@ use crate::pads::{Edit, OpenSite, Pads, SiteEdit};
 use crate::tools::Tool;
 
 /// What is kept on this phone.
-#[component]
-pub fn Sheet() -> impl IntoView {
+pub fn sheet() -> Piece {
     let draft = use_draft();
     let said = RwSignal::new(String::new());
     let save = move |_| {
@@ -31,7 +31,7 @@ pub fn Sheet() -> impl IntoView {
             <p class="say">{move || keeping(draft.keeper().state(), draft.keeper().lasting())}</p>
             <div class="btns">
                 <button class="btn solid" type="button" on:click=save>"Save to a file"</button>
-                <OpenFile said=said/>
+                {open_file(said)}
             </div>
             <p class="said" aria-live="polite">{said}</p>
             {this_site(said)}
@@ -41,18 +41,17 @@ pub fn Sheet() -> impl IntoView {
             <ul class="signal">
                 {Tool::ALL
                     .iter()
-                    .map(|tool| view! { <li><span>{tool.name()}</span><b>{move || works(offline::copy())}</b></li> }.into_any())
-                    .collect_view()}
+                    .map(|tool| view! { <li><span>{tool.name()}</span><b>{move || works(offline::copy())}</b></li> })
+                    .collect::<Vec<Piece>>()}
             </ul>
             <h2 class="sub">"Forget"</h2>
-            <Forget said=said count=count/>
+            {forget(said, count)}
         </div>
     }
 }
 
 /// Opens a file in place of what is here; undo brings back what was.
-#[component]
-fn OpenFile(said: RwSignal<String>) -> impl IntoView {
+fn open_file(said: RwSignal<String>) -> Piece {
     let draft = use_draft();
     let chosen = move |event: leptos::ev::Event| {
         let input: HtmlInputElement = event_target(&event);
@@ -95,7 +94,7 @@ fn named(name: &str) -> &str {
 }
 
 /// The open site: saved, shared, and its earlier states.
-fn this_site(said: RwSignal<String>) -> AnyView {
+fn this_site(said: RwSignal<String>) -> Piece {
     let draft = use_draft();
     let has = memo(move || draft.with(|pads| pads.site().is_some()));
     let now = move || draft.with_now(|pads| pads.site().cloned());
@@ -140,7 +139,6 @@ fn this_site(said: RwSignal<String>) -> AnyView {
                 </label>
                 {earlier()}
             }
-            .into_any()
         },
     )
 }
@@ -159,7 +157,7 @@ fn file_name(name: &str) -> String {
 }
 
 /// Earlier states of the open site, read when they are unfolded.
-fn earlier() -> AnyView {
+fn earlier() -> Piece {
     let draft = use_draft();
     let states = RwSignal::new(Vec::<(f64, String)>::new());
     let look = move |_| {
@@ -182,10 +180,9 @@ fn earlier() -> AnyView {
                 view! {
                     <li><button class="btn small" type="button" on:click=restore>{format!("As of {words} UTC")}</button></li>
                 }
-                .into_any()
             })
-            .collect::<Vec<AnyView>>()
-            .into_any()
+            .collect::<Vec<Piece>>()
+            .piece()
     });
     view! {
         <div class="btns">
@@ -193,11 +190,10 @@ fn earlier() -> AnyView {
         </div>
         <ul class="kept-sites">{rows}</ul>
     }
-    .into_any()
 }
 
 /// Opens a pasted link or file text.
-fn paste(said: RwSignal<String>) -> AnyView {
+fn paste(said: RwSignal<String>) -> Piece {
     let draft = use_draft();
     let typed = RwSignal::new(String::new());
     let open = move |_| {
@@ -217,7 +213,6 @@ fn paste(said: RwSignal<String>) -> AnyView {
         </label>
         <div class="btns"><button class="btn" type="button" on:click=open>"Open what is pasted"</button></div>
     }
-    .into_any()
 }
 
 /// Takes over the site that a link holds.
@@ -233,8 +228,7 @@ pub fn open_link(draft: Draft, letters: &str) -> bool {
 }
 
 /// Forgets everything, asked twice in the same place.
-#[component]
-fn Forget(said: RwSignal<String>, count: Memo<usize>) -> impl IntoView {
+fn forget(said: RwSignal<String>, count: Memo<usize>) -> Piece {
     let draft = use_draft();
     let asked = RwSignal::new(false);
     let forget = move |_| {
@@ -251,7 +245,7 @@ fn Forget(said: RwSignal<String>, count: Memo<usize>) -> impl IntoView {
             <div class="btns">
                 <button class="btn solid" type="button" on:click=forget>"Forget all"</button>
                 <button class="btn plain" type="button" on:click=move |_| asked.set(false)>"Keep it"</button>
-            </div> }.into_any()
+            </div> }
             } else {
                 view! {
                     <div class="btns">
@@ -259,7 +253,7 @@ fn Forget(said: RwSignal<String>, count: Memo<usize>) -> impl IntoView {
                             "Forget all that was typed"
                         </button>
                     </div>
-                }.into_any()
+                }
             }
         }}
     }

@@ -1,26 +1,23 @@
 //! What stands around every view: the top line, the notices and the bottom bar.
 
 use crate::derived::{derived, memo, when};
+use crate::piece::{Piece, view};
 use leptos::ev::{self, KeyboardEvent};
 use leptos::prelude::*;
 
 use crate::draft::{Draft, use_draft};
-use crate::first_visit::FirstVisit;
+use crate::first_visit::first_visit;
 use crate::fold::Folds;
-use crate::icon::Icon;
+use crate::icon::icon;
 use crate::keep::Keeping;
-use crate::notice::Notice;
+use crate::notice::notice;
 use crate::offline::{self, Copy};
 use crate::pads::{Edit, What};
 use crate::route::{self, Route};
-use crate::sheet::Sheet;
+use crate::sheet::sheet;
 
 /// The page.
-#[component]
-pub fn Shell(
-    /// The store.
-    draft: Draft,
-) -> impl IntoView {
+pub fn shell(draft: Draft) -> Piece {
     draft.provide();
     provide_context(Folds::new());
     let offline = offline::provide();
@@ -53,15 +50,15 @@ pub fn Shell(
         Route::Line | Route::Link => crate::line::line_view(None),
         Route::Part(subject) => crate::line::line_view(Some(subject)),
         Route::Checks => crate::checks_view::checks_view(),
-        Route::Tools => view! { <FirstVisit/> }.into_any(),
+        Route::Tools => first_visit(),
         Route::Tool(tool) => tool.page(),
-        Route::Sheet => view! { <Sheet/> }.into_any(),
+        Route::Sheet => sheet(),
     };
     view! {
-        <Top route=route/>
+        {top(route)}
         <main>{view}</main>
-        <Notices update=offline.update_ready refused=refused/>
-        <BottomBar route=route/>
+        {notices(offline.update_ready, refused)}
+        {bottom_bar(route)}
     }
 }
 
@@ -98,44 +95,42 @@ fn undo_keys(draft: Draft, event: &KeyboardEvent) {
     draft.edit(edit);
 }
 
-#[component]
-fn Top(route: Memo<Route>) -> impl IntoView {
+fn top(route: Memo<Route>) -> Piece {
     let home = move || route.get() == Route::Tools;
     view! {
         <header class="top">
-            <Icon class="top-mark" name="mark"/>
+            {icon("mark", "top-mark")}
             <div class="top-name">
                 <p class="h1">
                     {move || {
                         if home() {
-                            view! { "Linehut" }.into_any()
+                            view! { "Linehut" }
                         } else {
-                            view! { <a href=Route::Tools.href()>"Linehut"</a> }.into_any()
+                            view! { <a href=Route::Tools.href()>"Linehut"</a> }
                         }
                     }}
                 </p>
-                <KeptBadge/>
+                {kept_badge()}
             </div>
-            <UndoButtons/>
-            <LightButton/>
+            {undo_buttons()}
+            {light_button()}
         </header>
     }
 }
 
 /// Whether what was typed is kept, and whether the page works with no signal.
-#[component]
-fn KeptBadge() -> impl IntoView {
+fn kept_badge() -> Piece {
     let keeper = use_draft().keeper();
     let badge = memo(move || badge(keeper.state(), keeper.lasting(), offline::copy()));
     view! {
         <div class="kept" data-state=move || badge.get().state data-copy=move || offline::copy().name() aria-live="polite">
-            <Icon name="i-kept"/>
+            {icon("i-kept", "")}
             {move || {
                 let Badge { words, leads, .. } = badge.get();
                 if leads {
-                    view! { <a href=Route::Sheet.href()>{words}</a> }.into_any()
+                    view! { <a href=Route::Sheet.href()>{words}</a> }
                 } else {
-                    view! { <span>{words}</span> }.into_any()
+                    view! { <span>{words}</span> }
                 }
             }}
         </div>
@@ -172,8 +167,7 @@ fn badge(keeping: Keeping, lasting: Option<bool>, copy: Copy) -> Badge {
     Badge { state, words, leads }
 }
 
-#[component]
-fn UndoButtons() -> impl IntoView {
+fn undo_buttons() -> Piece {
     let draft = use_draft();
     let said = RwSignal::new(String::new());
     let make = move |edit: Edit, word: &str, what: Option<What>| {
@@ -191,8 +185,8 @@ fn UndoButtons() -> impl IntoView {
                 aria-label=derived(move || name("Redo", redoes.get()))
                 on:click=move |_| make(Edit::Redo, "Made again", redoes.get_untracked())
             >
-                <Icon name="i-undo"/>
-            </button> }.into_any())}
+                {icon("i-undo", "")}
+            </button> })}
         {when(move || undoes.get().is_some() || redoes.get().is_some(), move || view! { <button
                 class="icon-btn"
                 type="button"
@@ -200,14 +194,13 @@ fn UndoButtons() -> impl IntoView {
                 aria-disabled=derived(move || undoes.get().is_none().then_some("true"))
                 on:click=move |_| make(Edit::Undo, "Undone", undoes.get_untracked())
             >
-                <Icon name="i-undo"/>
-            </button> }.into_any())}
+                {icon("i-undo", "")}
+            </button> })}
         <p class="vh" aria-live="polite">{said}</p>
     }
 }
 
-#[component]
-fn LightButton() -> impl IntoView {
+fn light_button() -> Piece {
     let draft = use_draft();
     view! {
         <button
@@ -216,19 +209,13 @@ fn LightButton() -> impl IntoView {
             aria-label=derived(move || format!("Light: {}. Change to {}", draft.theme().name(), draft.theme().next().name()))
             on:click=move |_| draft.set_theme(untrack(|| draft.theme().next()))
         >
-            <Icon name="i-light"/>
+            {icon("i-light", "")}
         </button>
     }
 }
 
 /// The notices, one below the other. The region is there before its words are, or screen readers would not tell of them.
-#[component]
-fn Notices(
-    /// Whether a newer version waits.
-    update: RwSignal<bool>,
-    /// Whether a link was refused.
-    refused: RwSignal<bool>,
-) -> impl IntoView {
+fn notices(update: RwSignal<bool>, refused: RwSignal<bool>) -> Piece {
     let keeper = use_draft().keeper();
     let beside = RwSignal::new(false);
     Effect::new(move |_| {
@@ -237,43 +224,32 @@ fn Notices(
         }
     });
     // A page that cannot load itself again stays as it is, with its notice up.
-    let reload = move |()| drop(window().location().reload());
+    let reload = || drop(window().location().reload());
     view! {
         <aside class="notices" aria-label="Notices" aria-live="polite">
-            <Notice
-                says="Update ready. Nothing you typed is touched."
-                up=update
-                act="Reload"
-                on_act=Callback::new(|()| offline::take_over())
-            />
-            <Notice
-                says="Changed in another tab: reload to see it. Nothing you typed here is lost."
-                up=keeper.elsewhere()
-                act="Reload"
-                on_act=Callback::new(reload)
-            />
-            <Notice
-                says="That link was cut or changed on the way. Nothing here was touched."
-                up=refused
-                close="Close"
-            />
-            <Notice
-                says="This site was changed in another tab too. Yours is kept beside it, under a name of its own."
-                up=beside
-                close="Close"
-            />
-            <Notice
-                says="What was kept here could not be read. It was laid aside, and this page begins empty."
-                up=keeper.damaged()
-                close="Close"
-            />
+            {notice("Update ready. Nothing you typed is touched.", update, Some(("Reload", offline::take_over)))}
+            {notice(
+                "Changed in another tab: reload to see it. Nothing you typed here is lost.",
+                keeper.elsewhere(),
+                Some(("Reload", reload)),
+            )}
+            {notice("That link was cut or changed on the way. Nothing here was touched.", refused, None)}
+            {notice(
+                "This site was changed in another tab too. Yours is kept beside it, under a name of its own.",
+                beside,
+                None,
+            )}
+            {notice(
+                "What was kept here could not be read. It was laid aside, and this page begins empty.",
+                keeper.damaged(),
+                None,
+            )}
         </aside>
     }
 }
 
-#[component]
-fn BottomBar(route: Memo<Route>) -> impl IntoView {
-    let tap = move |to: Route, icon: &'static str, word: &'static str| {
+fn bottom_bar(route: Memo<Route>) -> Piece {
+    let tap = move |to: Route, symbol: &'static str, word: &'static str| {
         let open = move || {
             let here = match route.get() {
                 Route::Tools | Route::Tool(_) => Route::Tools,
@@ -282,7 +258,7 @@ fn BottomBar(route: Memo<Route>) -> impl IntoView {
             };
             (here == to).then_some("page")
         };
-        view! { <li><a href=to.href() aria-current=open><Icon name=icon/>{word}</a></li> }
+        view! { <li><a href=to.href() aria-current=open>{icon(symbol, "")}{word}</a></li> }
     };
     view! {
         <nav class="bar" aria-label="Views">

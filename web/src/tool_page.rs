@@ -1,15 +1,18 @@
 //! The page of a tool: the answer first, then its working, its inputs, its checks, and what else there is.
 
 use engine::check::Step;
+use std::rc::Rc;
+
 use leptos::prelude::*;
 
 use crate::answer::{Answer, answer_view, ride};
-use crate::caution::Caution;
+use crate::caution;
 use crate::derived::{derived, dynamic, when};
-use crate::fold::Fold;
+use crate::fold::marked_fold;
 use crate::form::{Form, Hints, form};
+use crate::piece::{IntoPiece, Piece, view};
 use crate::route::Route;
-use crate::working::Working;
+use crate::working;
 
 /// What stands on the page of a tool.
 pub struct ToolPage {
@@ -22,9 +25,9 @@ pub struct ToolPage {
     /// What is said beside the inputs.
     pub hints: Hints,
     /// What stands right of the answer before the inputs, if anything.
-    pub before: Vec<AnyView>,
+    pub before: Vec<Piece>,
     /// What follows the inputs: checks, layouts, lists.
-    pub after: Vec<AnyView>,
+    pub after: Vec<Piece>,
     /// What can hurt, each a paragraph.
     pub cautions: &'static [&'static str],
 }
@@ -33,9 +36,9 @@ pub struct ToolPage {
 const LOCAL_CODE: &str = "Local code and a licensed electrician rule; this page decides nothing for them.";
 
 /// The page of a tool.
-pub fn tool_page(page: ToolPage) -> AnyView {
+pub fn tool_page(page: ToolPage) -> Piece {
     let ToolPage { form: inputs, answer, working, hints, before, after, cautions } = page;
-    let working = std::sync::Arc::new(working);
+    let steps = Rc::new(working);
     view! {
         <div class="tool">
             <div class="page-head">
@@ -43,20 +46,16 @@ pub fn tool_page(page: ToolPage) -> AnyView {
             </div>
             <div class="tool-left">
                 {answer_view(answer)}
-                <Fold
-                    id=format!("{}/working", inputs.tool.key())
-                    title="Working"
-                    icon="i-work"
-                    says=derived(|| "how this number is made".to_owned())
-                >
-                    {
-                        let working = working.clone();
-                        move || dynamic({
-                            let working = working.clone();
-                            move || view! { <Working steps=working()/> }.into_any()
-                        })
-                    }
-                </Fold>
+                {marked_fold(
+                    Some("i-work"),
+                    format!("{}/working", inputs.tool.key()),
+                    "Working",
+                    derived(|| "how this number is made".to_owned()),
+                    Rc::new(move || {
+                        let steps = Rc::clone(&steps);
+                        dynamic(move || working::list(steps()))
+                    }),
+                )}
                 {before}
                 {put_on_the_line(inputs.tool)}
             </div>
@@ -68,11 +67,10 @@ pub fn tool_page(page: ToolPage) -> AnyView {
             </div>
         </div>
     }
-    .into_any()
 }
 
 /// Carries what was typed into the open site, where one is open and the tool stands by itself.
-fn put_on_the_line(tool: crate::tools::Tool) -> AnyView {
+fn put_on_the_line(tool: crate::tools::Tool) -> Piece {
     let draft = crate::draft::use_draft();
     let can =
         move || tool.asks_about().is_some() && draft.with(|pads| pads.site().is_some() && pads.subject().is_none());
@@ -84,50 +82,45 @@ fn put_on_the_line(tool: crate::tools::Tool) -> AnyView {
         view! {
             <div class="btns"><button class="btn" type="button" on:click=put>"Put on the line"</button></div>
         }
-        .into_any()
     })
 }
 
 /// The name of the tool and the way back; of the part, where one is looked at.
-fn head(name: &'static str) -> AnyView {
+fn head(name: &'static str) -> Piece {
     let draft = crate::draft::use_draft();
     match draft.with_now(crate::pads::Pads::subject) {
         None => view! {
             <h1 tabindex="-1">{name}</h1>
             <a class="aside" href=Route::Tools.href()>"All tools"</a>
-        }
-        .into_any(),
+        },
         Some(subject) => {
             let site = crate::line::open_site();
             view! {
                 <h1 tabindex="-1">{derived(move || crate::line::title(site, subject))}</h1>
                 <a class="aside" href=Route::Line.href()>"Line"</a>
             }
-            .into_any()
         }
     }
 }
 
 /// What can hurt, and who rules.
-pub fn caution(cautions: &'static [&'static str]) -> AnyView {
-    let lines: Vec<AnyView> = cautions.iter().map(|line| view! { <p>{*line}</p> }.into_any()).collect();
+pub fn caution(cautions: &'static [&'static str]) -> Piece {
+    let lines: Vec<Piece> = cautions.iter().map(|line| view! { <p>{*line}</p> }).collect();
     view! {
-        <Caution>
+        {caution::caution(view! {
             {lines}
             <p>{LOCAL_CODE}</p>
-        </Caution>
+        })}
     }
-    .into_any()
 }
 
 /// A list of checks under its head, made again at each change of what `rows` reads.
-pub fn check_list(rows: impl Fn() -> Vec<AnyView> + Send + Sync + 'static) -> AnyView {
-    let rows = dynamic(move || rows().into_any());
+pub fn check_list(rows: impl Fn() -> Vec<Piece> + Send + Sync + 'static) -> Piece {
+    let rows = dynamic(move || rows().piece());
     view! {
         <h2 class="sub">"Checks" <span>"worst first"</span></h2>
         <ol class="checks">{rows}</ol>
     }
-    .into_any()
 }
 
 /// A section that is there while `holds` does.
@@ -135,8 +128,8 @@ pub fn section(
     title: &'static str,
     says: &'static str,
     holds: impl Fn() -> bool + Send + Sync + 'static,
-    body: impl Fn() -> AnyView + Clone + Send + Sync + 'static,
-) -> AnyView {
+    body: impl Fn() -> Piece + Clone + Send + Sync + 'static,
+) -> Piece {
     when(holds, move || {
         let body = body.clone();
         view! {
@@ -145,15 +138,12 @@ pub fn section(
                 {dynamic(body)}
             </section>
         }
-        .into_any()
     })
 }
 
 /// A list of names and figures.
-pub fn figures(rows: Vec<(String, String)>) -> AnyView {
-    let rows: Vec<AnyView> = rows
-        .into_iter()
-        .map(|(name, figure)| view! { <div><dt>{name}</dt><dd>{figure}</dd></div> }.into_any())
-        .collect();
-    view! { <dl class="figures">{rows}</dl> }.into_any()
+pub fn figures(rows: Vec<(String, String)>) -> Piece {
+    let rows: Vec<Piece> =
+        rows.into_iter().map(|(name, figure)| view! { <div><dt>{name}</dt><dd>{figure}</dd></div> }).collect();
+    view! { <dl class="figures">{rows}</dl> }
 }

@@ -1,6 +1,6 @@
 //! The tools there are. A later tool adds itself here and appears on the first page, in the routes and in what is kept.
 
-use leptos::prelude::*;
+use crate::piece::Piece;
 
 /// A tool: one question, answered by itself, with no site needed.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord, Hash)]
@@ -193,7 +193,7 @@ impl Tool {
     }
 
     /// Its page.
-    pub fn page(self) -> AnyView {
+    pub fn page(self) -> Piece {
         match self {
             Self::String | Self::SecondController | Self::ThirdController => crate::string::string_tool(),
             Self::Cells => crate::cells::cells_tool(),

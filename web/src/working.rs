@@ -1,15 +1,11 @@
 //! The working: how a value came about, step by step, as the code that computed it wrote it down.
 
+use crate::piece::{Piece, view};
 use engine::check::{Origin, Step};
 use engine::show;
-use leptos::prelude::*;
 
 /// A working. The last step is the margin.
-#[component]
-pub fn Working(
-    /// The steps.
-    steps: Vec<Step>,
-) -> impl IntoView {
+pub fn list(steps: Vec<Step>) -> Piece {
     let last = steps.len().saturating_sub(1);
     let steps = steps.into_iter().enumerate().map(|(place, step)| {
         let how = match (step.formula.is_empty(), step.put_in.is_empty()) {
@@ -21,13 +17,12 @@ pub fn Working(
             <li class:last=place == last>
                 <span class="what">{step.what}</span>
                 <span class="out">{show::step(step.result)}</span>
-                {(!how.is_empty()).then(|| view! { <span class="how">{how}</span> }.into_any())}
-                {source(step.origin).map(|source| view! { <span class="src">{source}</span> }.into_any())}
+                {(!how.is_empty()).then(|| view! { <span class="how">{how}</span> })}
+                {source(step.origin).map(|source| view! { <span class="src">{source}</span> })}
             </li>
         }
-        .into_any()
     });
-    view! { <ol class="working">{steps.collect_view()}</ol> }
+    view! { <ol class="working">{steps.collect::<Vec<Piece>>()}</ol> }
 }
 
 fn source(origin: Origin) -> Option<String> {

@@ -3,35 +3,35 @@
 #![allow(clippy::future_not_send, reason = "a browser has one thread")]
 
 use engine::field::Field;
-use leptos::mount::{UnmountHandle, mount_to};
 use leptos::prelude::*;
 use wasm_bindgen::prelude::*;
 use wasm_bindgen_futures::JsFuture;
 use wasm_bindgen_test::{wasm_bindgen_test, wasm_bindgen_test_configure};
 use web::draft::Draft;
-use web::field::{CountField, NumberField, StandIn};
-use web::fold::{Fold, Folds};
+use web::field::{FieldOf, Said, StandIn};
+use web::fold::{Folds, fold};
 use web::keep::Keeper;
 use web::pads::Edit;
+use web::piece::{Mounted, Piece, mount, view};
 use web::tools::Tool;
 use web_sys::{Element, Event, HtmlElement, HtmlInputElement};
 
 wasm_bindgen_test_configure!(run_in_browser);
 
 /// A part of the page, with a store that no storage stands behind.
-struct Stage<M: Mountable> {
+struct Stage {
     root: Element,
     draft: Draft,
-    _up: UnmountHandle<M>,
+    _up: Mounted,
 }
 
-fn stage<V: IntoView + 'static>(show: impl FnOnce() -> V + 'static) -> Stage<impl Mountable> {
+fn stage(show: impl FnOnce() -> Piece + 'static) -> Stage {
     let root = document().create_element("div").unwrap();
     document().body().unwrap().append_child(&root).unwrap();
     let owner = Owner::new();
     let draft = owner.with(|| Draft::new(Keeper::new()));
     std::mem::forget(owner);
-    let up = mount_to(root.clone().unchecked_into(), move || {
+    let up = mount(&root, move || {
         draft.provide();
         provide_context(Folds::new());
         show()
@@ -39,7 +39,7 @@ fn stage<V: IntoView + 'static>(show: impl FnOnce() -> V + 'static) -> Stage<imp
     Stage { root, draft, _up: up }
 }
 
-impl<M: Mountable> Stage<M> {
+impl Stage {
     fn find(&self, selector: &str) -> Option<Element> {
         self.root.query_selector(selector).unwrap()
     }
@@ -107,7 +107,7 @@ async fn pause(milliseconds: i32) {
 
 #[wasm_bindgen_test]
 async fn what_is_typed_stays_to_the_letter() {
-    let stage = stage(|| view! { <NumberField tool=Tool::String field=Field::Voc/> });
+    let stage = stage(|| FieldOf::new(Tool::String, Field::Voc).shown());
     for text in ["49,30", " 49.3 ", "49.3 V", "12,,4", "-", "forty"] {
         stage.type_into("Voc", text).await;
         stage.leave("Voc").await;
@@ -117,7 +117,7 @@ async fn what_is_typed_stays_to_the_letter() {
 
 #[wasm_bindgen_test]
 async fn half_typed_is_not_scolded_until_a_pause() {
-    let stage = stage(|| view! { <NumberField tool=Tool::String field=Field::RecordLow/> });
+    let stage = stage(|| FieldOf::new(Tool::String, Field::RecordLow).shown());
     stage.type_into("Record low", "-").await;
     assert_eq!((stage.state().as_str(), stage.note()), ("field", None));
     pause(400).await;
@@ -137,7 +137,7 @@ async fn half_typed_is_not_scolded_until_a_pause() {
 
 #[wasm_bindgen_test]
 async fn leaving_a_field_says_at_once_what_is_not_understood() {
-    let stage = stage(|| view! { <NumberField tool=Tool::String field=Field::Isc/> });
+    let stage = stage(|| FieldOf::new(Tool::String, Field::Isc).shown());
     stage.type_into("Isc", "12,,4").await;
     assert_eq!(stage.state(), "field");
     stage.leave("Isc").await;
@@ -146,7 +146,7 @@ async fn leaving_a_field_says_at_once_what_is_not_understood() {
 
 #[wasm_bindgen_test]
 async fn a_unit_is_chosen_from_a_plain_list() {
-    let stage = stage(|| view! { <NumberField tool=Tool::String field=Field::RecordLow/> });
+    let stage = stage(|| FieldOf::new(Tool::String, Field::RecordLow).shown());
     stage.type_into("Record low", "-24").await;
     stage.press("Record low, unit °C. Change unit").await;
     stage.press("°F").await;
@@ -157,7 +157,7 @@ async fn a_unit_is_chosen_from_a_plain_list() {
 
 #[wasm_bindgen_test]
 async fn a_typed_unit_is_the_one_on_the_chip_until_another_is_chosen() {
-    let stage = stage(|| view! { <NumberField tool=Tool::String field=Field::RecordLow/> });
+    let stage = stage(|| FieldOf::new(Tool::String, Field::RecordLow).shown());
     stage.type_into("Record low", "-24 F").await;
     stage.press("Record low, unit °F. Change unit").await;
     stage.press("°C").await;
@@ -167,7 +167,7 @@ async fn a_typed_unit_is_the_one_on_the_chip_until_another_is_chosen() {
 
 #[wasm_bindgen_test]
 async fn undo_brings_back_what_was_typed() {
-    let stage = stage(|| view! { <NumberField tool=Tool::String field=Field::Voc/> });
+    let stage = stage(|| FieldOf::new(Tool::String, Field::Voc).shown());
     for text in ["4", "49", "49.3"] {
         stage.type_into("Voc", text).await;
     }
@@ -188,7 +188,8 @@ async fn undo_brings_back_what_was_typed() {
 async fn what_is_assumed_is_shown_with_its_reason_and_source() {
     let stage = stage(|| {
         let stand_in = engine::assumed::of(Field::VocTolerance).map(|assumption| StandIn::of(&assumption));
-        view! { <NumberField tool=Tool::String field=Field::VocTolerance assumed=Signal::stored(stand_in)/> }
+        let said = Said { assumed: Signal::stored(stand_in), ..Said::default() };
+        FieldOf { said, ..FieldOf::new(Tool::String, Field::VocTolerance) }.shown()
     });
     settle().await;
     assert_eq!(stage.state(), "field is-assumed");
@@ -205,7 +206,7 @@ async fn what_is_assumed_is_shown_with_its_reason_and_source() {
 async fn a_missing_field_says_what_waits_for_it() {
     let stage = stage(|| {
         let asks = Signal::stored(Some("asks: the cold volts wait for this".to_owned()));
-        view! { <NumberField tool=Tool::String field=Field::InputLimit asks=asks/> }
+        FieldOf { said: Said { asks, ..Said::default() }, ..FieldOf::new(Tool::String, Field::InputLimit) }.shown()
     });
     settle().await;
     assert_eq!(stage.state(), "field asks");
@@ -214,7 +215,7 @@ async fn a_missing_field_says_what_waits_for_it() {
 
 #[wasm_bindgen_test]
 async fn a_count_steps_within_its_range() {
-    let stage = stage(|| view! { <CountField tool=Tool::String field=Field::Series label="In series"/> });
+    let stage = stage(|| FieldOf::new(Tool::String, Field::Series).called("In series").shown());
     stage.press("Modules in series: one more").await;
     assert_eq!(stage.input("Modules in series").value(), "1");
     stage.press("Modules in series: one more").await;
@@ -228,7 +229,7 @@ async fn a_count_steps_within_its_range() {
 
 #[wasm_bindgen_test]
 async fn holding_a_step_repeats_and_letting_go_ends_it() {
-    let stage = stage(|| view! { <CountField tool=Tool::String field=Field::Series/> });
+    let stage = stage(|| FieldOf::new(Tool::String, Field::Series).shown());
     let more = stage.button("Modules in series: one more");
     more.dispatch_event(&event("pointerdown")).unwrap();
     pause(1000).await;
@@ -243,7 +244,8 @@ async fn holding_a_step_repeats_and_letting_go_ends_it() {
 
 #[wasm_bindgen_test]
 async fn a_fold_makes_its_inside_only_when_it_is_opened() {
-    let stage = stage(|| view! { <Fold id="test/more" title="More"><p class="inside">"here"</p></Fold> });
+    let stage =
+        stage(|| fold("test/more", "More", Signal::stored(String::new()), || view! { <p class="inside">"here"</p> }));
     assert!(stage.find(".inside").is_none());
     let head: HtmlElement = stage.find(".fold-head").unwrap().unchecked_into();
     head.click();

@@ -1,5 +1,6 @@
 //! Every layout of the cells at hand, ranked; those that are refused, nearest first, with the reason.
 
+use crate::piece::{Piece, view};
 use engine::bank::{Ask, Layout, layouts};
 use engine::check::Verdict;
 use engine::field::Field;
@@ -12,17 +13,17 @@ use super::answer::{energy, in_series, window_bar};
 use crate::check_row::against;
 use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
-use crate::fold::Fold;
+use crate::fold::fold;
 use crate::pads::{Edit, Typed};
 use crate::span_bar::slim_bar;
 use crate::tool_page::section;
-use crate::verdict::{CostMark, VerdictMark, tells_cost};
+use crate::verdict::{cost_mark, tells_cost, verdict_mark};
 
 /// How many are shown of each; the rest lie in a fold.
 const SHOWN: usize = 4;
 
 /// The layouts, once cells and bus are known.
-pub fn layout_list(ask: ReadSignal<Ask>) -> AnyView {
+pub fn layout_list(ask: ReadSignal<Ask>) -> Piece {
     section(
         "Layouts",
         "best first",
@@ -32,34 +33,32 @@ pub fn layout_list(ask: ReadSignal<Ask>) -> AnyView {
                 let found = layouts(ask);
                 let ranked = found.ranked.iter().take(SHOWN).map(|layout| row(layout, ask, false));
                 let refused = found.nearest(SHOWN).into_iter().map(|layout| row(layout, ask, true));
-                let first: Vec<AnyView> = ranked.chain(refused).collect();
+                let first: Vec<Piece> = ranked.chain(refused).collect();
                 let others = (found.ranked.len() + found.rejected.len()).saturating_sub(first.len());
                 (first, others, found.ranked.is_empty())
             });
-            let none = none.then(|| view! { <p class="ranked-say">"None holds. See why below."</p> }.into_any());
+            let none = none.then(|| view! { <p class="ranked-say">"None holds. See why below."</p> });
             let more = (others > 0).then(|| {
                 view! {
-                    <Fold id="cells/others" title="The others" says=derived(move || format!("{others} more"))>
-                        {dynamic(move || ask.with(the_others))}
-                    </Fold>
+                    {fold("cells/others", "The others", derived(move || format!("{others} more")), move || view! {                         {dynamic(move || ask.with(the_others))}
+                     })}
                 }
-                .into_any()
             });
-            view! { {none}<ol class="ranked plain">{first}</ol>{more} }.into_any()
+            view! { {none}<ol class="ranked plain">{first}</ol>{more} }
         },
     )
 }
 
-fn the_others(ask: &Ask) -> AnyView {
+fn the_others(ask: &Ask) -> Piece {
     let found = layouts(ask);
     let shown: Vec<u32> = found.nearest(SHOWN).iter().map(|layout| layout.series).collect();
     let ranked = found.ranked.iter().skip(SHOWN).map(|layout| row(layout, ask, false));
     let refused = found.rejected.iter().filter(|layout| !shown.contains(&layout.series));
-    let rows: Vec<AnyView> = ranked.chain(refused.map(|layout| row(layout, ask, true))).collect();
-    view! { <ol class="ranked plain">{rows}</ol> }.into_any()
+    let rows: Vec<Piece> = ranked.chain(refused.map(|layout| row(layout, ask, true))).collect();
+    view! { <ol class="ranked plain">{rows}</ol> }
 }
 
-fn row(layout: &Layout, ask: &Ask, refused: bool) -> AnyView {
+fn row(layout: &Layout, ask: &Ask, refused: bool) -> Piece {
     let draft = use_draft();
     let (series, strings) = (layout.series, layout.strings);
     let is =
@@ -85,18 +84,16 @@ fn row(layout: &Layout, ask: &Ask, refused: bool) -> AnyView {
                 "Take this"
             </button>
         }
-        .into_any()
     });
     view! {
         <li class:is-now=now class:refused=refused data-v=verdict.word()>
             <span class="name">{in_series(layout)}</span>
-            <span class="tags"><VerdictMark verdict=verdict/>{cost.map(|cost| view! { <CostMark cost=cost/> }.into_any())}</span>
+            <span class="tags">{verdict_mark(verdict, false)}{cost.map(|cost| view! { {cost_mark(cost)} })}</span>
             <p class="why">{why(layout, now)}</p>
             {slim_bar(window_bar(layout))}
             {button}
         </li>
     }
-    .into_any()
 }
 
 /// What it covers, what is left over, what it gives, how fast it is charged and drawn, and what stands against it.

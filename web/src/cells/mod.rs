@@ -9,6 +9,7 @@ pub use answer::{assumed, empty_bar, in_series, window_bar};
 
 use std::sync::Arc;
 
+use crate::piece::{Piece, view};
 use engine::bank::{Ask, Requirement, assess, assumption, lacks, settled as with_counts, working};
 use engine::check::{Check, FieldSet, Step};
 use engine::field::Field;
@@ -18,12 +19,11 @@ use crate::check_row::check_row;
 use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::use_draft;
 use crate::field::StandIn;
-use crate::fold::{Fold, Folds};
+use crate::fold::{Folds, fold};
 use crate::form::{Form, Hints, waits};
 use crate::settled::settled;
 use crate::tool_page::{ToolPage, check_list, tool_page};
 use crate::tools::Tool;
-use crate::working::Working;
 
 /// The tool whose pad holds the bank; Settings and Air and water read it too.
 pub const TOOL: Tool = Tool::Cells;
@@ -159,7 +159,7 @@ pub fn hints(ask: Memo<Ask>, lacks: fn(&Ask) -> FieldSet, checks: Memo<Vec<Check
 }
 
 /// The rows of a bank's checks on the page of `form`.
-pub fn check_rows(form: &'static Form, ask: ReadSignal<Ask>, checks: Memo<Vec<Check<Requirement>>>) -> AnyView {
+pub fn check_rows(form: &'static Form, ask: ReadSignal<Ask>, checks: Memo<Vec<Check<Requirement>>>) -> Piece {
     let folds = expect_context::<Folds>();
     let go = Callback::new(move |field: Field| form.go_to(folds, field));
     check_list(move || {
@@ -176,7 +176,7 @@ pub fn check_rows(form: &'static Form, ask: ReadSignal<Ask>, checks: Memo<Vec<Ch
 }
 
 /// The Cells tool.
-pub fn cells_tool() -> AnyView {
+pub fn cells_tool() -> Piece {
     let draft = use_draft();
     let ask = bank();
     let answer = memo(move || draft.with(|pads| ask.with(|ask| answer::answer(&pads.of(TOOL), ask))));
@@ -209,20 +209,18 @@ fn steps(ask: &Ask) -> Vec<Step> {
 }
 
 /// How much of the bank can be used, step by step.
-fn energy(ask: Memo<Ask>) -> AnyView {
+fn energy(ask: Memo<Ask>) -> Piece {
     let counted = memo(move || ask.with(with_counts));
     when(
         move || counted.with(|ask| engine::bank::energy(ask).is_some()),
         move || {
             view! {
-                <Fold id="cells/energy" title="Energy" says=derived(|| "in this room, at this load".to_owned())>
-                    {dynamic(move || {
+                {fold("cells/energy", "Energy", derived(|| "in this room, at this load".to_owned()), move || view! {                     {dynamic(move || {
                         let steps = counted.with(engine::bank::energy_working);
-                        view! { <Working steps=steps/> }.into_any()
+                        crate::working::list(steps)
                     })}
-                </Fold>
+                 })}
             }
-            .into_any()
         },
     )
 }

@@ -2,6 +2,7 @@
 
 use std::sync::Arc;
 
+use crate::piece::{Piece, view};
 use engine::bank::{Ask, AtRest, RESTED_AT, at_rest};
 use engine::chemistry::Family;
 use engine::entry::Entry;
@@ -15,7 +16,7 @@ use super::{FORM, TOOL};
 use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
 use crate::field::{StandIn, Stands};
-use crate::fold::Fold;
+use crate::fold::fold;
 use crate::form::{Hints, fields_of};
 use crate::tool_page::figures;
 use crate::working::cited;
@@ -24,7 +25,7 @@ use crate::working::cited;
 const FIELDS: [Field; 2] = [Field::RestVoltages, Field::BankTemperature];
 
 /// Voltages read on cells that have rested, and what they tell.
-pub fn reading(ask: ReadSignal<Ask>) -> AnyView {
+pub fn reading(ask: ReadSignal<Ask>) -> Piece {
     let stands_in = |field| {
         (field == Field::BankTemperature).then(|| StandIn {
             stands: Stands::Amount(RESTED_AT.amount()),
@@ -34,18 +35,16 @@ pub fn reading(ask: ReadSignal<Ask>) -> AnyView {
     };
     let hints = Hints { stands_in: Arc::new(stands_in), waits: Arc::new(|_| None), note: Arc::new(|_| None) };
     view! {
-        <Fold id="cells/rest" title="Cells at rest" says=derived(|| "charge, and the odd ones".to_owned())>
-            <div class="fields">{fields_of(&FORM, &FIELDS, &hints)}</div>
+        {fold("cells/rest", "Cells at rest", derived(|| "charge, and the odd ones".to_owned()), move || view! {             <div class="fields">{fields_of(&FORM, &FIELDS, &hints)}</div>
             {dynamic(move || {
                 let told = use_draft().with(|pads| ask.with(|ask| told(&pads.of(TOOL), ask)));
                 match told {
                     Ok(rows) => figures(rows),
-                    Err(words) => view! { <p class="ranked-say">{words}</p> }.into_any(),
+                    Err(words) => view! { <p class="ranked-say">{words}</p> },
                 }
             })}
-        </Fold>
+         })}
     }
-    .into_any()
 }
 
 /// Names and figures, or what there is to do first.

@@ -1,5 +1,6 @@
 //! Strings side by side: what each carries, by where the bank's leads are taken off.
 
+use crate::piece::{Piece, view};
 use engine::bank::{Ask, shares};
 use engine::choice::words;
 use engine::field::Field;
@@ -9,32 +10,26 @@ use engine::show;
 use leptos::prelude::*;
 
 use crate::derived::{derived, dynamic, when};
-use crate::fold::Fold;
+use crate::fold::fold;
 use crate::tool_page::figures;
 
 /// The most strings that are told one by one.
 const TOLD: usize = 8;
 
 /// The shares for every take-off, where strings stand side by side.
-pub fn sharing(ask: ReadSignal<Ask>) -> AnyView {
+pub fn sharing(ask: ReadSignal<Ask>) -> Piece {
     when(
         move || ask.with(|ask| shares(ask).is_some()),
         move || {
             view! {
-                <Fold
-                    id="cells/sharing"
-                    title="Sharing"
-                    says=derived(|| "string by string, by take-off".to_owned())
-                >
-                    {dynamic(move || ask.with(told))}
-                </Fold>
+                {fold("cells/sharing", "Sharing", derived(|| "string by string, by take-off".to_owned()), move || view! {                     {dynamic(move || ask.with(told))}
+                 })}
             }
-            .into_any()
         },
     )
 }
 
-fn told(ask: &Ask) -> AnyView {
+fn told(ask: &Ask) -> Piece {
     let rows = shares(ask).unwrap_or_default().into_iter().map(|one| {
         let each: Vec<String> = one.over_even.iter().take(TOLD).map(|percent| plain(*percent)).collect();
         let more = if one.over_even.len() > TOLD { " …" } else { "" };
@@ -47,7 +42,6 @@ fn told(ask: &Ask) -> AnyView {
              new and warm, on equal ties. Above 120 % the hardest string ages first."
         </p>
     }
-    .into_any()
 }
 
 fn plain(percent: Percent) -> String {

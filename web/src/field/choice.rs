@@ -1,56 +1,23 @@
 //! A field that takes one of a short list.
 
-use crate::derived::{derived, dynamic, memo, when};
-use engine::field::{Field, Takes};
+use crate::derived::{derived, dynamic, memo};
+use crate::piece::{IntoPiece, Piece, view};
+use engine::field::Takes;
 use engine::typed::Refusal;
 use leptos::prelude::*;
 
-use super::{Parts, Said, StandIn, Stands, State};
+use super::{FieldOf, Parts, Stands, State};
 use crate::pads::Edit;
-use crate::tools::Tool;
-
-/// How the choices are laid out.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
-pub enum Shape {
-    /// A list that opens.
-    #[default]
-    List,
-    /// Side by side: for two or three short ones.
-    Pick,
-}
 
 /// A field that takes one of a short list.
-#[component]
-pub fn ChoiceField(
-    /// The tool it stands in.
-    tool: Tool,
-    /// The input.
-    field: Field,
-    /// The word above it, where it is shorter than the field's name. Contained in that name.
-    #[prop(optional)]
-    label: Option<&'static str>,
-    /// How the choices are laid out.
-    #[prop(optional)]
-    shape: Shape,
-    /// What it is a choice of, where a page has the same one twice. Goes before its name.
-    #[prop(optional)]
-    of: Option<&'static str>,
-    /// What stands in while nothing is chosen: the key of a choice.
-    #[prop(into, optional)]
-    assumed: Signal<Option<StandIn>>,
-    /// What waits for it, while nothing is chosen.
-    #[prop(into, optional)]
-    asks: Signal<Option<String>>,
-    /// What else is said under it.
-    #[prop(into, optional)]
-    note: Signal<Option<String>>,
-) -> impl IntoView {
+pub fn choice_field(of: FieldOf) -> Piece {
+    let FieldOf { tool, field, said, .. } = of;
     let choices = match field.takes() {
         Takes::Choice(choices) => choices,
         Takes::Number { .. } | Takes::Whole { .. } | Takes::List { .. } => &[],
     };
     let known = move |text: &str| choices.iter().any(|(key, _)| *key == text);
-    let parts = Parts::new((tool, field), Said { assumed, asks, note }, move |typed| {
+    let parts = Parts::new((tool, field), said, move |typed| {
         if typed.text.is_empty() || known(&typed.text) {
             Ok(None)
         } else {
@@ -58,22 +25,13 @@ pub fn ChoiceField(
         }
     });
     let stand_in = memo(move || {
-        assumed.with(|stand_in| match stand_in.as_ref()?.stands {
+        said.assumed.with(|stand_in| match stand_in.as_ref()?.stands {
             Stands::Choice(key) => Some(key),
             Stands::Amount(_) | Stands::Depends => None,
         })
     });
     let choose = move |key: String| parts.draft.edit(Edit::Type(parts.place, key));
-    match shape {
-        Shape::List => {
-            list(parts, super::full_name(of, field), label.unwrap_or(field.name()), choices, stand_in, choose)
-                .into_any()
-        }
-        Shape::Pick => {
-            pick(parts, super::full_name(of, field), label.unwrap_or(field.name()), choices, stand_in, choose)
-                .into_any()
-        }
-    }
+    list(parts, of.name(), of.label(), choices, stand_in, choose)
 }
 
 /// Words longer than this take the whole width of the form.
@@ -88,7 +46,7 @@ fn list(
     choices: Choices,
     stand_in: Memo<Option<&'static str>>,
     choose: impl Fn(String) + Copy + 'static,
-) -> impl IntoView {
+) -> Piece {
     let text = move || parts.typed.with(|typed| typed.text.clone());
     // What no choice is chosen means: what stands in, by its words.
     let none = move || {
@@ -115,58 +73,11 @@ fn list(
                     {choices
                         .iter()
                         .map(|(key, words)| {
-                            view! { <option value=*key selected=derived(move || text() == *key)>{*words}</option> }.into_any()
+                            view! { <option value=*key selected=derived(move || text() == *key)>{*words}</option> }
                         })
-                        .collect_view()}
-                    {dynamic(move || strange().map(|text| view! { <option value=text.clone() selected=derived(|| true)>{text.clone()}</option> }.into_any()).into_any())}
+                        .collect::<Vec<Piece>>()}
+                    {dynamic(move || strange().map(|text| view! { <option value=text.clone() selected=derived(|| true)>{text.clone()}</option> }).piece())}
                 </select>
-            </div>
-            {parts.foot()}
-        </div>
-    }
-}
-
-fn pick(
-    parts: Parts,
-    name: String,
-    label: &'static str,
-    choices: Choices,
-    stand_in: Memo<Option<&'static str>>,
-    choose: impl Fn(String) + Copy + 'static,
-) -> impl IntoView {
-    let text = move || parts.typed.with(|typed| typed.text.clone());
-    view! {
-        <div class=move || format!("{} wide", parts.class())>
-            <div class="label">
-                <span>{label}</span>
-                {when(move || parts.state.get() == State::Assumed, move || view! { <span class="tag">"assumed"</span> }.into_any())}
-            </div>
-            <div
-                class="pick"
-                id=parts.id()
-                role="radiogroup"
-                aria-label=name
-                aria-describedby=derived(move || parts.described_by())
-            >
-                {choices
-                    .iter()
-                    .map(|(key, words)| {
-                        let stands_in = move || {
-                            (text().is_empty() && stand_in.get() == Some(*key)).then_some("")
-                        };
-                        view! {
-                            <label data-assumed=stands_in>
-                                <input
-                                    type="radio"
-                                    name=format!("{}-pick", parts.id())
-                                    prop:checked=derived(move || text() == *key)
-                                    on:change=move |_| choose((*key).to_owned())
-                                />
-                                {*words}
-                            </label>
-                        }.into_any()
-                    })
-                    .collect_view()}
             </div>
             {parts.foot()}
         </div>

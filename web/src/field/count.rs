@@ -3,42 +3,21 @@
 use std::time::Duration;
 
 use crate::derived::derived;
-use engine::field::{Field, Takes};
+use crate::piece::{Piece, view};
+use engine::field::Takes;
 use engine::unit::Unit;
 use leptos::prelude::*;
 
-use super::{Parts, Said, StandIn};
+use super::{FieldOf, Parts};
 use crate::pads::Edit;
-use crate::tools::Tool;
 
 /// How long a step button is held before it repeats, and how fast it does. Chosen by hand.
 const HOLD: Duration = Duration::from_millis(400);
 const REPEAT: Duration = Duration::from_millis(90);
 
 /// A field that takes a whole number. Holding minus or plus repeats.
-#[component]
-pub fn CountField(
-    /// The tool it stands in.
-    tool: Tool,
-    /// The input.
-    field: Field,
-    /// The word above it, where it is shorter than the field's name. Contained in that name.
-    #[prop(optional)]
-    label: Option<&'static str>,
-    /// What it is a figure of, where a page has the same input twice. Goes before its name.
-    #[prop(optional)]
-    of: Option<&'static str>,
-    /// What stands in while it is blank.
-    #[prop(into, optional)]
-    assumed: Signal<Option<StandIn>>,
-    /// What waits for it, while it is blank.
-    #[prop(into, optional)]
-    asks: Signal<Option<String>>,
-    /// What else is said under it.
-    #[prop(into, optional)]
-    note: Signal<Option<String>>,
-) -> impl IntoView {
-    let said = Said { assumed, asks, note };
+pub fn count_field(of: FieldOf) -> Piece {
+    let FieldOf { tool, field, said, .. } = of;
     let parts = Parts::new((tool, field), said, move |typed| field.read(&typed.text, typed.unit));
     let (least, most) = match field.takes() {
         Takes::Whole { least, most } => (f64::from(least), f64::from(most)),
@@ -61,13 +40,13 @@ pub fn CountField(
     };
     view! {
         <div class=move || parts.class()>
-            {parts.head(label.unwrap_or(field.name()))}
+            {parts.head(of.label())}
             <div class="field-box count">
-                <StepButton name=format!("{}: one fewer", super::full_name(of, field)) sign="−" step=Callback::new(move |()| step(-1.0))/>
+                {step_button(format!("{}: one fewer", of.name()), "−", Callback::new(move |()| step(-1.0)))}
                 <input
                     id=parts.id()
                     type="text"
-                    aria-label=super::full_name(of, field)
+                    aria-label=of.name()
                     inputmode="numeric"
                     autocomplete="off"
                     placeholder=derived(move || stand_in().map(|number| number.to_string()))
@@ -92,7 +71,7 @@ pub fn CountField(
                         parts.draft.leave();
                     }
                 />
-                <StepButton name=format!("{}: one more", super::full_name(of, field)) sign="+" step=Callback::new(move |()| step(1.0))/>
+                {step_button(format!("{}: one more", of.name()), "+", Callback::new(move |()| step(1.0)))}
             </div>
             {parts.foot()}
         </div>
@@ -100,8 +79,7 @@ pub fn CountField(
 }
 
 /// Minus or plus. A press steps once when it is let go; held, it repeats until it is.
-#[component]
-fn StepButton(name: String, sign: &'static str, step: Callback<()>) -> impl IntoView {
+fn step_button(name: String, sign: &'static str, step: Callback<()>) -> Piece {
     let pressed = StoredValue::new(0_u32);
     let repeated = StoredValue::new(false);
     // A press is told from the one before by its number, so that a timer of an earlier one does nothing.

@@ -1,5 +1,6 @@
 //! A field that takes several numbers, typed or pasted.
 
+use crate::piece::{IntoPiece, Piece, view};
 use engine::field::Field;
 use leptos::prelude::*;
 
@@ -9,7 +10,7 @@ use crate::pads::Edit;
 use crate::tools::Tool;
 
 /// A field that takes several numbers, one after the other. What is not understood is named by its place.
-pub fn list_field(tool: Tool, field: Field, label: &'static str) -> AnyView {
+pub fn list_field(tool: Tool, field: Field, label: &'static str) -> Piece {
     let none = || derived(|| None);
     let wrong = derived(move || {
         let text = crate::draft::use_draft().typed((tool, field)).get().text;
@@ -33,8 +34,7 @@ pub fn list_field(tool: Tool, field: Field, label: &'static str) -> AnyView {
                     on:blur=move |_| parts.draft.leave()
                 ></textarea>
             </div>
-            {dynamic(move || wrong.get().map(|words| view! { <p class="field-note" id=format!("{}-note", parts.id())>{words}</p> }.into_any()).into_any())}
+            {dynamic(move || wrong.get().map(|words| view! { <p class="field-note" id=format!("{}-note", parts.id())>{words}</p> }).piece())}
         </div>
     }
-    .into_any()
 }

@@ -8,16 +8,14 @@ mod list;
 mod number;
 mod units;
 
-pub use choice::{ChoiceField, Shape};
-pub use count::CountField;
 pub use list::list_field;
-pub use number::NumberField;
 
 use std::time::Duration;
 
 use crate::derived::{dynamic, memo, when};
+use crate::piece::{IntoPiece, Piece, view};
 use engine::check::Assumption;
-use engine::field::Field;
+use engine::field::{Field, Takes};
 use engine::quantity::Amount;
 use engine::typed::{Reading, Refusal};
 use engine::unit::Unit;
@@ -26,6 +24,7 @@ use leptos::prelude::*;
 
 use crate::draft::Draft;
 use crate::pads::{PAUSE, Place, Typed};
+use crate::tools::Tool;
 use crate::working;
 
 /// What stands in for a blank field.
@@ -101,11 +100,61 @@ struct Parts {
 }
 
 /// What may be said beside a field.
+#[derive(Clone, Copy, Default)]
+pub struct Said {
+    /// What stands in while it is blank.
+    pub assumed: Signal<Option<StandIn>>,
+    /// What waits for it, while it is blank.
+    pub asks: Signal<Option<String>>,
+    /// What else is said under it.
+    pub note: Signal<Option<String>>,
+}
+
+/// A field, where it stands and what is said of it.
 #[derive(Clone, Copy)]
-struct Said {
-    assumed: Signal<Option<StandIn>>,
-    asks: Signal<Option<String>>,
-    note: Signal<Option<String>>,
+pub struct FieldOf {
+    /// The tool it stands in.
+    pub tool: Tool,
+    /// The input.
+    pub field: Field,
+    /// The word above it, where it is shorter than the field's name. Contained in that name.
+    pub label: Option<&'static str>,
+    /// What it is a figure of, where a page has the same input twice. Goes before its name.
+    pub of: Option<&'static str>,
+    /// What is said beside it.
+    pub said: Said,
+}
+
+impl FieldOf {
+    /// By its own name, with nothing said.
+    pub fn new(tool: Tool, field: Field) -> Self {
+        Self { tool, field, label: None, of: None, said: Said::default() }
+    }
+
+    /// With this word above it.
+    #[must_use]
+    pub fn called(self, label: &'static str) -> Self {
+        Self { label: Some(label), ..self }
+    }
+
+    /// The field for what it takes.
+    pub fn shown(self) -> Piece {
+        match self.field.takes() {
+            Takes::Number { .. } => number::number_field(self),
+            Takes::Whole { .. } => count::count_field(self),
+            Takes::Choice(_) => choice::choice_field(self),
+            Takes::List { .. } => list_field(self.tool, self.field, self.label()),
+        }
+    }
+
+    fn label(self) -> &'static str {
+        self.label.unwrap_or(self.field.name())
+    }
+
+    /// Its accessible name.
+    fn name(self) -> String {
+        self.of.map_or_else(|| self.field.name().to_owned(), |of| format!("{of}: {}", self.field.name()))
+    }
 }
 
 /// Half-typed entries are not scolded: only a pause or leaving the field turns one to "not understood".
@@ -216,7 +265,7 @@ impl Parts {
     }
 
     /// The word above the box, and "assumed" beside it where something stands in.
-    fn head(self, label: &'static str) -> AnyView {
+    fn head(self, label: &'static str) -> Piece {
         let focus = move |_| {
             self.told.update(|told| *told = !*told);
             focus(&self.id());
@@ -231,23 +280,16 @@ impl Parts {
                         on:click=focus
                     >
                         "assumed"
-                    </button> }.into_any())}
+                    </button> })}
             </div>
         }
-        .into_any()
     }
 
-    fn foot(self) -> AnyView {
+    fn foot(self) -> Piece {
         view! {
-            {dynamic(move || self.note.get().map(|note| view! { <p class="field-note" id=format!("{}-note", self.id())>{note}</p> }.into_any()).into_any())}
+            {dynamic(move || self.note.get().map(|note| view! { <p class="field-note" id=format!("{}-note", self.id())>{note}</p> }).piece())}
         }
-        .into_any()
     }
-}
-
-/// The accessible name of a field.
-fn full_name(of: Option<&'static str>, field: Field) -> String {
-    of.map_or_else(|| field.name().to_owned(), |of| format!("{of}: {}", field.name()))
 }
 
 /// Puts the caret into a field.

@@ -1,40 +1,19 @@
 //! A field that takes a number with a unit.
 
 use crate::derived::{derived, when};
+use crate::piece::{Piece, view};
 use engine::field::{Field, Takes};
 use engine::show;
 use engine::unit::Dimension;
 use leptos::prelude::*;
 
-use super::units::{UnitChip, UnitList, unit};
-use super::{Parts, Said, StandIn};
+use super::units::{unit, unit_chip, unit_list};
+use super::{FieldOf, Parts};
 use crate::pads::Edit;
-use crate::tools::Tool;
 
 /// A field that takes a number with a unit.
-#[component]
-pub fn NumberField(
-    /// The tool it stands in.
-    tool: Tool,
-    /// The input.
-    field: Field,
-    /// The word above it, where it is shorter than the field's name. Contained in that name.
-    #[prop(optional)]
-    label: Option<&'static str>,
-    /// What it is a figure of, where a page has the same input twice. Goes before its name.
-    #[prop(optional)]
-    of: Option<&'static str>,
-    /// What stands in while it is blank.
-    #[prop(into, optional)]
-    assumed: Signal<Option<StandIn>>,
-    /// What waits for it, while it is blank.
-    #[prop(into, optional)]
-    asks: Signal<Option<String>>,
-    /// What else is said under it.
-    #[prop(into, optional)]
-    note: Signal<Option<String>>,
-) -> impl IntoView {
-    let said = Said { assumed, asks, note };
+pub fn number_field(of: FieldOf) -> Piece {
+    let FieldOf { tool, field, said, .. } = of;
     let parts = Parts::new((tool, field), said, move |typed| field.read(&typed.text, typed.unit));
     let open = RwSignal::new(false);
     let usual = match field.takes() {
@@ -44,12 +23,12 @@ pub fn NumberField(
     let stand_in = move || parts.stand_in(said, unit(parts, usual)).map(|number| show::number(number, 6));
     view! {
         <div class=move || parts.class()>
-            {parts.head(label.unwrap_or(field.name()))}
+            {parts.head(of.label())}
             <div class="field-box">
                 <input
                     id=parts.id()
                     type="text"
-                    aria-label=super::full_name(of, field)
+                    aria-label=of.name()
                     inputmode=keypad(field)
                     autocomplete="off"
                     autocapitalize="off"
@@ -67,10 +46,10 @@ pub fn NumberField(
                         parts.draft.leave();
                     }
                 />
-                <UnitChip parts=parts usual=usual open=open/>
+                {unit_chip(parts, usual, open)}
             </div>
             {parts.foot()}
-            {when(move || open.get(), move || view! { <UnitList parts=parts usual=usual open=open/> }.into_any())}
+            {when(move || open.get(), move || unit_list(parts, usual, open))}
         </div>
     }
 }

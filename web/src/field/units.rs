@@ -1,6 +1,7 @@
 //! The unit chip: the unit that counts, and the plain list of the others.
 
 use crate::derived::derived;
+use crate::piece::{Piece, view};
 use engine::unit::Unit;
 use leptos::ev::{FocusEvent, KeyboardEvent};
 use leptos::prelude::*;
@@ -16,11 +17,10 @@ pub fn unit(parts: Parts, usual: Unit) -> Unit {
 }
 
 /// The chip at the right of the box. A button only where there is another unit.
-#[component]
-pub fn UnitChip(parts: Parts, usual: Unit, open: RwSignal<bool>) -> impl IntoView {
+pub fn unit_chip(parts: Parts, usual: Unit, open: RwSignal<bool>) -> Piece {
     let symbol = move || unit(parts, usual).symbol();
     if parts.field().units().len() < 2 {
-        return view! { <span class="unit fixed">{symbol}</span> }.into_any();
+        return view! { <span class="unit fixed">{symbol}</span> };
     }
     view! {
         <button
@@ -34,12 +34,10 @@ pub fn UnitChip(parts: Parts, usual: Unit, open: RwSignal<bool>) -> impl IntoVie
             {symbol}
         </button>
     }
-    .into_any()
 }
 
 /// The list that the chip opens. Escape, a choice, or going elsewhere closes it.
-#[component]
-pub fn UnitList(parts: Parts, usual: Unit, open: RwSignal<bool>) -> impl IntoView {
+pub fn unit_list(parts: Parts, usual: Unit, open: RwSignal<bool>) -> Piece {
     let close = move || {
         open.set(false);
         super::focus(&format!("{}-unit", parts.id()));
@@ -92,9 +90,9 @@ pub fn UnitList(parts: Parts, usual: Unit, open: RwSignal<bool>) -> impl IntoVie
                         <button type="button" aria-pressed=move || chosen(other) on:click=move |_| choose(other)>
                             {other.symbol()}
                         </button>
-                    }.into_any()
+                    }
                 })
-                .collect_view()}
+                .collect::<Vec<Piece>>()}
         </div>
     }
 }

@@ -5,6 +5,7 @@ mod part;
 mod rows;
 mod what_if;
 
+use crate::piece::{IntoPiece, Piece, view};
 use engine::check::Verdict;
 use engine::show;
 use engine::site::{Assessment, PartId, PartKind, Place, Site, SiteCheck, Subject, assess, place_name};
@@ -14,7 +15,7 @@ use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::use_draft;
 use crate::pads::{Edit, SiteEdit};
 use crate::route::Route;
-use crate::verdict::{CostMark, VerdictMark, tells_cost};
+use crate::verdict::{cost_mark, tells_cost, verdict_mark};
 
 pub use new_site::kept as kept_sites;
 pub use part::title;
@@ -31,28 +32,25 @@ pub fn assessed(site: Memo<Option<Site>>) -> Memo<Assessment> {
 }
 
 /// The Line view. `subject` is the part that is opened beside it.
-pub fn line_view(subject: Option<Subject>) -> AnyView {
+pub fn line_view(subject: Option<Subject>) -> Piece {
     let site = open_site();
     let has = memo(move || site.with(Option::is_some));
     let column = dynamic(move || if has.get() { column(site, subject) } else { new_site::new_site() });
     let opened = subject.map(|subject| {
-        when(
-            move || has.get(),
-            move || view! { <div class="site-part">{part::part_page(subject, site)}</div> }.into_any(),
-        )
+        when(move || has.get(), move || view! { <div class="site-part">{part::part_page(subject, site)}</div> })
     });
-    view! { <div class="site-view" data-open=subject.map(|_| "")>{column}{opened}</div> }.into_any()
+    view! { <div class="site-view" data-open=subject.map(|_| "")>{column}{opened}</div> }
 }
 
-fn column(site: Memo<Option<Site>>, subject: Option<Subject>) -> AnyView {
+fn column(site: Memo<Option<Site>>, subject: Option<Subject>) -> Piece {
     let draft = use_draft();
     let found = assessed(site);
     let name = derived(move || site.with(|site| site.as_ref().map(|site| site.name.clone()).unwrap_or_default()));
     let rows = dynamic(move || {
         site.with(|site| {
             found.with(|found| match site {
-                Some(site) => rows::rows(site, found, subject).into_any(),
-                None => ().into_any(),
+                Some(site) => rows::rows(site, found, subject).piece(),
+                None => Piece::Nothing,
             })
         })
     });
@@ -71,7 +69,7 @@ fn column(site: Memo<Option<Site>>, subject: Option<Subject>) -> AnyView {
                     on:blur=move |_| draft.leave()
                 />
             </div>
-            {dynamic(move || site.with(|site| found.with(|found| site.as_ref().map_or_else(|| ().into_any(), |site| worst(site, found)))))}
+            {dynamic(move || site.with(|site| found.with(|found| site.as_ref().map_or_else(|| Piece::Nothing, |site| worst(site, found)))))}
             {what_if::what_if(site)}
             <ol class="line" aria-label="The line, from sun to socket">{rows}</ol>
             {adding()}
@@ -83,33 +81,31 @@ fn column(site: Memo<Option<Site>>, subject: Option<Subject>) -> AnyView {
             </div>
         </div>
     }
-    .into_any()
 }
 
 /// The worst check of the site in one sentence, and how many there are of each verdict.
-fn worst(site: &Site, found: &Assessment) -> AnyView {
-    let Some(one) = found.worst() else { return ().into_any() };
+fn worst(site: &Site, found: &Assessment) -> Piece {
+    let Some(one) = found.worst() else { return Piece::Nothing };
     let check = &one.check;
-    let tally: Vec<AnyView> = [Verdict::Breaks, Verdict::Asks, Verdict::Close, Verdict::Clears]
+    let tally: Vec<Piece> = [Verdict::Breaks, Verdict::Asks, Verdict::Close, Verdict::Clears]
         .into_iter()
         .filter_map(|verdict| {
             let count = found.count(verdict);
             (count > 0).then(|| {
-                view! { <span data-v=verdict.word()>{format!("{count} {}", verdict.word())}</span> }.into_any()
+                view! { <span data-v=verdict.word()>{format!("{count} {}", verdict.word())}</span> }
             })
         })
         .collect();
     view! {
         <section class="worst" aria-label="The worst check">
             <p class="worst-tag">
-                <VerdictMark verdict=check.verdict big=true/>
-                {tells_cost(check.verdict).then(|| view! { <CostMark cost=check.cost/> }.into_any())}
+                {verdict_mark(check.verdict, true)}
+                {tells_cost(check.verdict).then(|| view! { {cost_mark(check.cost)} })}
             </p>
             <p class="worst-say">{sentence(site, one)}</p>
             <p class="tally">{tally} <a href=Route::Checks.href()>"All checks"</a></p>
         </section>
     }
-    .into_any()
 }
 
 /// A check in one sentence.
@@ -138,7 +134,7 @@ pub fn sentence(site: &Site, one: &SiteCheck) -> String {
 }
 
 /// A part more, of any kind.
-fn adding() -> AnyView {
+fn adding() -> Piece {
     let draft = use_draft();
     let open = RwSignal::new(false);
     let kinds = move || {
@@ -147,9 +143,9 @@ fn adding() -> AnyView {
                 draft.edit(Edit::Site(SiteEdit::Add(kind)));
                 open.set(false);
             };
-            view! { <button class="btn small" type="button" on:click=add>{kind.kind().name}</button> }.into_any()
+            view! { <button class="btn small" type="button" on:click=add>{kind.kind().name}</button> }
         };
-        PartKind::ALL.into_iter().map(one).collect::<Vec<AnyView>>()
+        PartKind::ALL.into_iter().map(one).collect::<Vec<Piece>>()
     };
     view! {
         <div class="btns">
@@ -162,9 +158,8 @@ fn adding() -> AnyView {
                 "Add a part"
             </button>
         </div>
-        {when(move || open.get(), move || view! { <div class="btns">{kinds()}</div> }.into_any())}
+        {when(move || open.get(), move || view! { <div class="btns">{kinds()}</div> })}
     }
-    .into_any()
 }
 
 /// The link to where a check belongs.

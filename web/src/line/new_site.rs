@@ -1,5 +1,6 @@
 //! No site is open: six taps make one, or a kept one or a demonstration is opened.
 
+use crate::piece::{IntoPiece, Piece, view};
 use engine::chemistry::Chemistry;
 use engine::choice::Choice;
 use engine::family::CodeFamily;
@@ -53,13 +54,13 @@ fn made(answers: &[&str]) -> Option<Got> {
 }
 
 /// The page with no site open.
-pub fn new_site() -> AnyView {
+pub fn new_site() -> Piece {
     let draft = use_draft();
     let answers = RwSignal::new(Vec::<&'static str>::new());
     let question = dynamic(move || {
         let at = answers.with(Vec::len);
-        let Some((words, choices)) = QUESTIONS.get(at) else { return ().into_any() };
-        let buttons: Vec<AnyView> = choices
+        let Some((words, choices)) = QUESTIONS.get(at) else { return Piece::Nothing };
+        let buttons: Vec<Piece> = choices
             .iter()
             .map(|(key, label)| {
                 let take = move |_| {
@@ -70,7 +71,7 @@ pub fn new_site() -> AnyView {
                         draft.edit(Edit::Site(SiteEdit::Open(OpenSite { key, site: start(got) })));
                     }
                 };
-                view! { <button class="btn" type="button" on:click=take>{*label}</button> }.into_any()
+                view! { <button class="btn" type="button" on:click=take>{*label}</button> }
             })
             .collect();
         view! {
@@ -78,9 +79,8 @@ pub fn new_site() -> AnyView {
             <p class="six-q">{*words}</p>
             <div class="btns six">{buttons}</div>
         }
-        .into_any()
     });
-    let demos: Vec<AnyView> = bridge::demo::names()
+    let demos: Vec<Piece> = bridge::demo::names()
         .into_iter()
         .map(|name| {
             let open = move |_| {
@@ -89,7 +89,7 @@ pub fn new_site() -> AnyView {
                     draft.edit(Edit::Site(SiteEdit::Open(OpenSite { key, site })));
                 }
             };
-            view! { <button class="btn small" type="button" on:click=open>{name}</button> }.into_any()
+            view! { <button class="btn small" type="button" on:click=open>{name}</button> }
         })
         .collect();
     view! {
@@ -109,7 +109,7 @@ pub fn new_site() -> AnyView {
                                 "One back"
                             </button>
                         </div>
-                    }.into_any()
+                    }
                 })}
             </section>
             {kept()}
@@ -117,11 +117,10 @@ pub fn new_site() -> AnyView {
             <div class="btns">{demos}</div>
         </div>
     }
-    .into_any()
 }
 
 /// The sites on this phone.
-pub fn kept() -> AnyView {
+pub fn kept() -> Piece {
     let draft = use_draft();
     let sites = draft.keeper().sites();
     when(
@@ -142,16 +141,15 @@ pub fn kept() -> AnyView {
                                 }
                             });
                         };
-                        view! { <li><button class="btn" type="button" on:click=open>{name}</button></li> }.into_any()
+                        view! { <li><button class="btn" type="button" on:click=open>{name}</button></li> }
                     })
-                    .collect::<Vec<AnyView>>()
-                    .into_any()
+                    .collect::<Vec<Piece>>()
+                    .piece()
             });
             view! {
                 <h2 class="sub">"On this phone" <span>{derived(move || format!("{} kept", sites.with(Vec::len)))}</span></h2>
                 <ul class="kept-sites">{rows}</ul>
             }
-            .into_any()
         },
     )
 }

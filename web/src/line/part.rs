@@ -2,6 +2,7 @@
 
 use std::sync::Arc;
 
+use crate::piece::{Piece, view};
 use engine::field::Field;
 use engine::site::{PartId, PartKind, Place, Site, Subject, place_name, working};
 use leptos::prelude::*;
@@ -92,7 +93,7 @@ const CAUTIONS: &[&str] = &[
 ];
 
 /// The page of a part, a run, or the place.
-pub fn part_page(subject: Subject, site: Memo<Option<Site>>) -> AnyView {
+pub fn part_page(subject: Subject, site: Memo<Option<Site>>) -> Piece {
     let kind = site.with_untracked(|site| site.as_ref().and_then(|site| kind(site, subject)));
     let there = matches!(subject, Subject::Place) || kind.is_some();
     if !there {
@@ -101,8 +102,7 @@ pub fn part_page(subject: Subject, site: Memo<Option<Site>>) -> AnyView {
                 <h1 tabindex="-1">"No such part"</h1>
                 <a class="aside" href=Route::Line.href()>"Line"</a>
             </div>
-        }
-        .into_any();
+        };
     }
     let tool = match (subject, kind) {
         (Subject::Run(_), _) => Some(Tool::Run),
@@ -132,17 +132,15 @@ pub fn part_page(subject: Subject, site: Memo<Option<Site>>) -> AnyView {
     let inside = match tool {
         Some(tool) => view! {
             {tool.page()}
-            {(!fields.is_empty()).then(|| view! { <div class="fields">{fields}</div> }.into_any())}
-        }
-        .into_any(),
+            {(!fields.is_empty()).then(|| view! { <div class="fields">{fields}</div> })}
+        },
         None => view! {
             <div class="page-head">
                 <h1 tabindex="-1">{derived(move || title(site, subject))}</h1>
                 <a class="aside" href=Route::Line.href()>"Line"</a>
             </div>
             <div class="fields">{fields}</div>
-        }
-        .into_any(),
+        },
     };
     let checks = (tool.is_none() || !own.first.is_empty()).then(|| checks(subject, site, tool.is_some()));
     view! {
@@ -151,7 +149,6 @@ pub fn part_page(subject: Subject, site: Memo<Option<Site>>) -> AnyView {
         {acts(subject)}
         {tool.is_none().then(|| caution(CAUTIONS))}
     }
-    .into_any()
 }
 
 fn kind(site: &Site, subject: Subject) -> Option<PartKind> {
@@ -177,7 +174,7 @@ const fn place(subject: Subject) -> Place {
 }
 
 /// The checks at one place: all of them, or those that its tool does not show.
-fn checks(subject: Subject, site: Memo<Option<Site>>, of_site_only: bool) -> AnyView {
+fn checks(subject: Subject, site: Memo<Option<Site>>, of_site_only: bool) -> Piece {
     let found = assessed(site);
     let nowhere = Callback::new(|_: Field| ());
     let at = place(subject);
@@ -202,8 +199,8 @@ fn checks(subject: Subject, site: Memo<Option<Site>>, of_site_only: bool) -> Any
 }
 
 /// Name, double, remove.
-fn acts(subject: Subject) -> AnyView {
-    let Subject::Part(id) = subject else { return ().into_any() };
+fn acts(subject: Subject) -> Piece {
+    let Subject::Part(id) = subject else { return Piece::Nothing };
     let draft = use_draft();
     let name = derived(move || {
         draft.with(|pads| {
@@ -242,11 +239,10 @@ fn acts(subject: Subject) -> AnyView {
             </div>
         </div>
     }
-    .into_any()
 }
 
 /// What it is joined to, where there is a choice.
-fn joins(id: PartId) -> AnyView {
+fn joins(id: PartId) -> Piece {
     let draft = use_draft();
     let choices = draft.with(|pads| {
         let site = &pads.site()?.site;
@@ -260,8 +256,8 @@ fn joins(id: PartId) -> AnyView {
             .collect();
         (all.len() > 1 || all.iter().any(|one| !one.2)).then_some(all)
     });
-    let Some(choices) = choices else { return ().into_any() };
-    let buttons: Vec<AnyView> = choices
+    let Some(choices) = choices else { return Piece::Nothing };
+    let buttons: Vec<Piece> = choices
         .into_iter()
         .map(|(to, name, now)| {
             view! {
@@ -274,8 +270,7 @@ fn joins(id: PartId) -> AnyView {
                     {name}
                 </button>
             }
-            .into_any()
         })
         .collect();
-    view! { <p class="sub">"Joined to"</p><div class="btns">{buttons}</div> }.into_any()
+    view! { <p class="sub">"Joined to"</p><div class="btns">{buttons}</div> }
 }

@@ -1,5 +1,6 @@
 //! The rows of the line: parts and the runs between them, in the order of the conductor.
 
+use crate::piece::{Piece, view};
 use engine::choice::words;
 use engine::field::Field;
 use engine::pad::Pad;
@@ -7,14 +8,13 @@ use engine::quantity::{Count, Quantity};
 use engine::run;
 use engine::show;
 use engine::site::{Assessment, Part, PartId, PartKind, Place, Site, Subject, run_ask};
-use leptos::prelude::*;
 
 use super::link;
 use crate::check_row::bar;
 use crate::form::as_entered;
-use crate::icon::Icon;
+use crate::icon::icon;
 use crate::span_bar::slim_bar;
-use crate::verdict::VerdictMark;
+use crate::verdict::verdict_mark;
 
 /// One row of the line.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -78,15 +78,14 @@ pub fn row_of(site: &Site) -> Vec<Row> {
 }
 
 /// The rows, drawn.
-pub fn rows(site: &Site, found: &Assessment, open: Option<Subject>) -> Vec<AnyView> {
+pub fn rows(site: &Site, found: &Assessment, open: Option<Subject>) -> Vec<Piece> {
     let sun = site.first(PartKind::Array).is_some().then(|| {
         view! {
             <li>
-                <div class="rail"><i class="wire lower"></i><span class="node"><Icon class="sym" name="s-sun"/></span></div>
+                <div class="rail"><i class="wire lower"></i><span class="node">{icon("s-sun", "sym")}</span></div>
                 <p class="end-cap">"sun"</p>
             </li>
         }
-        .into_any()
     });
     let rest = row_of(site).into_iter().filter_map(|row| match row {
         Row::Part(id) => site.part(id).map(|part| part_row(site, part, found, open)),
@@ -117,39 +116,36 @@ const fn symbol(kind: PartKind) -> &'static str {
     }
 }
 
-fn part_row(site: &Site, part: &Part, found: &Assessment, open: Option<Subject>) -> AnyView {
+fn part_row(site: &Site, part: &Part, found: &Assessment, open: Option<Subject>) -> Piece {
     let place = Place::Part(part.id);
     if part.kind == PartKind::Bus {
         let volts = bus_volts(site).map_or_else(String::new, |volts| format!("{volts} d.c."));
         return view! {
             <li class="bus"><a class="bus-strip" href=link(place).href()>{part.title().to_owned()} " " <span>{volts}</span></a></li>
-        }
-        .into_any();
+        };
     }
     let worst = found.worst_at(place).map(|one| one.check);
     let is_open = open == Some(Subject::Part(part.id));
     let wide = width(site, part);
-    let typical =
-        part.typical.then(|| view! { <span class="typical">"typical: read your nameplate"</span> }.into_any());
+    let typical = part.typical.then(|| view! { <span class="typical">"typical: read your nameplate"</span> });
     let torn = worst.is_some_and(|check| check.verdict == engine::check::Verdict::Breaks);
     view! {
         <li class:is-open=is_open class:hangs=hangs(site, part)>
             <div class="rail">
                 <i class="wire" style=("--w", wide)></i>
-                {torn.then(|| view! { <i class="tear"></i> }.into_any())}
-                <span class="node"><Icon class="sym" name=symbol(part.kind)/></span>
+                {torn.then(|| view! { <i class="tear"></i> })}
+                <span class="node">{icon(symbol(part.kind), "sym")}</span>
             </div>
             <div class="part">
                 <div class="part-head">
                     <h2 class="part-name"><a href=link(place).href() aria-current=is_open.then_some("true")>{part.title().to_owned()}</a></h2>
-                    {worst.map(|check| view! { <VerdictMark verdict=check.verdict/> }.into_any())}
+                    {worst.map(|check| view! { {verdict_mark(check.verdict, false)} })}
                 </div>
                 <p class="part-key">{key(site, part)} " " {typical}</p>
                 {worst.and_then(|check| bar(check.id.name(), &check)).map(slim_bar)}
             </div>
         </li>
     }
-    .into_any()
 }
 
 /// Whether a part hangs on one that hangs on the bus.
@@ -158,7 +154,7 @@ fn hangs(site: &Site, part: &Part) -> bool {
     joined.is_some_and(|to| matches!(to.kind, PartKind::Inverter | PartKind::DcPanel | PartKind::AcPanel))
 }
 
-fn run_row(site: &Site, part: &Part, found: &Assessment, open: Option<Subject>) -> AnyView {
+fn run_row(site: &Site, part: &Part, found: &Assessment, open: Option<Subject>) -> Piece {
     let place = Place::Run(part.id);
     let worst = found.worst_at(place).map(|one| one.check);
     let to = part.to.and_then(|to| site.part(to)).map_or("nothing yet", Part::title).to_owned();
@@ -174,18 +170,17 @@ fn run_row(site: &Site, part: &Part, found: &Assessment, open: Option<Subject>) 
         <li class:is-open=is_open class:hangs=hangs(site, part)>
             <div class="rail">
                 <i class="wire" style=("--w", width(site, part))></i>
-                <span class="node sz30"><Icon class="sym" name=if fuse { "s-fuse" } else { "s-breaker" }/></span>
+                <span class="node sz30">{icon(if fuse { "s-fuse" } else { "s-breaker" }, "sym")}</span>
             </div>
             <div class="run">
                 <div class="run-head">
                     <h3 class="run-name"><a href=link(place).href() aria-current=is_open.then_some("true")>{name}</a></h3>
-                    {worst.map(|check| view! { <VerdictMark verdict=check.verdict/> }.into_any())}
+                    {worst.map(|check| view! { {verdict_mark(check.verdict, false)} })}
                 </div>
                 <p class="run-key">{run_key(site, part)}</p>
             </div>
         </li>
     }
-    .into_any()
 }
 
 /// "35 mm², 1.5 m, breaker 100 A".

@@ -1,5 +1,6 @@
 //! What if this opens? One breaker, fuse, protection or bond set open, until it is closed again. Never kept, never printed.
 
+use crate::piece::{IntoPiece, Piece, view};
 use engine::quantity::Quantity;
 use engine::show;
 use engine::site::what_if::{Effect, Meaning, NotTold, Opens, Sun, openable, what_if as solve};
@@ -7,20 +8,18 @@ use engine::site::{Place, Site, place_name};
 use leptos::prelude::*;
 
 use crate::derived::{derived, dynamic};
-use crate::fold::Fold;
+use crate::fold::fold;
 use crate::form::names;
-use crate::verdict::CostMark;
+use crate::verdict::cost_mark;
 
 /// The question, and its answer while one is open.
-pub fn what_if(site: Memo<Option<Site>>) -> AnyView {
+pub fn what_if(site: Memo<Option<Site>>) -> Piece {
     let open = RwSignal::new(None::<Opens>);
     let choices = move || {
-        dynamic(move || {
-            site.with(|site| site.as_ref().map_or_else(|| ().into_any(), |site| list(site, open).into_any()))
-        })
+        dynamic(move || site.with(|site| site.as_ref().map_or_else(|| Piece::Nothing, |site| list(site, open).piece())))
     };
     let answer = dynamic(move || {
-        let (Some(opens), Some(site)) = (open.get(), site.get()) else { return ().into_any() };
+        let (Some(opens), Some(site)) = (open.get(), site.get()) else { return Piece::Nothing };
         view! {
             <div class="whatif" role="status">
                 <p><b>{format!("{} is open.", name(&site, opens))}</b></p>
@@ -30,15 +29,12 @@ pub fn what_if(site: Memo<Option<Site>>) -> AnyView {
                 </div>
             </div>
         }
-        .into_any()
     });
     view! {
         {answer}
-        <Fold id="line/what-if" title="What if this opens?" says=derived(|| "breaker, fuse, protection, bond".to_owned())>
-            <div class="btns">{choices()}</div>
-        </Fold>
+        {fold("line/what-if", "What if this opens?", derived(|| "breaker, fuse, protection, bond".to_owned()), move || view! {             <div class="btns">{choices()}</div>
+         })}
     }
-    .into_any()
 }
 
 fn name(site: &Site, opens: Opens) -> String {
@@ -49,19 +45,18 @@ fn name(site: &Site, opens: Opens) -> String {
     }
 }
 
-fn list(site: &Site, open: RwSignal<Option<Opens>>) -> Vec<AnyView> {
+fn list(site: &Site, open: RwSignal<Option<Opens>>) -> Vec<Piece> {
     let button = |opens: Opens| {
         view! {
             <button class="btn small" type="button" on:click=move |_| open.set(Some(opens))>{name(site, opens)}</button>
         }
-        .into_any()
     };
     openable(site).into_iter().map(button).collect()
 }
 
-fn told(site: &Site, opens: Opens) -> AnyView {
+fn told(site: &Site, opens: Opens) -> Piece {
     let scenes = if opens == Opens::Bond { vec![Sun::Full] } else { vec![Sun::Full, Sun::None] };
-    let scenes: Vec<AnyView> = scenes
+    let scenes: Vec<Piece> = scenes
         .into_iter()
         .map(|sun| {
             let head = match (opens, sun) {
@@ -76,18 +71,18 @@ fn told(site: &Site, opens: Opens) -> AnyView {
                         all.insert(field);
                         all
                     });
-                    view! { <p>{format!("Waits for {}.", names(fields))}</p> }.into_any()
+                    view! { <p>{format!("Waits for {}.", names(fields))}</p> }
                 }
-                Err(_) => view! { <p>"No answer: the circuit cannot be solved."</p> }.into_any(),
+                Err(_) => view! { <p>"No answer: the circuit cannot be solved."</p> },
             };
-            view! { <p class="sub">{head}</p>{body} }.into_any()
+            view! { <p class="sub">{head}</p>{body} }
         })
         .collect();
-    scenes.into_any()
+    scenes.piece()
 }
 
-fn effects(site: &Site, effects: &[Effect]) -> AnyView {
-    let rows: Vec<AnyView> = effects
+fn effects(site: &Site, effects: &[Effect]) -> Piece {
+    let rows: Vec<Piece> = effects
         .iter()
         .filter(|one| one.meaning != Meaning::AsBefore)
         .map(|one| {
@@ -99,16 +94,15 @@ fn effects(site: &Site, effects: &[Effect]) -> AnyView {
                     ": "
                     {words(one)}
                     " "
-                    {cost.map(|cost| view! { <CostMark cost=cost/> }.into_any())}
+                    {cost.map(|cost| view! { {cost_mark(cost)} })}
                 </li>
             }
-            .into_any()
         })
         .collect();
     if rows.is_empty() {
-        return view! { <p>"Everything else goes on as before."</p> }.into_any();
+        return view! { <p>"Everything else goes on as before."</p> };
     }
-    view! { <ul class="notes">{rows}</ul> }.into_any()
+    view! { <ul class="notes">{rows}</ul> }
 }
 
 /// What a part then sees, in words.

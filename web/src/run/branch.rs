@@ -1,5 +1,6 @@
 //! Loads along one cable, as lights down a corridor: the volts at each.
 
+use crate::piece::{Piece, view};
 use engine::check::Verdict;
 use engine::field::Field;
 use engine::pad::Pad;
@@ -12,34 +13,32 @@ use leptos::prelude::*;
 use super::TOOL;
 use crate::derived::{derived, dynamic, when};
 use crate::draft::use_draft;
-use crate::field::{CountField, list_field};
-use crate::fold::Fold;
+use crate::field::{FieldOf, list_field};
+use crate::fold::fold;
 use crate::form::names;
 use crate::tool_page::figures;
-use crate::verdict::VerdictMark;
+use crate::verdict::verdict_mark;
 
 /// Loads along a run of direct current, folded away until somebody asks.
-pub fn branch(ask: ReadSignal<Ask>) -> AnyView {
+pub fn branch(ask: ReadSignal<Ask>) -> Piece {
     let direct = move || ask.with(|ask| matches!(ask.kind.typed(), Some(Kind::DcBranch | Kind::DcFeeder)));
     when(direct, move || {
         view! {
-            <Fold id="run/branch" title="Lights along it" says=derived(|| "volts at each load".to_owned())>
-                <p class="ranked-say">
+            {fold("run/branch", "Lights along it", derived(|| "volts at each load".to_owned()), move || view! {                 <p class="ranked-say">
                     "Distances and watts, one for each load; or how many equal ones share the run’s current."
                 </p>
                 <div class="fields">
                     {list_field(TOOL, Field::LoadDistances, "Distances")}
                     {list_field(TOOL, Field::LoadWatts, "Watts")}
-                    <CountField tool=TOOL field=Field::LoadsAlong label="Loads"/>
+                    {FieldOf::new(TOOL, Field::LoadsAlong).called("Loads").shown()}
                 </div>
                 {told(ask)}
-            </Fold>
+             })}
         }
-        .into_any()
     })
 }
 
-fn told(ask: ReadSignal<Ask>) -> AnyView {
+fn told(ask: ReadSignal<Ask>) -> Piece {
     let draft = use_draft();
     dynamic(move || {
         let loads = ask.with(|ask| draft.with(|pads| loads(&pads.of(TOOL), ask)));
@@ -49,14 +48,13 @@ fn told(ask: ReadSignal<Ask>) -> AnyView {
                 let (verdict, words) = ask.with(|ask| worst(ask, &found));
                 view! {
                     <p class="fault">
-                        <VerdictMark verdict=verdict/>
+                        {verdict_mark(verdict, false)}
                         <span>{words}</span>
                     </p>
                     {figures(rows(&found))}
                 }
-                .into_any()
             }
-            Err(words) => view! { <p class="ranked-say">{words}</p> }.into_any(),
+            Err(words) => view! { <p class="ranked-say">{words}</p> },
         }
     })
 }

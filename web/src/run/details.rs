@@ -1,5 +1,6 @@
 //! What else a run asks for: the breaker, lugs and terminals, what the table says, and why thinner conductors do not do.
 
+use crate::piece::{Piece, view};
 use engine::check::Verdict;
 use engine::quantity::Quantity;
 use engine::run::{Ask, BreakerType, Landing, Protection, Sizing, Thinner, reach, size};
@@ -10,62 +11,59 @@ use super::answer::precharge;
 use super::{fault, truck};
 use crate::check_row::against;
 use crate::derived::{derived, dynamic};
-use crate::fold::Fold;
+use crate::fold::fold;
 use crate::form::names;
 use crate::tool_page::{figures, section};
-use crate::verdict::VerdictMark;
+use crate::verdict::verdict_mark;
 
 type Row = (String, String);
 
 /// Beside a run whose current was entered: what its cable would take at most. There while a size is entered.
-pub fn on_the_truck(ask: ReadSignal<Ask>) -> AnyView {
+pub fn on_the_truck(ask: ReadSignal<Ask>) -> Piece {
     section(
         "On the truck",
         "what this cable takes",
         move || ask.with(|ask| ask.size != engine::entry::Entry::Blank && !truck::asked(ask)),
         move || match ask.with(|ask| reach(ask).map(|reach| truck::rows(&reach, ask))) {
             Ok(rows) => figures(rows),
-            Err(missing) => view! { <p class="ranked-say">{format!("Waits for {}.", names(missing))}</p> }.into_any(),
+            Err(missing) => view! { <p class="ranked-say">{format!("Waits for {}.", names(missing))}</p> },
         },
     )
 }
 
 /// What a short circuit would draw out of the bank, in a line with its verdict.
-pub fn short_circuit(ask: ReadSignal<Ask>) -> AnyView {
+pub fn short_circuit(ask: ReadSignal<Ask>) -> Piece {
     dynamic(move || {
         let settled = ask.with(truck::settled);
         let found = size(&settled).ok().and_then(|found| fault::fault(&settled, &found));
-        let Some((check, words, rests)) = found else { return ().into_any() };
+        let Some((check, words, rests)) = found else { return Piece::Nothing };
         view! {
             <p class="fault">
                 <b>"Short circuit"</b>
-                <VerdictMark verdict=check.verdict/>
+                {verdict_mark(check.verdict, false)}
                 <span>{words}</span>
                 <small>{rests}</small>
             </p>
         }
-        .into_any()
     })
 }
 
 /// Breaker, lug and terminal, and why thinner conductors do not do.
-pub fn fitting(ask: ReadSignal<Ask>) -> AnyView {
+pub fn fitting(ask: ReadSignal<Ask>) -> Piece {
     let found = move || ask.with(|ask| size(&truck::settled(ask)).ok());
     section(
         "Fitting",
         "breaker, lugs, why not thinner",
         move || found().is_some(),
         move || {
-            let Some(found) = found() else { return ().into_any() };
+            let Some(found) = found() else { return Piece::Nothing };
             let amperes = amperes(&found);
             view! {
                 {figures(fitting_rows(&found))}
                 {thinner(&found)}
-                <Fold id="run/amperes" title="Amperes" says=derived(|| "flow, rule, table, corrections".to_owned())>
-                    {figures(amperes.clone())}
-                </Fold>
+                {fold("run/amperes", "Amperes", derived(|| "flow, rule, table, corrections".to_owned()), move || view! {                     {figures(amperes.clone())}
+                 })}
             }
-            .into_any()
         },
     )
 }
@@ -157,9 +155,9 @@ fn amperes(found: &Sizing) -> Vec<Row> {
 }
 
 /// The two next thinner, and what each breaks.
-fn thinner(found: &Sizing) -> Option<AnyView> {
+fn thinner(found: &Sizing) -> Option<Piece> {
     (!found.thinner.is_empty()).then(|| {
-        let rows: Vec<AnyView> = found
+        let rows: Vec<Piece> = found
             .thinner
             .iter()
             .map(|one| {
@@ -167,14 +165,13 @@ fn thinner(found: &Sizing) -> Option<AnyView> {
                 view! {
                     <li data-v=verdict.word()>
                         <span class="name">{one.candidate.to_string()}</span>
-                        <VerdictMark verdict=verdict/>
+                        {verdict_mark(verdict, false)}
                         <p class="why">{why}</p>
                     </li>
                 }
-                .into_any()
             })
             .collect();
-        view! { <ol class="ranked plain">{rows}</ol> }.into_any()
+        view! { <ol class="ranked plain">{rows}</ol> }
     })
 }
 

@@ -10,6 +10,7 @@ mod truck;
 
 use std::sync::Arc;
 
+use crate::piece::Piece;
 use engine::check::Check;
 use engine::field::Field;
 use engine::run::{Requirement, assess, working};
@@ -84,7 +85,7 @@ fn short(field: Field) -> &'static str {
 }
 
 /// The Run tool.
-pub fn run_tool() -> AnyView {
+pub fn run_tool() -> Piece {
     let draft = use_draft();
     let ask = memo(move || draft.with(crate::pads::Pads::run_ask));
     let answer = memo(move || draft.with(|pads| ask.with(|ask| answer::answer(&pads.of(TOOL), ask))));

@@ -1,5 +1,6 @@
 //! The small picture of a run: its two ends by name, its breaker or fuse, and the wire as wide as it is thick.
 
+use crate::piece::{Piece, view};
 use engine::field::Field;
 use engine::quantity::Quantity;
 use engine::run::{Ask, BreakerType, Kind, Sizing, size};
@@ -12,12 +13,12 @@ use crate::draft::use_draft;
 use crate::form::as_entered;
 
 /// The picture. Nothing is drawn before the kind of run is known.
-pub fn picture(ask: Memo<Ask>) -> AnyView {
+pub fn picture(ask: Memo<Ask>) -> Piece {
     let draft = use_draft();
     let length = move || draft.with(|pads| as_entered(&pads.of(TOOL), Field::RunLength));
     dynamic(move || {
         let ask = ask.with(truck::settled);
-        let Some(kind) = ask.kind.typed() else { return ().into_any() };
+        let Some(kind) = ask.kind.typed() else { return Piece::Nothing };
         drawn(kind, size(&ask).ok().as_ref(), length())
     })
 }
@@ -35,7 +36,7 @@ const fn at_far_end(kind: Kind) -> bool {
     matches!(kind, Kind::PvString | Kind::PvArray | Kind::ControllerOutput)
 }
 
-fn drawn(kind: Kind, found: Option<&Sizing>, length: Option<String>) -> AnyView {
+fn drawn(kind: Kind, found: Option<&Sizing>, length: Option<String>) -> Piece {
     let (from, to) = kind.ends();
     let far = at_far_end(kind);
     let at = if far { 252.0 } else { 68.0 };
@@ -47,7 +48,7 @@ fn drawn(kind: Kind, found: Option<&Sizing>, length: Option<String>) -> AnyView 
     let along = [wire, length].into_iter().flatten().collect::<Vec<_>>().join(", ");
     let fuse = protection.is_some_and(|protection| protection.protects == BreakerType::Fuse);
     let symbol = if fuse {
-        view! { <rect class="fuse" x=format!("{:.0}", at - 15.0) y="26" width="30" height="12"/> }.into_any()
+        view! { <rect class="fuse" x=format!("{:.0}", at - 15.0) y="26" width="30" height="12"/> }
     } else {
         view! {
             <path class="gap" d=format!("M{:.0} 32h24", at - 12.0)/>
@@ -55,7 +56,6 @@ fn drawn(kind: Kind, found: Option<&Sizing>, length: Option<String>) -> AnyView 
             <circle class="pin" cx=format!("{:.0}", at - 12.0) cy="32" r="2.6"/>
             <circle class="pin" cx=format!("{:.0}", at + 12.0) cy="32" r="2.6"/>
         }
-        .into_any()
     };
     view! {
         <svg class="run-pic" viewBox="0 0 320 74" role="img" aria-label=label>
@@ -69,5 +69,4 @@ fn drawn(kind: Kind, found: Option<&Sizing>, length: Option<String>) -> AnyView 
             <text x="319" y="66" text-anchor="end">{to}</text>
         </svg>
     }
-    .into_any()
 }

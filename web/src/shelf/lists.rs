@@ -2,23 +2,23 @@
 
 use std::sync::Arc;
 
+use crate::piece::{Piece, view};
 use engine::field::Field;
 use engine::pad::Pad;
 use engine::quantity::{Amount, Metres, Quantity, SquareMillimetres};
 use engine::shelf::{BURNS, Caution, Layout, Meter, Pole, Proof, Touch};
 use engine::show;
 use engine::unit::Unit;
-use leptos::prelude::*;
 
 use super::Laid;
 use crate::cells::TOOL;
 use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
-use crate::fold::Fold;
+use crate::fold::fold;
 use crate::tool_page::figures;
 
 /// What can hurt, before any link is fitted: the last link first of all.
-pub fn caution(layout: &Layout) -> AnyView {
+pub fn caution(layout: &Layout) -> Piece {
     let numbers = |which: fn(&engine::shelf::Link) -> bool| -> Vec<u32> {
         layout.links.iter().filter(|link| which(link)).map(|link| link.number).collect()
     };
@@ -27,21 +27,20 @@ pub fn caution(layout: &Layout) -> AnyView {
     let title = if last.is_empty() { "Caution".to_owned() } else { format!("Fit {} last", links(&last)) };
     let past = (!past.is_empty()).then(|| {
         let so = format!("From {} on: past 60 V d.c., which shocks. {}", links(&past), Caution::PassesTouch.text());
-        view! { <p>{so}</p> }.into_any()
+        view! { <p>{so}</p> }
     });
     view! {
         <div class="caution" role="note">
             <b>{title}</b>
-            {layout.last_link_reason.clone().map(|why| view! { <p>{why}</p> }.into_any())}
+            {layout.last_link_reason.clone().map(|why| view! { <p>{why}</p> })}
             {past}
             <p>{BURNS}</p>
         </div>
     }
-    .into_any()
 }
 
 /// What could not be had, where barriers belong, and how good the layout is.
-pub fn remarks(layout: &Layout) -> AnyView {
+pub fn remarks(layout: &Layout) -> Piece {
     let mut lines: Vec<String> = layout.remarks.iter().map(ToString::to_string).collect();
     if let Some(barrier) = layout.barriers.first() {
         lines.push(format!(
@@ -59,13 +58,13 @@ pub fn remarks(layout: &Layout) -> AnyView {
         }
         .to_owned(),
     );
-    let lines: Vec<AnyView> = lines.into_iter().map(|line| view! { <li>{line}</li> }.into_any()).collect();
-    view! { <ul class="notes">{lines}</ul> }.into_any()
+    let lines: Vec<Piece> = lines.into_iter().map(|line| view! { <li>{line}</li> }).collect();
+    view! { <ul class="notes">{lines}</ul> }
 }
 
 /// Links to cut, lugs, barriers, and the order of fitting in words.
-pub fn lists(laid: Arc<Laid>) -> AnyView {
-    let order: Vec<AnyView> = laid
+pub fn lists(laid: Arc<Laid>) -> Piece {
+    let order: Vec<Piece> = laid
         .steps
         .iter()
         .map(|step| {
@@ -73,12 +72,11 @@ pub fn lists(laid: Arc<Laid>) -> AnyView {
             says.extend(step.before.iter().map(|meter| format!("Before it: {}: {}.", leads(meter), band(meter))));
             says.push(format!("Then {}: {}.", leads(&step.now), band(&step.now)));
             says.extend(step.cautions.iter().filter(|one| **one != Caution::Burns).map(|one| one.text().to_owned()));
-            view! { <li value=step.link.to_string()>{says.join(" ")}</li> }.into_any()
+            view! { <li value=step.link.to_string()>{says.join(" ")}</li> }
         })
         .collect();
     view! {
-        <Fold id="cells/links" title="Links to cut" says=derived(|| "by length, and lugs to pack".to_owned())>
-            {
+        {fold("cells/links", "Links to cut", derived(|| "by length, and lugs to pack".to_owned()), move || view! {             {
                 let laid = laid.clone();
                 dynamic(move || {
                     let size = use_draft().with(|pads| pads.of(TOOL).entry::<SquareMillimetres>(Field::LinkSize).typed());
@@ -89,13 +87,12 @@ pub fn lists(laid: Arc<Laid>) -> AnyView {
                 "Cut for flat bar, 10 mm beyond each hole; a bar has holes in place of lugs. Of cable, make one, try it, then \
                  the rest. Lengths hang on the gaps and posts above: measure your cells."
             </p>
-        </Fold>
+         })}
         <details class="in-words">
             <summary>"Every link in words"</summary>
             <ol class="order">{order}</ol>
         </details>
     }
-    .into_any()
 }
 
 /// What to cut and to pack.

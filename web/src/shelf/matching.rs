@@ -1,5 +1,6 @@
 //! Measured cells dealt to groups that differ least.
 
+use crate::piece::{Piece, view};
 use engine::bank::settled;
 use engine::field::Field;
 use engine::matching::deal;
@@ -11,11 +12,11 @@ use crate::cells::{TOOL, bank};
 use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
 use crate::field::list_field;
-use crate::fold::Fold;
+use crate::fold::fold;
 use crate::tool_page::figures;
 
 /// Matching, folded until somebody has measured.
-pub fn matching() -> AnyView {
+pub fn matching() -> Piece {
     let typed = use_draft().typed((TOOL, Field::Capacities));
     let ask = bank();
     // Only a change of the list or of the bank deals anew.
@@ -26,15 +27,13 @@ pub fn matching() -> AnyView {
         typed.with(|typed| dealt(&typed.text, counts))
     };
     view! {
-        <Fold id="cells/matching" title="Match measured cells" says=derived(|| "salvaged ones, dealt to groups".to_owned())>
-            <div class="fields">{list_field(TOOL, Field::Capacities, "Measured capacities")}</div>
+        {fold("cells/matching", "Match measured cells", derived(|| "salvaged ones, dealt to groups".to_owned()), move || view! {             <div class="fields">{list_field(TOOL, Field::Capacities, "Measured capacities")}</div>
             {dynamic(move || match found() {
                 Ok(rows) => figures(rows),
-                Err(words) => view! { <p class="ranked-say">{words}</p> }.into_any(),
+                Err(words) => view! { <p class="ranked-say">{words}</p> },
             })}
-        </Fold>
+         })}
     }
-    .into_any()
 }
 
 /// The groups of a bank of so many in series and side by side, or what there is to do first.

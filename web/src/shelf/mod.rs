@@ -10,6 +10,7 @@ mod picture;
 use std::sync::Arc;
 use std::time::Duration;
 
+use crate::piece::{IntoPiece, Piece, view};
 use engine::bank::{Ask, settled as with_counts};
 use engine::field::Field;
 use engine::shelf::{Asked, Family, Lacks, Layout, Parallel, Step, advice, asked, assumption, lay_out, steps};
@@ -19,7 +20,7 @@ use crate::cells::{TOOL, bank, short};
 use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::use_draft;
 use crate::field::StandIn;
-use crate::fold::Fold;
+use crate::fold::fold;
 use crate::form::{Form, Hints, fields_of, names};
 use crate::settled::rested;
 
@@ -47,16 +48,14 @@ pub struct Laid {
 }
 
 /// The shelf, folded until it is wanted: a second step after the counts are chosen.
-pub fn shelf_section() -> AnyView {
+pub fn shelf_section() -> Piece {
     view! {
-        <Fold id="cells/shelf" title="The shelf" says=derived(|| "where each cell stands, which link goes where".to_owned())>
-            {inside()}
-        </Fold>
+        {fold("cells/shelf", "The shelf", derived(|| "where each cell stands, which link goes where".to_owned()), move || view! {             {inside()}
+         })}
     }
-    .into_any()
 }
 
-fn inside() -> AnyView {
+fn inside() -> Piece {
     let draft = use_draft();
     let ask = bank();
     let found = memo(move || draft.with(|pads| ask.with(|ask| asked(&pads.of(TOOL), ask))));
@@ -73,15 +72,14 @@ fn inside() -> AnyView {
     // Which step is open outlives the layout, which is made anew with each figure of the shelf.
     let at = RwSignal::new(None::<usize>);
     let body = dynamic(move || match calm.with(laid) {
-        Err(why) => view! { <p class="ranked-say">{why}</p> }.into_any(),
+        Err(why) => view! { <p class="ranked-say">{why}</p> },
         Ok(laid) => view! {
             {picture::figure(&laid.asked.shelf, &laid.layout)}
             {lists::caution(&laid.layout)}
             {lists::remarks(&laid.layout)}
             {one_by_one::one_by_one(laid.clone(), at)}
             {lists::lists(laid.clone())}
-        }
-        .into_any(),
+        },
     });
     view! {
         <div class="fields">{fields_of(&FORM, FORM.first, &hints)}</div>
@@ -91,18 +89,15 @@ fn inside() -> AnyView {
                 <div class="fields">{fields_of(&FORM, &[Field::ParallelAs], &beside)}</div>
                 {dynamic(move || {
                     let way = found.with(|found| found.as_ref().ok().map(|asked| asked.wiring.parallel()));
-                    ask.with(|ask| wise(ask, way)).into_any()
+                    ask.with(|ask| wise(ask, way)).piece()
                 })}
-            }
-            .into_any(),
+            },
         )}
-        <Fold id="cells/shelf-more" title="Gaps and posts" says=derived(|| "links are cut by them".to_owned())>
-            <div class="fields">{fields_of(&FORM, MORE, &more)}</div>
-        </Fold>
+        {fold("cells/shelf-more", "Gaps and posts", derived(|| "links are cut by them".to_owned()), move || view! {             <div class="fields">{fields_of(&FORM, MORE, &more)}</div>
+         })}
         {body}
         {matching::matching()}
     }
-    .into_any()
 }
 
 fn laid(found: &Result<Asked, Lacks>) -> Result<Arc<Laid>, String> {
@@ -119,7 +114,7 @@ fn laid(found: &Result<Asked, Lacks>) -> Result<Arc<Laid>, String> {
 }
 
 /// What the way taken means, and which is wise for these cells.
-fn wise(ask: &Ask, way: Option<Parallel>) -> Option<AnyView> {
+fn wise(ask: &Ask, way: Option<Parallel>) -> Option<Piece> {
     let advice = advice(Family::of(ask.chemistry.typed()?, ask.guards_itself() == Some(true)));
     let word = |way| match way {
         Parallel::SeparateStrings => "Whole strings",
@@ -127,8 +122,5 @@ fn wise(ask: &Ask, way: Option<Parallel>) -> Option<AnyView> {
     };
     let way = way.unwrap_or(advice.wise);
     let against = (way != advice.wise).then(|| format!(" {} are wiser here.", word(advice.wise)));
-    Some(
-        view! { <p class="ranked-say"><b>{word(way)} ": "</b>{way.meaning()} " " {advice.why} {against}</p> }
-            .into_any(),
-    )
+    Some(view! { <p class="ranked-say"><b>{word(way)} ": "</b>{way.meaning()} " " {advice.why} {against}</p> })
 }

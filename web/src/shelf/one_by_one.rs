@@ -2,6 +2,7 @@
 
 use std::sync::Arc;
 
+use crate::piece::{IntoPiece, Piece, view};
 use engine::field::Field;
 use engine::quantity::Volts;
 use engine::shelf::judged;
@@ -24,13 +25,13 @@ const READINGS: Place = (TOOL, Field::LinkReadings);
 const HEAD: &str = "shelf-step";
 
 /// The step-through; `at` is the step that is open.
-pub fn one_by_one(laid: Arc<Laid>, at: RwSignal<Option<usize>>) -> AnyView {
+pub fn one_by_one(laid: Arc<Laid>, at: RwSignal<Option<usize>>) -> Piece {
     let draft = use_draft();
     let count = laid.steps.len();
     let all = draft.typed(READINGS);
     dynamic(move || match at.get() {
         Some(place) if place < count => one(place, laid.clone(), at, all),
-        _ if count == 0 => ().into_any(),
+        _ if count == 0 => Piece::Nothing,
         _ => {
             let begin = move || {
                 let blank = |place: &usize| all.with_untracked(|all| line(&all.text, *place).trim().is_empty());
@@ -40,11 +41,10 @@ pub fn one_by_one(laid: Arc<Laid>, at: RwSignal<Option<usize>>) -> AnyView {
             let any = move || all.with(|all| !all.text.is_empty());
             view! {
                 <div class="btns">
-                    {button("btn solid", "Fit them one by one".into_any(), Box::new(begin))}
-                    {when(any, move || button("btn", "Clear the readings".into_any(), Box::new(clear)))}
+                    {button("btn solid", "Fit them one by one".piece(), Box::new(begin))}
+                    {when(any, move || button("btn", "Clear the readings".piece(), Box::new(clear)))}
                 </div>
             }
-            .into_any()
         }
     })
 }
@@ -56,25 +56,25 @@ fn open(at: RwSignal<Option<usize>>, place: Option<usize>) {
 }
 
 /// A button. Boxed, as what listens is large.
-fn button(class: &'static str, words: AnyView, press: Box<dyn Fn()>) -> AnyView {
-    view! { <button class=class type="button" on:click=move |_| press()>{words}</button> }.into_any()
+fn button(class: &'static str, words: Piece, press: Box<dyn Fn()>) -> Piece {
+    view! { <button class=class type="button" on:click=move |_| press()>{words}</button> }
 }
 
-fn one(place: usize, laid: Arc<Laid>, at: RwSignal<Option<usize>>, all: Memo<Typed>) -> AnyView {
+fn one(place: usize, laid: Arc<Laid>, at: RwSignal<Option<usize>>, all: Memo<Typed>) -> Piece {
     let draft = use_draft();
     let step = &laid.steps[place];
     let count = laid.steps.len();
     let head = format!("Link {} of {count}", step.link);
     let name = head.clone();
-    let mut lines: Vec<AnyView> = Vec::new();
+    let mut lines: Vec<Piece> = Vec::new();
     if !step.cautions.is_empty() {
-        let cautions: Vec<AnyView> = step.cautions.iter().map(|one| view! { <p>{one.text()}</p> }.into_any()).collect();
-        lines.push(view! { <div class="caution" role="note"><b>"Caution"</b>{cautions}</div> }.into_any());
+        let cautions: Vec<Piece> = step.cautions.iter().map(|one| view! { <p>{one.text()}</p> }).collect();
+        lines.push(view! { <div class="caution" role="note"><b>"Caution"</b>{cautions}</div> });
     }
     let meters = step.before.iter().map(|meter| ("Before", meter)).chain([("Now", &step.now)]);
     lines.extend(meters.map(|(when, meter)| {
         let leads = format!("{when}: {} must read", leads(meter));
-        view! { <p class="meter">{leads} " " <b>{band(meter)}</b></p> }.into_any()
+        view! { <p class="meter">{leads} " " <b>{band(meter)}</b></p> }
     }));
     let what = step.what.clone();
     let named = format!("Reading after link {}", step.link);
@@ -87,9 +87,9 @@ fn one(place: usize, laid: Arc<Laid>, at: RwSignal<Option<usize>>, all: Memo<Typ
         move || told().is_some_and(|told| told.off)
     };
     let said = dynamic(move || match told() {
-        Some(told) if !told.off => view! { <p class="told">{told.words}</p> }.into_any(),
-        Some(told) if patience.is_over() => view! { <p class="told off">{told.words}</p> }.into_any(),
-        _ => ().into_any(),
+        Some(told) if !told.off => view! { <p class="told">{told.words}</p> },
+        Some(told) if patience.is_over() => view! { <p class="told off">{told.words}</p> },
+        _ => Piece::Nothing,
     });
     let write = move |text: &str| {
         patience.begin();
@@ -112,7 +112,7 @@ fn one(place: usize, laid: Arc<Laid>, at: RwSignal<Option<usize>>, all: Memo<Typ
             (_, true) => "Done",
             _ => "Next",
         };
-        words.into_any()
+        words.piece()
     });
     let next = move || {
         if untrack(|| !patience.is_over() && stops()) {
@@ -122,7 +122,7 @@ fn one(place: usize, laid: Arc<Laid>, at: RwSignal<Option<usize>>, all: Memo<Typ
         }
     };
     let back = move || open(at, place.checked_sub(1));
-    let back = button("btn", if place == 0 { "Leave" } else { "Back" }.into_any(), Box::new(back));
+    let back = button("btn", if place == 0 { "Leave" } else { "Back" }.piece(), Box::new(back));
     let on = button("btn solid next", words, Box::new(next));
     view! {
         <section class="one" aria-label=name>
@@ -141,13 +141,12 @@ fn one(place: usize, laid: Arc<Laid>, at: RwSignal<Option<usize>>, all: Memo<Typ
                     on:blur=move |_| draft.leave()
                 />
                 "V"
-                {button("btn", "±".into_any(), Box::new(turn))}
+                {button("btn", "±".piece(), Box::new(turn))}
             </div>
             <div role="status">{said}</div>
             <div class="btns">{back}{on}</div>
         </section>
     }
-    .into_any()
 }
 
 /// What is said to a reading.

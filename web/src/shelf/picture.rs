@@ -1,15 +1,15 @@
 //! The picture of the shelf, as SVG. Written as text: hundreds of marks, none of which anything is bound to.
 
+use crate::piece::{Piece, view};
 use engine::quantity::Quantity;
 use engine::shelf::{Layout, Shelf};
 use engine::show;
-use leptos::prelude::*;
 
 use super::board::{Area, At};
 use super::drawing::Drawing;
 
 /// The figure.
-pub fn figure(shelf: &Shelf, layout: &Layout) -> AnyView {
+pub fn figure(shelf: &Shelf, layout: &Layout) -> Piece {
     let drawing = Drawing::of(shelf, layout);
     let past = drawing.cells.iter().any(|cell| cell.past);
     let past = if past { " Dark: past 60 V, where touch is dangerous." } else { "" };
@@ -25,7 +25,6 @@ pub fn figure(shelf: &Shelf, layout: &Layout) -> AnyView {
             </figcaption>
         </figure>
     }
-    .into_any()
 }
 
 /// All of it. The width is the least at which it can be read: a tenth less than drawn.

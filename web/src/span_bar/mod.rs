@@ -2,8 +2,8 @@
 
 pub mod geometry;
 
+use crate::piece::{Piece, view};
 use engine::check::Verdict;
-use leptos::prelude::*;
 
 use geometry::{Geometry, Hang, Ruler, Stand, TickKind};
 
@@ -29,23 +29,21 @@ impl Bar {
 }
 
 /// The full span bar, with labels above and below.
-pub fn span_bar(Bar { ruler, verdict, room, says }: Bar) -> AnyView {
+pub fn span_bar(Bar { ruler, verdict, room, says }: Bar) -> Piece {
     let drawn = ruler.geometry();
     let flag = room.and_then(|room| flag(&drawn, room));
     let mut above = Vec::new();
     if let (Some(at), Some(post)) = (drawn.lo, &ruler.low) {
-        above.push(label(at, Hang::Start, view! { {post.name.clone()}<b>{post.shown.clone()}</b> }.into_any()));
+        above.push(label(at, Hang::Start, view! { {post.name.clone()}<b>{post.shown.clone()}</b> }));
     }
     if let (Some(at), Some(post)) = (drawn.hi, &ruler.high) {
-        above.push(label(at, Hang::End, view! { {post.name.clone()}<b>{post.shown.clone()}</b> }.into_any()));
+        above.push(label(at, Hang::End, view! { {post.name.clone()}<b>{post.shown.clone()}</b> }));
     }
-    let below: Vec<AnyView> = ruler
+    let below: Vec<Piece> = ruler
         .marks
         .iter()
         .zip(&drawn.marks)
-        .map(|(mark, (at, _, hang))| {
-            label(*at, *hang, view! { <b>{mark.shown.clone()}</b>{mark.name.clone()} }.into_any())
-        })
+        .map(|(mark, (at, _, hang))| label(*at, *hang, view! { <b>{mark.shown.clone()}</b>{mark.name.clone()} }))
         .collect();
     view! {
         <figure class="span" data-v=verdict.word() role="img" aria-label=says>
@@ -54,13 +52,12 @@ pub fn span_bar(Bar { ruler, verdict, room, says }: Bar) -> AnyView {
             <div class="span-bot" aria-hidden="true">{below}</div>
         </figure>
     }
-    .into_any()
 }
 
 /// The span bar of a row: one line, no labels on the ruler.
-pub fn slim_bar(Bar { ruler, verdict, says, .. }: Bar) -> AnyView {
+pub fn slim_bar(Bar { ruler, verdict, says, .. }: Bar) -> Piece {
     let drawn = Ruler { marks: Vec::new(), ..ruler }.geometry();
-    view! { <span class="slim" data-v=verdict.word() role="img" aria-label=says>{rule(&drawn)}</span> }.into_any()
+    view! { <span class="slim" data-v=verdict.word() role="img" aria-label=says>{rule(&drawn)}</span> }
 }
 
 /// The distance of graduations; of a ruler that has no scale yet, `plain`.
@@ -72,17 +69,17 @@ fn percent(value: f64) -> String {
     format!("{value:.3}%")
 }
 
-fn label(at: f64, hang: Hang, inside: AnyView) -> AnyView {
+fn label(at: f64, hang: Hang, inside: Piece) -> Piece {
     let class = match hang {
         Hang::Middle => "span-lab",
         Hang::Start => "span-lab start",
         Hang::End => "span-lab end",
         Hang::Drops => "span-lab drops",
     };
-    view! { <span class=class style=("--p", percent(at))>{inside}</span> }.into_any()
+    view! { <span class=class style=("--p", percent(at))>{inside}</span> }
 }
 
-fn flag(drawn: &Geometry, room: String) -> Option<AnyView> {
+fn flag(drawn: &Geometry, room: String) -> Option<Piece> {
     let (class, word, at) = match (drawn.low_post, drawn.high_post) {
         (_, Some(Stand::Snapped)) => ("span-gap", "over", drawn.hi?),
         (Some(Stand::Snapped), _) => ("span-gap low", "under", drawn.lo?),
@@ -90,14 +87,14 @@ fn flag(drawn: &Geometry, room: String) -> Option<AnyView> {
         (Some(Stand::Near), _) => ("span-gap low", "left", drawn.lo?),
         _ => return None,
     };
-    Some(view! { <span class=class style=("--p", percent(at))>{word}<b>{room}</b></span> }.into_any())
+    Some(view! { <span class=class style=("--p", percent(at))>{word}<b>{room}</b></span> })
 }
 
-fn stretch(class: &'static str, (a, b): (f64, f64)) -> AnyView {
-    view! { <i class=class style=("--a", percent(a)) style=("--b", percent(b))></i> }.into_any()
+fn stretch(class: &'static str, (a, b): (f64, f64)) -> Piece {
+    view! { <i class=class style=("--a", percent(a)) style=("--b", percent(b))></i> }
 }
 
-fn post(stand: Stand, low: bool, at: f64) -> AnyView {
+fn post(stand: Stand, low: bool, at: f64) -> Piece {
     let class = match (stand, low) {
         (Stand::Free, _) => "span-post",
         (Stand::Near, false) => "span-post near",
@@ -105,16 +102,16 @@ fn post(stand: Stand, low: bool, at: f64) -> AnyView {
         (Stand::Snapped, false) => "span-post snapped",
         (Stand::Snapped, true) => "span-post snapped low",
     };
-    view! { <i class=class style=("--p", percent(at))></i> }.into_any()
+    view! { <i class=class style=("--p", percent(at))></i> }
 }
 
-fn rule(drawn: &Geometry) -> AnyView {
+fn rule(drawn: &Geometry) -> Piece {
     let mut layers = Vec::new();
     if let (Some(at), Some(_)) = (drawn.high_reserve, drawn.hi) {
-        layers.push(view! { <i class="span-reserve" style=("--res", percent(at))></i> }.into_any());
+        layers.push(view! { <i class="span-reserve" style=("--res", percent(at))></i> });
     }
     if let (Some(at), Some(_)) = (drawn.low_reserve, drawn.lo) {
-        layers.push(view! { <i class="span-reserve low" style=("--res", percent(at))></i> }.into_any());
+        layers.push(view! { <i class="span-reserve low" style=("--res", percent(at))></i> });
     }
     layers.extend(drawn.solid.map(|span| stretch("span-solid", span)));
     layers.extend(drawn.high_tight.map(|span| stretch("span-tight", span)));
@@ -122,8 +119,7 @@ fn rule(drawn: &Geometry) -> AnyView {
     layers.extend(drawn.under.map(|span| stretch("span-past low", span)));
     layers.extend(drawn.over.map(|span| stretch("span-past", span)));
     if let Some((a, b)) = drawn.blank {
-        layers
-            .push(view! { <i class="span-ask" style=("--a", percent(a)) style=("--b", percent(b))>"?"</i> }.into_any());
+        layers.push(view! { <i class="span-ask" style=("--a", percent(a)) style=("--b", percent(b))>"?"</i> });
     }
     if let (Some(stand), Some(at)) = (drawn.low_post, drawn.lo) {
         layers.push(post(stand, true, at));
@@ -138,7 +134,7 @@ fn rule(drawn: &Geometry) -> AnyView {
             TickKind::Right => "span-tick end-b",
             TickKind::Outside => "span-tick out",
         };
-        view! { <i class=class style=("--p", percent(*at))></i> }.into_any()
+        view! { <i class=class style=("--p", percent(*at))></i> }
     }));
     view! {
         <span
@@ -155,5 +151,4 @@ fn rule(drawn: &Geometry) -> AnyView {
             {layers}
         </span>
     }
-    .into_any()
 }

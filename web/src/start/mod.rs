@@ -5,6 +5,7 @@ mod others;
 
 use std::sync::Arc;
 
+use crate::piece::Piece;
 use engine::field::Field;
 use engine::start::{Requirement, assess, assumption, working};
 use leptos::prelude::*;
@@ -123,7 +124,7 @@ fn short(field: Field) -> &'static str {
 }
 
 /// The Start tool.
-pub fn start_tool() -> AnyView {
+pub fn start_tool() -> Piece {
     let draft = use_draft();
     let ask = memo(move || draft.with(crate::pads::Pads::start_ask));
     let answer = memo(move || ask.with(|ask| Some(answer::answer(ask))));

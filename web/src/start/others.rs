@@ -1,5 +1,6 @@
 //! What would help where it does not start, and which other loads may run or start with it.
 
+use crate::piece::{Piece, view};
 use engine::check::Verdict;
 use engine::field::Field;
 use engine::pad::Pad;
@@ -11,11 +12,11 @@ use leptos::prelude::*;
 use super::TOOL;
 use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::{Draft, use_draft};
-use crate::fold::Fold;
+use crate::fold::fold;
 use crate::form::of_another;
 use crate::tool_page::section;
 use crate::tools::Tool;
-use crate::verdict::VerdictMark;
+use crate::verdict::verdict_mark;
 
 /// Further loads, each in a pad of its own.
 const OTHERS: [Tool; 13] = [
@@ -45,7 +46,7 @@ const OF_A_LOAD: [Field; 6] = [
 ];
 
 /// Changes that were tried, where something breaks; and the lowest charge at which it still starts.
-pub fn helps(ask: ReadSignal<Ask>) -> AnyView {
+pub fn helps(ask: ReadSignal<Ask>) -> Piece {
     let found = move || ask.with(what_helps);
     view! {
         {section(
@@ -53,16 +54,15 @@ pub fn helps(ask: ReadSignal<Ask>) -> AnyView {
             "each by itself, computed",
             move || !found().is_empty(),
             move || {
-                let rows: Vec<AnyView> = found().iter().map(help).collect();
-                view! { <ol class="ranked plain">{rows}</ol> }.into_any()
+                let rows: Vec<Piece> = found().iter().map(help).collect();
+                view! { <ol class="ranked plain">{rows}</ol> }
             },
         )}
-        {dynamic(move || ask.with(charge).map_or_else(|| ().into_any(), |words| view! { <p class="ranked-say">{words}</p> }.into_any()))}
+        {dynamic(move || ask.with(charge).map_or_else(|| Piece::Nothing, |words| view! { <p class="ranked-say">{words}</p> }))}
     }
-    .into_any()
 }
 
-fn help(help: &Help) -> AnyView {
+fn help(help: &Help) -> Piece {
     let verdict = if help.enough { Verdict::Clears } else { Verdict::Breaks };
     let then: Vec<String> = help
         .then
@@ -78,11 +78,10 @@ fn help(help: &Help) -> AnyView {
     view! {
         <li data-v=verdict.word()>
             <span class="name wrap">{help.what}</span>
-            <VerdictMark verdict=verdict/>
+            {verdict_mark(verdict, false)}
             <p class="why">{then.join(" ")}</p>
         </li>
     }
-    .into_any()
 }
 
 fn charge(ask: &Ask) -> Option<String> {
@@ -95,19 +94,17 @@ fn charge(ask: &Ask) -> Option<String> {
 }
 
 /// Other loads, and what may go together.
-pub fn together_with(ask: ReadSignal<Ask>) -> AnyView {
+pub fn together_with(ask: ReadSignal<Ask>) -> Piece {
     let draft = use_draft();
     view! {
-        <Fold id="start/others" title="Other loads" says=derived(|| "what may run or start together".to_owned())>
-            {dynamic(move || ask.with(|ask| table(draft, ask)))}
+        {fold("start/others", "Other loads", derived(|| "what may run or start together".to_owned()), move || view! {             {dynamic(move || ask.with(|ask| table(draft, ask)))}
             {forms(draft)}
-        </Fold>
+         })}
     }
-    .into_any()
 }
 
 /// A form for each load that was entered, and one more.
-fn forms(draft: Draft) -> Vec<AnyView> {
+fn forms(draft: Draft) -> Vec<Piece> {
     let wanted = memo(move || {
         let entered =
             |tool: &Tool| draft.with(|pads| OF_A_LOAD.iter().any(|field| !pads.typed((*tool, *field)).text.is_empty()));
@@ -120,8 +117,8 @@ fn forms(draft: Draft) -> Vec<AnyView> {
         .collect()
 }
 
-fn table(draft: Draft, ask: &Ask) -> AnyView {
-    let say = |words: &str| view! { <p class="ranked-say">{words.to_owned()}</p> }.into_any();
+fn table(draft: Draft, ask: &Ask) -> Piece {
+    let say = |words: &str| view! { <p class="ranked-say">{words.to_owned()}</p> };
     let mut names = Vec::new();
     let mut loads: Vec<Switched> = Vec::new();
     draft.with(|pads| {
@@ -142,8 +139,8 @@ fn table(draft: Draft, ask: &Ask) -> AnyView {
     rows(&names, &found)
 }
 
-fn rows(names: &[String], found: &Together) -> AnyView {
-    let each: Vec<AnyView> = found
+fn rows(names: &[String], found: &Together) -> Piece {
+    let each: Vec<Piece> = found
         .loads
         .iter()
         .zip(names)
@@ -157,7 +154,6 @@ fn rows(names: &[String], found: &Together) -> AnyView {
                     <td>{show::computed(one.margin.amount())}</td>
                 </tr>
             }
-            .into_any()
         })
         .collect();
     let set = |bits: &u32| {
@@ -171,7 +167,7 @@ fn rows(names: &[String], found: &Together) -> AnyView {
     };
     let list = |title: &'static str, sets: Vec<String>| {
         let words = if sets.is_empty() { "none".to_owned() } else { sets.join("; ") };
-        view! { <p class="ranked-say"><b>{title}</b> " " {words} "."</p> }.into_any()
+        view! { <p class="ranked-say"><b>{title}</b> " " {words} "."</p> }
     };
     let never = found.never.iter().map(|(one, other)| format!("{} with {}", names[*one], names[*other])).collect();
     view! {
@@ -185,5 +181,4 @@ fn rows(names: &[String], found: &Together) -> AnyView {
         {list("May start at one moment:", found.start.iter().map(set).collect())}
         {list("Never start at one moment:", never)}
     }
-    .into_any()
 }

@@ -1,5 +1,6 @@
 //! The checks of the String tool, worst first.
 
+use crate::piece::Piece;
 use engine::check::Check;
 use engine::field::Field;
 use engine::string::{Requirement, working};
@@ -13,7 +14,7 @@ use crate::fold::Folds;
 use crate::tool_page::check_list;
 
 /// Every check of the string, the one on top among them.
-pub fn checks(question: ReadSignal<Question>, checks: Memo<Vec<Check<Requirement>>>) -> AnyView {
+pub fn checks(question: ReadSignal<Question>, checks: Memo<Vec<Check<Requirement>>>) -> Piece {
     let folds = expect_context::<Folds>();
     let go = Callback::new(move |field: Field| FORM.go_to(folds, field));
     let rows = move || {
@@ -24,7 +25,7 @@ pub fn checks(question: ReadSignal<Question>, checks: Memo<Vec<Check<Requirement
                     let note = note(&question.ask, check.id);
                     check_row(id, check.id.name(), check, note, || working(&question.ask, check.id), go)
                 };
-                checks.iter().map(row).collect::<Vec<AnyView>>()
+                checks.iter().map(row).collect::<Vec<Piece>>()
             })
         })
     };

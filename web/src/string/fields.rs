@@ -3,6 +3,7 @@
 use std::sync::Arc;
 
 use crate::derived::derived;
+use crate::piece::{IntoPiece, Piece};
 use engine::assumed;
 use engine::check::{Check, Verdict};
 use engine::field::Field;
@@ -13,7 +14,7 @@ use super::TOOL;
 use super::question::OTHERS;
 use crate::draft::{Draft, use_draft};
 use crate::field::StandIn;
-use crate::fold::Fold;
+use crate::fold::fold;
 use crate::form::{Form, Hints, of_another};
 
 const OTHER_CONTROLLERS: &str = "string/other-controllers";
@@ -94,17 +95,11 @@ pub fn hints(checks: Memo<Vec<Check<Requirement>>>) -> Hints {
 }
 
 /// Other kinds of controllers at hand, each in a pad of its own.
-pub fn other_controllers() -> AnyView {
-    view! {
-        <Fold
-            id=OTHER_CONTROLLERS
-            title="Other controllers"
-            says=derived(|| "for layouts over unequal ones".to_owned())
-        >
-            {OTHERS.map(|other| of_another(other, &OF_A_CONTROLLER, short)).into_iter().collect::<Vec<AnyView>>()}
-        </Fold>
-    }
-    .into_any()
+pub fn other_controllers() -> Piece {
+    let says = derived(|| "for layouts over unequal ones".to_owned());
+    fold(OTHER_CONTROLLERS, "Other controllers", says, || {
+        OTHERS.map(|other| of_another(other, &OF_A_CONTROLLER, short)).into_iter().collect::<Vec<Piece>>().piece()
+    })
 }
 
 /// The word above a field: at most twelve letters or so, contained in the field's name.

@@ -1,6 +1,7 @@
 //! The layouts of the modules at hand, ranked; what was rejected; and what single change would use them all.
 
 use crate::derived::{derived, dynamic, memo, when};
+use crate::piece::{Piece, view};
 use engine::check::Verdict;
 use engine::controller::Controller;
 use engine::field::Field;
@@ -15,22 +16,21 @@ use super::TOOL;
 use super::question::Question;
 use crate::check_row::{against, bar};
 use crate::draft::use_draft;
-use crate::fold::Fold;
+use crate::fold::fold;
 use crate::pads::{Edit, Typed};
 use crate::span_bar::slim_bar;
-use crate::verdict::VerdictMark;
+use crate::verdict::verdict_mark;
 
 /// How many ranked layouts are shown.
 const SHOWN: usize = 4;
 
 /// The layouts of the modules at hand.
-pub fn layout_list(question: ReadSignal<Question>) -> AnyView {
+pub fn layout_list(question: ReadSignal<Question>) -> Piece {
     let asked = memo(move || question.with(|question| question.modules.is_some()));
-    when(move || asked.get(), move || view! { <Laid question=question/> }.into_any())
+    when(move || asked.get(), move || laid(question))
 }
 
-#[component]
-fn Laid(question: ReadSignal<Question>) -> impl IntoView {
+fn laid(question: ReadSignal<Question>) -> Piece {
     let found = memo(move || question.with(find));
     let modules = move || question.with(|question| question.modules.unwrap_or(0));
     let on = move || {
@@ -56,22 +56,16 @@ fn Laid(question: ReadSignal<Question>) -> impl IntoView {
                                     .take(SHOWN)
                                     .map(|layout| ranked(layout, question))
                                     .chain(found.rejected.iter().take(SHOWN).map(|one| rejected(one, question)))
-                                    .collect_view();
+                                    .collect::<Vec<Piece>>();
                                 view! {
-                                    {words(found, question).map(|words| view! { <p class="ranked-say">{words}</p> }.into_any())}
+                                    {words(found, question).map(|words| view! { <p class="ranked-say">{words}</p> })}
                                     <ol class="ranked">{rows}</ol>
                                 }
-                                .into_any()
                             })
                     })
             })}
-            {when(move || found.with(wants_change), move || view! { <Fold
-                    id="string/change"
-                    title="What would use them all"
-                    says=derived(|| "one change".to_owned())
-                >
-                    {dynamic(move || question.with(change_list))}
-                </Fold> }.into_any())}
+            {when(move || found.with(wants_change), move || view! { {fold("string/change", "What would use them all", derived(|| "one change".to_owned()), move || view! {                     {dynamic(move || question.with(change_list))}
+                 })} })}
         </section>
     }
 }
@@ -102,7 +96,7 @@ fn words(found: &Layouts, question: &Question) -> Option<String> {
     Some("None holds: even one module is refused. See why below.".to_owned())
 }
 
-fn ranked(layout: &Layout, question: &Question) -> AnyView {
+fn ranked(layout: &Layout, question: &Question) -> Piece {
     let draft = use_draft();
     let now = is_now(layout, question);
     let verdict = layout.verdict();
@@ -120,7 +114,7 @@ fn ranked(layout: &Layout, question: &Question) -> AnyView {
         <li class:is-now=now data-v=verdict.word()>
             {picture(&layout.groups, layout.left_over)}
             <span class="name">{shape(&layout.groups)}</span>
-            <VerdictMark verdict=verdict/>
+            {verdict_mark(verdict, false)}
             <p class="why">{why(layout, question, now)}</p>
             {slim.map(slim_bar)}
             {take.map(|group| {
@@ -133,14 +127,13 @@ fn ranked(layout: &Layout, question: &Question) -> AnyView {
                     >
                         "Take this"
                     </button>
-                }.into_any()
+                }
             })}
         </li>
     }
-    .into_any()
 }
 
-fn rejected(one: &Rejected, question: &Question) -> AnyView {
+fn rejected(one: &Rejected, question: &Question) -> Piece {
     let several = question.controllers.len() > 1;
     let where_on = if several { format!(" on controller {}", one.group.controller + 1) } else { String::new() };
     let slim = bar(one.check.id.name(), &one.check);
@@ -148,12 +141,11 @@ fn rejected(one: &Rejected, question: &Question) -> AnyView {
         <li class="refused" data-v=one.check.verdict.word()>
             {picture(&[one.group], 0)}
             <span class="name">{shape(&[one.group])}</span>
-            <VerdictMark verdict=one.check.verdict/>
+            {verdict_mark(one.check.verdict, false)}
             <p class="why">{format!("{}{where_on}: {}.", one.check.id.name(), against(&one.check))}</p>
             {slim.map(slim_bar)}
         </li>
     }
-    .into_any()
 }
 
 /// "2 × 4", and "2 × 4 and 1 × 3" over two controllers: modules in series × strings.
@@ -197,16 +189,16 @@ fn is_now(layout: &Layout, question: &Question) -> bool {
         && strings == f64::from(group.strings)
 }
 
-fn change_list(question: &Question) -> AnyView {
+fn change_list(question: &Question) -> Piece {
     let found = changes(&question.ask, question.modules.unwrap_or(0), &question.controllers);
     if found.is_empty() {
-        return view! { <p class="ranked-say">"No single change that was tried does it."</p> }.into_any();
+        return view! { <p class="ranked-say">"No single change that was tried does it."</p> };
     }
-    let rows = found.iter().map(|change| change_row(change, &question.controllers)).collect_view();
-    view! { <ul class="changes">{rows}</ul> }.into_any()
+    let rows = found.iter().map(|change| change_row(change, &question.controllers)).collect::<Vec<Piece>>();
+    view! { <ul class="changes">{rows}</ul> }
 }
 
-fn change_row(change: &Change, controllers: &[Controller]) -> AnyView {
+fn change_row(change: &Change, controllers: &[Controller]) -> Piece {
     let which = |index: usize| {
         if controllers.len() == 1 { "the controller".to_owned() } else { format!("controller {}", index + 1) }
     };
@@ -234,14 +226,13 @@ fn change_row(change: &Change, controllers: &[Controller]) -> AnyView {
     view! {
         <li>
             <b>{words}</b>
-            <p>{format!("then {}: ", shape(&change.layout.groups))}<VerdictMark verdict=change.layout.verdict()/></p>
+            <p>{format!("then {}: ", shape(&change.layout.groups))}{verdict_mark(change.layout.verdict(), false)}</p>
         </li>
     }
-    .into_any()
 }
 
 /// The modules as they would be wired: strings side by side, what is left over dashed.
-fn picture(groups: &[Group], left_over: u32) -> AnyView {
+fn picture(groups: &[Group], left_over: u32) -> Piece {
     const WIDE: f64 = 78.0;
     const HIGH: f64 = 50.0;
     let longest = groups.iter().map(|group| group.series).max().unwrap_or(1);
@@ -249,7 +240,7 @@ fn picture(groups: &[Group], left_over: u32) -> AnyView {
     let columns: u32 = groups.iter().map(|group| group.strings).sum::<u32>() + spare_columns;
     // More than this many cannot be told apart: the shape in words says it.
     if columns > 26 || longest > 12 {
-        return view! { <svg class="pic" viewBox="0 0 78 50" aria-hidden="true"></svg> }.into_any();
+        return view! { <svg class="pic" viewBox="0 0 78 50" aria-hidden="true"></svg> };
     }
     let step = (WIDE / f64::from(columns.max(1))).min(13.5);
     let row = (HIGH / f64::from(longest)).min(17.4);
@@ -259,18 +250,15 @@ fn picture(groups: &[Group], left_over: u32) -> AnyView {
     let mut rects = Vec::new();
     let mut column = 0_u32;
     let mut rect = |column: u32, place: u32, spare: bool| {
-        rects.push(
-            view! {
-                <rect
-                    class:spare=spare
-                    x=format!("{:.1}", left + step * f64::from(column))
-                    y=format!("{:.1}", top + row * f64::from(place))
-                    width=format!("{width:.1}")
-                    height=format!("{height:.1}")
-                ></rect>
-            }
-            .into_any(),
-        );
+        rects.push(view! {
+            <rect
+                class:spare=spare
+                x=format!("{:.1}", left + step * f64::from(column))
+                y=format!("{:.1}", top + row * f64::from(place))
+                width=format!("{width:.1}")
+                height=format!("{height:.1}")
+            ></rect>
+        });
     };
     for group in groups {
         for _ in 0..group.strings {
@@ -281,5 +269,5 @@ fn picture(groups: &[Group], left_over: u32) -> AnyView {
     for spare in 0..left_over {
         rect(column + spare / longest, spare % longest, true);
     }
-    view! { <svg class="pic" width="78" height="50" viewBox="0 0 78 50" aria-hidden="true">{rects}</svg> }.into_any()
+    view! { <svg class="pic" width="78" height="50" viewBox="0 0 78 50" aria-hidden="true">{rects}</svg> }
 }

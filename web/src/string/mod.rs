@@ -6,6 +6,7 @@ mod fields;
 mod layouts;
 mod question;
 
+use crate::piece::Piece;
 use leptos::prelude::*;
 
 use question::Question;
@@ -24,7 +25,7 @@ const CAUTIONS: &[&str] = &[
 ];
 
 /// The String tool.
-pub fn string_tool() -> AnyView {
+pub fn string_tool() -> Piece {
     let draft = use_draft();
     // Read once for each change; whatever hangs on it is told only where it differs.
     let question = memo(move || draft.with(Question::read));

@@ -1,0 +1,97 @@
+//! Pieces of the page: what `view!` makes and what the browser shows of it.
+//!
+//! A piece is made anew whenever what it reads changes, and is then set against what stands there ([`State::take`]): only
+//! what differs is touched, so that a field that is typed into keeps its cursor and a button its focus.
+//!
+//! One type for all of them, and no code that is made once for each view: two fifths of the page were that code.
+
+mod filled;
+mod hole;
+mod shape;
+mod state;
+mod value;
+
+use std::borrow::Cow;
+
+use leptos::prelude::*;
+
+pub use filled::Filled;
+pub use markup::view;
+pub use shape::Shape;
+pub use state::{Mounted, mount};
+pub use value::{IntoValue, Value};
+
+/// A piece of the page, not yet in it.
+pub enum Piece {
+    /// Nothing.
+    Nothing,
+    /// Text.
+    Text(Cow<'static, str>),
+    /// Markup with its values.
+    Filled(Filled),
+    /// Several, one after the other.
+    Many(Vec<Piece>),
+    /// Made again whenever what it reads changes.
+    Live(Box<dyn Fn() -> Piece>),
+}
+
+/// What can stand among the children of an element.
+pub trait IntoPiece {
+    /// It as a piece.
+    fn piece(self) -> Piece;
+}
+
+impl IntoPiece for Piece {
+    fn piece(self) -> Piece {
+        self
+    }
+}
+
+impl IntoPiece for () {
+    fn piece(self) -> Piece {
+        Piece::Nothing
+    }
+}
+
+impl IntoPiece for &'static str {
+    fn piece(self) -> Piece {
+        Piece::Text(Cow::Borrowed(self))
+    }
+}
+
+impl IntoPiece for String {
+    fn piece(self) -> Piece {
+        Piece::Text(Cow::Owned(self))
+    }
+}
+
+impl<T: IntoPiece> IntoPiece for Option<T> {
+    fn piece(self) -> Piece {
+        self.map_or(Piece::Nothing, T::piece)
+    }
+}
+
+impl<T: IntoPiece> IntoPiece for Vec<T> {
+    fn piece(self) -> Piece {
+        Piece::Many(self.into_iter().map(T::piece).collect())
+    }
+}
+
+impl<F: Fn() -> T + 'static, T: IntoPiece> IntoPiece for F {
+    fn piece(self) -> Piece {
+        Piece::Live(Box::new(move || self().piece()))
+    }
+}
+
+/// What is read again whenever it changes.
+macro_rules! read_again {
+    ($($kind:ident),*) => {$(
+        impl<T: IntoPiece + Clone + Send + Sync + 'static> IntoPiece for $kind<T> {
+            fn piece(self) -> Piece {
+                Piece::Live(Box::new(move || self.get().piece()))
+            }
+        }
+    )*};
+}
+
+read_again!(Signal, Memo, RwSignal, ReadSignal);
