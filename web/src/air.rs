@@ -1,5 +1,6 @@
 //! The Air and water tool: fresh air, openings, distance from sparks, water a month, freezing.
 
+use crate::derived::memo;
 use crate::piece::{Piece, view};
 use engine::bank::{
     AirAndWater, Ask, Layout, Requirement, air_and_water, assess, counts_lack, settled as with_counts, working,
@@ -8,12 +9,10 @@ use engine::check::{Check, Cost, FieldSet, Verdict};
 use engine::field::Field;
 use engine::quantity::{Quantity, SquareCentimetres};
 use engine::show;
-use leptos::prelude::*;
 
 use crate::answer::{Answer, besides, rests_on};
 use crate::cells::{bank, check_rows, hints, in_series, short};
 use crate::check_row::against;
-use crate::derived::memo;
 use crate::form::{Form, names};
 use crate::settled::settled;
 use crate::span_bar::Bar;

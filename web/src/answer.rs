@@ -4,12 +4,12 @@
 
 use std::borrow::Cow;
 
+use crate::derived::{Memo, dynamic, memo, when};
 use crate::piece::{Piece, view};
 use engine::check::{Check, Cost, FieldSet, Verdict};
 use engine::show;
 use leptos::prelude::*;
 
-use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::use_draft;
 use crate::form::names;
 use crate::pads::{Edit, Place, Typed};
@@ -179,7 +179,7 @@ fn offer(answer: Memo<Option<Answer>>) -> Piece {
     when(
         move || offered.with(Option::is_some),
         move || {
-            let words = derived(move || offered.get().map_or_else(String::new, |offer| offer.words));
+            let words = memo(move || offered.get().map_or_else(String::new, |offer| offer.words));
             view! {
                 <div class="btns">
                     <button class="btn small" type="button" on:click=take>{words}</button>

@@ -1,5 +1,6 @@
 //! The Checks view: every check of the open site, worst first.
 
+use crate::derived::dynamic;
 use crate::piece::{Piece, view};
 use engine::check::{Cost, Verdict};
 use engine::field::Field;
@@ -7,7 +8,6 @@ use engine::site::{place_name, working};
 use leptos::prelude::*;
 
 use crate::check_row::check_row;
-use crate::derived::dynamic;
 use crate::line::{assessed, link, open_site};
 use crate::route::Route;
 

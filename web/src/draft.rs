@@ -2,12 +2,12 @@
 //!
 //! All writing goes through [`Draft::edit`]; keeping and undo hang there and nowhere else.
 
-use crate::derived::memo;
 use bridge::Kept;
 use engine::site::Subject;
 use leptos::prelude::*;
 
 use crate::clock;
+use crate::derived::{Memo, memo};
 use crate::keep::{Keeper, ToKeep};
 use crate::pads::{Edit, OpenSite, Pads, Place, Typed, What};
 use crate::theme::Theme;
@@ -102,12 +102,12 @@ impl Draft {
 
     /// Computes something from all that was typed, again at each change.
     pub fn with<T>(self, compute: impl FnOnce(&Pads) -> T) -> T {
-        self.pads.with(compute)
+        compute(&self.pads.read())
     }
 
     /// The same, once.
     pub fn with_now<T>(self, compute: impl FnOnce(&Pads) -> T) -> T {
-        self.pads.with_untracked(compute)
+        compute(&self.pads.read_untracked())
     }
 
     /// What an undo would take back.

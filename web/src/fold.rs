@@ -1,6 +1,6 @@
 //! Folds: unfold in place, and stay as they were left.
 
-use crate::derived::{derived, memo, when};
+use crate::derived::{Memo, memo, when};
 use crate::piece::{Piece, view};
 use std::rc::Rc;
 
@@ -56,7 +56,7 @@ impl Default for Folds {
 pub fn fold(
     id: impl Into<String>,
     title: &'static str,
-    says: Signal<String>,
+    says: Memo<String>,
     inside: impl Fn() -> Piece + 'static,
 ) -> Piece {
     marked_fold(None, id.into(), title, says, Rc::new(inside))
@@ -67,7 +67,7 @@ pub fn marked_fold(
     symbol: Option<&'static str>,
     id: String,
     title: &'static str,
-    says: Signal<String>,
+    says: Memo<String>,
     inside: Rc<dyn Fn() -> Piece>,
 ) -> Piece {
     let folds = expect_context::<Folds>();
@@ -79,8 +79,8 @@ pub fn marked_fold(
             <button
                 class="fold-head"
                 type="button"
-                aria-expanded=derived(move || open.get().to_string())
-                aria-controls=derived(move || open.get().then(body))
+                aria-expanded=move || open.get().to_string()
+                aria-controls=move || open.get().then(body)
                 on:click=move |_| id.with_value(|id| folds.turn(id))
             >
                 {symbol.map(|name| icon(name, ""))}

@@ -2,12 +2,12 @@
 
 use std::sync::Arc;
 
+use crate::derived::memo;
 use crate::piece::{Piece, view};
 use engine::check::FieldSet;
 use engine::field::Field;
 use leptos::prelude::*;
 
-use crate::derived::derived;
 use crate::draft::use_draft;
 use crate::field::{FieldOf, Said, StandIn};
 use crate::fold::{Folds, fold};
@@ -62,7 +62,7 @@ impl Form {
 /// The inputs of a tool.
 pub fn form(form: &'static Form, hints: &Hints) -> Piece {
     let draft = use_draft();
-    let says = derived(move || {
+    let says = memo(move || {
         let blank = |field: &&Field| draft.with(|pads| pads.typed((form.tool.pad(), **field)).text.is_empty());
         let rest = || form.groups.iter().flat_map(|(_, fields)| fields.iter());
         match rest().count() - rest().filter(blank).count() {
@@ -98,10 +98,10 @@ fn one(form: &'static Form, field: Field, hints: &Hints) -> Piece {
     let (tool, label) = (form.tool.pad(), (form.short)(field));
     let told = |told: &Told<String>| {
         let told = told.clone();
-        derived(move || told(field))
+        memo(move || told(field))
     };
     let stands_in = hints.stands_in.clone();
-    let stands_in = derived(move || stands_in(field));
+    let stands_in = memo(move || stands_in(field));
     let asks = told(&hints.waits);
     let note = told(&hints.note);
     FieldOf { tool, field, label: Some(label), of: None, said: Said { assumed: stands_in, asks, note } }.shown()

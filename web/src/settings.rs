@@ -2,6 +2,7 @@
 
 use std::sync::Arc;
 
+use crate::derived::memo;
 use crate::piece::{Piece, view};
 use engine::bank::{
     Ask, Layout, Requirement, Setting, Settings, counts_lack, settings, settings_working, settled as with_counts,
@@ -9,11 +10,9 @@ use engine::bank::{
 use engine::check::{Cost, FieldSet, Verdict};
 use engine::field::Field;
 use engine::show;
-use leptos::prelude::*;
 
 use crate::answer::{Answer, besides};
 use crate::cells::{assumed, bank, empty_bar, in_series, short, stands_in, window_bar};
-use crate::derived::memo;
 use crate::form::{Form, Hints, names, waits};
 use crate::settled::settled;
 use crate::tool_page::{ToolPage, section, tool_page};

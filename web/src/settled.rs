@@ -1,5 +1,6 @@
 //! A value a moment after it last changed. The answer is painted at once; what else hangs on it may follow.
 
+use crate::derived::{Memo, follower};
 use std::sync::Arc;
 use std::time::Duration;
 
@@ -10,14 +11,14 @@ use leptos::prelude::*;
 const MOMENT: Duration = Duration::from_millis(30);
 
 /// `value`, told only once it has rested.
-pub fn settled<T: Clone + PartialEq + Send + Sync + 'static>(value: Memo<T>) -> ReadSignal<T> {
+pub fn settled<T: Clone + PartialEq + Send + Sync + 'static>(value: Memo<T>) -> Memo<T> {
     rested(value, MOMENT)
 }
 
 /// `value`, told only once it has rested so long.
-pub fn rested<T: Clone + PartialEq + Send + Sync + 'static>(value: Memo<T>, moment: Duration) -> ReadSignal<T> {
-    let (settled, settle) = signal(value.get_untracked());
-    on_rest(Box::new(move || value.track()), Arc::new(move || settle.set(value.get_untracked())), moment);
+pub fn rested<T: Clone + PartialEq + Send + Sync + 'static>(value: Memo<T>, moment: Duration) -> Memo<T> {
+    let (settled, settle) = follower(value);
+    on_rest(Box::new(move || value.track()), Arc::new(settle), moment);
     settled
 }
 

@@ -1,6 +1,6 @@
 //! The Sheet view: what is kept on this phone, saved to a file, opened from one, or forgotten.
 
-use crate::derived::{derived, dynamic, memo, when};
+use crate::derived::{Memo, dynamic, memo, when};
 use crate::piece::{IntoPiece, Piece, view};
 use leptos::prelude::*;
 use wasm_bindgen_futures::spawn_local;
@@ -122,11 +122,10 @@ fn this_site(said: RwSignal<String>) -> Piece {
     when(
         move || has.get(),
         move || {
-            let title = derived(move || {
+            let title = memo(move || {
                 draft.with(|pads| pads.site().map(|open| named(&open.site.name).to_owned())).unwrap_or_default()
             });
-            let link =
-                derived(move || draft.with(|pads| pads.site().map(|open| link_of(&open.site))).unwrap_or_default());
+            let link = memo(move || draft.with(|pads| pads.site().map(|open| link_of(&open.site))).unwrap_or_default());
             view! {
                 <h2 class="sub">{title} <span>"the open site"</span></h2>
                 <div class="btns">
@@ -207,7 +206,7 @@ fn paste(said: RwSignal<String>) -> Piece {
                 type="text"
                 aria-label="Pasted link or file"
                 autocomplete="off"
-                prop:value=derived(move || typed.get())
+                prop:value=move || typed.get()
                 on:input=move |event| typed.set(event_target_value(&event))
             />
         </label>

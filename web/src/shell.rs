@@ -1,6 +1,6 @@
 //! What stands around every view: the top line, the notices and the bottom bar.
 
-use crate::derived::{derived, memo, when};
+use crate::derived::{Memo, memo, when};
 use crate::piece::{Piece, view};
 use leptos::ev::{self, KeyboardEvent};
 use leptos::prelude::*;
@@ -182,7 +182,7 @@ fn undo_buttons() -> Piece {
         {when(move || redoes.get().is_some(), move || view! { <button
                 class="icon-btn redo"
                 type="button"
-                aria-label=derived(move || name("Redo", redoes.get()))
+                aria-label=move || name("Redo", redoes.get())
                 on:click=move |_| make(Edit::Redo, "Made again", redoes.get_untracked())
             >
                 {icon("i-undo", "")}
@@ -190,8 +190,8 @@ fn undo_buttons() -> Piece {
         {when(move || undoes.get().is_some() || redoes.get().is_some(), move || view! { <button
                 class="icon-btn"
                 type="button"
-                aria-label=derived(move || name("Undo", undoes.get()))
-                aria-disabled=derived(move || undoes.get().is_none().then_some("true"))
+                aria-label=move || name("Undo", undoes.get())
+                aria-disabled=move || undoes.get().is_none().then_some("true")
                 on:click=move |_| make(Edit::Undo, "Undone", undoes.get_untracked())
             >
                 {icon("i-undo", "")}
@@ -206,7 +206,7 @@ fn light_button() -> Piece {
         <button
             class="icon-btn"
             type="button"
-            aria-label=derived(move || format!("Light: {}. Change to {}", draft.theme().name(), draft.theme().next().name()))
+            aria-label=move || format!("Light: {}. Change to {}", draft.theme().name(), draft.theme().next().name())
             on:click=move |_| draft.set_theme(untrack(|| draft.theme().next()))
         >
             {icon("i-light", "")}

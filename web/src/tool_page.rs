@@ -3,11 +3,9 @@
 use engine::check::Step;
 use std::rc::Rc;
 
-use leptos::prelude::*;
-
 use crate::answer::{Answer, answer_view, ride};
 use crate::caution;
-use crate::derived::{derived, dynamic, when};
+use crate::derived::{Memo, dynamic, memo, when};
 use crate::fold::marked_fold;
 use crate::form::{Form, Hints, form};
 use crate::piece::{IntoPiece, Piece, view};
@@ -50,7 +48,7 @@ pub fn tool_page(page: ToolPage) -> Piece {
                     Some("i-work"),
                     format!("{}/working", inputs.tool.key()),
                     "Working",
-                    derived(|| "how this number is made".to_owned()),
+                    memo(|| "how this number is made".to_owned()),
                     Rc::new(move || {
                         let steps = Rc::clone(&steps);
                         dynamic(move || working::list(steps()))
@@ -96,7 +94,7 @@ fn head(name: &'static str) -> Piece {
         Some(subject) => {
             let site = crate::line::open_site();
             view! {
-                <h1 tabindex="-1">{derived(move || crate::line::title(site, subject))}</h1>
+                <h1 tabindex="-1">{move || crate::line::title(site, subject)}</h1>
                 <a class="aside" href=Route::Line.href()>"Line"</a>
             }
         }

@@ -7,6 +7,7 @@ use leptos::prelude::*;
 use wasm_bindgen::prelude::*;
 use wasm_bindgen_futures::JsFuture;
 use wasm_bindgen_test::{wasm_bindgen_test, wasm_bindgen_test_configure};
+use web::derived::memo;
 use web::draft::Draft;
 use web::field::{FieldOf, Said, StandIn};
 use web::fold::{Folds, fold};
@@ -188,7 +189,7 @@ async fn undo_brings_back_what_was_typed() {
 async fn what_is_assumed_is_shown_with_its_reason_and_source() {
     let stage = stage(|| {
         let stand_in = engine::assumed::of(Field::VocTolerance).map(|assumption| StandIn::of(&assumption));
-        let said = Said { assumed: Signal::stored(stand_in), ..Said::default() };
+        let said = Said { assumed: memo(move || stand_in.clone()), ..Said::default() };
         FieldOf { said, ..FieldOf::new(Tool::String, Field::VocTolerance) }.shown()
     });
     settle().await;
@@ -244,8 +245,7 @@ async fn holding_a_step_repeats_and_letting_go_ends_it() {
 
 #[wasm_bindgen_test]
 async fn a_fold_makes_its_inside_only_when_it_is_opened() {
-    let stage =
-        stage(|| fold("test/more", "More", Signal::stored(String::new()), || view! { <p class="inside">"here"</p> }));
+    let stage = stage(|| fold("test/more", "More", memo(String::new), || view! { <p class="inside">"here"</p> }));
     assert!(stage.find(".inside").is_none());
     let head: HtmlElement = stage.find(".fold-head").unwrap().unchecked_into();
     head.click();

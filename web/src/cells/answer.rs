@@ -69,7 +69,7 @@ fn of(pad: &impl Pad, ask: &Ask, layout: Option<&Layout>) -> String {
     };
     let bus = as_entered(pad, Field::BusVoltage).map_or_else(String::new, |bus| format!(" for a {bus} bus"));
     let mut letters = format!("{what}{bus}");
-    if let Some(first) = letters.get(..1).map(str::to_uppercase) {
+    if let Some(first) = letters.get(..1).map(str::to_ascii_uppercase) {
         letters.replace_range(..1, &first);
     }
     letters

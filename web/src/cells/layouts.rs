@@ -1,17 +1,16 @@
 //! Every layout of the cells at hand, ranked; those that are refused, nearest first, with the reason.
 
+use crate::derived::{Memo, dynamic, memo};
 use crate::piece::{Piece, view};
 use engine::bank::{Ask, Layout, layouts};
 use engine::check::Verdict;
 use engine::field::Field;
 use engine::quantity::{Count, Hours, Quantity};
 use engine::show;
-use leptos::prelude::*;
 
 use super::TOOL;
 use super::answer::{energy, in_series, window_bar};
 use crate::check_row::against;
-use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
 use crate::fold::fold;
 use crate::pads::{Edit, Typed};
@@ -23,7 +22,7 @@ use crate::verdict::{cost_mark, tells_cost, verdict_mark};
 const SHOWN: usize = 4;
 
 /// The layouts, once cells and bus are known.
-pub fn layout_list(ask: ReadSignal<Ask>) -> Piece {
+pub fn layout_list(ask: Memo<Ask>) -> Piece {
     section(
         "Layouts",
         "best first",
@@ -40,7 +39,7 @@ pub fn layout_list(ask: ReadSignal<Ask>) -> Piece {
             let none = none.then(|| view! { <p class="ranked-say">"None holds. See why below."</p> });
             let more = (others > 0).then(|| {
                 view! {
-                    {fold("cells/others", "The others", derived(move || format!("{others} more")), move || view! {                         {dynamic(move || ask.with(the_others))}
+                    {fold("cells/others", "The others", memo(move || format!("{others} more")), move || view! {                         {dynamic(move || ask.with(the_others))}
                      })}
                 }
             });

@@ -9,6 +9,7 @@ pub use answer::{assumed, empty_bar, in_series, window_bar};
 
 use std::sync::Arc;
 
+use crate::derived::{Memo, dynamic, memo, when};
 use crate::piece::{Piece, view};
 use engine::bank::{Ask, Requirement, assess, assumption, lacks, settled as with_counts, working};
 use engine::check::{Check, FieldSet, Step};
@@ -16,7 +17,6 @@ use engine::field::Field;
 use leptos::prelude::*;
 
 use crate::check_row::check_row;
-use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::use_draft;
 use crate::field::StandIn;
 use crate::fold::{Folds, fold};
@@ -159,7 +159,7 @@ pub fn hints(ask: Memo<Ask>, lacks: fn(&Ask) -> FieldSet, checks: Memo<Vec<Check
 }
 
 /// The rows of a bank's checks on the page of `form`.
-pub fn check_rows(form: &'static Form, ask: ReadSignal<Ask>, checks: Memo<Vec<Check<Requirement>>>) -> Piece {
+pub fn check_rows(form: &'static Form, ask: Memo<Ask>, checks: Memo<Vec<Check<Requirement>>>) -> Piece {
     let folds = expect_context::<Folds>();
     let go = Callback::new(move |field: Field| form.go_to(folds, field));
     check_list(move || {
@@ -215,7 +215,7 @@ fn energy(ask: Memo<Ask>) -> Piece {
         move || counted.with(|ask| engine::bank::energy(ask).is_some()),
         move || {
             view! {
-                {fold("cells/energy", "Energy", derived(|| "in this room, at this load".to_owned()), move || view! {                     {dynamic(move || {
+                {fold("cells/energy", "Energy", memo(|| "in this room, at this load".to_owned()), move || view! {                     {dynamic(move || {
                         let steps = counted.with(engine::bank::energy_working);
                         crate::working::list(steps)
                     })}

@@ -2,6 +2,7 @@
 
 use std::sync::Arc;
 
+use crate::derived::{Memo, dynamic, memo};
 use crate::piece::{Piece, view};
 use engine::bank::{Ask, AtRest, RESTED_AT, at_rest};
 use engine::chemistry::Family;
@@ -10,10 +11,8 @@ use engine::field::Field;
 use engine::pad::Pad;
 use engine::quantity::{Celsius, Quantity, Volts};
 use engine::show;
-use leptos::prelude::*;
 
 use super::{FORM, TOOL};
-use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
 use crate::field::{StandIn, Stands};
 use crate::fold::fold;
@@ -25,7 +24,7 @@ use crate::working::cited;
 const FIELDS: [Field; 2] = [Field::RestVoltages, Field::BankTemperature];
 
 /// Voltages read on cells that have rested, and what they tell.
-pub fn reading(ask: ReadSignal<Ask>) -> Piece {
+pub fn reading(ask: Memo<Ask>) -> Piece {
     let stands_in = |field| {
         (field == Field::BankTemperature).then(|| StandIn {
             stands: Stands::Amount(RESTED_AT.amount()),
@@ -35,7 +34,7 @@ pub fn reading(ask: ReadSignal<Ask>) -> Piece {
     };
     let hints = Hints { stands_in: Arc::new(stands_in), waits: Arc::new(|_| None), note: Arc::new(|_| None) };
     view! {
-        {fold("cells/rest", "Cells at rest", derived(|| "charge, and the odd ones".to_owned()), move || view! {             <div class="fields">{fields_of(&FORM, &FIELDS, &hints)}</div>
+        {fold("cells/rest", "Cells at rest", memo(|| "charge, and the odd ones".to_owned()), move || view! {             <div class="fields">{fields_of(&FORM, &FIELDS, &hints)}</div>
             {dynamic(move || {
                 let told = use_draft().with(|pads| ask.with(|ask| told(&pads.of(TOOL), ask)));
                 match told {

@@ -1,5 +1,6 @@
 //! Strings side by side: what each carries, by where the bank's leads are taken off.
 
+use crate::derived::{Memo, dynamic, memo, when};
 use crate::piece::{Piece, view};
 use engine::bank::{Ask, shares};
 use engine::choice::words;
@@ -7,9 +8,7 @@ use engine::field::Field;
 use engine::quantity::Percent;
 use engine::sharing::Arrangement;
 use engine::show;
-use leptos::prelude::*;
 
-use crate::derived::{derived, dynamic, when};
 use crate::fold::fold;
 use crate::tool_page::figures;
 
@@ -17,12 +16,12 @@ use crate::tool_page::figures;
 const TOLD: usize = 8;
 
 /// The shares for every take-off, where strings stand side by side.
-pub fn sharing(ask: ReadSignal<Ask>) -> Piece {
+pub fn sharing(ask: Memo<Ask>) -> Piece {
     when(
         move || ask.with(|ask| shares(ask).is_some()),
         move || {
             view! {
-                {fold("cells/sharing", "Sharing", derived(|| "string by string, by take-off".to_owned()), move || view! {                     {dynamic(move || ask.with(told))}
+                {fold("cells/sharing", "Sharing", memo(|| "string by string, by take-off".to_owned()), move || view! {                     {dynamic(move || ask.with(told))}
                  })}
             }
         },

@@ -1,6 +1,6 @@
 //! A field that takes one of a short list.
 
-use crate::derived::{derived, dynamic, memo};
+use crate::derived::{Memo, dynamic, memo};
 use crate::piece::{IntoPiece, Piece, view};
 use engine::field::Takes;
 use engine::typed::Refusal;
@@ -58,25 +58,25 @@ fn list(
     // Half the width of a phone would cut the words short.
     let wide = choices.iter().any(|(_, words)| words.len() > LONG);
     view! {
-        <div class=derived(move || format!("{}{}", parts.class(), if wide { " wide" } else { "" }))>
+        <div class=move || format!("{}{}", parts.class(), if wide { " wide" } else { "" })>
             {parts.head(label)}
             <div class="field-box">
                 <select
                     id=parts.id()
                     aria-label=name
-                    aria-describedby=derived(move || parts.described_by())
-                    aria-invalid=derived(move || parts.invalid())
-                    prop:value=derived(text)
+                    aria-describedby=move || parts.described_by()
+                    aria-invalid=move || parts.invalid()
+                    prop:value=text
                     on:change=move |event| choose(event_target_value(&event))
                 >
-                    <option value="" selected=derived(move || text().is_empty())>{none}</option>
+                    <option value="" selected=move || text().is_empty()>{none}</option>
                     {choices
                         .iter()
                         .map(|(key, words)| {
-                            view! { <option value=*key selected=derived(move || text() == *key)>{*words}</option> }
+                            view! { <option value=*key selected=move || text() == *key>{*words}</option> }
                         })
                         .collect::<Vec<Piece>>()}
-                    {dynamic(move || strange().map(|text| view! { <option value=text.clone() selected=derived(|| true)>{text.clone()}</option> }).piece())}
+                    {dynamic(move || strange().map(|text| view! { <option value=text.clone() selected=|| true>{text.clone()}</option> }).piece())}
                 </select>
             </div>
             {parts.foot()}

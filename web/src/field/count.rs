@@ -2,7 +2,6 @@
 
 use std::time::Duration;
 
-use crate::derived::derived;
 use crate::piece::{Piece, view};
 use engine::field::Takes;
 use engine::unit::Unit;
@@ -49,10 +48,10 @@ pub fn count_field(of: FieldOf) -> Piece {
                     aria-label=of.name()
                     inputmode="numeric"
                     autocomplete="off"
-                    placeholder=derived(move || stand_in().map(|number| number.to_string()))
-                    aria-describedby=derived(move || parts.described_by())
-                    aria-invalid=derived(move || parts.invalid())
-                    prop:value=derived(move || parts.typed.with(|typed| typed.text.clone()))
+                    placeholder=move || stand_in().map(|number| number.to_string())
+                    aria-describedby=move || parts.described_by()
+                    aria-invalid=move || parts.invalid()
+                    prop:value=move || parts.typed.with(|typed| typed.text.clone())
                     on:input=move |event| {
                         parts.patience.begin();
                         parts.draft.edit(Edit::Type(parts.place, event_target_value(&event)));

@@ -12,7 +12,7 @@ pub use list::list_field;
 
 use std::time::Duration;
 
-use crate::derived::{dynamic, memo, when};
+use crate::derived::{Memo, dynamic, memo, when};
 use crate::piece::{IntoPiece, Piece, view};
 use engine::check::Assumption;
 use engine::field::{Field, Takes};
@@ -100,14 +100,20 @@ struct Parts {
 }
 
 /// What may be said beside a field.
-#[derive(Clone, Copy, Default)]
+#[derive(Clone, Copy)]
 pub struct Said {
     /// What stands in while it is blank.
-    pub assumed: Signal<Option<StandIn>>,
+    pub assumed: Memo<Option<StandIn>>,
     /// What waits for it, while it is blank.
-    pub asks: Signal<Option<String>>,
+    pub asks: Memo<Option<String>>,
     /// What else is said under it.
-    pub note: Signal<Option<String>>,
+    pub note: Memo<Option<String>>,
+}
+
+impl Default for Said {
+    fn default() -> Self {
+        Self { assumed: memo(|| None), asks: memo(|| None), note: memo(|| None) }
+    }
 }
 
 /// A field, where it stands and what is said of it.

@@ -1,6 +1,6 @@
 //! A field that takes a number with a unit.
 
-use crate::derived::{derived, when};
+use crate::derived::when;
 use crate::piece::{Piece, view};
 use engine::field::{Field, Takes};
 use engine::show;
@@ -33,10 +33,10 @@ pub fn number_field(of: FieldOf) -> Piece {
                     autocomplete="off"
                     autocapitalize="off"
                     spellcheck="false"
-                    placeholder=derived(stand_in)
-                    aria-describedby=derived(move || parts.described_by())
-                    aria-invalid=derived(move || parts.invalid())
-                    prop:value=derived(move || parts.typed.with(|typed| typed.text.clone()))
+                    placeholder=stand_in
+                    aria-describedby=move || parts.described_by()
+                    aria-invalid=move || parts.invalid()
+                    prop:value=move || parts.typed.with(|typed| typed.text.clone())
                     on:input=move |event| {
                         parts.patience.begin();
                         parts.draft.edit(Edit::Type(parts.place, event_target_value(&event)));

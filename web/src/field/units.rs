@@ -1,6 +1,5 @@
 //! The unit chip: the unit that counts, and the plain list of the others.
 
-use crate::derived::derived;
 use crate::piece::{Piece, view};
 use engine::unit::Unit;
 use leptos::ev::{FocusEvent, KeyboardEvent};
@@ -27,8 +26,8 @@ pub fn unit_chip(parts: Parts, usual: Unit, open: RwSignal<bool>) -> Piece {
             class="unit"
             type="button"
             id=format!("{}-unit", parts.id())
-            aria-label=derived(move || format!("{}, unit {}. Change unit", parts.field().name(), symbol()))
-            aria-expanded=derived(move || open.get().to_string())
+            aria-label=move || format!("{}, unit {}. Change unit", parts.field().name(), symbol())
+            aria-expanded=move || open.get().to_string()
             on:click=move |_| open.update(|open| *open = !*open)
         >
             {symbol}

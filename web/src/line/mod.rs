@@ -5,13 +5,13 @@ mod part;
 mod rows;
 mod what_if;
 
+use crate::derived::{Memo, dynamic, memo, when};
 use crate::piece::{IntoPiece, Piece, view};
 use engine::check::Verdict;
 use engine::show;
 use engine::site::{Assessment, PartId, PartKind, Place, Site, SiteCheck, Subject, assess, place_name};
 use leptos::prelude::*;
 
-use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::use_draft;
 use crate::pads::{Edit, SiteEdit};
 use crate::route::Route;
@@ -45,7 +45,7 @@ pub fn line_view(subject: Option<Subject>) -> Piece {
 fn column(site: Memo<Option<Site>>, subject: Option<Subject>) -> Piece {
     let draft = use_draft();
     let found = assessed(site);
-    let name = derived(move || site.with(|site| site.as_ref().map(|site| site.name.clone()).unwrap_or_default()));
+    let name = memo(move || site.with(|site| site.as_ref().map(|site| site.name.clone()).unwrap_or_default()));
     let rows = dynamic(move || {
         site.with(|site| {
             found.with(|found| match site {
@@ -152,7 +152,7 @@ fn adding() -> Piece {
             <button
                 class="btn"
                 type="button"
-                aria-expanded=derived(move || open.get().to_string())
+                aria-expanded=move || open.get().to_string()
                 on:click=move |_| open.update(|open| *open = !*open)
             >
                 "Add a part"

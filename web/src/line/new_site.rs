@@ -1,5 +1,6 @@
 //! No site is open: six taps make one, or a kept one or a demonstration is opened.
 
+use crate::derived::{dynamic, when};
 use crate::piece::{IntoPiece, Piece, view};
 use engine::chemistry::Chemistry;
 use engine::choice::Choice;
@@ -8,7 +9,6 @@ use engine::site::{Got, start};
 use leptos::prelude::*;
 use wasm_bindgen_futures::spawn_local;
 
-use crate::derived::{derived, dynamic, when};
 use crate::draft::use_draft;
 use crate::pads::{Edit, OpenSite, SiteEdit};
 
@@ -147,7 +147,7 @@ pub fn kept() -> Piece {
                     .piece()
             });
             view! {
-                <h2 class="sub">"On this phone" <span>{derived(move || format!("{} kept", sites.with(Vec::len)))}</span></h2>
+                <h2 class="sub">"On this phone" <span>{move || format!("{} kept", sites.with(Vec::len))}</span></h2>
                 <ul class="kept-sites">{rows}</ul>
             }
         },

@@ -2,6 +2,7 @@
 
 use std::sync::Arc;
 
+use crate::derived::{Memo, dynamic, memo};
 use crate::piece::{Piece, view};
 use engine::field::Field;
 use engine::site::{PartId, PartKind, Place, Site, Subject, place_name, working};
@@ -9,7 +10,6 @@ use leptos::prelude::*;
 
 use super::assessed;
 use crate::check_row::check_row;
-use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
 use crate::field::StandIn;
 use crate::form::{Form, Hints, fields_of};
@@ -136,7 +136,7 @@ pub fn part_page(subject: Subject, site: Memo<Option<Site>>) -> Piece {
         },
         None => view! {
             <div class="page-head">
-                <h1 tabindex="-1">{derived(move || title(site, subject))}</h1>
+                <h1 tabindex="-1">{move || title(site, subject)}</h1>
                 <a class="aside" href=Route::Line.href()>"Line"</a>
             </div>
             <div class="fields">{fields}</div>
@@ -202,7 +202,7 @@ fn checks(subject: Subject, site: Memo<Option<Site>>, of_site_only: bool) -> Pie
 fn acts(subject: Subject) -> Piece {
     let Subject::Part(id) = subject else { return Piece::Nothing };
     let draft = use_draft();
-    let name = derived(move || {
+    let name = memo(move || {
         draft.with(|pads| {
             let part = pads.site().and_then(|open| open.site.part(id));
             part.map(|part| part.name.clone()).unwrap_or_default()

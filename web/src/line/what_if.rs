@@ -1,5 +1,6 @@
 //! What if this opens? One breaker, fuse, protection or bond set open, until it is closed again. Never kept, never printed.
 
+use crate::derived::{Memo, dynamic, memo};
 use crate::piece::{IntoPiece, Piece, view};
 use engine::quantity::Quantity;
 use engine::show;
@@ -7,7 +8,6 @@ use engine::site::what_if::{Effect, Meaning, NotTold, Opens, Sun, openable, what
 use engine::site::{Place, Site, place_name};
 use leptos::prelude::*;
 
-use crate::derived::{derived, dynamic};
 use crate::fold::fold;
 use crate::form::names;
 use crate::verdict::cost_mark;
@@ -32,7 +32,7 @@ pub fn what_if(site: Memo<Option<Site>>) -> Piece {
     });
     view! {
         {answer}
-        {fold("line/what-if", "What if this opens?", derived(|| "breaker, fuse, protection, bond".to_owned()), move || view! {             <div class="btns">{choices()}</div>
+        {fold("line/what-if", "What if this opens?", memo(|| "breaker, fuse, protection, bond".to_owned()), move || view! {             <div class="btns">{choices()}</div>
          })}
     }
 }

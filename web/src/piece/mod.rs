@@ -15,6 +15,8 @@ use std::borrow::Cow;
 
 use leptos::prelude::*;
 
+use crate::derived::Memo;
+
 pub use filled::Filled;
 pub use markup::view;
 pub use shape::Shape;
@@ -94,4 +96,10 @@ macro_rules! read_again {
     )*};
 }
 
-read_again!(Signal, Memo, RwSignal, ReadSignal);
+read_again!(RwSignal);
+
+impl<T: IntoPiece + Clone + 'static> IntoPiece for Memo<T> {
+    fn piece(self) -> Piece {
+        Piece::Live(Box::new(move || self.get().piece()))
+    }
+}

@@ -4,6 +4,8 @@ use std::borrow::Cow;
 
 use leptos::prelude::*;
 
+use crate::derived::Memo;
+
 /// A value.
 pub enum Value {
     /// There is none: the attribute is away, the property is false.
@@ -69,7 +71,13 @@ macro_rules! read_again {
     )*};
 }
 
-read_again!(Signal, Memo, RwSignal, ReadSignal);
+read_again!(RwSignal);
+
+impl<T: IntoValue + Clone + 'static> IntoValue for Memo<T> {
+    fn value(self) -> Value {
+        Value::Live(Box::new(move || self.get().value()))
+    }
+}
 
 /// A value as it is now.
 #[derive(Clone, Debug, PartialEq, Eq)]

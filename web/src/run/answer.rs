@@ -104,7 +104,9 @@ fn of(pad: &impl Pad, ask: &Ask, sizing: Option<&Sizing>) -> String {
         text = format!("{text}, {} flows", show::computed(sizing.load.working.amount()));
     }
     let mut letters = text.chars();
-    letters.next().map_or_else(String::new, |first| first.to_uppercase().chain(letters).collect())
+    letters
+        .next()
+        .map_or_else(String::new, |first| std::iter::once(first.to_ascii_uppercase()).chain(letters).collect())
 }
 
 /// "Breaker 100 A".

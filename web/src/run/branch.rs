@@ -1,5 +1,6 @@
 //! Loads along one cable, as lights down a corridor: the volts at each.
 
+use crate::derived::{Memo, dynamic, memo, when};
 use crate::piece::{Piece, view};
 use engine::check::Verdict;
 use engine::field::Field;
@@ -8,10 +9,8 @@ use engine::quantity::{Count, Metres, Quantity, Watts};
 use engine::run::branched::{Along, AlongError, Draw, LoadAlong, along, evenly};
 use engine::run::{Ask, Kind};
 use engine::show;
-use leptos::prelude::*;
 
 use super::TOOL;
-use crate::derived::{derived, dynamic, when};
 use crate::draft::use_draft;
 use crate::field::{FieldOf, list_field};
 use crate::fold::fold;
@@ -20,11 +19,11 @@ use crate::tool_page::figures;
 use crate::verdict::verdict_mark;
 
 /// Loads along a run of direct current, folded away until somebody asks.
-pub fn branch(ask: ReadSignal<Ask>) -> Piece {
+pub fn branch(ask: Memo<Ask>) -> Piece {
     let direct = move || ask.with(|ask| matches!(ask.kind.typed(), Some(Kind::DcBranch | Kind::DcFeeder)));
     when(direct, move || {
         view! {
-            {fold("run/branch", "Lights along it", derived(|| "volts at each load".to_owned()), move || view! {                 <p class="ranked-say">
+            {fold("run/branch", "Lights along it", memo(|| "volts at each load".to_owned()), move || view! {                 <p class="ranked-say">
                     "Distances and watts, one for each load; or how many equal ones share the run’s current."
                 </p>
                 <div class="fields">
@@ -38,7 +37,7 @@ pub fn branch(ask: ReadSignal<Ask>) -> Piece {
     })
 }
 
-fn told(ask: ReadSignal<Ask>) -> Piece {
+fn told(ask: Memo<Ask>) -> Piece {
     let draft = use_draft();
     dynamic(move || {
         let loads = ask.with(|ask| draft.with(|pads| loads(&pads.of(TOOL), ask)));

@@ -1,16 +1,15 @@
 //! What else a run asks for: the breaker, lugs and terminals, what the table says, and why thinner conductors do not do.
 
+use crate::derived::{Memo, dynamic, memo};
 use crate::piece::{Piece, view};
 use engine::check::Verdict;
 use engine::quantity::Quantity;
 use engine::run::{Ask, BreakerType, Landing, Protection, Sizing, Thinner, reach, size};
 use engine::show;
-use leptos::prelude::*;
 
 use super::answer::precharge;
 use super::{fault, truck};
 use crate::check_row::against;
-use crate::derived::{derived, dynamic};
 use crate::fold::fold;
 use crate::form::names;
 use crate::tool_page::{figures, section};
@@ -19,7 +18,7 @@ use crate::verdict::verdict_mark;
 type Row = (String, String);
 
 /// Beside a run whose current was entered: what its cable would take at most. There while a size is entered.
-pub fn on_the_truck(ask: ReadSignal<Ask>) -> Piece {
+pub fn on_the_truck(ask: Memo<Ask>) -> Piece {
     section(
         "On the truck",
         "what this cable takes",
@@ -32,7 +31,7 @@ pub fn on_the_truck(ask: ReadSignal<Ask>) -> Piece {
 }
 
 /// What a short circuit would draw out of the bank, in a line with its verdict.
-pub fn short_circuit(ask: ReadSignal<Ask>) -> Piece {
+pub fn short_circuit(ask: Memo<Ask>) -> Piece {
     dynamic(move || {
         let settled = ask.with(truck::settled);
         let found = size(&settled).ok().and_then(|found| fault::fault(&settled, &found));
@@ -49,7 +48,7 @@ pub fn short_circuit(ask: ReadSignal<Ask>) -> Piece {
 }
 
 /// Breaker, lug and terminal, and why thinner conductors do not do.
-pub fn fitting(ask: ReadSignal<Ask>) -> Piece {
+pub fn fitting(ask: Memo<Ask>) -> Piece {
     let found = move || ask.with(|ask| size(&truck::settled(ask)).ok());
     section(
         "Fitting",
@@ -61,7 +60,7 @@ pub fn fitting(ask: ReadSignal<Ask>) -> Piece {
             view! {
                 {figures(fitting_rows(&found))}
                 {thinner(&found)}
-                {fold("run/amperes", "Amperes", derived(|| "flow, rule, table, corrections".to_owned()), move || view! {                     {figures(amperes.clone())}
+                {fold("run/amperes", "Amperes", memo(|| "flow, rule, table, corrections".to_owned()), move || view! {                     {figures(amperes.clone())}
                  })}
             }
         },

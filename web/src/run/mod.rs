@@ -10,6 +10,7 @@ mod truck;
 
 use std::sync::Arc;
 
+use crate::derived::memo;
 use crate::piece::Piece;
 use engine::check::Check;
 use engine::field::Field;
@@ -17,7 +18,6 @@ use engine::run::{Requirement, assess, working};
 use leptos::prelude::*;
 
 use crate::check_row::check_row;
-use crate::derived::memo;
 use crate::draft::use_draft;
 use crate::field::StandIn;
 use crate::fold::Folds;

@@ -1,14 +1,13 @@
 //! The small picture of a run: its two ends by name, its breaker or fuse, and the wire as wide as it is thick.
 
+use crate::derived::{Memo, dynamic};
 use crate::piece::{Piece, view};
 use engine::field::Field;
 use engine::quantity::Quantity;
 use engine::run::{Ask, BreakerType, Kind, Sizing, size};
 use engine::show;
-use leptos::prelude::*;
 
 use super::{TOOL, truck};
-use crate::derived::dynamic;
 use crate::draft::use_draft;
 use crate::form::as_entered;
 

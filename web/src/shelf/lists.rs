@@ -2,6 +2,7 @@
 
 use std::sync::Arc;
 
+use crate::derived::{dynamic, memo};
 use crate::piece::{Piece, view};
 use engine::field::Field;
 use engine::pad::Pad;
@@ -12,7 +13,6 @@ use engine::unit::Unit;
 
 use super::Laid;
 use crate::cells::TOOL;
-use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
 use crate::fold::fold;
 use crate::tool_page::figures;
@@ -76,7 +76,7 @@ pub fn lists(laid: Arc<Laid>) -> Piece {
         })
         .collect();
     view! {
-        {fold("cells/links", "Links to cut", derived(|| "by length, and lugs to pack".to_owned()), move || view! {             {
+        {fold("cells/links", "Links to cut", memo(|| "by length, and lugs to pack".to_owned()), move || view! {             {
                 let laid = laid.clone();
                 dynamic(move || {
                     let size = use_draft().with(|pads| pads.of(TOOL).entry::<SquareMillimetres>(Field::LinkSize).typed());

@@ -1,15 +1,14 @@
 //! Measured cells dealt to groups that differ least.
 
+use crate::derived::{dynamic, memo};
 use crate::piece::{Piece, view};
 use engine::bank::settled;
 use engine::field::Field;
 use engine::matching::deal;
 use engine::quantity::{AmpHours, Quantity};
 use engine::show;
-use leptos::prelude::*;
 
 use crate::cells::{TOOL, bank};
-use crate::derived::{derived, dynamic};
 use crate::draft::use_draft;
 use crate::field::list_field;
 use crate::fold::fold;
@@ -27,7 +26,7 @@ pub fn matching() -> Piece {
         typed.with(|typed| dealt(&typed.text, counts))
     };
     view! {
-        {fold("cells/matching", "Match measured cells", derived(|| "salvaged ones, dealt to groups".to_owned()), move || view! {             <div class="fields">{list_field(TOOL, Field::Capacities, "Measured capacities")}</div>
+        {fold("cells/matching", "Match measured cells", memo(|| "salvaged ones, dealt to groups".to_owned()), move || view! {             <div class="fields">{list_field(TOOL, Field::Capacities, "Measured capacities")}</div>
             {dynamic(move || match found() {
                 Ok(rows) => figures(rows),
                 Err(words) => view! { <p class="ranked-say">{words}</p> },

@@ -10,6 +10,7 @@ mod picture;
 use std::sync::Arc;
 use std::time::Duration;
 
+use crate::derived::{dynamic, memo, when};
 use crate::piece::{IntoPiece, Piece, view};
 use engine::bank::{Ask, settled as with_counts};
 use engine::field::Field;
@@ -17,7 +18,6 @@ use engine::shelf::{Asked, Family, Lacks, Layout, Parallel, Step, advice, asked,
 use leptos::prelude::*;
 
 use crate::cells::{TOOL, bank, short};
-use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::use_draft;
 use crate::field::StandIn;
 use crate::fold::fold;
@@ -50,7 +50,7 @@ pub struct Laid {
 /// The shelf, folded until it is wanted: a second step after the counts are chosen.
 pub fn shelf_section() -> Piece {
     view! {
-        {fold("cells/shelf", "The shelf", derived(|| "where each cell stands, which link goes where".to_owned()), move || view! {             {inside()}
+        {fold("cells/shelf", "The shelf", memo(|| "where each cell stands, which link goes where".to_owned()), move || view! {             {inside()}
          })}
     }
 }
@@ -93,7 +93,7 @@ fn inside() -> Piece {
                 })}
             },
         )}
-        {fold("cells/shelf-more", "Gaps and posts", derived(|| "links are cut by them".to_owned()), move || view! {             <div class="fields">{fields_of(&FORM, MORE, &more)}</div>
+        {fold("cells/shelf-more", "Gaps and posts", memo(|| "links are cut by them".to_owned()), move || view! {             <div class="fields">{fields_of(&FORM, MORE, &more)}</div>
          })}
         {body}
         {matching::matching()}

@@ -2,6 +2,7 @@
 
 use std::sync::Arc;
 
+use crate::derived::{Memo, dynamic, when};
 use crate::piece::{IntoPiece, Piece, view};
 use engine::field::Field;
 use engine::quantity::Volts;
@@ -13,7 +14,6 @@ use leptos::prelude::*;
 use super::Laid;
 use super::lists::{band, leads};
 use crate::cells::TOOL;
-use crate::derived::{derived, dynamic, when};
 use crate::draft::use_draft;
 use crate::field::Patience;
 use crate::pads::{Edit, Place, Typed};
@@ -136,7 +136,7 @@ fn one(place: usize, laid: Arc<Laid>, at: RwSignal<Option<usize>>, all: Memo<Typ
                     inputmode="decimal"
                     autocomplete="off"
                     aria-label=named
-                    prop:value=derived(move || all.with(|all| line(&all.text, place).to_owned()))
+                    prop:value=move || all.with(|all| line(&all.text, place).to_owned())
                     on:input=move |event| write(&event_target_value(&event))
                     on:blur=move |_| draft.leave()
                 />

@@ -5,13 +5,13 @@ mod others;
 
 use std::sync::Arc;
 
+use crate::derived::memo;
 use crate::piece::Piece;
 use engine::field::Field;
 use engine::start::{Requirement, assess, assumption, working};
 use leptos::prelude::*;
 
 use crate::check_row::check_row;
-use crate::derived::memo;
 use crate::draft::use_draft;
 use crate::field::StandIn;
 use crate::fold::Folds;

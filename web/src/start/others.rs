@@ -1,5 +1,6 @@
 //! What would help where it does not start, and which other loads may run or start with it.
 
+use crate::derived::{Memo, dynamic, memo, when};
 use crate::piece::{Piece, view};
 use engine::check::Verdict;
 use engine::field::Field;
@@ -7,10 +8,8 @@ use engine::pad::Pad;
 use engine::quantity::Quantity;
 use engine::show;
 use engine::start::{Ask, Help, Limits, Switched, Together, lowest_charge, switched, together, what_helps};
-use leptos::prelude::*;
 
 use super::TOOL;
-use crate::derived::{derived, dynamic, memo, when};
 use crate::draft::{Draft, use_draft};
 use crate::fold::fold;
 use crate::form::of_another;
@@ -46,7 +45,7 @@ const OF_A_LOAD: [Field; 6] = [
 ];
 
 /// Changes that were tried, where something breaks; and the lowest charge at which it still starts.
-pub fn helps(ask: ReadSignal<Ask>) -> Piece {
+pub fn helps(ask: Memo<Ask>) -> Piece {
     let found = move || ask.with(what_helps);
     view! {
         {section(
@@ -94,10 +93,10 @@ fn charge(ask: &Ask) -> Option<String> {
 }
 
 /// Other loads, and what may go together.
-pub fn together_with(ask: ReadSignal<Ask>) -> Piece {
+pub fn together_with(ask: Memo<Ask>) -> Piece {
     let draft = use_draft();
     view! {
-        {fold("start/others", "Other loads", derived(|| "what may run or start together".to_owned()), move || view! {             {dynamic(move || ask.with(|ask| table(draft, ask)))}
+        {fold("start/others", "Other loads", memo(|| "what may run or start together".to_owned()), move || view! {             {dynamic(move || ask.with(|ask| table(draft, ask)))}
             {forms(draft)}
          })}
     }

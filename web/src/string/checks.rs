@@ -1,5 +1,6 @@
 //! The checks of the String tool, worst first.
 
+use crate::derived::Memo;
 use crate::piece::Piece;
 use engine::check::Check;
 use engine::field::Field;
@@ -14,7 +15,7 @@ use crate::fold::Folds;
 use crate::tool_page::check_list;
 
 /// Every check of the string, the one on top among them.
-pub fn checks(question: ReadSignal<Question>, checks: Memo<Vec<Check<Requirement>>>) -> Piece {
+pub fn checks(question: Memo<Question>, checks: Memo<Vec<Check<Requirement>>>) -> Piece {
     let folds = expect_context::<Folds>();
     let go = Callback::new(move |field: Field| FORM.go_to(folds, field));
     let rows = move || {

@@ -2,13 +2,12 @@
 
 use std::sync::Arc;
 
-use crate::derived::derived;
+use crate::derived::{Memo, memo};
 use crate::piece::{IntoPiece, Piece};
 use engine::assumed;
 use engine::check::{Check, Verdict};
 use engine::field::Field;
 use engine::string::Requirement;
-use leptos::prelude::*;
 
 use super::TOOL;
 use super::question::OTHERS;
@@ -96,7 +95,7 @@ pub fn hints(checks: Memo<Vec<Check<Requirement>>>) -> Hints {
 
 /// Other kinds of controllers at hand, each in a pad of its own.
 pub fn other_controllers() -> Piece {
-    let says = derived(|| "for layouts over unequal ones".to_owned());
+    let says = memo(|| "for layouts over unequal ones".to_owned());
     fold(OTHER_CONTROLLERS, "Other controllers", says, || {
         OTHERS.map(|other| of_another(other, &OF_A_CONTROLLER, short)).into_iter().collect::<Vec<Piece>>().piece()
     })

@@ -1,6 +1,6 @@
 //! The layouts of the modules at hand, ranked; what was rejected; and what single change would use them all.
 
-use crate::derived::{derived, dynamic, memo, when};
+use crate::derived::{Memo, dynamic, memo, when};
 use crate::piece::{Piece, view};
 use engine::check::Verdict;
 use engine::controller::Controller;
@@ -10,7 +10,6 @@ use engine::show;
 use engine::string::change::{Change, What, changes};
 use engine::string::layouts::Group;
 use engine::string::{Layout, Layouts, Rejected, layouts};
-use leptos::prelude::*;
 
 use super::TOOL;
 use super::question::Question;
@@ -25,12 +24,12 @@ use crate::verdict::verdict_mark;
 const SHOWN: usize = 4;
 
 /// The layouts of the modules at hand.
-pub fn layout_list(question: ReadSignal<Question>) -> Piece {
+pub fn layout_list(question: Memo<Question>) -> Piece {
     let asked = memo(move || question.with(|question| question.modules.is_some()));
     when(move || asked.get(), move || laid(question))
 }
 
-fn laid(question: ReadSignal<Question>) -> Piece {
+fn laid(question: Memo<Question>) -> Piece {
     let found = memo(move || question.with(find));
     let modules = move || question.with(|question| question.modules.unwrap_or(0));
     let on = move || {
@@ -41,7 +40,7 @@ fn laid(question: ReadSignal<Question>) -> Piece {
     };
     view! {
         <section aria-label="Layouts">
-            <h2 class="sub">{derived(move || format!("Every layout of {} modules", modules()))} <span>{derived(on)}</span></h2>
+            <h2 class="sub">{move || format!("Every layout of {} modules", modules())} <span>{on}</span></h2>
             {dynamic(move || {
                 found
                     .with(|found| {
@@ -64,7 +63,7 @@ fn laid(question: ReadSignal<Question>) -> Piece {
                             })
                     })
             })}
-            {when(move || found.with(wants_change), move || view! { {fold("string/change", "What would use them all", derived(|| "one change".to_owned()), move || view! {                     {dynamic(move || question.with(change_list))}
+            {when(move || found.with(wants_change), move || view! { {fold("string/change", "What would use them all", memo(|| "one change".to_owned()), move || view! {                     {dynamic(move || question.with(change_list))}
                  })} })}
         </section>
     }

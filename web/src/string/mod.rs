@@ -6,12 +6,11 @@ mod fields;
 mod layouts;
 mod question;
 
+use crate::derived::memo;
 use crate::piece::Piece;
-use leptos::prelude::*;
 
 use question::Question;
 
-use crate::derived::memo;
 use crate::draft::use_draft;
 use crate::settled::settled;
 use crate::tool_page::{ToolPage, tool_page};
