@@ -13,7 +13,7 @@ use web::field::{FieldOf, Said, StandIn};
 use web::fold::{Folds, fold};
 use web::keep::Keeper;
 use web::pads::Edit;
-use web::piece::{Mounted, Piece, mount, view};
+use web::piece::{self, Mounted, Piece, mount, view};
 use web::tools::Tool;
 use web_sys::{Element, Event, HtmlElement, HtmlInputElement};
 
@@ -206,7 +206,7 @@ async fn what_is_assumed_is_shown_with_its_reason_and_source() {
 #[wasm_bindgen_test]
 async fn a_missing_field_says_what_waits_for_it() {
     let stage = stage(|| {
-        let asks = Signal::stored(Some("asks: the cold volts wait for this".to_owned()));
+        let asks = memo(|| Some("asks: the cold volts wait for this".to_owned()));
         FieldOf { said: Said { asks, ..Said::default() }, ..FieldOf::new(Tool::String, Field::InputLimit) }.shown()
     });
     settle().await;

@@ -267,3 +267,59 @@ fn filled(one: &KeyedAttribute) -> Result<TokenStream> {
 fn escaped(text: &str) -> String {
     text.replace('&', "&amp;").replace('<', "&lt;").replace('>', "&gt;").replace('"', "&quot;")
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use rstml::{Parser, ParserConfig};
+
+    fn shape(markup: TokenStream) -> Result<Shape> {
+        let parser = Parser::<rstml::node::Infallible>::new(ParserConfig::default().recover_block(true));
+        Shape::of(&parser.parse_recoverable(markup).into_result()?)
+    }
+
+    fn told(markup: TokenStream) -> (String, String, Vec<String>) {
+        let Shape { html, walk, values, .. } = shape(markup).unwrap();
+        (html, walk, values.iter().map(ToString::to_string).collect())
+    }
+
+    #[test]
+    fn what_never_changes_is_text_alone() {
+        let (html, walk, values) = told(quote! { <p class="say" hidden>"1 < 2" <br/> "& more"</p> });
+        assert_eq!(html, "<p class=\"say\" hidden=\"\">1 &lt; 2<br>&amp; more</p>");
+        assert_eq!((walk.as_str(), values.len()), (">r<", 0));
+    }
+
+    #[test]
+    fn the_walk_goes_only_to_where_values_belong() {
+        let (html, walk, values) =
+            told(quote! { <div><p>"still"</p><p id=id on:click=press>"a " {b} " c"</p><p>{d}</p></div> });
+        assert_eq!(html, "<div><p>still</p><p>a <!> c</p><p></p></div>");
+        // Down to the root; down, on to the second; two values; down, on to the mark; a child before it; up; on; a child at the end.
+        assert_eq!(walk, ">r>+aa>+c<+e<<");
+        let called: Vec<&str> = values.iter().map(|value| value.split('(').next().unwrap().trim()).collect();
+        assert_eq!(called, [". attribute", ". on", ". child", ". child"]);
+    }
+
+    #[test]
+    fn values_at_the_root_stand_in_order() {
+        let (html, walk, values) = told(quote! { {a} <i>"b"</i> {c} "d" {e} "f" {g} });
+        assert_eq!(html, "<i>b</i>d<!>f");
+        assert_eq!((walk.as_str(), values.len()), (">cr+cr+cr+r<e", 4));
+    }
+
+    #[test]
+    fn what_a_parser_would_tear_apart_is_refused() {
+        let why = |markup| shape(markup).err().map(|error| error.to_string()).unwrap_or_default();
+        assert_eq!(why(quote! { <p>"a"<div>"b"</div></p> }), "a paragraph ends where this begins");
+        assert_eq!(why(quote! { <table><tr><td>"b"</td></tr></table> }), "a row stands in thead, tbody or tfoot");
+        assert_eq!(why(quote! { <Part/> }), "a part of the page is a function: write {part(..)}");
+        assert_eq!(why(quote! { <p style="color: red">"a"</p> }), "a style is a pair: its name and its value");
+    }
+
+    #[test]
+    fn a_view_within_a_drawing_knows_it() {
+        assert!(shape(quote! { <path d="M0 0"/> }).unwrap().drawn);
+        assert!(!shape(quote! { <svg><path d="M0 0"/></svg> }).unwrap().drawn);
+    }
+}

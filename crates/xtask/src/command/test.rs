@@ -52,7 +52,7 @@ pub fn run(arguments: &[String]) -> Result<()> {
         it.command(&mut cargo(&[&["clippy"], &IN_PAGE[..], &["--all-targets"], &wasm, &deny].concat()))
     });
     // One package at a time: together, one would switch on another's features.
-    for package in ["engine", "bridge", "published", "xtask"] {
+    for package in ["engine", "bridge", "published", "markup", "xtask"] {
         stages.run(&format!("tests of {package}"), |it| {
             it.command(&mut cargo(&["test", "--no-fail-fast", "-p", package]))
         });
