@@ -9,7 +9,7 @@ use std::sync::Arc;
 
 use leptos::prelude::*;
 
-use crate::piece::Piece;
+use crate::piece::{Make, Piece};
 
 /// A value that is computed again at each change, and tells only where it differs. A handle: copying it copies nothing.
 pub struct Memo<T>(Signal<Held>, PhantomData<fn() -> T>);
@@ -86,11 +86,22 @@ fn of<T: 'static>(held: &Held) -> &T {
 
 /// A value that is computed again at each change, and tells only where it differs.
 pub fn memo<T: PartialEq + Send + Sync + 'static>(compute: impl Fn() -> T + Send + Sync + 'static) -> Memo<T> {
-    Memo(boxed_memo(Box::new(move || Held(Arc::new(compute())))), PhantomData)
+    Memo(boxed_memo(Box::new(compute)), PhantomData)
 }
 
-fn boxed_memo(compute: Box<dyn Fn() -> Held + Send + Sync>) -> Signal<Held> {
-    leptos::prelude::Memo::new(move |_| compute()).into()
+fn boxed_memo(compute: Box<dyn Compute>) -> Signal<Held> {
+    leptos::prelude::Memo::new(move |_| compute.compute()).into()
+}
+
+/// What computes a value of any kind.
+trait Compute: Send + Sync {
+    fn compute(&self) -> Held;
+}
+
+impl<F: Fn() -> T + Send + Sync, T: Hold + 'static> Compute for F {
+    fn compute(&self) -> Held {
+        Held(Arc::new(self()))
+    }
 }
 
 /// A value that is told only when it is put in again, with what puts in what another is now.
@@ -103,11 +114,11 @@ pub fn follower<T: Clone + PartialEq + Send + Sync + 'static>(
 
 /// What `view` gives, while `holds` does. Made when it begins to hold, and taken away when it ends.
 pub fn when(holds: impl Fn() -> bool + Send + Sync + 'static, view: impl Fn() -> Piece + 'static) -> Piece {
-    boxed_when(memo(holds), Box::new(view))
+    when_it(memo(holds), Box::new(view))
 }
 
-fn boxed_when(holds: Memo<bool>, view: Box<dyn Fn() -> Piece>) -> Piece {
-    dynamic(move || if holds.get() { view() } else { Piece::Nothing })
+fn when_it(holds: Memo<bool>, view: Box<dyn Make>) -> Piece {
+    dynamic(move || if holds.get() { view.make() } else { Piece::Nothing })
 }
 
 /// What `view` gives, made again at each change of what it reads.

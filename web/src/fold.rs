@@ -1,7 +1,7 @@
 //! Folds: unfold in place, and stay as they were left.
 
 use crate::derived::{Memo, memo, when};
-use crate::piece::{Piece, view};
+use crate::piece::{Make, Piece, view};
 use std::rc::Rc;
 
 use leptos::prelude::*;
@@ -68,7 +68,7 @@ pub fn marked_fold(
     id: String,
     title: &'static str,
     says: Memo<String>,
-    inside: Rc<dyn Fn() -> Piece>,
+    inside: Rc<dyn Make>,
 ) -> Piece {
     let folds = expect_context::<Folds>();
     let id = StoredValue::new(id);
@@ -87,7 +87,7 @@ pub fn marked_fold(
                 {title}
                 <span>{says}</span>
             </button>
-            {when(move || open.get(), move || view! { <div class="fold-body" id=body()>{inside()}</div> })}
+            {when(move || open.get(), move || view! { <div class="fold-body" id=body()>{inside.make()}</div> })}
         </div>
     }
 }

@@ -1,12 +1,23 @@
 //! Markup with its values, as `view!` puts them together.
 
+use std::marker::PhantomData;
+
 use leptos::ev::EventDescriptor;
 use leptos::wasm_bindgen::JsCast;
 use web_sys::Event;
 
-use super::hole::{Handler, Hole, What};
+use super::hole::{Act, Hole, What};
 use super::value::{IntoValue, Value};
 use super::{IntoPiece, Piece, Shape};
+
+/// What is done at an event of the kind `T`.
+struct On<T, F>(F, PhantomData<fn(T)>);
+
+impl<T: JsCast, F: FnMut(T)> Act for On<T, F> {
+    fn act(&mut self, event: Event) {
+        (self.0)(event.unchecked_into());
+    }
+}
 
 /// A shape and what goes into it, in the order of its walk.
 pub struct Filled {
@@ -56,13 +67,12 @@ impl Filled {
     }
 
     /// Puts in what is done at an event.
-    pub fn on<E>(&mut self, event: E, mut act: impl FnMut(E::EventType) + 'static)
+    pub fn on<E>(&mut self, event: E, act: impl FnMut(E::EventType) + 'static)
     where
         E: EventDescriptor,
-        E::EventType: JsCast,
+        E::EventType: JsCast + 'static,
     {
-        let handler: Handler = Box::new(move |event: Event| act(event.unchecked_into()));
-        self.put(Hole::On(event.name(), handler));
+        self.put(Hole::On(event.name(), Box::new(On(act, PhantomData))));
     }
 
     #[inline(never)]

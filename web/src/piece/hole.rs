@@ -13,7 +13,13 @@ use super::state::State;
 use super::value::{Now, Value};
 
 /// What is done at an event.
-pub type Handler = Box<dyn FnMut(Event)>;
+pub trait Act {
+    /// Does it.
+    fn act(&mut self, event: Event);
+}
+
+/// What is done at an event of any kind.
+pub type Handler = Box<dyn Act>;
 
 /// What of an element a value is for.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -92,7 +98,7 @@ fn kept_up(element: &Element, what: What, name: &'static str, value: Value, befo
         Value::Live(read) => {
             let element = element.clone();
             let follow = move |before: Option<Now>| {
-                let now = read().now();
+                let now = read.read().now();
                 if before.as_ref() != Some(&now) {
                     set(&element, what, name, &now);
                 }
@@ -161,7 +167,7 @@ impl Listener {
             // Out of its slot while it runs: what it does may exchange it, or raise the same event again.
             let taken = slot.borrow_mut().take();
             if let Some(mut act) = taken {
-                act(event);
+                act.act(event);
                 slot.borrow_mut().get_or_insert(act);
             }
         });

@@ -13,7 +13,7 @@ mod value;
 
 use std::borrow::Cow;
 
-use leptos::prelude::*;
+use leptos::prelude::{Get, RwSignal};
 
 use crate::derived::Memo;
 
@@ -34,7 +34,19 @@ pub enum Piece {
     /// Several, one after the other.
     Many(Vec<Piece>),
     /// Made again whenever what it reads changes.
-    Live(Box<dyn Fn() -> Piece>),
+    Live(Box<dyn Make>),
+}
+
+/// What makes a piece, as often as it is asked. A trait of its own, as what stands behind a `dyn Fn` holds two functions more.
+pub trait Make {
+    /// Makes it.
+    fn make(&self) -> Piece;
+}
+
+impl<F: Fn() -> T, T: IntoPiece> Make for F {
+    fn make(&self) -> Piece {
+        self().piece()
+    }
 }
 
 /// What can stand among the children of an element.
@@ -81,7 +93,7 @@ impl<T: IntoPiece> IntoPiece for Vec<T> {
 
 impl<F: Fn() -> T + 'static, T: IntoPiece> IntoPiece for F {
     fn piece(self) -> Piece {
-        Piece::Live(Box::new(move || self().piece()))
+        Piece::Live(Box::new(self))
     }
 }
 
@@ -90,7 +102,7 @@ macro_rules! read_again {
     ($($kind:ident),*) => {$(
         impl<T: IntoPiece + Clone + Send + Sync + 'static> IntoPiece for $kind<T> {
             fn piece(self) -> Piece {
-                Piece::Live(Box::new(move || self.get().piece()))
+                Piece::Live(Box::new(move || self.get()))
             }
         }
     )*};
@@ -100,6 +112,6 @@ read_again!(RwSignal);
 
 impl<T: IntoPiece + Clone + 'static> IntoPiece for Memo<T> {
     fn piece(self) -> Piece {
-        Piece::Live(Box::new(move || self.get().piece()))
+        Piece::Live(Box::new(move || self.get()))
     }
 }

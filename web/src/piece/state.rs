@@ -5,7 +5,7 @@ use leptos::wasm_bindgen::JsCast;
 use web_sys::{Element, Node};
 
 use super::hole::{Hole, Listener, Setting, Stands};
-use super::{Filled, Piece, Shape};
+use super::{Filled, Make, Piece, Shape};
 
 /// A piece with its nodes.
 pub enum State {
@@ -65,13 +65,13 @@ impl Piece {
     }
 }
 
-fn live(make: Box<dyn Fn() -> Piece>, before: Option<State>) -> RenderEffect<State> {
+fn live(make: Box<dyn Make>, before: Option<State>) -> RenderEffect<State> {
     let follow = move |before: Option<State>| match before {
         Some(mut state) => {
-            state.take(make());
+            state.take(make.make());
             state
         }
-        None => make().build(),
+        None => make.make().build(),
     };
     RenderEffect::new_with_value(follow, before)
 }

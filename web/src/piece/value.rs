@@ -2,7 +2,7 @@
 
 use std::borrow::Cow;
 
-use leptos::prelude::*;
+use leptos::prelude::{Get, RwSignal};
 
 use crate::derived::Memo;
 
@@ -15,7 +15,19 @@ pub enum Value {
     /// Text.
     Text(Cow<'static, str>),
     /// Read again whenever what it reads changes.
-    Live(Box<dyn Fn() -> Value>),
+    Live(Box<dyn Read>),
+}
+
+/// What reads a value, as often as it is asked.
+pub trait Read {
+    /// Reads it.
+    fn read(&self) -> Value;
+}
+
+impl<F: Fn() -> T, T: IntoValue> Read for F {
+    fn read(&self) -> Value {
+        self().value()
+    }
 }
 
 /// What can be the value of an attribute.
@@ -56,7 +68,7 @@ impl<T: IntoValue> IntoValue for Option<T> {
 
 impl<F: Fn() -> T + 'static, T: IntoValue> IntoValue for F {
     fn value(self) -> Value {
-        Value::Live(Box::new(move || self().value()))
+        Value::Live(Box::new(self))
     }
 }
 
@@ -65,7 +77,7 @@ macro_rules! read_again {
     ($($kind:ident),*) => {$(
         impl<T: IntoValue + Clone + Send + Sync + 'static> IntoValue for $kind<T> {
             fn value(self) -> Value {
-                Value::Live(Box::new(move || self.get().value()))
+                Value::Live(Box::new(move || self.get()))
             }
         }
     )*};
@@ -75,7 +87,7 @@ read_again!(RwSignal);
 
 impl<T: IntoValue + Clone + 'static> IntoValue for Memo<T> {
     fn value(self) -> Value {
-        Value::Live(Box::new(move || self.get().value()))
+        Value::Live(Box::new(move || self.get()))
     }
 }
 
@@ -97,7 +109,7 @@ impl Value {
             Self::No => Now::No,
             Self::Yes => Now::Yes,
             Self::Text(text) => Now::Text(text),
-            Self::Live(read) => read().now(),
+            Self::Live(read) => read.read().now(),
         }
     }
 }
