@@ -1,7 +1,7 @@
-//! The browser's storage: the same layout as a structured value.
+//! The browser's storage: the same layout as a structured value, by the way of its text.
 
-use serde::Serialize;
-use serde_wasm_bindgen::Serializer;
+use js_sys::JSON;
+use serde_json::Value;
 use wasm_bindgen::JsValue;
 
 use crate::kept::Kept;
@@ -13,7 +13,7 @@ use crate::refused::Refused;
 ///
 /// [`Refused::Damaged`] where the browser cannot make the value.
 pub fn to_value(kept: &Kept) -> Result<JsValue, Refused> {
-    kept.serialize(&Serializer::json_compatible()).map_err(|error| Refused::Damaged { at: error.to_string() })
+    JSON::parse(&crate::file::write(kept)).map_err(|_| damaged("the browser makes no value of it"))
 }
 
 /// What a stored value holds.
@@ -21,7 +21,14 @@ pub fn to_value(kept: &Kept) -> Result<JsValue, Refused> {
 /// # Errors
 ///
 /// [`Refused`], as for a file.
-pub fn of_value(value: JsValue) -> Result<Kept, Refused> {
-    let value = serde_wasm_bindgen::from_value(value).map_err(|error| Refused::Damaged { at: error.to_string() })?;
+pub fn of_value(value: &JsValue) -> Result<Kept, Refused> {
+    // What has no text, as a function, gives none rather than an error.
+    let text = JSON::stringify(value).ok().and_then(|text| text.as_string());
+    let text = text.ok_or_else(|| damaged("a value with no text"))?;
+    let value: Value = serde_json::from_str(&text).map_err(|error| damaged(&error.to_string()))?;
     Kept::of_value(value)
+}
+
+fn damaged(at: &str) -> Refused {
+    Refused::Damaged { at: at.to_owned() }
 }

@@ -235,7 +235,7 @@ async fn put(database: &Rexie, base: &Kept, next: &Kept) -> Result<(), Why> {
 /// The record as it is: read, or refused with what is there.
 async fn stored(store: &Store) -> Result<Result<Kept, (Refused, JsValue)>, Why> {
     let Some(value) = store.get(NOW.into()).await.map_err(why)? else { return Ok(Ok(Kept::default())) };
-    Ok(bridge::browser::of_value(value.clone()).map_err(|refused| (refused, value)))
+    Ok(bridge::browser::of_value(&value).map_err(|refused| (refused, value)))
 }
 
 #[allow(clippy::needless_pass_by_value, reason = "given to map_err")]
