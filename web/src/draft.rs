@@ -17,6 +17,7 @@ use crate::theme::Theme;
 pub struct Draft {
     pads: RwSignal<Pads>,
     theme: RwSignal<Theme>,
+    told: RwSignal<String>,
     keeper: Keeper,
 }
 
@@ -32,7 +33,12 @@ pub fn use_draft() -> Draft {
 impl Draft {
     /// An empty store, kept by `keeper`.
     pub fn new(keeper: Keeper) -> Self {
-        Self { pads: RwSignal::new(Pads::default()), theme: RwSignal::new(Theme::default()), keeper }
+        Self {
+            pads: RwSignal::new(Pads::default()),
+            theme: RwSignal::new(Theme::default()),
+            told: RwSignal::new(String::new()),
+            keeper,
+        }
     }
 
     /// Gives the store to everything below.
@@ -62,11 +68,25 @@ impl Draft {
         }
     }
 
-    /// Takes over the site that was open when the page was last closed.
+    /// Takes over the site that was open when the page was last closed. One that cannot be read is told of, and left as it is.
     pub async fn reopen(self, key: u32) {
-        if let Some(site) = self.keeper.site(key).await.and_then(|text| bridge::site::open(&text).ok()) {
-            self.pads.update(|pads| pads.load_site(Some(OpenSite { key, site })));
+        match self.keeper.site(key).await.map(|text| bridge::site::open(&text)) {
+            Some(Ok(site)) => self.pads.update(|pads| pads.load_site(Some(OpenSite { key, site }))),
+            Some(Err(why)) => {
+                self.tell(format!("The site that was open here cannot be read: {why}. It is left as it is."))
+            }
+            None => {}
         }
+    }
+
+    /// Tells the person something that has no place of its own on the page.
+    pub fn tell(self, words: String) {
+        self.told.set(words);
+    }
+
+    /// What was last told; nothing once it is put away.
+    pub fn told(self) -> RwSignal<String> {
+        self.told
     }
 
     /// The open site was put beside another tab's: it is now kept under `key`.

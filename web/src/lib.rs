@@ -14,6 +14,7 @@ pub mod checks_view;
 mod clock;
 pub mod derived;
 pub mod draft;
+mod dropped;
 pub mod field;
 pub mod file;
 pub mod first_visit;

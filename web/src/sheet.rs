@@ -72,7 +72,7 @@ fn open_file(said: RwSignal<String>) -> Piece {
 }
 
 /// Takes over what was opened, and says so; what was refused changes nothing.
-fn took(draft: Draft, name: &str, found: Result<Opened, String>) -> String {
+pub fn took(draft: Draft, name: &str, found: Result<Opened, String>) -> String {
     match found {
         Ok(Opened::Tools(kept)) => {
             let words = format!("Opened {name}: {}. Undo brings back what was here.", entries(kept.len()));
@@ -85,7 +85,7 @@ fn took(draft: Draft, name: &str, found: Result<Opened, String>) -> String {
             draft.edit(Edit::Site(SiteEdit::Open(OpenSite { key, site })));
             words
         }
-        Err(why) => format!("Not opened, nothing changed: {why}."),
+        Err(why) => format!("Not opened, nothing changed. {name}: {why}."),
     }
 }
 

@@ -21,6 +21,7 @@ pub fn shell(draft: Draft) -> Piece {
     draft.provide();
     provide_context(Folds::new());
     let offline = offline::provide();
+    let landing = crate::dropped::watch(draft);
     let route = route::follow();
     let keys = window_event_listener(ev::keydown, move |event| undo_keys(draft, &event));
     on_cleanup(move || keys.remove());
@@ -56,6 +57,7 @@ pub fn shell(draft: Draft) -> Piece {
     };
     view! {
         {top(route)}
+        {landing}
         <main>{view}</main>
         {notices(offline.update_ready, refused)}
         {bottom_bar(route)}
@@ -216,7 +218,8 @@ fn light_button() -> Piece {
 
 /// The notices, one below the other. The region is there before its words are, or screen readers would not tell of them.
 fn notices(update: RwSignal<bool>, refused: RwSignal<bool>) -> Piece {
-    let keeper = use_draft().keeper();
+    let draft = use_draft();
+    let keeper = draft.keeper();
     let beside = RwSignal::new(false);
     Effect::new(move |_| {
         if keeper.moved().get().is_some() {
@@ -244,6 +247,14 @@ fn notices(update: RwSignal<bool>, refused: RwSignal<bool>) -> Piece {
                 keeper.damaged(),
                 None,
             )}
+            {when(move || draft.told().with(|told| !told.is_empty()), move || view! {
+                <div class="notice">
+                    <p>{draft.told()}</p>
+                    <div class="notice-acts">
+                        <button type="button" class="quiet" on:click=move |_| draft.tell(String::new())>"Close"</button>
+                    </div>
+                </div>
+            })}
         </aside>
     }
 }

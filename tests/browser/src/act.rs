@@ -128,6 +128,57 @@ impl Site {
         Ok(self.browser.execute(script, arguments.to_vec()).await?)
     }
 
+    /// Runs a script in every page from now on, before the page's own. Chromium only.
+    pub async fn before_load(&self, script: &str) -> Result<()> {
+        let add = json!({ "cmd": "Page.addScriptToEvaluateOnNewDocument", "params": { "source": script } });
+        self.chromium("goog/cdp/execute", add).await.map(drop)
+    }
+
+    /// Drops a file of these bytes on the page, and gives what the page says of it once it says so.
+    pub async fn drop_file(&self, name: &str, bytes: &[u8]) -> Result<String> {
+        // One character for each byte.
+        let bytes: String = bytes.iter().copied().map(char::from).collect();
+        self.dropped(json!({ "name": name, "bytes": bytes })).await
+    }
+
+    /// Drops text on the page, and gives what the page says of it.
+    pub async fn drop_text(&self, text: &str) -> Result<String> {
+        self.dropped(json!({ "text": text })).await
+    }
+
+    async fn dropped(&self, what: Value) -> Result<String> {
+        let script = r#"return (async (what) => {
+            const wait = async (look) => {
+              for (;;) {
+                const found = look();
+                if (found) return found;
+                await new Promise((then) => setTimeout(then, 5));
+              }
+            };
+            const told = () => [...document.querySelectorAll(".notice p")].map((it) => it.textContent)
+              .find((it) => /^(Opened|Not opened)/.test(it));
+            for (const close of document.querySelectorAll(".notice .quiet")) close.click();
+            await wait(() => !told());
+            const data = new DataTransfer();
+            if (what.text === undefined) {
+              data.items.add(new File([Uint8Array.from(what.bytes, (it) => it.charCodeAt(0))], what.name));
+            } else {
+              data.setData("text/plain", what.text);
+            }
+            const event = (kind) => new DragEvent(kind, { dataTransfer: data, bubbles: true, cancelable: true });
+            const main = document.querySelector("main");
+            const over = event("dragover");
+            main.dispatchEvent(over);
+            if (!over.defaultPrevented) throw new Error("the page takes nothing that is dropped");
+            await wait(() => document.querySelector(".landing"));
+            main.dispatchEvent(event("drop"));
+            await wait(() => !document.querySelector(".landing"));
+            return wait(told);
+          })(arguments[0])"#;
+        let said = self.run(script, &[what]).await?;
+        said.as_str().map(str::to_owned).context("the page says nothing of it")
+    }
+
     /// Makes the processor so many times slower. Chromium only.
     pub async fn slow_down(&self, times: f64) -> Result<()> {
         self.chromium(

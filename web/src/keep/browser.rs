@@ -87,16 +87,16 @@ impl Storage {
         listed(&store).await
     }
 
-    /// The text of a site, and how often it was written.
+    /// The text of a site, and how often it was written. Of a record that is no text, whatever text can be made of it.
     pub async fn site(&self, key: u32) -> Result<Option<(u32, String)>, Why> {
         let database = self.0.borrow().clone();
         let transaction = database.transaction(&[STORE], TransactionMode::ReadOnly).map_err(why)?;
         let store = transaction.store(STORE).map_err(why)?;
-        let record = text(&store, &site_key(key)).await?;
-        Ok(record.map(|record| {
-            let (revision, text) = revised(&record);
-            (revision, text.to_owned())
-        }))
+        let Some(value) = store.get(site_key(key).into()).await.map_err(why)? else { return Ok(None) };
+        let made = || js_sys::JSON::stringify(&value).ok().and_then(|text| text.as_string());
+        let record = value.as_string().or_else(made).unwrap_or_default();
+        let (revision, text) = revised(&record);
+        Ok(Some((revision, text.to_owned())))
     }
 
     /// The earlier states of a site, the latest first: when, in milliseconds, and its text.
@@ -169,8 +169,11 @@ const BESIDE: &str = " (this tab)";
 /// The record that lists the sites: key and name, a line each.
 const SITES: &str = "sites";
 
+/// What the key of a site begins with.
+const SITE: &str = "site-";
+
 fn site_key(key: u32) -> String {
-    format!("site-{key}")
+    format!("{SITE}{key}")
 }
 
 fn earlier_key(key: u32) -> String {
@@ -186,13 +189,22 @@ async fn put_text(store: &Store, key: &str, text: &str) -> Result<(), Why> {
     Ok(())
 }
 
+/// The sites by their list, and those that a damaged list leaves out: what is there is never written over as if it were not.
 async fn listed(store: &Store) -> Result<Vec<KeptSite>, Why> {
     let record = text(store, SITES).await?.unwrap_or_default();
     let line = |line: &str| {
         let (key, name) = line.split_once('\t')?;
         Some(KeptSite { key: key.parse().ok()?, name: name.to_owned() })
     };
-    Ok(record.lines().filter_map(line).collect())
+    let mut list: Vec<KeptSite> = record.lines().filter_map(line).collect();
+    for key in store.get_all_keys(None, None).await.map_err(why)? {
+        let key = key.as_string().and_then(|key| key.strip_prefix(SITE)?.parse().ok());
+        let Some(key) = key.filter(|key| list.iter().all(|one| one.key != *key)) else { continue };
+        let record = text(store, &site_key(key)).await?.unwrap_or_default();
+        let name = bridge::site::open(revised(&record).1).map_or_else(|_| String::new(), |site| site.name);
+        list.push(KeptSite { key, name });
+    }
+    Ok(list)
 }
 
 async fn put_list(store: &Store, list: &[KeptSite]) -> Result<(), Why> {

@@ -123,6 +123,7 @@ pub fn new_site() -> Piece {
 pub fn kept() -> Piece {
     let draft = use_draft();
     let sites = draft.keeper().sites();
+    let unread = RwSignal::new(Vec::<(u32, String, String)>::new());
     when(
         move || sites.with(|sites| !sites.is_empty()),
         move || {
@@ -135,13 +136,24 @@ pub fn kept() -> Piece {
                         let name = if one.name.is_empty() { format!("Site {key}") } else { one.name };
                         let open = move |_| {
                             spawn_local(async move {
-                                let text = draft.keeper().site(key).await;
-                                if let Some(site) = text.and_then(|text| bridge::site::open(&text).ok()) {
-                                    draft.edit(Edit::Site(SiteEdit::Open(OpenSite { key, site })));
+                                let text = draft.keeper().site(key).await.unwrap_or_default();
+                                match bridge::site::open(&text) {
+                                    Ok(site) => {
+                                        draft.edit(Edit::Site(SiteEdit::Open(OpenSite { key, site })));
+                                    }
+                                    Err(why) => {
+                                        unread.update(|all| all.retain(|one| one.0 != key));
+                                        unread.update(|all| all.push((key, why.to_string(), text)));
+                                    }
                                 }
                             });
                         };
-                        view! { <li><button class="btn" type="button" on:click=open>{name}</button></li> }
+                        view! {
+                            <li>
+                                <button class="btn" type="button" on:click=open>{name}</button>
+                                {move || unread.get().into_iter().find(|one| one.0 == key).map(laid_open)}
+                            </li>
+                        }
                     })
                     .collect::<Vec<Piece>>()
                     .piece()
@@ -152,6 +164,23 @@ pub fn kept() -> Piece {
             }
         },
     )
+}
+
+/// What is said of a kept site that cannot be read: why, and a way to save what there is. It is left as it is.
+fn laid_open((key, why, text): (u32, String, String)) -> Piece {
+    let said = RwSignal::new(String::new());
+    let save = move |_| {
+        let name = format!("linehut-site-{key}.json");
+        said.set(match crate::file::save_text(&name, &text) {
+            Ok(()) => format!("Saved as {name}."),
+            Err(_) => "Not saved: the browser makes no files here.".to_owned(),
+        });
+    };
+    view! {
+        <p class="say">{format!("Cannot be read: {why}. It is left as it is.")}</p>
+        <div class="btns"><button class="btn small" type="button" on:click=save>"Save what is there"</button></div>
+        <p class="said" aria-live="polite">{said}</p>
+    }
 }
 
 #[cfg(test)]
