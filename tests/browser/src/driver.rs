@@ -157,6 +157,47 @@ impl Driver {
     }
 }
 
+impl Driver {
+    /// Kills the browser, every process of it, with no word of warning. Linux only.
+    pub fn kill_browser(&self) -> Result<()> {
+        let mark = self.profile.display().to_string();
+        let ours = |process: &fs::DirEntry| {
+            // One that is gone meanwhile has no line.
+            let line = fs::read(process.path().join("cmdline")).unwrap_or_default();
+            String::from_utf8_lossy(&line).contains(&mark)
+        };
+        let processes: Vec<String> = fs::read_dir("/proc")?
+            .flatten()
+            .filter(|process| process.file_name().to_string_lossy().bytes().all(|letter| letter.is_ascii_digit()))
+            .filter(ours)
+            .map(|process| process.file_name().to_string_lossy().into_owned())
+            .collect();
+        if processes.is_empty() {
+            bail!("no process of the browser is found");
+        }
+        // One that ended with another is no failure; what is left is.
+        Command::new("kill").arg("-9").args(&processes).stderr(Stdio::null()).status()?;
+        let began = Instant::now();
+        while processes.iter().any(|process| is_running(process)) {
+            if began.elapsed() > STARTING {
+                bail!("the browser does not die");
+            }
+            thread::sleep(Duration::from_millis(5));
+        }
+        // What a browser that was killed leaves behind, and would not start over.
+        for lock in ["SingletonLock", "SingletonCookie", "SingletonSocket"] {
+            let _ = fs::remove_file(self.profile.join(lock));
+        }
+        Ok(())
+    }
+}
+
+/// Whether it still runs: one that only waits to be counted off does not.
+fn is_running(process: &str) -> bool {
+    let state = fs::read_to_string(format!("/proc/{process}/stat")).unwrap_or_default();
+    state.rsplit_once(')').is_some_and(|(_, rest)| !rest.trim_start().starts_with('Z'))
+}
+
 impl Drop for Driver {
     fn drop(&mut self) {
         // Already gone is as good.

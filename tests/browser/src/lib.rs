@@ -17,4 +17,4 @@ mod tool;
 
 pub use anyhow::{Result, bail, ensure};
 pub use driver::{Kind, Screen};
-pub use runner::{Site, visit};
+pub use runner::{Site, visit, visit_and_kill};

@@ -61,14 +61,57 @@ pub fn visit(screen: Screen, test: impl AsyncFnOnce(&Site) -> Result<()>) {
     }
 }
 
+/// Opens the page again and again in a browser of one profile, does the test, and kills the browser each time.
+///
+/// The test is told which time it is. Chromium on Linux only; elsewhere nothing is done.
+pub fn visit_and_kill(screen: Screen, times: usize, test: impl AsyncFn(&Site, usize) -> Result<()>) {
+    if !cfg!(target_os = "linux") || !matches!(Kind::asked(), Ok(Kind::Chromium)) {
+        return;
+    }
+    let runtime = tokio::runtime::Builder::new_current_thread().enable_all().build().expect("a runtime can be made");
+    let name = thread::current().name().unwrap_or("test").replace("::", "-");
+    let scratch = env::temp_dir().join(format!("linehut-{}-{name}", std::process::id()));
+    let mut server = None;
+    for time in 0..times {
+        let outcome: Result<()> = runtime.block_on(async {
+            // The same address each time: what is kept belongs to it.
+            let kept = server.take();
+            let (site, driver) = Site::open_with(screen, &scratch, kept).await?;
+            let done = async {
+                site.load().await?;
+                test(&site, time).await
+            };
+            let done = done.await;
+            if done.is_err() {
+                site.leave_picture(&name).await;
+            }
+            driver.kill_browser()?;
+            server = site.server.take();
+            done
+        });
+        if let Err(error) = outcome {
+            let _ = fs::remove_dir_all(&scratch);
+            panic!("time {time}: {error:#}");
+        }
+    }
+    let _ = fs::remove_dir_all(&scratch);
+}
+
 impl Site {
     async fn open(screen: Screen, scratch: &Path) -> Result<(Self, Driver)> {
+        Self::open_with(screen, scratch, None).await
+    }
+
+    async fn open_with(screen: Screen, scratch: &Path, server: Option<Folder>) -> Result<(Self, Driver)> {
         let dist = root::dist();
         if !dist.join(stamp::INDEX).is_file() {
             bail!("there is no page in {}: `cargo xtask pack` makes one", dist.display());
         }
         let kind = Kind::asked()?;
-        let server = Folder::serve(dist, 0).context("cannot serve the page")?;
+        let server = match server {
+            Some(server) => server,
+            None => Folder::serve(dist, 0).context("cannot serve the page")?,
+        };
         let driver = Driver::start(kind, scratch)?;
         let browser = driver.open(screen).await?;
         let port = server.port();

@@ -1,6 +1,8 @@
 //! A whole site as a person uses it: six taps, a part beside the line, kept, shared, undone, with no signal.
 
-use browser::{Result, Screen, Site, ensure, visit};
+use std::cell::RefCell;
+
+use browser::{Result, Screen, Site, ensure, visit, visit_and_kill};
 
 async fn line(site: &Site) -> Result<()> {
     site.load().await?;
@@ -190,6 +192,32 @@ fn a_page_torn_away_in_mid_typing_loses_one_keystroke_at_most() {
             before.pop();
             ensure!(there == typed || there == before, "\"{there}\" of \"{typed}\"");
             typed = there;
+        }
+        Ok(())
+    });
+}
+
+/// The browser is killed right behind a keystroke, fifty times: at most that keystroke is lost, and the rest of the site never.
+#[test]
+fn a_browser_killed_in_mid_typing_loses_one_keystroke_at_most() {
+    let typed = RefCell::new(String::new());
+    visit_and_kill(Screen::PHONE, 51, async |site, time| {
+        site.press("Line").await?;
+        if time == 0 {
+            six_taps(site).await?;
+            return site.is_written().await;
+        }
+        site.element(".line .bus").await?;
+        let there = site.value_of("Name of the site").await?;
+        let mut before = typed.borrow().clone();
+        before.pop();
+        ensure!(there == *typed.borrow() || there == before, "\"{there}\" of \"{}\"", typed.borrow());
+        typed.replace(there);
+        // Now one key, now several at a time, in the middle of which it ends.
+        for place in 0..=time % 4 {
+            let letter = char::from(b'a' + u8::try_from((time + place) % 26).unwrap_or(0));
+            site.type_on("Name of the site", &letter.to_string()).await?;
+            typed.borrow_mut().push(letter);
         }
         Ok(())
     });
