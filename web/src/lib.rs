@@ -12,6 +12,7 @@ pub mod cells;
 pub mod check_row;
 pub mod checks_view;
 mod clock;
+mod code;
 pub mod derived;
 pub mod draft;
 mod dropped;

@@ -21,6 +21,8 @@ pub enum Route {
     Part(Subject),
     /// A link that holds a site, on its way to the line.
     Link,
+    /// A link that holds a piece of a site.
+    Piece,
     /// Every check of it.
     Checks,
     /// What is kept on this phone.
@@ -35,6 +37,7 @@ impl Route {
             "line" => Self::Line,
             "checks" => Self::Checks,
             link if link.starts_with("site/") => Self::Link,
+            piece if piece.starts_with("piece/") => Self::Piece,
             part if part.starts_with("line/") => Self::part(&part[5..]),
             key => Tool::with_page(key).map_or(Self::Tools, Self::Tool),
         }
@@ -63,7 +66,7 @@ impl Route {
             Self::Part(Subject::Part(id)) => format!("#/line/{}", id.0),
             Self::Part(Subject::Run(id)) => format!("#/line/{}/run", id.0),
             Self::Checks => "#/checks".to_owned(),
-            Self::Sheet => "#/sheet".to_owned(),
+            Self::Sheet | Self::Piece => "#/sheet".to_owned(),
         }
     }
 
@@ -74,6 +77,7 @@ impl Route {
             Self::Tool(tool) => format!("{}: Linehut", tool.name()),
             Self::Line | Self::Link | Self::Part(_) => "Line: Linehut".to_owned(),
             Self::Checks => "Checks: Linehut".to_owned(),
+            Self::Piece => "A site comes in: Linehut".to_owned(),
             Self::Sheet => "Sheet: Linehut".to_owned(),
         }
     }

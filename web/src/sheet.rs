@@ -136,6 +136,7 @@ fn this_site(said: RwSignal<String>) -> Piece {
                     "Its link"
                     <input type="text" readonly aria-label="Link that holds the site" prop:value=link/>
                 </label>
+                {crate::code::codes()}
                 {earlier()}
             }
         },

@@ -4,7 +4,9 @@ use crate::derived::{Memo, memo, when};
 use crate::piece::{Piece, view};
 use leptos::ev::{self, KeyboardEvent};
 use leptos::prelude::*;
+use wasm_bindgen_futures::spawn_local;
 
+use crate::code::{Arriving, arriving};
 use crate::draft::{Draft, use_draft};
 use crate::first_visit::first_visit;
 use crate::fold::Folds;
@@ -26,6 +28,14 @@ pub fn shell(draft: Draft) -> Piece {
     let keys = window_event_listener(ev::keydown, move |event| undo_keys(draft, &event));
     on_cleanup(move || keys.remove());
     let refused = RwSignal::new(false);
+    let coming = Arriving::new(draft);
+    Effect::new(move |_| {
+        if route.get() == Route::Piece {
+            let hash = window().location().hash().unwrap_or_default();
+            let piece = hash.split_once("piece/").map_or("", |(_, piece)| piece).to_owned();
+            spawn_local(coming.take(piece));
+        }
+    });
     Effect::new(move |_| {
         if route.get() == Route::Link {
             let hash = window().location().hash().unwrap_or_default();
@@ -53,6 +63,7 @@ pub fn shell(draft: Draft) -> Piece {
         Route::Checks => crate::checks_view::checks_view(),
         Route::Tools => first_visit(),
         Route::Tool(tool) => tool.page(),
+        Route::Piece => arriving(coming),
         Route::Sheet => sheet(),
     };
     view! {
@@ -265,6 +276,7 @@ fn bottom_bar(route: Memo<Route>) -> Piece {
             let here = match route.get() {
                 Route::Tools | Route::Tool(_) => Route::Tools,
                 Route::Line | Route::Link | Route::Part(_) => Route::Line,
+                Route::Piece => Route::Sheet,
                 other => other,
             };
             (here == to).then_some("page")

@@ -5,6 +5,7 @@
 //! - [`Kept`] is the layout of today, the same in the browser's storage and in a file.
 //! - [`file`] opens and writes files: size, shape and version are checked, and nothing in a file can make it panic.
 //! - [`site`] does the same for one site.
+//! - [`pieces`] parts a site among several links, each short enough for a code that a camera reads.
 //! - [`demo`] holds sites to look at; [`report`] writes a site's checks out.
 //! - `browser` (wasm only) turns it into a structured value for the browser's storage and back.
 //!
@@ -18,6 +19,7 @@ pub mod demo;
 pub mod file;
 mod kept;
 pub mod link;
+pub mod pieces;
 mod refused;
 pub mod report;
 pub mod site;

@@ -163,6 +163,33 @@ impl Storage {
     }
 }
 
+impl Storage {
+    /// Adds a piece of a site that comes in, in one transaction, and gives all that came of its set. Those of other sets go.
+    pub async fn add_piece(&self, set: &str, piece: &str) -> Result<Vec<String>, Why> {
+        let database = self.0.borrow().clone();
+        let transaction = database.transaction(&[STORE], TransactionMode::ReadWrite).map_err(why)?;
+        let store = transaction.store(STORE).map_err(why)?;
+        let record = text(&store, PIECES).await?.unwrap_or_default();
+        let ours = |line: &&str| line.starts_with(set) && *line != piece;
+        let all: Vec<String> = record.lines().filter(ours).chain([piece]).map(str::to_owned).collect();
+        put_text(&store, PIECES, &all.join("\n")).await?;
+        transaction.done().await.map_err(why)?;
+        Ok(all)
+    }
+
+    /// Forgets them.
+    pub async fn forget_pieces(&self) -> Result<(), Why> {
+        let database = self.0.borrow().clone();
+        let transaction = database.transaction(&[STORE], TransactionMode::ReadWrite).map_err(why)?;
+        transaction.store(STORE).map_err(why)?.delete(PIECES.into()).await.map_err(why)?;
+        transaction.done().await.map_err(why)?;
+        Ok(())
+    }
+}
+
+/// The record of a site that comes in: its pieces, a line each.
+const PIECES: &str = "pieces";
+
 /// What stands behind the name of a site that was put beside another tab's.
 const BESIDE: &str = " (this tab)";
 

@@ -197,6 +197,22 @@ impl Keeper {
         }
     }
 
+    /// Adds a piece of the site that comes in as the set of that name, and gives all that came of it. Pieces of other sets go.
+    pub async fn add_piece(self, set: String, piece: String) -> Vec<String> {
+        match self.storage() {
+            Some(storage) => storage.add_piece(&set, &piece).await.unwrap_or_default(),
+            None => Vec::new(),
+        }
+    }
+
+    /// Forgets the pieces of a site that came in.
+    pub async fn forget_pieces(self) {
+        if let Some(storage) = self.storage() {
+            // Pieces that stay are put away by the next set.
+            let _ = storage.forget_pieces().await;
+        }
+    }
+
     async fn list(self, storage: &Storage) {
         if let Ok(sites) = storage.sites().await {
             self.sites.set(sites);

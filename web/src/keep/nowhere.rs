@@ -54,6 +54,17 @@ impl Storage {
     }
 }
 
+#[allow(clippy::unused_async, reason = "the same face as the browser's storage")]
+impl Storage {
+    pub async fn add_piece(&self, _set: &str, _piece: &str) -> Result<Vec<String>, Why> {
+        match *self {}
+    }
+
+    pub async fn forget_pieces(&self) -> Result<(), Why> {
+        match *self {}
+    }
+}
+
 pub enum Tabs {}
 
 impl Tabs {
