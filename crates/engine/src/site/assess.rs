@@ -1,7 +1,7 @@
 //! Every check of a site.
 
 use super::Site;
-use super::derive::{bank_ask, run_ask, start_ask, string_ask};
+use super::derive::Survey;
 use super::part::{Part, PartId, PartKind};
 use super::rules::Requirement;
 use crate::bank;
@@ -103,6 +103,7 @@ impl Assessment {
 /// Judges every requirement that arises anywhere on the site.
 #[must_use]
 pub fn assess(site: &Site) -> Assessment {
+    let survey = Survey::new(site);
     let mut checks = Vec::new();
     let mut put = |place, check: Option<Check<CheckId>>| {
         checks.extend(check.map(|check| SiteCheck { place, check }));
@@ -114,20 +115,20 @@ pub fn assess(site: &Site) -> Assessment {
         let place = Place::Part(part.id);
         match part.kind {
             PartKind::Array => {
-                let ask = string_ask(site, part);
+                let ask = survey.string(part);
                 for one in string::Requirement::ALL {
                     put(place, one.check(&ask).map(|check| check.named(CheckId::String(one))));
                 }
             }
             PartKind::Bank => {
-                let ask = bank::settled(&bank_ask(site, part));
+                let ask = survey.settled(part);
                 for one in bank::Requirement::ALL.into_iter().filter(|one| bank_arises(site, &ask, *one)) {
                     put(place, one.check(&ask).map(|check| check.named(CheckId::Bank(one))));
                 }
             }
             // A load of direct current has no inverter to start it.
             PartKind::Load if site.first(PartKind::Inverter).is_some() => {
-                let ask = start_ask(site, part);
+                let ask = survey.start(part);
                 for one in start::Requirement::ALL {
                     put(place, one.check(&ask).map(|check| check.named(CheckId::Start(one))));
                 }
@@ -137,7 +138,7 @@ pub fn assess(site: &Site) -> Assessment {
         for requirement in Requirement::ALL {
             put(place, requirement.check(site, Some(part)).map(|check| check.named(CheckId::Site(requirement))));
         }
-        if let Some(ask) = run_ask(site, part) {
+        if let Some(ask) = survey.run(part) {
             for check in run::assess(&ask) {
                 put(Place::Run(part.id), Some(check.named(CheckId::Run(check.id))));
             }
@@ -163,13 +164,14 @@ fn bank_arises(site: &Site, ask: &bank::Ask, requirement: bank::Requirement) -> 
 /// The steps of one check, made by the same code as its value. Empty where the check does not arise there.
 #[must_use]
 pub fn working(site: &Site, place: Place, id: CheckId) -> Vec<Step> {
+    let survey = Survey::new(site);
     let part = |id: PartId| site.part(id);
     let found: Option<Vec<Step>> = (|| {
         Some(match (place, id) {
-            (Place::Part(at), CheckId::String(one)) => string::working(&string_ask(site, part(at)?), one),
-            (Place::Part(at), CheckId::Bank(one)) => bank::working(&bank_ask(site, part(at)?), one),
-            (Place::Part(at), CheckId::Start(one)) => start::working(&start_ask(site, part(at)?), one),
-            (Place::Run(at), CheckId::Run(one)) => run::working(&run_ask(site, part(at)?)?, one),
+            (Place::Part(at), CheckId::String(one)) => string::working(&survey.string(part(at)?), one),
+            (Place::Part(at), CheckId::Bank(one)) => bank::working(&survey.bank(part(at)?), one),
+            (Place::Part(at), CheckId::Start(one)) => start::working(&survey.start(part(at)?), one),
+            (Place::Run(at), CheckId::Run(one)) => run::working(&survey.run(part(at)?)?, one),
             (Place::Site, CheckId::Site(one)) => one.working(site, None),
             (Place::Part(at), CheckId::Site(one)) => one.working(site, Some(part(at)?)),
             _ => return None,

@@ -16,7 +16,7 @@ mod view;
 pub mod what_if;
 
 pub use assess::{Assessment, CheckId, Place, SiteCheck, assess, place_name, working};
-pub use derive::{bank_ask, run_ask, start_ask, string_ask};
+pub use derive::{Survey, bank_ask, run_ask, start_ask, string_ask};
 pub use entries::{Entries, Typed};
 pub use home::{Home, home};
 pub use part::{Kind, Part, PartId, PartKind};

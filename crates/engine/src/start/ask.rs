@@ -169,6 +169,11 @@ impl Ask {
     /// Reads the fields of the Start tool.
     #[must_use]
     pub fn read(pad: &impl Pad) -> Self {
+        Self::read_beside(pad, bank::Ask::read(pad))
+    }
+
+    /// The same, of a bank that was read before.
+    pub(crate) fn read_beside(pad: &impl Pad, bank: bank::Ask) -> Self {
         Self {
             load: pad.choice(Field::StartLoad),
             running: pad.entry(Field::RunningPower),
@@ -208,7 +213,7 @@ impl Ask {
             trip_multiple: pad.entry(Field::TripMultiple),
             generator: pad.entry(Field::GeneratorRating),
             charger: pad.entry(Field::ChargerDraw),
-            bank: bank::Ask::read(pad),
+            bank,
         }
     }
 

@@ -68,8 +68,12 @@ impl Reading {
         }
         let reading = Self { number, unit };
         // In the unit typed, so that −459.67 °F, absolute zero itself, is not lost to the last bit.
-        if unit.dimension() == Dimension::Temperature && number < show::tidy(unit.from_base(-273.15)) {
-            return Err(Refusal::BelowAbsoluteZero { typed: reading });
+        if unit.dimension() == Dimension::Temperature {
+            let zero = unit.from_base(-273.15);
+            let least = if is_beside(number, zero) { show::tidy(zero) } else { zero };
+            if number < least {
+                return Err(Refusal::BelowAbsoluteZero { typed: reading });
+            }
         }
         Ok(reading)
     }
@@ -119,8 +123,13 @@ impl Reading {
             (Unit::Awg, shown) => shown,
             (typed, _) => typed,
         };
-        let ends = [least, most].map(|end| show::tidy(unit.from_base(end)));
+        let ends = [least, most].map(|end| unit.from_base(end));
         let number = self.unit.convert(self.number, unit).unwrap_or(self.number);
+        // Only beside an end does it matter how the end is worded.
+        if number >= ends[0] && number <= ends[1] && !ends.iter().any(|end| is_beside(number, *end)) {
+            return Ok(self);
+        }
+        let ends = ends.map(show::tidy);
         if number < ends[0] || number > ends[1] {
             return Err(Refusal::OutOfRange { typed: self, least: ends[0], most: ends[1], unit });
         }
@@ -138,6 +147,12 @@ impl Reading {
         }
         self.within(f64::from(least), f64::from(most), Unit::One)
     }
+}
+
+/// Whether `number` may lie on the other side of `end` once that is written with the digits that are kept: twelve, so that writing
+/// moves it by less than a part in 10¹¹.
+fn is_beside(number: f64, end: f64) -> bool {
+    (number - end).abs() <= end.abs() * 1e-9
 }
 
 /// Writes a reading as a person would type it. Reading that gives the same again, to the last bit.

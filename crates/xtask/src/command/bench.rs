@@ -18,9 +18,9 @@ pub fn run(arguments: &[String]) -> Result<()> {
     install::for_page(&shell)?;
     let _here = shell.push_dir(root());
     eprintln!("Timing natively");
-    cmd!(shell, "cargo bench -p engine -p published --benches").run()?;
+    cmd!(shell, "cargo bench -p engine -p bridge -p published --benches").run()?;
     eprintln!("Timing as wasm, under Node.js");
-    cmd!(shell, "cargo bench -p engine --benches --target wasm32-unknown-unknown")
+    cmd!(shell, "cargo bench -p engine -p bridge --benches --target wasm32-unknown-unknown")
         .env("CARGO_TARGET_WASM32_UNKNOWN_UNKNOWN_RUNNER", "wasm-bindgen-test-runner")
         .run()?;
     Ok(())
