@@ -4,6 +4,7 @@ use crate::choice::Choice;
 use crate::entry::Entry;
 use crate::field::Field;
 use crate::quantity::Quantity;
+use crate::typed::Reading;
 use crate::unit::Unit;
 
 /// Gives the text of a field, as typed, and the unit chosen for it.
@@ -13,10 +14,19 @@ pub trait Pad {
     /// What stands in `field`.
     fn typed(&self, field: Field) -> (&str, Option<Unit>);
 
+    /// What stands in `field`, as a number in the unit it was typed in.
+    fn reading(&self, field: Field) -> Entry<Reading> {
+        let (text, unit) = self.typed(field);
+        field.reading(text, unit)
+    }
+
     /// What stands in `field`, as a quantity.
     fn entry<Q: Quantity>(&self, field: Field) -> Entry<Q> {
-        let (text, unit) = self.typed(field);
-        field.entry(text, unit)
+        match self.reading(field) {
+            Entry::Typed(reading) => reading.quantity().map_or(Entry::Unread, Entry::Typed),
+            Entry::Blank => Entry::Blank,
+            Entry::Unread => Entry::Unread,
+        }
     }
 
     /// What stands in `field`, as one of its list.

@@ -144,8 +144,10 @@ pub fn assess(site: &Site) -> Assessment {
             }
         }
     }
-    sort_short(&mut checks, |a, b| a.check.order(&b.check));
-    Assessment { checks }
+    // By their places, as a check is large.
+    let mut order: Vec<usize> = (0..checks.len()).collect();
+    sort_short(&mut order, |a, b| checks[*a].check.order(&checks[*b].check));
+    Assessment { checks: order.into_iter().map(|at| checks[at]).collect() }
 }
 
 /// Whether a requirement of the bank arises on this site: a room with no inverter has no inverter's window.

@@ -8,11 +8,11 @@ use super::Site;
 use super::part::{Part, PartKind};
 use super::view::{Subject, View};
 use crate::bank;
-use crate::conductor::{Size, resistance};
+use crate::conductor::{Conductor, Size, resistance};
 use crate::entry::Entry;
 use crate::field::Field;
 use crate::pad::Pad;
-use crate::quantity::{Amps, Celsius, Count, Ohms, Volts, Watts};
+use crate::quantity::{Amps, Celsius, Count, Metres, Ohms, Volts, Watts};
 use crate::run::{self, Kind};
 use crate::start;
 use crate::string;
@@ -58,6 +58,8 @@ pub struct Survey<'a> {
     window: OnceCell<Option<bank::Window>>,
     /// What each run asks, in the order of the parts.
     runs: Vec<OnceCell<Option<run::Ask>>>,
+    /// The first bank's own least resistance, and that of its run, cold.
+    source: OnceCell<Option<(Ohms, Ohms)>>,
     /// The cable of the bank and of the first inverter together.
     cable: OnceCell<Option<Ohms>>,
 }
@@ -71,6 +73,7 @@ impl<'a> Survey<'a> {
             bank: OnceCell::new(),
             window: OnceCell::new(),
             runs: site.parts.iter().map(|_| OnceCell::new()).collect(),
+            source: OnceCell::new(),
             cable: OnceCell::new(),
         }
     }
@@ -298,9 +301,10 @@ impl Survey<'_> {
     fn source_of(&self, part: &Part) -> Option<Ohms> {
         let site = self.site;
         let bank = site.first(PartKind::Bank)?;
-        let mut all = least_resistance(&self.settled(bank))?;
+        let source = || Some((least_resistance(&self.settled(bank))?, cold_way(bank)));
+        let (mut all, way) = (*self.source.get_or_init(source))?;
         if part.id != bank.id {
-            all = all + cold_way(bank);
+            all = all + way;
             let feeder = part.to.and_then(|to| site.part(to)).filter(|to| to.kind == PartKind::DcPanel);
             all = all + feeder.map_or(Ohms::new(0.0), cold_way);
         }
@@ -399,11 +403,11 @@ impl Survey<'_> {
 /// Resistance of a run there and back at 20 °C, by its size and length alone.
 fn cold_way(part: &Part) -> Ohms {
     let Some(run) = &part.run else { return Ohms::new(0.0) };
-    let ask = run::Ask::read(run);
-    let (Some(size), Some(length)) = (ask.size.typed(), ask.length.typed()) else { return Ohms::new(0.0) };
+    let (size, length) = (run.entry(Field::ConductorSize).typed(), run.entry::<Metres>(Field::RunLength).typed());
+    let (Some(size), Some(length)) = (size, length) else { return Ohms::new(0.0) };
     let size = Size::of_area(size);
-    let conductor = ask.conductor.typed().unwrap_or_default();
-    let several = ask.parallel.typed().map_or(1.0, Count::get).max(1.0);
+    let conductor = run.choice::<Conductor>(Field::Conductor).typed().unwrap_or_default();
+    let several = run.entry::<Count>(Field::ConductorsInParallel).typed().map_or(1.0, Count::get).max(1.0);
     resistance(conductor, size, Celsius::new(20.0)) / several * (length * 2.0)
 }
 

@@ -1,7 +1,9 @@
 //! What was typed into the fields of one part.
 
+use crate::entry::Entry;
 use crate::field::Field;
 use crate::pad::Pad;
+use crate::typed::Reading;
 use crate::unit::Unit;
 
 /// What stands in one field.
@@ -23,8 +25,25 @@ impl Typed {
 
 /// What was typed, by field. A list in the order of the fields, as there are some dozens at most. A blank text is not
 /// kept.
-#[derive(Clone, Debug, Default, PartialEq, Eq)]
-pub struct Entries(Vec<(Field, Typed)>);
+///
+/// Each is read once, when it is put in: the checks ask for it many times over.
+#[derive(Clone, Debug, Default)]
+pub struct Entries(Vec<Held>);
+
+#[derive(Clone, Debug)]
+struct Held {
+    field: Field,
+    typed: Typed,
+    reading: Entry<Reading>,
+}
+
+impl PartialEq for Entries {
+    fn eq(&self, other: &Self) -> bool {
+        self.iter().eq(other.iter())
+    }
+}
+
+impl Eq for Entries {}
 
 impl Entries {
     /// Of texts in the fields' usual units.
@@ -40,24 +59,34 @@ impl Entries {
     /// What stands in `field`.
     #[must_use]
     pub fn get(&self, field: Field) -> Option<&Typed> {
-        let at = self.0.binary_search_by_key(&field, |(one, _)| *one).ok()?;
-        Some(&self.0[at].1)
+        self.held(field).map(|held| &held.typed)
+    }
+
+    fn held(&self, field: Field) -> Option<&Held> {
+        let at = self.0.binary_search_by_key(&field, |held| held.field).ok()?;
+        Some(&self.0[at])
+    }
+
+    /// What stands in `field`, as a number.
+    pub(super) fn read(&self, field: Field) -> Entry<Reading> {
+        self.held(field).map_or(Entry::Blank, |held| held.reading)
     }
 
     /// Puts `typed` into `field`; a blank text with no unit takes the entry away.
     pub fn set(&mut self, field: Field, typed: Typed) {
         let blank = typed.text.is_empty() && typed.unit.is_none();
-        match self.0.binary_search_by_key(&field, |(one, _)| *one) {
+        let held = |typed: Typed| Held { field, reading: field.reading(&typed.text, typed.unit), typed };
+        match self.0.binary_search_by_key(&field, |held| held.field) {
             Ok(at) if blank => drop(self.0.remove(at)),
-            Ok(at) => self.0[at].1 = typed,
+            Ok(at) => self.0[at] = held(typed),
             Err(_) if blank => {}
-            Err(at) => self.0.insert(at, (field, typed)),
+            Err(at) => self.0.insert(at, held(typed)),
         }
     }
 
     /// Every entry, in the order of the fields.
     pub fn iter(&self) -> impl Iterator<Item = (Field, &Typed)> {
-        self.0.iter().map(|(field, typed)| (*field, typed))
+        self.0.iter().map(|held| (held.field, &held.typed))
     }
 
     /// Whether nothing was entered.
@@ -74,6 +103,10 @@ impl Entries {
 }
 
 impl Pad for Entries {
+    fn reading(&self, field: Field) -> Entry<Reading> {
+        self.read(field)
+    }
+
     fn typed(&self, field: Field) -> (&str, Option<Unit>) {
         self.get(field).map_or(("", None), |typed| (&typed.text, typed.unit))
     }

@@ -4,8 +4,10 @@ use super::Site;
 use super::entries::Entries;
 use super::home::{Home, home};
 use super::part::{Part, PartId, PartKind};
+use crate::entry::Entry;
 use crate::field::Field;
 use crate::pad::Pad;
+use crate::typed::Reading;
 use crate::unit::Unit;
 
 /// What asks.
@@ -129,6 +131,10 @@ impl<'a> View<'a> {
 }
 
 impl Pad for View<'_> {
+    fn reading(&self, field: Field) -> Entry<Reading> {
+        self.entries(field).map_or(Entry::Blank, |entries| entries.read(field))
+    }
+
     fn typed(&self, field: Field) -> (&str, Option<Unit>) {
         self.entries(field).map_or(("", None), |entries| entries.typed(field))
     }

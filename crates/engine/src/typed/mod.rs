@@ -201,6 +201,12 @@ pub fn read(text: &str, usual: Unit) -> Result<Reading, Refusal> {
     if text.chars().nth(LONGEST).is_some() {
         return Err(Refusal::TooLong);
     }
+    if usual != Unit::Awg
+        && is_plain(text)
+        && let Some(number) = nearest(text)
+    {
+        return Reading::new(number, usual);
+    }
     let reading = match gauge::read(text, usual)? {
         Some(gauge) => gauge,
         None => number_and_unit(text, usual)?,
@@ -210,6 +216,15 @@ pub fn read(text: &str, usual: Unit) -> Result<Reading, Refusal> {
     } else {
         Err(Refusal::OtherDimension { typed: reading, usual })
     }
+}
+
+/// Whether it is nothing but digits with at most a hyphen before and a point between: as most numbers are typed, and the same
+/// whichever way it is read.
+fn is_plain(text: &str) -> bool {
+    let size = text.strip_prefix('-').unwrap_or(text);
+    let (whole, part) = size.split_once('.').unwrap_or((size, "0"));
+    let digits = |text: &str| !text.is_empty() && text.bytes().all(|letter| letter.is_ascii_digit());
+    digits(whole) && digits(part)
 }
 
 /// Marks without width that come along when text is pasted.
@@ -231,4 +246,31 @@ fn number_and_unit(text: &str, usual: Unit) -> Result<Reading, Refusal> {
         return Err(Refusal::Fraction { typed: reading });
     }
     Ok(reading)
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    /// Every text that is read the short way is read the same the long way.
+    #[test]
+    fn plain_numbers_are_read_the_same_both_ways() {
+        let letters = ['0', '1', '5', '9', '.', '-', ','];
+        let mut texts = vec![String::new()];
+        let mut plain = 0;
+        for _ in 0..5 {
+            texts = texts.iter().flat_map(|text| letters.map(|letter| format!("{text}{letter}"))).collect();
+            for text in &texts {
+                for usual in [Unit::Volt, Unit::One, Unit::DegreeCelsius, Unit::Metre] {
+                    if is_plain(text) {
+                        let long = number_and_unit(text, usual).map(|reading| (reading.number.to_bits(), reading.unit));
+                        let short = read(text, usual).map(|reading| (reading.number.to_bits(), reading.unit));
+                        assert_eq!(short, long, "{text}");
+                        plain += 1;
+                    }
+                }
+            }
+        }
+        assert!(plain > 10_000, "{plain}");
+    }
 }
