@@ -2,7 +2,7 @@
 
 use std::cell::RefCell;
 
-use browser::{Result, Screen, Site, ensure, visit, visit_and_kill};
+use browser::{Kind, Result, Screen, Site, ensure, visit, visit_and_kill};
 
 async fn line(site: &Site) -> Result<()> {
     site.load().await?;
@@ -221,6 +221,36 @@ fn a_browser_killed_in_mid_typing_loses_one_keystroke_at_most() {
         }
         Ok(())
     });
+}
+
+/// Printed, and no pass mark: a slow machine fails nothing. The whole line stands beside the part that is typed into.
+#[test]
+fn one_keystroke_to_the_repainted_line() {
+    for screen in [Screen::PHONE, Screen { width: 1280, height: 800 }] {
+        visit(screen, async |site| {
+            if site.kind != Kind::Chromium {
+                return Ok(());
+            }
+            line(site).await?;
+            site.press("Two Rivers clinic").await?;
+            site.press("East roof").await?;
+            site.heading("East roof").await?;
+            site.is_written().await?;
+            site.slow_down(6.0).await?;
+            let mut times = Vec::new();
+            for key in ['1', '2', '3', '4', '5'] {
+                site.type_into("Voc", "49.3").await?;
+                times.push(site.keystroke_to_paint("Voc", key).await?);
+            }
+            site.slow_down(1.0).await?;
+            times.sort_by(f64::total_cmp);
+            println!(
+                "one keystroke to the repainted clinic, {} px, six times slower: {:.1} ms (median of 5)",
+                screen.width, times[2]
+            );
+            Ok(())
+        });
+    }
 }
 
 #[test]

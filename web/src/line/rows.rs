@@ -1,13 +1,14 @@
 //! The rows of the line: parts and the runs between them, in the order of the conductor.
 
 use crate::piece::{Piece, view};
+use engine::check::FieldSet;
 use engine::choice::words;
 use engine::field::Field;
 use engine::pad::Pad;
 use engine::quantity::{Count, Quantity};
 use engine::run;
 use engine::show;
-use engine::site::{Assessment, Part, PartId, PartKind, Place, Site, Subject, run_ask};
+use engine::site::{Assessment, Part, PartId, PartKind, Place, Site, Subject, Survey};
 
 use super::link;
 use crate::check_row::bar;
@@ -87,17 +88,24 @@ pub fn rows(site: &Site, found: &Assessment, open: Option<Subject>) -> Vec<Piece
             </li>
         }
     });
+    let survey = Survey::new(site);
+    let sized: Vec<(PartId, Sized)> =
+        site.parts.iter().filter_map(|part| Some((part.id, run::size(&survey.run(part)?)))).collect();
+    let of = |id: PartId| sized.iter().find(|(one, _)| *one == id).map(|(_, sized)| sized);
     let rest = row_of(site).into_iter().filter_map(|row| match row {
-        Row::Part(id) => site.part(id).map(|part| part_row(site, part, found, open)),
-        Row::Run(id) => site.part(id).map(|part| run_row(site, part, found, open)),
+        Row::Part(id) => site.part(id).map(|part| part_row(site, part, of(id), found, open)),
+        Row::Run(id) => site.part(id).map(|part| run_row(site, part, of(id), found, open)),
     });
     sun.into_iter().chain(rest).collect()
 }
 
+/// A run with its conductor and breaker, or what is missing for them.
+type Sized = Result<run::Sizing, FieldSet>;
+
 /// Wire width on screen shows the size: 2 + 1.1 · √mm².
-fn width(site: &Site, part: &Part) -> String {
-    let area = run_ask(site, part)
-        .and_then(|ask| run::size(&ask).ok()?.conductor)
+fn width(sized: Option<&Sized>) -> String {
+    let area = sized
+        .and_then(|sized| sized.as_ref().ok()?.conductor)
         .map_or(4.0, |one| one.size.area().get() * f64::from(one.parallel));
     format!("{:.1}px", (2.0 + 1.1 * area.sqrt()).min(18.0))
 }
@@ -116,7 +124,7 @@ const fn symbol(kind: PartKind) -> &'static str {
     }
 }
 
-fn part_row(site: &Site, part: &Part, found: &Assessment, open: Option<Subject>) -> Piece {
+fn part_row(site: &Site, part: &Part, sized: Option<&Sized>, found: &Assessment, open: Option<Subject>) -> Piece {
     let place = Place::Part(part.id);
     if part.kind == PartKind::Bus {
         let volts = bus_volts(site).map_or_else(String::new, |volts| format!("{volts} d.c."));
@@ -126,7 +134,7 @@ fn part_row(site: &Site, part: &Part, found: &Assessment, open: Option<Subject>)
     }
     let worst = found.worst_at(place).map(|one| one.check);
     let is_open = open == Some(Subject::Part(part.id));
-    let wide = width(site, part);
+    let wide = width(sized);
     let typical = part.typical.then(|| view! { <span class="typical">"typical: read your nameplate"</span> });
     let torn = worst.is_some_and(|check| check.verdict == engine::check::Verdict::Breaks);
     view! {
@@ -154,7 +162,7 @@ fn hangs(site: &Site, part: &Part) -> bool {
     joined.is_some_and(|to| matches!(to.kind, PartKind::Inverter | PartKind::DcPanel | PartKind::AcPanel))
 }
 
-fn run_row(site: &Site, part: &Part, found: &Assessment, open: Option<Subject>) -> Piece {
+fn run_row(site: &Site, part: &Part, sized: Option<&Sized>, found: &Assessment, open: Option<Subject>) -> Piece {
     let place = Place::Run(part.id);
     let worst = found.worst_at(place).map(|one| one.check);
     let to = part.to.and_then(|to| site.part(to)).map_or("nothing yet", Part::title).to_owned();
@@ -169,7 +177,7 @@ fn run_row(site: &Site, part: &Part, found: &Assessment, open: Option<Subject>) 
     view! {
         <li class:is-open=is_open class:hangs=hangs(site, part)>
             <div class="rail">
-                <i class="wire" style=("--w", width(site, part))></i>
+                <i class="wire" style=("--w", width(sized))></i>
                 <span class="node sz30">{icon(if fuse { "s-fuse" } else { "s-breaker" }, "sym")}</span>
             </div>
             <div class="run">
@@ -177,24 +185,24 @@ fn run_row(site: &Site, part: &Part, found: &Assessment, open: Option<Subject>) 
                     <h3 class="run-name"><a href=link(place).href() aria-current=is_open.then_some("true")>{name}</a></h3>
                     {worst.map(|check| view! { {verdict_mark(check.verdict, false)} })}
                 </div>
-                <p class="run-key">{run_key(site, part)}</p>
+                <p class="run-key">{run_key(part, sized)}</p>
             </div>
         </li>
     }
 }
 
 /// "35 mm², 1.5 m, breaker 100 A".
-fn run_key(site: &Site, part: &Part) -> String {
-    let Some(ask) = run_ask(site, part) else { return String::new() };
+fn run_key(part: &Part, sized: Option<&Sized>) -> String {
+    let Some(sized) = sized else { return String::new() };
     let mut words = Vec::new();
-    match run::size(&ask) {
+    match sized {
         Ok(found) => {
             let chosen = if found.entered { "" } else { ", the least that holds" };
             words.extend(found.conductor.map(|one| format!("{one}{chosen}")));
             let what = if found.protection.protects == run::BreakerType::Fuse { "fuse" } else { "breaker" };
             words.push(format!("{what} {}", show::given(found.protection.rating.amount())));
         }
-        Err(missing) if !missing.is_empty() => words.push(format!("needs {}", crate::form::names(missing))),
+        Err(missing) if !missing.is_empty() => words.push(format!("needs {}", crate::form::names(*missing))),
         Err(_) => words.push("past every standard rating".to_owned()),
     }
     if let Some(entries) = &part.run {
