@@ -1,6 +1,6 @@
 //! The browser's database, its promise to last, and word to other tabs.
 
-use std::cell::RefCell;
+use std::cell::{Cell, RefCell};
 use std::rc::Rc;
 
 use bridge::{Kept, Refused};
@@ -9,7 +9,7 @@ use wasm_bindgen::prelude::*;
 use wasm_bindgen_futures::JsFuture;
 use web_sys::{BroadcastChannel, MessageEvent};
 
-use super::{KeptSite, ToKeep, Why};
+use super::{KeptSite, Put, ToKeep, Why};
 
 const DATABASE: &str = "linehut";
 const STORE: &str = "kept";
@@ -20,7 +20,21 @@ const DAMAGED: &str = "damaged";
 
 /// The database. A handle: a clone is the same database.
 #[derive(Clone)]
-pub struct Storage(Rc<RefCell<Rc<Rexie>>>);
+pub struct Storage(Rc<RefCell<Rc<Rexie>>>, Rc<Cell<LastState>>);
+
+/// When an earlier state was last kept, of which site: the record of them is large, and not read at each keystroke.
+#[derive(Clone, Copy, Default)]
+struct LastState {
+    key: u32,
+    when: f64,
+}
+
+impl LastState {
+    /// Whether another may be due.
+    fn is_due(self, key: u32, now: f64) -> bool {
+        self.key != key || now - self.when > super::STATE_APART
+    }
+}
 
 /// What stands before a site's text in its record: how often it was written.
 fn revised(record: &str) -> (u32, &str) {
@@ -41,7 +55,7 @@ pub struct Found {
 impl Storage {
     /// Opens the database, and makes it where there is none.
     pub async fn open() -> Result<Self, Why> {
-        Ok(Self(Rc::new(RefCell::new(connect().await?))))
+        Ok(Self(Rc::new(RefCell::new(connect().await?)), Rc::default()))
     }
 
     /// Reads the record. One that is damaged is laid aside, and an empty one stands in.
@@ -112,13 +126,17 @@ impl Storage {
     ///
     /// `after` is the revision that this tab read or wrote last. Where another tab has written since, the site is put
     /// beside the other's under a key of its own, which is given back: neither is overwritten.
-    pub async fn put_site(&self, site: &ToKeep, after: u32, now: f64) -> Result<(u32, u32), Why> {
+    pub async fn put_site(&self, site: &ToKeep, after: u32, now: f64) -> Result<Put, Why> {
         let database = self.0.borrow().clone();
         let transaction = database.transaction(&[STORE], TransactionMode::ReadWrite).map_err(why)?;
         let store = transaction.store(STORE).map_err(why)?;
         let there = text(&store, &site_key(site.key)).await?;
         let (revision, before) = there.as_deref().map_or((0, ""), revised);
-        let mut list = listed(&store).await?;
+        let mut list = of_record(&text(&store, SITES).await?.unwrap_or_default());
+        if revision != after || list.iter().all(|one| one.key != site.key) {
+            // Where a site begins, nothing else may be in its place.
+            list = listed(&store).await?;
+        }
         let (key, revision) = if revision == after {
             (site.key, revision + 1)
         } else {
@@ -128,11 +146,18 @@ impl Storage {
         let beside = |one: &KeptSite| one.key == key && one.name.ends_with(BESIDE);
         let apart = key != site.key || list.iter().any(beside);
         let name = if apart { format!("{}{BESIDE}", site.name) } else { site.name.clone() };
-        match list.iter_mut().find(|one| one.key == key) {
-            Some(one) => one.name = name,
-            None => list.push(KeptSite { key, name }),
-        }
-        if key == site.key && !before.is_empty() && before != site.text {
+        let changed = match list.iter_mut().find(|one| one.key == key) {
+            Some(one) if one.name == name => false,
+            Some(one) => {
+                one.name = name;
+                true
+            }
+            None => {
+                list.push(KeptSite { key, name });
+                true
+            }
+        };
+        if key == site.key && !before.is_empty() && before != site.text && self.1.get().is_due(key, now) {
             let record = text(&store, &earlier_key(key)).await?.unwrap_or_default();
             let last = states(&record).next().map_or(0.0, |(when, _)| when);
             if now - last > super::STATE_APART {
@@ -140,12 +165,17 @@ impl Storage {
                     .chain(states(&record).take(super::STATES - 1).map(|(when, text)| format!("{when}\n{text}")));
                 let record = kept.collect::<Vec<_>>().join(&APART.to_string());
                 put_text(&store, &earlier_key(key), &record).await?;
+                self.1.set(LastState { key, when: now });
+            } else {
+                self.1.set(LastState { key, when: last });
             }
         }
         put_text(&store, &site_key(key), &format!("{revision}\n{}", site.text)).await?;
-        put_list(&store, &list).await?;
+        if changed {
+            put_list(&store, &list).await?;
+        }
         transaction.done().await.map_err(why)?;
-        Ok((key, revision))
+        Ok(Put { key, revision, list: changed.then_some(list) })
     }
 
     /// Forgets a site and its earlier states.
@@ -218,12 +248,7 @@ async fn put_text(store: &Store, key: &str, text: &str) -> Result<(), Why> {
 
 /// The sites by their list, and those that a damaged list leaves out: what is there is never written over as if it were not.
 async fn listed(store: &Store) -> Result<Vec<KeptSite>, Why> {
-    let record = text(store, SITES).await?.unwrap_or_default();
-    let line = |line: &str| {
-        let (key, name) = line.split_once('\t')?;
-        Some(KeptSite { key: key.parse().ok()?, name: name.to_owned() })
-    };
-    let mut list: Vec<KeptSite> = record.lines().filter_map(line).collect();
+    let mut list = of_record(&text(store, SITES).await?.unwrap_or_default());
     for key in store.get_all_keys(None, None).await.map_err(why)? {
         let key = key.as_string().and_then(|key| key.strip_prefix(SITE)?.parse().ok());
         let Some(key) = key.filter(|key| list.iter().all(|one| one.key != *key)) else { continue };
@@ -232,6 +257,14 @@ async fn listed(store: &Store) -> Result<Vec<KeptSite>, Why> {
         list.push(KeptSite { key, name });
     }
     Ok(list)
+}
+
+fn of_record(record: &str) -> Vec<KeptSite> {
+    let line = |line: &str| {
+        let (key, name) = line.split_once('\t')?;
+        Some(KeptSite { key: key.parse().ok()?, name: name.to_owned() })
+    };
+    record.lines().filter_map(line).collect()
 }
 
 async fn put_list(store: &Store, list: &[KeptSite]) -> Result<(), Why> {

@@ -49,6 +49,17 @@ pub struct ToKeep {
     pub text: String,
 }
 
+/// A site that was written.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct Put {
+    /// What it is kept under now.
+    pub key: u32,
+    /// How often it has been written.
+    pub revision: u32,
+    /// The sites on this phone, where their list changed.
+    pub list: Option<Vec<KeptSite>>,
+}
+
 /// Whether what was typed is kept.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Keeping {
@@ -305,7 +316,9 @@ impl Keeper {
                                 tabs.tell();
                             }
                         });
-                        self.state.set(Keeping::Kept);
+                        if self.state.get_untracked() != Keeping::Kept {
+                            self.state.set(Keeping::Kept);
+                        }
                         self.ask_to_last().await;
                     }
                     Err(why) => {
@@ -329,7 +342,7 @@ impl Keeper {
         {
             let after = self.work.try_with_value(|work| work.revision(site.key)).unwrap_or(0);
             match storage.put_site(&site, after, crate::clock::date()).await {
-                Ok((key, revision)) => {
+                Ok(Put { key, revision, list }) => {
                     self.work.update_value(|work| {
                         work.set_revision(key, revision);
                         if let Some(tabs) = &work.tabs {
@@ -339,8 +352,12 @@ impl Keeper {
                     if key != site.key {
                         self.moved.set(Some((site.key, key)));
                     }
-                    self.list(&storage).await;
-                    self.state.set(Keeping::Kept);
+                    if let Some(list) = list {
+                        self.sites.set(list);
+                    }
+                    if self.state.get_untracked() != Keeping::Kept {
+                        self.state.set(Keeping::Kept);
+                    }
                     self.ask_to_last().await;
                 }
                 Err(why) => {

@@ -2,7 +2,7 @@
 
 use bridge::Kept;
 
-use super::{KeptSite, ToKeep, Why};
+use super::{KeptSite, Put, ToKeep, Why};
 
 /// No storage.
 #[derive(Clone)]
@@ -45,7 +45,7 @@ impl Storage {
         match *self {}
     }
 
-    pub async fn put_site(&self, _site: &ToKeep, _after: u32, _now: f64) -> Result<(u32, u32), Why> {
+    pub async fn put_site(&self, _site: &ToKeep, _after: u32, _now: f64) -> Result<Put, Why> {
         match *self {}
     }
 
