@@ -4,7 +4,7 @@ use std::cell::RefCell;
 
 use browser::{Result, Screen, Site, ensure, visit};
 
-const CODES: &str = "As a code to scan for another phone, no network";
+const CODES: &str = "As a code to scan no network";
 
 /// What a reader of another make (rqrr) reads from the code on the screen, by the modules drawn there.
 async fn scanned(site: &Site) -> Result<String> {

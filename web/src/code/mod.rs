@@ -26,7 +26,7 @@ const STANDS: Duration = Duration::from_millis(2500);
 
 /// The codes, folded until they are wanted.
 pub fn codes() -> Piece {
-    fold("sheet/codes", "As a code to scan", memo(|| "for another phone, no network".to_owned()), inside)
+    fold("sheet/codes", "As a code to scan", memo(|| "no network".to_owned()), inside)
 }
 
 fn inside() -> Piece {
