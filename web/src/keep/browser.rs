@@ -1,10 +1,11 @@
 //! The browser's database, its promise to last, and word to other tabs.
 
 use std::cell::{Cell, RefCell};
+use std::pin::Pin;
 use std::rc::Rc;
 
 use bridge::{Kept, Refused};
-use rexie::{ObjectStore, Rexie, Store, TransactionMode};
+use rexie::{ObjectStore, Rexie, Store, Transaction, TransactionMode};
 use wasm_bindgen::prelude::*;
 use wasm_bindgen_futures::JsFuture;
 use web_sys::{BroadcastChannel, MessageEvent};
@@ -58,21 +59,23 @@ impl Storage {
         Ok(Self(Rc::new(RefCell::new(connect().await?)), Rc::default()))
     }
 
+    fn begin(&self, mode: TransactionMode) -> Result<(Transaction, Store), Why> {
+        begun(&self.0.borrow(), mode)
+    }
+
     /// Reads the record. One that is damaged is laid aside, and an empty one stands in.
     pub async fn read(&self) -> Result<Found, Why> {
-        let database = self.0.borrow().clone();
-        let transaction = database.transaction(&[STORE], TransactionMode::ReadWrite).map_err(why)?;
-        let store = transaction.store(STORE).map_err(why)?;
+        let (transaction, store) = self.begin(TransactionMode::ReadWrite)?;
         let found = match stored(&store).await? {
             Ok(kept) => Found { kept, damaged: false },
             Err((Refused::Newer { .. }, _)) => return Err(Why::Newer),
             Err((_, raw)) => {
-                store.put(&raw, Some(&DAMAGED.into())).await.map_err(why)?;
-                store.delete(NOW.into()).await.map_err(why)?;
+                put_value(&store, DAMAGED, raw).await?;
+                remove(&store, NOW).await?;
                 Found { kept: Kept::default(), damaged: true }
             }
         };
-        transaction.done().await.map_err(why)?;
+        done(transaction).await?;
         Ok(found)
     }
 
@@ -95,17 +98,13 @@ impl Storage {
 impl Storage {
     /// The sites that are kept: what each is kept under, and its name.
     pub async fn sites(&self) -> Result<Vec<KeptSite>, Why> {
-        let database = self.0.borrow().clone();
-        let transaction = database.transaction(&[STORE], TransactionMode::ReadOnly).map_err(why)?;
-        let store = transaction.store(STORE).map_err(why)?;
+        let (_, store) = self.begin(TransactionMode::ReadOnly)?;
         listed(&store).await
     }
 
     /// The text of a site, and how often it was written. Of a record that is no text, whatever text can be made of it.
     pub async fn site(&self, key: u32) -> Result<Option<(u32, String)>, Why> {
-        let database = self.0.borrow().clone();
-        let transaction = database.transaction(&[STORE], TransactionMode::ReadOnly).map_err(why)?;
-        let store = transaction.store(STORE).map_err(why)?;
+        let (_, store) = self.begin(TransactionMode::ReadOnly)?;
         let Some(value) = store.get(site_key(key).into()).await.map_err(why)? else { return Ok(None) };
         let made = || js_sys::JSON::stringify(&value).ok().and_then(|text| text.as_string());
         let record = value.as_string().or_else(made).unwrap_or_default();
@@ -115,9 +114,7 @@ impl Storage {
 
     /// The earlier states of a site, the latest first: when, in milliseconds, and its text.
     pub async fn earlier(&self, key: u32) -> Result<Vec<(f64, String)>, Why> {
-        let database = self.0.borrow().clone();
-        let transaction = database.transaction(&[STORE], TransactionMode::ReadOnly).map_err(why)?;
-        let store = transaction.store(STORE).map_err(why)?;
+        let (_, store) = self.begin(TransactionMode::ReadOnly)?;
         let record = text(&store, &earlier_key(key)).await?.unwrap_or_default();
         Ok(states(&record).map(|(when, text)| (when, text.to_owned())).collect())
     }
@@ -127,9 +124,7 @@ impl Storage {
     /// `after` is the revision that this tab read or wrote last. Where another tab has written since, the site is put
     /// beside the other's under a key of its own, which is given back: neither is overwritten.
     pub async fn put_site(&self, site: &ToKeep, after: u32, now: f64) -> Result<Put, Why> {
-        let database = self.0.borrow().clone();
-        let transaction = database.transaction(&[STORE], TransactionMode::ReadWrite).map_err(why)?;
-        let store = transaction.store(STORE).map_err(why)?;
+        let (transaction, store) = self.begin(TransactionMode::ReadWrite)?;
         let there = text(&store, &site_key(site.key)).await?;
         let (revision, before) = there.as_deref().map_or((0, ""), revised);
         let mut list = of_record(&text(&store, SITES).await?.unwrap_or_default());
@@ -174,21 +169,19 @@ impl Storage {
         if changed {
             put_list(&store, &list).await?;
         }
-        transaction.done().await.map_err(why)?;
+        done(transaction).await?;
         Ok(Put { key, revision, list: changed.then_some(list) })
     }
 
     /// Forgets a site and its earlier states.
     pub async fn forget_site(&self, key: u32) -> Result<(), Why> {
-        let database = self.0.borrow().clone();
-        let transaction = database.transaction(&[STORE], TransactionMode::ReadWrite).map_err(why)?;
-        let store = transaction.store(STORE).map_err(why)?;
+        let (transaction, store) = self.begin(TransactionMode::ReadWrite)?;
         let mut list = listed(&store).await?;
         list.retain(|one| one.key != key);
-        store.delete(site_key(key).into()).await.map_err(why)?;
-        store.delete(earlier_key(key).into()).await.map_err(why)?;
+        remove(&store, &site_key(key)).await?;
+        remove(&store, &earlier_key(key)).await?;
         put_list(&store, &list).await?;
-        transaction.done().await.map_err(why)?;
+        done(transaction).await?;
         Ok(())
     }
 }
@@ -196,23 +189,20 @@ impl Storage {
 impl Storage {
     /// Adds a piece of a site that comes in, in one transaction, and gives all that came of its set. Those of other sets go.
     pub async fn add_piece(&self, set: &str, piece: &str) -> Result<Vec<String>, Why> {
-        let database = self.0.borrow().clone();
-        let transaction = database.transaction(&[STORE], TransactionMode::ReadWrite).map_err(why)?;
-        let store = transaction.store(STORE).map_err(why)?;
+        let (transaction, store) = self.begin(TransactionMode::ReadWrite)?;
         let record = text(&store, PIECES).await?.unwrap_or_default();
         let ours = |line: &&str| line.starts_with(set) && *line != piece;
         let all: Vec<String> = record.lines().filter(ours).chain([piece]).map(str::to_owned).collect();
         put_text(&store, PIECES, &all.join("\n")).await?;
-        transaction.done().await.map_err(why)?;
+        done(transaction).await?;
         Ok(all)
     }
 
     /// Forgets them.
     pub async fn forget_pieces(&self) -> Result<(), Why> {
-        let database = self.0.borrow().clone();
-        let transaction = database.transaction(&[STORE], TransactionMode::ReadWrite).map_err(why)?;
-        transaction.store(STORE).map_err(why)?.delete(PIECES.into()).await.map_err(why)?;
-        transaction.done().await.map_err(why)?;
+        let (transaction, store) = self.begin(TransactionMode::ReadWrite)?;
+        remove(&store, PIECES).await?;
+        done(transaction).await?;
         Ok(())
     }
 }
@@ -237,26 +227,48 @@ fn earlier_key(key: u32) -> String {
     format!("earlier-{key}")
 }
 
-async fn text(store: &Store, key: &str) -> Result<Option<String>, Why> {
-    Ok(store.get(key.into()).await.map_err(why)?.and_then(|value| value.as_string()))
+/// What the storage will answer. Boxed: an async function inside another would be made anew in each.
+type Answer<'a, T> = Pin<Box<dyn Future<Output = Result<T, Why>> + 'a>>;
+
+fn text<'a>(store: &'a Store, key: &'a str) -> Answer<'a, Option<String>> {
+    Box::pin(async move { Ok(store.get(key.into()).await.map_err(why)?.and_then(|value| value.as_string())) })
 }
 
-async fn put_text(store: &Store, key: &str, text: &str) -> Result<(), Why> {
-    store.put(&text.into(), Some(&key.into())).await.map_err(why)?;
-    Ok(())
+fn put_value<'a>(store: &'a Store, key: &'a str, value: JsValue) -> Answer<'a, ()> {
+    Box::pin(async move {
+        store.put(&value, Some(&key.into())).await.map_err(why)?;
+        Ok(())
+    })
+}
+
+fn put_text<'a>(store: &'a Store, key: &'a str, text: &str) -> Answer<'a, ()> {
+    put_value(store, key, text.into())
+}
+
+fn remove<'a>(store: &'a Store, key: &'a str) -> Answer<'a, ()> {
+    Box::pin(async move { store.delete(key.into()).await.map_err(why) })
+}
+
+fn done<'a>(transaction: Transaction) -> Answer<'a, ()> {
+    Box::pin(async move {
+        transaction.done().await.map_err(why)?;
+        Ok(())
+    })
 }
 
 /// The sites by their list, and those that a damaged list leaves out: what is there is never written over as if it were not.
-async fn listed(store: &Store) -> Result<Vec<KeptSite>, Why> {
-    let mut list = of_record(&text(store, SITES).await?.unwrap_or_default());
-    for key in store.get_all_keys(None, None).await.map_err(why)? {
-        let key = key.as_string().and_then(|key| key.strip_prefix(SITE)?.parse().ok());
-        let Some(key) = key.filter(|key| list.iter().all(|one| one.key != *key)) else { continue };
-        let record = text(store, &site_key(key)).await?.unwrap_or_default();
-        let name = bridge::site::open(revised(&record).1).map_or_else(|_| String::new(), |site| site.name);
-        list.push(KeptSite { key, name });
-    }
-    Ok(list)
+fn listed(store: &Store) -> Answer<'_, Vec<KeptSite>> {
+    Box::pin(async move {
+        let mut list = of_record(&text(store, SITES).await?.unwrap_or_default());
+        for key in store.get_all_keys(None, None).await.map_err(why)? {
+            let key = key.as_string().and_then(|key| key.strip_prefix(SITE)?.parse().ok());
+            let Some(key) = key.filter(|key| list.iter().all(|one| one.key != *key)) else { continue };
+            let record = text(store, &site_key(key)).await?.unwrap_or_default();
+            let name = bridge::site::open(revised(&record).1).map_or_else(|_| String::new(), |site| site.name);
+            list.push(KeptSite { key, name });
+        }
+        Ok(list)
+    })
 }
 
 fn of_record(record: &str) -> Vec<KeptSite> {
@@ -282,25 +294,30 @@ fn states(record: &str) -> impl Iterator<Item = (f64, &str)> {
     })
 }
 
+fn begun(database: &Rexie, mode: TransactionMode) -> Result<(Transaction, Store), Why> {
+    let transaction = database.transaction(&[STORE], mode).map_err(why)?;
+    let store = transaction.store(STORE).map_err(why)?;
+    Ok((transaction, store))
+}
+
 async fn connect() -> Result<Rc<Rexie>, Why> {
     let built = Rexie::builder(DATABASE).version(1).add_object_store(ObjectStore::new(STORE)).build().await;
     built.map(Rc::new).map_err(why)
 }
 
 async fn put(database: &Rexie, base: &Kept, next: &Kept) -> Result<(), Why> {
-    let transaction = database.transaction(&[STORE], TransactionMode::ReadWrite).map_err(why)?;
-    let store = transaction.store(STORE).map_err(why)?;
+    let (transaction, store) = begun(database, TransactionMode::ReadWrite)?;
     let kept = match stored(&store).await? {
         Ok(there) => there.with_changes(base, next),
         Err((Refused::Newer { .. }, _)) => return Err(Why::Newer),
         Err((_, raw)) => {
-            store.put(&raw, Some(&DAMAGED.into())).await.map_err(why)?;
+            put_value(&store, DAMAGED, raw).await?;
             next.clone()
         }
     };
     let value = bridge::browser::to_value(&kept).map_err(|_| Why::Refused)?;
-    store.put(&value, Some(&NOW.into())).await.map_err(why)?;
-    transaction.done().await.map_err(why)?;
+    put_value(&store, NOW, value).await?;
+    done(transaction).await?;
     Ok(())
 }
 
