@@ -88,9 +88,13 @@ impl Site {
 
     /// Presses what has that name.
     pub async fn press(&self, name: &str) -> Result<()> {
-        let button = self.button(name).await?;
-        self.bring_up(&button).await?;
-        button.click().await.with_context(|| format!("cannot press \"{name}\""))
+        // A page that is only just put up goes to its head once it is painted: what was brought up may be moved again.
+        self.wait_for(&format!("\"{name}\" to be pressed"), async || {
+            let button = self.button(name).await?;
+            self.bring_up(&button).await?;
+            button.click().await.map(Some).with_context(|| format!("cannot press \"{name}\""))
+        })
+        .await
     }
 
     /// Chooses from a list by the words shown; where the choices are buttons, presses the one of that name.
