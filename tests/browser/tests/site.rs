@@ -100,6 +100,28 @@ fn a_link_holds_the_whole_site() {
 }
 
 #[test]
+fn a_link_opens_the_same_site_in_a_browser_that_nobody_has_used() {
+    let sent = RefCell::new(String::new());
+    visit(Screen::PHONE, async |site| {
+        line(site).await?;
+        site.press("Two Rivers clinic").await?;
+        site.press("Sheet").await?;
+        sent.replace(site.value_of("Link that holds the site").await?);
+        Ok(())
+    });
+    let link = sent.into_inner();
+    let (_, behind) = link.split_once('#').expect("the site stands behind #");
+    visit(Screen::PHONE, async |site| {
+        site.another_tab(&format!("#{behind}")).await?;
+        site.element(".line .bus").await?;
+        ensure!(site.value_of("Name of the site").await? == "Two Rivers clinic");
+        site.press("Sheet").await?;
+        ensure!(site.value_of("Link that holds the site").await?.ends_with(behind), "the same to the letter");
+        Ok(())
+    });
+}
+
+#[test]
 fn a_hostile_text_is_refused_and_changes_nothing() {
     visit(Screen::PHONE, async |site| {
         line(site).await?;

@@ -15,6 +15,7 @@ use leptos::prelude::*;
 use crate::draft::use_draft;
 use crate::pads::{Edit, SiteEdit};
 use crate::route::Route;
+use crate::settled::settled;
 use crate::verdict::{cost_mark, tells_cost, verdict_mark};
 
 pub use new_site::kept as kept_sites;
@@ -44,8 +45,10 @@ pub fn line_view(subject: Option<Subject>) -> Piece {
 
 fn column(site: Memo<Option<Site>>, subject: Option<Subject>) -> Piece {
     let draft = use_draft();
-    let found = assessed(site);
     let name = memo(move || site.with(|site| site.as_ref().map(|site| site.name.clone()).unwrap_or_default()));
+    // Beside a part that is typed into, the part's own answer goes first.
+    let site = if subject.is_some() { settled(site) } else { site };
+    let found = assessed(site);
     let rows = dynamic(move || {
         site.with(|site| {
             found.with(|found| match site {

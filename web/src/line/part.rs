@@ -15,6 +15,7 @@ use crate::field::StandIn;
 use crate::form::{Form, Hints, fields_of};
 use crate::pads::{Edit, SiteEdit};
 use crate::route::Route;
+use crate::settled::settled;
 use crate::tool_page::{caution, check_list};
 use crate::tools::Tool;
 
@@ -175,6 +176,7 @@ const fn place(subject: Subject) -> Place {
 
 /// The checks at one place: all of them, or those that its tool does not show.
 fn checks(subject: Subject, site: Memo<Option<Site>>, of_site_only: bool) -> Piece {
+    let site = settled(site);
     let found = assessed(site);
     let nowhere = Callback::new(|_: Field| ());
     let at = place(subject);
