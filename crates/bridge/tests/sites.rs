@@ -1,6 +1,7 @@
 //! Sites: a file that was cut, bent or made up changes nothing and never panics.
 
 use arbtest::arbtest;
+use bridge::pieces::{Piece, join, site_of};
 use bridge::{Refused, site};
 use engine::chemistry::Chemistry;
 use engine::family::CodeFamily;
@@ -102,4 +103,23 @@ fn any_entries_are_assessed() {
         }
         Ok(())
     });
+}
+
+/// Written with version 1 of the layout; link and pieces by Python's `json`, `zlib` and `base64`. They open for ever.
+#[test]
+fn version_1_opens_from_file_link_and_pieces() {
+    let kept = site::open(include_str!("kept/site-v1.json")).unwrap();
+    assert_eq!((kept.name.as_str(), kept.parts.len()), ("Two Rivers clinic", 14));
+    let of = |kind| kept.of_kind(kind).count();
+    assert_eq!((of(PartKind::Array), of(PartKind::Bank), of(PartKind::Generator)), (2, 1, 1));
+    let link = include_str!("kept/site-v1.link").trim();
+    assert_eq!(bridge::link::site_of(link.rsplit('/').next().unwrap()), Ok(kept.clone()));
+    let all = |text: &str| -> Vec<Piece> {
+        text.lines().map(|line| Piece::read(line.strip_prefix("/piece/").unwrap()).unwrap()).collect()
+    };
+    let (bytes, compressed) = join(&all(include_str!("kept/site-v1.pieces"))).unwrap();
+    assert_eq!((site_of(bytes), compressed), (Ok(kept), false));
+    // What is compressed only the browser unpacks; that it is whole, its sum says.
+    let (bytes, compressed) = join(&all(include_str!("kept/site-v1.compressed.pieces"))).unwrap();
+    assert!(compressed && bytes.len() < 2000);
 }

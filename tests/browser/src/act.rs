@@ -116,8 +116,7 @@ impl Site {
         if open.await? == Value::Bool(true) {
             return Ok(());
         }
-        self.bring_up(&fold).await?;
-        fold.click().await.with_context(|| format!("cannot unfold \"{name}\""))
+        self.press(name).await
     }
 
     /// Scrolls until the element lies in the middle, clear of what stands fixed at the edges, as a person does.

@@ -142,3 +142,23 @@ fn the_codes_step_by_themselves_only_when_asked() {
         site.no_complaints().await
     });
 }
+
+/// The pieces were made by Python's `zlib` and `base64` when the layout was first released.
+#[test]
+fn pieces_that_another_program_compressed_open() {
+    let kept = bridge::site::open(include_str!("../../../crates/bridge/tests/kept/site-v1.json")).expect("a kept site");
+    visit(Screen::PHONE, async |site| {
+        let pieces = include_str!("../../../crates/bridge/tests/kept/site-v1.compressed.pieces").lines();
+        for (place, piece) in pieces.enumerate() {
+            site.run("location.hash = arguments[0]", &[piece.into()]).await?;
+            if place < 2 {
+                site.shows(&format!("{} of 3 pieces are here", place + 1)).await?;
+            }
+        }
+        site.element(".line .bus").await?;
+        site.press("Sheet").await?;
+        let link = site.value_of("Link that holds the site").await?;
+        ensure!(link.ends_with(&bridge::link::letters(&kept)), "the same to the letter");
+        site.no_complaints().await
+    });
+}

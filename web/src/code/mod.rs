@@ -66,8 +66,8 @@ fn inside() -> Piece {
     view! {
         {dynamic(move || shown(frames, at, by_itself))}
         <p class="say">
-            "The other phone’s own camera reads it and offers a link: follow it. What is scanned goes from screen to camera and \
-             nowhere else. The page must be on the other phone already, or have signal to fetch it once."
+            "The other phone’s own camera reads it and offers a link: follow it. The site stands in the link itself and is sent to no \
+             server. The page must be on the other phone already, or have signal to fetch it once."
         </p>
     }
 }
