@@ -41,9 +41,16 @@ pub struct Site {
 }
 
 impl Site {
-    /// A site of these parts. Whatever a part is joined to that is not there is let go.
+    /// A site of these parts. Whatever a part is joined to that is not there is let go; a part whose number one before it has
+    /// gets a free one.
     #[must_use]
-    pub fn new(name: String, place: Entries, parts: Vec<Part>) -> Self {
+    pub fn new(name: String, place: Entries, mut parts: Vec<Part>) -> Self {
+        for at in 1..parts.len() {
+            if parts[..at].iter().any(|before| before.id == parts[at].id) {
+                let is_free = |id: &PartId| parts.iter().all(|part| part.id != *id);
+                parts[at].id = (1..u32::MAX).map(PartId).find(is_free).unwrap_or(parts[at].id);
+            }
+        }
         let last = parts.iter().map(|part| part.id.0).max().unwrap_or(0);
         let mut site = Self { name, place, parts, last };
         let ids: Vec<PartId> = site.parts.iter().map(|part| part.id).collect();

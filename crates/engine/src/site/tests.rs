@@ -24,6 +24,20 @@ fn of(site: &Site, id: &str) -> Option<Verdict> {
     assess(site).checks.iter().find(|one| one.check.id.id() == id).map(|one| one.check.verdict)
 }
 
+/// Such parts come from no file, which would be refused; what is made of them is assessed all the same.
+#[test]
+fn parts_of_one_number_are_told_apart() {
+    for number in [3, u32::MAX] {
+        let mut parts: Vec<Part> =
+            [PartKind::Bus, PartKind::DcPanel, PartKind::DcCircuit].map(|kind| Part::new(PartId(number), kind)).into();
+        parts[2].to = Some(PartId(number));
+        let site = Site::new(String::new(), Entries::default(), parts);
+        let ids: Vec<u32> = site.parts.iter().map(|part| part.id.0).collect();
+        assert_eq!(ids, [number, 1, 2]);
+        assert!(!assess(&site).checks.is_empty());
+    }
+}
+
 #[test]
 fn a_figure_stands_in_one_place_and_every_part_reads_it_there() {
     let mut site = room();
