@@ -3,13 +3,13 @@
 //! All writing goes through [`Draft::edit`]; keeping and undo hang there and nowhere else.
 
 use bridge::Kept;
-use engine::site::Subject;
+use engine::site::{Site, Subject};
 use leptos::prelude::*;
 
 use crate::clock;
 use crate::derived::{Memo, memo};
 use crate::keep::{Keeper, ToKeep};
-use crate::pads::{Edit, OpenSite, Pads, Place, Typed, What};
+use crate::pads::{Edit, OpenSite, Pads, Place, SiteEdit, Typed, What};
 use crate::theme::Theme;
 
 /// The store. A handle: copying it copies nothing.
@@ -59,6 +59,11 @@ impl Draft {
                 self.keeper.keep_site(ToKeep { key, name: site.name, text });
             }
         }
+    }
+
+    /// Opens a site that is not on this phone yet, in place of the one that is open.
+    pub fn open_new(self, site: Site) {
+        self.edit(Edit::Site(SiteEdit::Open(OpenSite { key: self.keeper.new_key(), site })));
     }
 
     /// Looks at a part of the open site, or at none.

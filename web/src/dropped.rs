@@ -48,9 +48,7 @@ pub fn watch(draft: Draft) -> Piece {
 
 /// Text that is dragged into a field belongs to the field.
 fn is_ours(event: &DragEvent) -> bool {
-    let has_file = event
-        .data_transfer()
-        .is_some_and(|data| data.items().length() > 0 && data.types().includes(&"Files".into(), 0));
+    let has_file = event.data_transfer().is_some_and(|data| data.types().includes(&"Files".into(), 0));
     let into_field = event.target().and_then(|target| target.dyn_into::<web_sys::HtmlInputElement>().ok());
     has_file || into_field.is_none()
 }

@@ -11,18 +11,9 @@ use web_sys::{Blob, BlobPropertyBag, File, HtmlAnchorElement, Url};
 ///
 /// What the browser says, where it makes no file.
 pub fn save(kept: &Kept) -> Result<String, JsValue> {
-    let text = js_sys::Array::of1(&bridge::file::write(kept).into());
-    let kind = BlobPropertyBag::new();
-    kind.set_type("application/json");
-    let url = Url::create_object_url_with_blob(&Blob::new_with_str_sequence_and_options(&text, &kind)?)?;
     let today = String::from(js_sys::Date::new_0().to_iso_string());
     let name = format!("linehut-{}.json", today.get(..10).unwrap_or("kept"));
-    let document = web_sys::window().and_then(|window| window.document()).ok_or("no document")?;
-    let link: HtmlAnchorElement = document.create_element("a")?.unchecked_into();
-    link.set_href(&url);
-    link.set_download(&name);
-    link.click();
-    Url::revoke_object_url(&url)?;
+    save_text(&name, &bridge::file::write(kept))?;
     Ok(name)
 }
 

@@ -97,6 +97,12 @@ pub fn go(route: Route) {
     let _ = window().location().set_hash(&route.href());
 }
 
+/// This page's own address, without what stands behind `#`.
+pub fn here() -> String {
+    let address = window().location().href().unwrap_or_default();
+    address.split('#').next().unwrap_or_default().to_owned()
+}
+
 fn now() -> Route {
     Route::of_hash(&window().location().hash().unwrap_or_default())
 }

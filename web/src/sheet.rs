@@ -81,8 +81,7 @@ pub fn took(draft: Draft, name: &str, found: Result<Opened, String>) -> String {
         }
         Ok(Opened::Site(site)) => {
             let words = format!("Opened {}: {} parts. It is on the Line.", named(&site.name), site.parts.len());
-            let key = draft.keeper().new_key();
-            draft.edit(Edit::Site(SiteEdit::Open(OpenSite { key, site })));
+            draft.open_new(site);
             words
         }
         Err(why) => format!("Not opened, nothing changed. {name}: {why}."),
@@ -145,9 +144,7 @@ fn this_site(said: RwSignal<String>) -> Piece {
 
 /// This page's own address with the site behind `#`.
 fn link_of(site: &engine::site::Site) -> String {
-    let here = window().location().href().unwrap_or_default();
-    let here = here.split('#').next().unwrap_or_default();
-    format!("{here}#/site/{}", bridge::link::letters(site))
+    format!("{}#/site/{}", crate::route::here(), bridge::link::letters(site))
 }
 
 /// A name that every phone can keep a file under.
@@ -219,8 +216,7 @@ fn paste(said: RwSignal<String>) -> Piece {
 pub fn open_link(draft: Draft, letters: &str) -> bool {
     match bridge::link::site_of(letters) {
         Ok(site) => {
-            let key = draft.keeper().new_key();
-            draft.edit(Edit::Site(SiteEdit::Open(OpenSite { key, site })));
+            draft.open_new(site);
             true
         }
         Err(_) => false,

@@ -12,7 +12,7 @@ use crate::first_visit::first_visit;
 use crate::fold::Folds;
 use crate::icon::icon;
 use crate::keep::Keeping;
-use crate::notice::notice;
+use crate::notice::{notice, telling};
 use crate::offline::{self, Copy};
 use crate::pads::{Edit, What};
 use crate::route::{self, Route};
@@ -258,14 +258,7 @@ fn notices(update: RwSignal<bool>, refused: RwSignal<bool>) -> Piece {
                 keeper.damaged(),
                 None,
             )}
-            {when(move || draft.told().with(|told| !told.is_empty()), move || view! {
-                <div class="notice">
-                    <p>{draft.told()}</p>
-                    <div class="notice-acts">
-                        <button type="button" class="quiet" on:click=move |_| draft.tell(String::new())>"Close"</button>
-                    </div>
-                </div>
-            })}
+            {telling(draft.told())}
         </aside>
     }
 }

@@ -1,6 +1,7 @@
 //! What stands in a field: nothing, a value, or something that could not be read.
 
 use crate::quantity::Quantity;
+use crate::typed::Reading;
 
 /// What a person put into a field, as far as the engine understands it.
 ///
@@ -30,6 +31,17 @@ impl<T: Copy> Entry<T> {
         match self {
             Self::Blank => Entry::Blank,
             Self::Typed(value) => Entry::Typed(turn(value)),
+            Self::Unread => Entry::Unread,
+        }
+    }
+}
+
+impl Entry<Reading> {
+    /// The same as a quantity; unread where its unit does not turn into the quantity's.
+    pub fn quantity<Q: Quantity>(self) -> Entry<Q> {
+        match self {
+            Self::Blank => Entry::Blank,
+            Self::Typed(reading) => reading.quantity().map_or(Entry::Unread, Entry::Typed),
             Self::Unread => Entry::Unread,
         }
     }

@@ -686,11 +686,7 @@ impl Field {
     /// so is one whose unit does not turn into the quantity's, such as V/K where a percentage for each kelvin is asked.
     #[must_use]
     pub fn entry<Q: Quantity>(self, text: &str, unit: Option<Unit>) -> Entry<Q> {
-        match self.reading(text, unit) {
-            Entry::Typed(reading) => reading.quantity().map_or(Entry::Unread, Entry::Typed),
-            Entry::Blank => Entry::Blank,
-            Entry::Unread => Entry::Unread,
-        }
+        self.reading(text, unit).quantity()
     }
 
     /// The same in the unit that was typed.

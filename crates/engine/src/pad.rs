@@ -22,11 +22,7 @@ pub trait Pad {
 
     /// What stands in `field`, as a quantity.
     fn entry<Q: Quantity>(&self, field: Field) -> Entry<Q> {
-        match self.reading(field) {
-            Entry::Typed(reading) => reading.quantity().map_or(Entry::Unread, Entry::Typed),
-            Entry::Blank => Entry::Blank,
-            Entry::Unread => Entry::Unread,
-        }
+        self.reading(field).quantity()
     }
 
     /// What stands in `field`, as one of its list.

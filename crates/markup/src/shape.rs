@@ -7,6 +7,9 @@ use syn::{Error, Expr, Lit, Result, Stmt};
 
 use crate::tags;
 
+/// An element as it stands in the source.
+type Tag = NodeElement<rstml::node::Infallible>;
+
 /// Text, walk and values.
 ///
 /// A step of the walk is a letter: `>` down to the first child, `+` on to the next, `<` up, `r` this is a root,
@@ -21,7 +24,7 @@ pub struct Shape {
 
 /// What stands among the children of an element once the values are set aside.
 enum Item<'a> {
-    Element(&'a NodeElement<rstml::node::Infallible>),
+    Element(&'a Tag),
     Text(String),
     Value(TokenStream),
     /// Stands between two texts that a value parts, or they would be one.
@@ -115,7 +118,7 @@ impl Shape {
     }
 
     /// Whether the walk has to stop at it or below it.
-    fn is_busy(&self, element: &NodeElement<rstml::node::Infallible>) -> bool {
+    fn is_busy(&self, element: &Tag) -> bool {
         let attributes = element.open_tag.attributes.iter();
         let mut attributes = attributes.map(|one| matches!(one, NodeAttribute::Attribute(one) if fixed(one).is_some()));
         attributes.any(|is_fixed| !is_fixed)
@@ -126,7 +129,7 @@ impl Shape {
             })
     }
 
-    fn element(&mut self, element: &NodeElement<rstml::node::Infallible>, parent: Option<&str>) -> Result<()> {
+    fn element(&mut self, element: &Tag, parent: Option<&str>) -> Result<()> {
         let tag = element.open_tag.name.to_string();
         if let Some(why) = parent.and_then(|parent| tags::torn(parent, &tag)) {
             return Err(Error::new_spanned(&element.open_tag.name, why));

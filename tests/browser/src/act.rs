@@ -183,7 +183,7 @@ impl Site {
     }
 
     /// Makes the processor so many times slower. Chromium only.
-    pub async fn slow_down(&self, times: f64) -> Result<()> {
+    async fn slow_down(&self, times: f64) -> Result<()> {
         self.chromium(
             "goog/cdp/execute",
             json!({ "cmd": "Emulation.setCPUThrottlingRate", "params": { "rate": times } }),
@@ -192,10 +192,24 @@ impl Site {
         .map(drop)
     }
 
+    /// Types five keys into the field after `text`, the processor six times slower: milliseconds from a key to the painted answer,
+    /// in order.
+    pub async fn keystrokes_slowed(&self, name: &str, text: &str) -> Result<Vec<f64>> {
+        self.slow_down(6.0).await?;
+        let mut times = Vec::new();
+        for key in ['1', '2', '3', '4', '5'] {
+            self.type_into(name, text).await?;
+            times.push(self.keystroke_to_paint(name, key).await?);
+        }
+        self.slow_down(1.0).await?;
+        times.sort_by(f64::total_cmp);
+        Ok(times)
+    }
+
     /// Types one more character into the field: milliseconds of work from the key to the painted answer.
     ///
     /// The wait for the screen's next frame is left out: it is the screen's, and up to 17 ms.
-    pub async fn keystroke_to_paint(&self, name: &str, key: char) -> Result<f64> {
+    async fn keystroke_to_paint(&self, name: &str, key: char) -> Result<f64> {
         let field = self.field(name).await?;
         // The first message comes when the key's own work is done, the second when the frame after it is painted.
         let listen = r#"

@@ -258,14 +258,7 @@ fn one_keystroke_to_the_repainted_line() {
             site.press("East roof").await?;
             site.heading("East roof").await?;
             site.is_written().await?;
-            site.slow_down(6.0).await?;
-            let mut times = Vec::new();
-            for key in ['1', '2', '3', '4', '5'] {
-                site.type_into("Voc", "49.3").await?;
-                times.push(site.keystroke_to_paint("Voc", key).await?);
-            }
-            site.slow_down(1.0).await?;
-            times.sort_by(f64::total_cmp);
+            let times = site.keystrokes_slowed("Voc", "49.3").await?;
             println!(
                 "one keystroke to the repainted clinic, {} px, six times slower: {:.1} ms (median of 5)",
                 screen.width, times[2]

@@ -12,6 +12,13 @@ async fn kept_site(site: &Site, name: &str) -> Result<()> {
     site.is_written().await
 }
 
+/// The open site is closed, and another is open and kept.
+async fn then_another(site: &Site, name: &str) -> Result<()> {
+    site.press("Close this site").await?;
+    site.element(".six-box").await?;
+    kept_site(site, name).await
+}
+
 /// Reads or replaces records of the database from outside the page's own code.
 async fn records(site: &Site, change: &str, arguments: &[Value]) -> Result<Value> {
     let script = format!(
@@ -43,7 +50,7 @@ async fn record(site: &Site, key: &str) -> Result<Value> {
 #[test]
 fn a_full_phone_is_told_and_what_was_typed_can_be_taken_along() {
     visit(Screen::PHONE, async |site| {
-        // What the standard says a full store does: IndexedDB API 3.0, 5.11, and WebIDL's QuotaExceededError.
+        // What the standard says a full store does: IndexedDB API 3.0, storing a record, and WebIDL's QuotaExceededError (from memory).
         site.before_load(
             "window.isFull = true;
              const put = IDBObjectStore.prototype.put;
@@ -102,9 +109,7 @@ fn a_damaged_site_is_named_and_left_as_it_is() {
     {
         visit(Screen::PHONE, async |site| {
             kept_site(site, "Tern Point").await?;
-            site.press("Close this site").await?;
-            site.element(".six-box").await?;
-            kept_site(site, "Gull Rock").await?;
+            then_another(site, "Gull Rock").await?;
             put(site, "site-1", damage.clone()).await?;
             site.reload().await?;
             ensure!(site.value_of("Name of the site").await? == "Gull Rock", "the other one is there");
@@ -116,9 +121,7 @@ fn a_damaged_site_is_named_and_left_as_it_is() {
             site.shows("Saved as linehut-site-1.json").await?;
             // A new one does not take its place.
             site.press("Line").await?;
-            site.press("Close this site").await?;
-            site.element(".six-box").await?;
-            kept_site(site, "Skerry").await?;
+            then_another(site, "Skerry").await?;
             ensure!(record(site, "site-1").await? == damage, "it was written over");
             site.no_complaints().await
         });
@@ -157,10 +160,8 @@ fn a_damaged_list_of_sites_loses_no_site() {
             site.press("Sheet").await?;
             site.press("Earlier states of it").await?;
             site.press("Line").await?;
-            site.press("Close this site").await?;
             // A new one goes beside it.
-            site.element(".six-box").await?;
-            kept_site(site, "Gull Rock").await?;
+            then_another(site, "Gull Rock").await?;
             site.press("Sheet").await?;
             site.press("Tern Point").await?;
             site.heading("Tern Point the open site").await?;

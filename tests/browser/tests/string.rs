@@ -229,14 +229,7 @@ fn one_keystroke_to_the_painted_answer() {
         }
         site.open_tool("String").await?;
         site.enter(&RIDGE).await?;
-        site.slow_down(6.0).await?;
-        let mut times = Vec::new();
-        for key in ['1', '2', '3', '4', '5'] {
-            site.type_into("Voc", "49.3").await?;
-            times.push(site.keystroke_to_paint("Voc", key).await?);
-        }
-        site.slow_down(1.0).await?;
-        times.sort_by(f64::total_cmp);
+        let times = site.keystrokes_slowed("Voc", "49.3").await?;
         println!("one keystroke to the painted answer, processor six times slower: {:.1} ms (median of 5)", times[2]);
         Ok(())
     });

@@ -31,7 +31,7 @@ pub fn codes() -> Piece {
 
 fn inside() -> Piece {
     let draft = use_draft();
-    let here = window().location().href().unwrap_or_default();
+    let here = crate::route::here();
     if here.starts_with("file:") {
         return view! {
             <p class="say">
@@ -40,7 +40,6 @@ fn inside() -> Piece {
             </p>
         };
     }
-    let here = here.split('#').next().unwrap_or_default().to_owned();
     let text = memo(move || draft.with(|pads| pads.site().map(|open| bridge::site::write_short(&open.site))));
     let frames = RwSignal::new(Vec::<Frame>::new());
     let at = RwSignal::new(0_usize);

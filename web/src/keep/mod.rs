@@ -316,9 +316,7 @@ impl Keeper {
                                 tabs.tell();
                             }
                         });
-                        if self.state.get_untracked() != Keeping::Kept {
-                            self.state.set(Keeping::Kept);
-                        }
+                        self.is_kept();
                         self.ask_to_last().await;
                     }
                     Err(why) => {
@@ -355,9 +353,7 @@ impl Keeper {
                     if let Some(list) = list {
                         self.sites.set(list);
                     }
-                    if self.state.get_untracked() != Keeping::Kept {
-                        self.state.set(Keeping::Kept);
-                    }
+                    self.is_kept();
                     self.ask_to_last().await;
                 }
                 Err(why) => {
@@ -385,6 +381,13 @@ impl Keeper {
                 Some((work.storage.clone()?, work.base.clone(), next?))
             })
             .flatten()
+    }
+
+    /// Everything is kept; told only where it was not before.
+    fn is_kept(self) {
+        if self.state.get_untracked() != Keeping::Kept {
+            self.state.set(Keeping::Kept);
+        }
     }
 
     /// Asks the browser, once, not to clear what is kept: after the first entry, when it means something.

@@ -67,8 +67,7 @@ pub fn new_site() -> Piece {
                     answers.update(|answers| answers.push(key));
                     if let Some(got) = answers.with_untracked(|answers| made(answers)) {
                         answers.set(Vec::new());
-                        let key = draft.keeper().new_key();
-                        draft.edit(Edit::Site(SiteEdit::Open(OpenSite { key, site: start(got) })));
+                        draft.open_new(start(got));
                     }
                 };
                 view! { <button class="btn" type="button" on:click=take>{*label}</button> }
@@ -85,8 +84,7 @@ pub fn new_site() -> Piece {
         .map(|name| {
             let open = move |_| {
                 if let Some(site) = bridge::demo::demo(name) {
-                    let key = draft.keeper().new_key();
-                    draft.edit(Edit::Site(SiteEdit::Open(OpenSite { key, site })));
+                    draft.open_new(site);
                 }
             };
             view! { <button class="btn small" type="button" on:click=open>{name}</button> }

@@ -97,18 +97,11 @@ impl<F: Fn() -> T + 'static, T: IntoPiece> IntoPiece for F {
     }
 }
 
-/// What is read again whenever it changes.
-macro_rules! read_again {
-    ($($kind:ident),*) => {$(
-        impl<T: IntoPiece + Clone + Send + Sync + 'static> IntoPiece for $kind<T> {
-            fn piece(self) -> Piece {
-                Piece::Live(Box::new(move || self.get()))
-            }
-        }
-    )*};
+impl<T: IntoPiece + Clone + Send + Sync + 'static> IntoPiece for RwSignal<T> {
+    fn piece(self) -> Piece {
+        Piece::Live(Box::new(move || self.get()))
+    }
 }
-
-read_again!(RwSignal);
 
 impl<T: IntoPiece + Clone + 'static> IntoPiece for Memo<T> {
     fn piece(self) -> Piece {

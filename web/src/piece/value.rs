@@ -72,18 +72,11 @@ impl<F: Fn() -> T + 'static, T: IntoValue> IntoValue for F {
     }
 }
 
-/// What is read again whenever it changes.
-macro_rules! read_again {
-    ($($kind:ident),*) => {$(
-        impl<T: IntoValue + Clone + Send + Sync + 'static> IntoValue for $kind<T> {
-            fn value(self) -> Value {
-                Value::Live(Box::new(move || self.get()))
-            }
-        }
-    )*};
+impl<T: IntoValue + Clone + Send + Sync + 'static> IntoValue for RwSignal<T> {
+    fn value(self) -> Value {
+        Value::Live(Box::new(move || self.get()))
+    }
 }
-
-read_again!(RwSignal);
 
 impl<T: IntoValue + Clone + 'static> IntoValue for Memo<T> {
     fn value(self) -> Value {

@@ -67,11 +67,6 @@ impl Entries {
         Some(&self.0[at])
     }
 
-    /// What stands in `field`, as a number.
-    pub(super) fn read(&self, field: Field) -> Entry<Reading> {
-        self.held(field).map_or(Entry::Blank, |held| held.reading)
-    }
-
     /// Puts `typed` into `field`; a blank text with no unit takes the entry away.
     pub fn set(&mut self, field: Field, typed: Typed) {
         let blank = typed.text.is_empty() && typed.unit.is_none();
@@ -104,7 +99,7 @@ impl Entries {
 
 impl Pad for Entries {
     fn reading(&self, field: Field) -> Entry<Reading> {
-        self.read(field)
+        self.held(field).map_or(Entry::Blank, |held| held.reading)
     }
 
     fn typed(&self, field: Field) -> (&str, Option<Unit>) {

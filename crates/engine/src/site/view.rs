@@ -132,7 +132,7 @@ impl<'a> View<'a> {
 
 impl Pad for View<'_> {
     fn reading(&self, field: Field) -> Entry<Reading> {
-        self.entries(field).map_or(Entry::Blank, |entries| entries.read(field))
+        self.entries(field).map_or(Entry::Blank, |entries| entries.reading(field))
     }
 
     fn typed(&self, field: Field) -> (&str, Option<Unit>) {
